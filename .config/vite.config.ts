@@ -1,0 +1,22 @@
+// Builds two entries that share chunks: the command (main) and the library (index).
+// Everything a run needs at once is bundled, because loading loose files is what makes a Node command slow to start;
+// what only some runs need (dynamic imports) becomes chunks of its own.
+import { builtinModules } from 'node:module';
+import { defineConfig } from 'vite';
+
+export default defineConfig({
+  ssr: { noExternal: true },
+  build: {
+    ssr: true,
+    target: 'node20',
+    outDir: 'dist',
+    emptyOutDir: true,
+    minify: true,
+    sourcemap: false,
+    rolldownOptions: {
+      input: { main: 'src/cli/main.ts', index: 'src/index.ts' },
+      external: [...builtinModules, /^node:/],
+      output: { format: 'es', entryFileNames: '[name].js', chunkFileNames: 'chunk-[name].js' },
+    },
+  },
+});

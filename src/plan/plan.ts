@@ -1,0 +1,74 @@
+// The plan: everything a run will do, checked and frozen before work starts, echoed whole in the result.
+import type { OrderingName } from '../null/contract.js';
+
+export const tails = ['upper', 'lower', 'both'] as const;
+export type Tail = (typeof tails)[number];
+
+export const twoSidedRules = ['distance', 'probability', 'doubled'] as const;
+export type TwoSidedRule = (typeof twoSidedRules)[number];
+
+export const methods = ['auto', 'exact', 'sample', 'asymptotic'] as const;
+export type Method = (typeof methods)[number];
+export type ChosenMethod = Exclude<Method, 'auto'>;
+
+/** What a user may say; everything is optional. Names as on the command line, in camel case. */
+export interface PlanOptions {
+  readonly statistic?: string;
+  readonly tail?: Tail;
+  readonly twoSidedRule?: TwoSidedRule;
+  readonly groups?: 'rows' | 'columns';
+  /** Label of the level counted as the event (default: first level of the side that is not groups). */
+  readonly event?: string;
+  /** Label of the second group, the one compared with (default: the second listed). */
+  readonly reference?: string;
+  readonly method?: Method;
+  /** Number of sampled tables, 1 to 1e12. Default 100000. */
+  readonly draws?: number;
+  readonly seed?: string;
+  /** Bound on exact work in counted units. Default 1e8. */
+  readonly effort?: number;
+  /** Significance level that sentences compare with, in (0, 1). Default 0.05. */
+  readonly alpha?: number;
+  /** Level of intervals for effects, in (0, 1). Default 0.95. */
+  readonly confidence?: number;
+  /** Level of the interval of a sampled p, in (0, 1). Default 0.99. */
+  readonly samplingConfidence?: number;
+}
+
+export interface Forecast {
+  /** Counted units of exact work: one cell set in one table. */
+  readonly workUnits: number;
+  /** Tables to visit (an estimate unless `tablesAreCounted`). */
+  readonly tables: number;
+  readonly tablesAreCounted: boolean;
+  /** Seconds that much work takes on a usual machine; for display, never for a choice. */
+  readonly seconds: number;
+}
+
+export interface Plan {
+  readonly statistic: string;
+  readonly tail: Tail;
+  readonly twoSidedRule: TwoSidedRule | null;
+  readonly method: ChosenMethod;
+  /** Asked for, before `auto` was settled. */
+  readonly methodAsked: Method;
+  readonly methodReason: string;
+  readonly forecast: Forecast;
+  readonly groups: 'rows' | 'columns' | null;
+  readonly event: string | null;
+  readonly reference: string | null;
+  readonly fixed: 'both';
+  readonly draws: number | null;
+  readonly seed: string | null;
+  readonly tableKey: string;
+  readonly generator: string | null;
+  readonly blockSize: number | null;
+  readonly effort: number;
+  readonly alpha: number;
+  readonly confidence: number;
+  readonly samplingConfidence: number;
+}
+
+/** The ordering that a tail and rule call for; `doubled` is made from the two one-sided ones. */
+export const orderingFor = (tail: Tail, rule: TwoSidedRule | null): readonly OrderingName[] =>
+  tail !== 'both' ? [tail] : rule === 'doubled' || rule === null ? ['upper', 'lower'] : [rule];
