@@ -1,0 +1,67 @@
+// What can be wrong with raw records, in words.
+import type { Problem } from '../problem/problem.js';
+import { dataProblem } from '../problem/problem.js';
+import { badCell, countProblem } from './count-faults.js';
+import { missingLevel, mostLevels } from './levels.js';
+import type { RecordColumns } from './record-columns.js';
+import { shownValue } from './shown-value.js';
+
+export const badCount = (text: string, place: string): Problem => countProblem([badCell(text, 'file', () => place)!]);
+
+export const raggedRecord = (length: number, width: number, place: string): Problem =>
+  dataProblem({
+    code: 'ragged-row',
+    message: `this record has ${length} value${length === 1 ? '' : 's'} where the header has ${width}`,
+    place,
+    hint: 'every record needs the same number of values; put text that holds the separator in double quotes',
+  });
+
+export const missingValues = (
+  used: RecordColumns,
+  missing: number,
+  records: number,
+  firstText: string,
+  place: string,
+): Problem =>
+  dataProblem({
+    code: 'missing-values',
+    message:
+      `the value of ${named(used.rowsName)} or ${named(used.columnsName)} is missing in ${missing} of ${records} ` +
+      `record${records === 1 ? '' : 's'} (first ${firstText.trim() === '' ? 'an empty one' : shownValue(firstText.trim())})`,
+    place,
+    hint: 'add --missing drop to leave such records out, or --missing level to count missing as a level of its own',
+  });
+
+const named = (name: string): string => shownValue(name).slice(1, -1);
+
+export const realMissingLevel = (place: string): Problem =>
+  dataProblem({
+    code: 'missing-level-name',
+    message: `${shownValue(missingLevel)} is a value in the data, so missing values cannot become a level of that name`,
+    place,
+    hint: 'write that value in another way, or add --missing drop',
+  });
+
+export const tooManyLevels = (name: string, place: string): Problem =>
+  dataProblem({
+    code: 'too-many-levels',
+    message: `column ${shownValue(name)} holds more than ${mostLevels} different values`,
+    place,
+    hint: 'name a column of categories; this one looks like identifiers or measurements',
+  });
+
+export const noRecords = (place: string): Problem =>
+  dataProblem({
+    code: 'only-header',
+    message: 'there are no records below the header',
+    place,
+    hint: 'check that this is the right file, and that it was saved whole',
+  });
+
+export const noRecordsLeft = (records: number, place: string): Problem =>
+  dataProblem({
+    code: 'no-records-left',
+    message: `a value is missing in every record (${records}), so none is left to count`,
+    place,
+    hint: 'check that the right columns were named, or add --missing level',
+  });
