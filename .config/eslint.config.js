@@ -36,7 +36,9 @@ const oneWay = stages.map((stage, place) => ({
           ...(stage === 'numeric' || stage === 'random'
             ? [{ regex: '^\\.\\./', message: `${stage} is a leaf: it imports nothing of ours.` }]
             : []),
-          ...(stage === 'report' ? [{ regex: '^\\.\\./(?!result/)', message: 'Reports read the result and nothing else.' }] : []),
+          ...(stage === 'report'
+            ? [{ regex: '^\\.\\./(?!result/)', message: 'Reports read the result and nothing else.' }]
+            : []),
         ],
       },
     ],

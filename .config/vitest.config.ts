@@ -1,10 +1,18 @@
+// Two groups of tests: those of the sources, and those of the real command, which first see to it that dist is built.
 import { defineConfig } from 'vitest/config';
+
+const ofTheCommand = 'test/**/*.process.test.ts';
 
 export default defineConfig({
   test: {
-    include: ['test/**/*.test.ts'],
     testTimeout: 120_000,
     hookTimeout: 120_000,
-    globalSetup: ['test/helpers/build-once.ts'],
+    projects: [
+      { extends: true, test: { name: 'source', include: ['test/**/*.test.ts'], exclude: [ofTheCommand] } },
+      {
+        extends: true,
+        test: { name: 'process', include: [ofTheCommand], globalSetup: ['test/helpers/build-once.ts'] },
+      },
+    ],
   },
 });

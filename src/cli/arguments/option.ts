@@ -1,0 +1,41 @@
+// How an option is declared: one entry, from which parsing, checking, help and suggestions follow.
+import type { CheckValue } from './check-value.js';
+
+/** Headings of the help, in the order of the flow. */
+export const stages = ['Reading the table', 'The test', 'How p is found', 'The report', 'Other'] as const;
+export type Stage = (typeof stages)[number];
+
+export interface OptionDeclaration<T> {
+  readonly stage: Stage;
+  /** One letter, for the common few. */
+  readonly short?: string;
+  /** Stands for the value in the help; a switch has none. */
+  readonly placeholder?: string;
+  readonly words: string;
+  /** Switches are given '' and answer true. */
+  readonly check: CheckValue<T>;
+}
+
+/** By camel-case name: `twoSidedRule` is `--two-sided-rule`. */
+export type Declarations = Readonly<Record<string, OptionDeclaration<unknown>>>;
+
+/** What was given, checked; options not given are absent. */
+export type Values<D extends Declarations> = { readonly [K in keyof D]?: ReturnType<D[K]['check']> };
+
+export const valued = <T>(
+  stage: Stage,
+  placeholder: string,
+  check: CheckValue<T>,
+  words: string,
+  short?: string,
+): OptionDeclaration<T> => ({ stage, placeholder, check, words, ...(short === undefined ? {} : { short }) });
+
+export const toggle = (stage: Stage, words: string, short?: string): OptionDeclaration<true> => ({
+  stage,
+  words,
+  check: () => true,
+  ...(short === undefined ? {} : { short }),
+});
+
+/** `twoSidedRule` -> `--two-sided-rule`. */
+export const flagOf = (name: string): string => `--${name.replace(/[A-Z]/g, (capital) => `-${capital.toLowerCase()}`)}`;

@@ -1,0 +1,25 @@
+// The commands there are. One line and one file each; a run loads only the file of its own command.
+import type { CommandFile } from './command-file.js';
+
+export interface CommandEntry {
+  readonly name: string;
+  readonly operands: string;
+  /** For the list of commands. */
+  readonly summary: string;
+  readonly load: () => Promise<CommandFile>;
+}
+
+export const commands: readonly CommandEntry[] = [
+  {
+    name: 'test',
+    operands: '[ROW... | FILE | -]',
+    summary: 'one table of counts, typed in or from a file: are rows and columns related?',
+    load: async () => (await import('./test.js')).testCommand,
+  },
+  {
+    name: 'schema',
+    operands: 'result',
+    summary: 'the JSON Schema (2020-12) of what --format json prints',
+    load: async () => (await import('./schema.js')).schemaCommand,
+  },
+];

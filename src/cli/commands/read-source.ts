@@ -1,0 +1,45 @@
+// The chosen source -> the table. Each way of reading is loaded only by the runs that use it.
+import { stat } from 'node:fs/promises';
+import type { ReadTable } from '../../input/read-table.js';
+import type { Values } from '../arguments/option.js';
+import type { Shell } from '../shell.js';
+import type { Source } from './choose-source.js';
+import type { reading } from './test-options.js';
+
+type ReadingValues = Values<typeof reading>;
+
+/** @throws Problem of the input stage, or that a file cannot be read. */
+export async function readSource(source: Source, values: ReadingValues, shell: Shell): Promise<ReadTable> {
+  const options = { ...values, totals: totalsRule(values) };
+  if (source.form === 'inline') {
+    const { readInline } = await import('../../input/inline.js');
+    return readInline(source.rows, options);
+  }
+  const { fileBytes } = await import('../streams/input-file.js');
+  const { path } = source;
+  const sourceName = path ?? 'standard input';
+  const bytes = (): AsyncIterable<Uint8Array> => (path === null ? shell.stdin() : fileBytes(path));
+  if (source.form === 'cross-table') {
+    const { readCrossTable } = await import('../../input/cross-table.js');
+    return readCrossTable(await whole(bytes()), { ...options, sourceName });
+  }
+  const { readRecords } = await import('../../input/records.js');
+  const reread = path !== null && (await isRegular(path)) ? bytes : undefined;
+  return readRecords(bytes(), { ...options, rows: values.rows!, columns: values.columns!, sourceName, reread });
+}
+
+const totalsRule = ({ dropTotals, keepTotals }: ReadingValues): 'drop' | 'keep' | 'refuse' =>
+  dropTotals ? 'drop' : keepTotals ? 'keep' : 'refuse';
+
+async function whole(pieces: AsyncIterable<Uint8Array>): Promise<Uint8Array> {
+  const all: Uint8Array[] = [];
+  for await (const piece of pieces) all.push(piece);
+  return Buffer.concat(all);
+}
+
+/** Only a plain file can be read a second time; a pipe has been emptied. */
+const isRegular = (path: string): Promise<boolean> =>
+  stat(path).then(
+    (facts) => facts.isFile(),
+    () => false,
+  );

@@ -1,0 +1,79 @@
+// keepsum test: one table, from where it stands to a report. Read, analyse, report, write.
+import { render } from '../../report/formats.js';
+import type { PlanOptions } from '../../plan/plan.js';
+import { usageProblem } from '../../problem/problem.js';
+import type { Result } from '../../result/result.js';
+import type { Values } from '../arguments/option.js';
+import type { Shell } from '../shell.js';
+import { remark } from '../streams/write-out.js';
+import { chooseSource } from './choose-source.js';
+import { command } from './command-file.js';
+import { lookFor } from './look.js';
+import { readSource } from './read-source.js';
+import { destinationFor } from './shared-options.js';
+import { planning, testOptions } from './test-options.js';
+
+type TestValues = Values<typeof testOptions>;
+
+export const testCommand = command({
+  name: 'test',
+  usage: [
+    { line: 'keepsum test ROW ROW ...', words: 'rows typed in: 8,2 or label=8,2' },
+    { line: 'keepsum test FILE', words: 'a table of counts; - is standard input' },
+    { line: 'keepsum test FILE --rows COLUMN --columns COLUMN', words: 'raw records, one a line' },
+  ],
+  purpose: 'Tests whether the rows and columns of one table of counts are related.',
+  examples: [
+    { line: 'keepsum test 8,2 1,9', words: 'a table typed in' },
+    { line: 'keepsum test fixtures/demo/orchid-forms.tsv', words: 'a table from a file, with labels' },
+    {
+      line: 'keepsum test fixtures/demo/ward-line-list.csv --rows custard --columns outcome --missing drop',
+      words: 'raw records, counted',
+    },
+  ],
+  options: testOptions,
+  async run(operands, values, shell) {
+    checkCombinations(values);
+    const source = chooseSource(operands, values, shell.stdinIsTerminal);
+    if (source === undefined) return nothingNamed(shell);
+    const destination = await destinationFor(values.output, shell, source.form === 'inline' ? null : source.path);
+    const table = await readSource(source, values, shell);
+    const { analyse } = await import('../../analyse.js');
+    const result = await analyse(table, await planOptions(values));
+    const format = values.format ?? 'text';
+    const report = render(result, format, await lookFor(values, shell));
+    if (!values.quiet) await remarkOnSampling(result, shell);
+    await destination.write(report);
+    return 0;
+  },
+});
+
+/** Only what the plan knows, with a seed made here if none was given: the core takes no chance of its own. */
+async function planOptions(values: TestValues): Promise<PlanOptions> {
+  const chosen = Object.fromEntries(Object.entries(values).filter(([name]) => name in planning)) as PlanOptions;
+  const maySample = (chosen.method ?? 'auto') === 'auto' || chosen.method === 'sample';
+  if (chosen.seed !== undefined || !maySample) return chosen;
+  return { ...chosen, seed: (await import('../seed.js')).freshSeed() };
+}
+
+/** A method that was picked for the user is never a silent matter. */
+async function remarkOnSampling({ plan }: Result, shell: Shell): Promise<void> {
+  if (plan.methodAsked !== 'auto' || plan.method !== 'sample') return;
+  await remark(shell.stderr, `note: ${plan.methodReason}\n`);
+}
+
+function checkCombinations(values: TestValues): void {
+  if (values.rawCsv && values.format !== 'csv') {
+    throw usageProblem({
+      code: 'option-does-not-fit',
+      message: '--raw-csv is for CSV output only',
+      hint: 'add --format csv, or leave --raw-csv out',
+    });
+  }
+}
+
+async function nothingNamed(shell: Shell): Promise<number> {
+  const { shortHelp } = await import('../help.js');
+  await remark(shell.stderr, shortHelp(testCommand, shell.columns));
+  return 2;
+}

@@ -1,0 +1,92 @@
+// Help screens: one sentence, how to call it, three examples, then the options in the order of the flow, then the exit statuses.
+import { Help, type Option } from 'commander';
+import { declaredCommand } from './arguments/parse.js';
+import { stages } from './arguments/option.js';
+import { commands } from './commands/all.js';
+import type { CommandFile, Example } from './commands/command-file.js';
+
+const purpose =
+  'keepsum tells whether the rows and columns of a table of counts are related, with a p-value that states its own error.';
+
+const rootExamples: readonly Example[] = [
+  { line: 'keepsum test 8,2 1,9', words: 'a table typed in, one word a row' },
+  { line: 'keepsum test --help', words: 'all that can be set for one table' },
+  { line: 'keepsum schema result', words: 'the shape of the JSON output' },
+];
+
+const statuses: readonly (readonly [string, string])[] = [
+  ['0', 'finished, whatever the p-value is'],
+  ['1', 'the data or a file cannot be used'],
+  ['2', 'the command line is wrong'],
+  ['3', 'exact work would exceed the stated bound'],
+  ['130', 'interrupted'],
+];
+
+/** What `keepsum --help` prints, and, without its last part, what is shown when nothing was asked. */
+export function rootHelp(width: number): string {
+  const listed = commands.map(({ name, operands, summary }) => [`keepsum ${name} ${operands}`, summary] as const);
+  return screen([
+    wrapped(purpose, width),
+    section('Commands', listed, width),
+    section('Examples', exampleItems(rootExamples), width),
+    section(
+      'Anywhere',
+      [
+        ['--help, -h', 'this, or after a command its options'],
+        ['--version', 'the version'],
+      ],
+      width,
+    ),
+    section('Exit status', statuses, width),
+  ]);
+}
+
+/** What `keepsum COMMAND --help` prints. */
+export function commandHelp(file: CommandFile, width: number): string {
+  const { options } = declaredCommand(file.name, file.options);
+  const groups = stages.map((stage) =>
+    section(
+      stage,
+      options
+        .filter((option) => option.helpGroupHeading === stage)
+        .map((option) => [term(option), option.description] as const),
+      width,
+    ),
+  );
+  return screen([...opening(file, width), ...groups, section('Exit status', statuses, width)]);
+}
+
+/** The first screen alone: for someone who called a command with nothing to work on. */
+export const shortHelp = (file: CommandFile, width: number): string =>
+  screen([...opening(file, width), `keepsum ${file.name} --help lists the options.`]);
+
+const opening = (file: CommandFile, width: number): string[] => [
+  wrapped(file.purpose, width),
+  section('Usage', exampleItems(file.usage), width),
+  section('Examples', exampleItems(file.examples), width),
+];
+
+const exampleItems = (examples: readonly Example[]): (readonly [string, string])[] =>
+  examples.map(({ line, words }) => [line, words] as const);
+
+const term = (option: Option): string =>
+  [option.short, option.long].filter((flag) => flag !== undefined).join(', ') +
+  (/<(.+)>/.exec(option.flags)?.[1] ?? '').replace(/^(?=.)/, ' ');
+
+/** Items under a heading; long terms push their words to the next line instead of widening the column for all. */
+function section(heading: string, items: readonly (readonly [string, string])[], width: number): string {
+  if (items.length === 0) return '';
+  const helper = new Help();
+  helper.prepareContext({ helpWidth: width });
+  const column = Math.min(30, Math.max(...items.map(([left]) => left.length)));
+  const lines = items.map(([left, words]) =>
+    left.length <= column || words === ''
+      ? helper.formatItem(left, column, words, helper)
+      : `  ${left}\n${helper.formatItem('', column, words, helper)}`,
+  );
+  return `${heading}\n${lines.join('\n')}`;
+}
+
+const wrapped = (text: string, width: number): string => new Help().boxWrap(text, width);
+
+const screen = (parts: readonly string[]): string => `${parts.filter((part) => part !== '').join('\n\n')}\n`;

@@ -1,0 +1,30 @@
+// Hands text to a stream and waits until it is through, so that ending the process never cuts it short.
+// A reader that has gone (`| head -1`) is a normal end, not an error.
+import type { Writable } from 'node:stream';
+import { dataProblem } from '../../problem/problem.js';
+
+export interface Destination {
+  write(text: string): Promise<void>;
+}
+
+/**
+ * Resolves when the stream has taken the whole text, or when nobody reads it any more.
+ * @throws Problem (data) `cannot-write` when the stream refuses for another reason, such as a full disk.
+ */
+export async function writeOut(stream: Writable, text: string, name: string): Promise<void> {
+  const failure = await new Promise<NodeJS.ErrnoException | null | undefined>((resolve) => {
+    stream.write(text, resolve);
+  });
+  if (!failure || failure.code === 'EPIPE' || failure.code === 'ERR_STREAM_DESTROYED') return;
+  throw dataProblem({
+    code: 'cannot-write',
+    message: `the result could not be written (${failure.code ?? failure.message})`,
+    place: name,
+    hint: 'check that the disk has room and that the other end accepts the text',
+  });
+}
+
+/** Remarks go to standard error; where that cannot be written, nobody can be told, so the run goes on. */
+export async function remark(stream: Writable, text: string): Promise<void> {
+  await writeOut(stream, text, 'standard error').catch(() => undefined);
+}
