@@ -76,8 +76,7 @@ const term = (option: Option): string =>
 /** Items under a heading; long terms push their words to the next line instead of widening the column for all. */
 function section(heading: string, items: readonly (readonly [string, string])[], width: number): string {
   if (items.length === 0) return '';
-  const helper = new Help();
-  helper.prepareContext({ helpWidth: width });
+  const helper = wrapper(width);
   const column = Math.min(30, Math.max(...items.map(([left]) => left.length)));
   const lines = items.map(([left, words]) =>
     left.length <= column || words === ''
@@ -87,6 +86,14 @@ function section(heading: string, items: readonly (readonly [string, string])[],
   return `${heading}\n${lines.join('\n')}`;
 }
 
-const wrapped = (text: string, width: number): string => new Help().boxWrap(text, width);
+const wrapped = (text: string, width: number): string => wrapper(width).boxWrap(text, width);
+
+/** commander's own wrapping, told to wrap narrow columns too. */
+function wrapper(width: number): Help {
+  const helper = new Help();
+  helper.prepareContext({ helpWidth: width });
+  helper.minWidthToWrap = 20;
+  return helper;
+}
 
 const screen = (parts: readonly string[]): string => `${parts.filter((part) => part !== '').join('\n\n')}\n`;
