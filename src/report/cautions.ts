@@ -1,0 +1,38 @@
+// What a reader should know before using the answer: remarks that belong to this table first, then the cautions that
+// belong to every p-value (Wasserstein & Lazar 2016).
+import { isOneTableOnly, samplingErrorOf } from '../result/describe.js';
+import { levelWords } from '../result/number-words.js';
+import type { Result } from '../result/result.js';
+import type { Sentence } from './page.js';
+
+const standing = [
+  'Association is not causation.',
+  'A p says how well chance alone explains the counts; it is not the size of an effect, nor the probability that there is none.',
+  'Counts were taken as independent of each other; members of one household, litter or clinic are not.',
+  "A decision that can hurt someone (clinical, food, product safety) belongs with the study's protocol, local rules and a qualified statistician.",
+] as const;
+
+export const cautionsFor = (result: Result): Sentence[] => [
+  ...result.notes.map(({ text }) => warning(asSentence(text))),
+  ...undecidedByDraws(result).map(warning),
+  ...standing.map((text): Sentence => ({ kind: 'sentence', text, tone: 'plain' })),
+];
+
+const warning = (text: string): Sentence => ({ kind: 'sentence', text, tone: 'warning' });
+
+/** Notes are written as clauses or as sentences; here they all become sentences. */
+const asSentence = (text: string): string =>
+  text.replace(/^[a-z]/, (letter) => letter.toUpperCase()) + (/[.!?]$/.test(text) ? '' : '.');
+
+/** More draws are needed where the interval of a sampled p leaves open on which side of the level it lies. */
+function undecidedByDraws(result: Result): string[] {
+  const sampling = samplingErrorOf(result.pValues[0]!);
+  const { alpha } = result.plan;
+  if (isOneTableOnly(result) || sampling === undefined) return [];
+  const [lower, upper] = sampling.interval;
+  if (lower > alpha || upper < alpha) return [];
+  return [
+    `The ${levelWords(sampling.confidence)} interval of this p holds ${alpha}, the level of the plan: ` +
+      'only more draws, or the exact method, can tell on which side p lies.',
+  ];
+}

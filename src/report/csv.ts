@@ -1,0 +1,88 @@
+// One row per p-value, the headline first, under published columns: for spreadsheets and data frames.
+import { shown } from '../result/label-words.js';
+import type { PValue, Result } from '../result/result.js';
+import type { Format } from './format.js';
+
+type Cell = string | number | boolean | null | undefined;
+
+interface Column {
+  readonly name: string;
+  readonly words: string;
+  cell(p: PValue, result: Result): Cell;
+}
+
+type ErrorOf<Kind> = Extract<PValue['errors'][number], { kind: Kind }>;
+
+const rounding = (p: PValue): ErrorOf<'rounding'> | undefined => p.errors.find((error) => error.kind === 'rounding');
+const sampling = (p: PValue): ErrorOf<'sampling'> | undefined => p.errors.find((error) => error.kind === 'sampling');
+const isHeadlineStatistic = (p: PValue, { statistic }: Result): boolean => p.statistic === statistic.name;
+
+/** The published columns, in order; names as in the JSON result. An empty cell says: does not apply, or not known. */
+export const csvColumns: readonly Column[] = [
+  { name: 'headline', words: 'true for the p that was asked for', cell: (p, { pValues }) => p === pValues[0] },
+  { name: 'statistic', words: 'the statistic that p is of', cell: (p) => p.statistic },
+  {
+    name: 'value',
+    words: 'its value; infinity and -infinity as words',
+    cell: (p, result) => (isHeadlineStatistic(p, result) ? result.statistic.value : undefined),
+  },
+  { name: 'tail', words: 'upper, lower or both', cell: (p) => p.tail },
+  { name: 'rule', words: 'two-sided rule, for both tails', cell: (p) => p.rule },
+  { name: 'orderedBy', words: 'what makes a table as extreme as the observed one', cell: (p) => p.orderedBy },
+  { name: 'method', words: 'exact, sample or asymptotic', cell: (p) => p.method },
+  { name: 'p', words: 'the p-value; empty with a reason when below the smallest double', cell: (p) => p.p },
+  { name: 'log10P', words: 'its decimal logarithm', cell: (p) => p.log10P },
+  { name: 'reason', words: 'why p is empty', cell: (p) => p.reason },
+  { name: 'strict', words: 'p with ties left out', cell: (p) => p.strict },
+  { name: 'mid', words: 'p with ties counted by half', cell: (p) => p.mid },
+  { name: 'tied', words: 'probability of a tie', cell: (p) => p.tied },
+  { name: 'point', words: 'probability of the observed table', cell: (p) => p.point },
+  { name: 'degreesOfFreedom', words: 'of the approximation', cell: (p) => p.degreesOfFreedom },
+  {
+    name: 'guaranteed',
+    words: 'true when p <= a happens at most with probability a by chance',
+    cell: (p) => p.guaranteed,
+  },
+  { name: 'relativeError', words: 'bound on the rounding of an exact p', cell: (p) => rounding(p)?.relative },
+  { name: 'atLeast', words: 'draws at least as extreme', cell: (p) => sampling(p)?.atLeast },
+  { name: 'atLeastUpper', words: 'the same in the upper tail, rule doubled', cell: (p) => sampling(p)?.tails?.upper },
+  { name: 'atLeastLower', words: 'the same in the lower tail, rule doubled', cell: (p) => sampling(p)?.tails?.lower },
+  { name: 'draws', words: 'draws made', cell: (p) => sampling(p)?.draws },
+  { name: 'estimate', words: 'share of draws at least as extreme', cell: (p) => sampling(p)?.estimate },
+  { name: 'standardError', words: 'of the estimate', cell: (p) => sampling(p)?.standardError },
+  { name: 'intervalLower', words: 'interval of the estimate', cell: (p) => sampling(p)?.interval[0] },
+  { name: 'intervalUpper', words: 'interval of the estimate', cell: (p) => sampling(p)?.interval[1] },
+  { name: 'intervalConfidence', words: 'its level', cell: (p) => sampling(p)?.confidence },
+  { name: 'groups', words: 'rows or columns, for two groups', cell: (_, { plan }) => plan.groups },
+  { name: 'event', words: 'the event whose proportions are compared', cell: (_, { statistic }) => statistic.event },
+  { name: 'first', words: 'the first group', cell: (_, { statistic }) => statistic.groups?.[0].label },
+  { name: 'second', words: 'the group it is compared with', cell: (_, { statistic }) => statistic.groups?.[1].label },
+  { name: 'rows', words: 'rows of the table', cell: (_, { input }) => input.rowLabels.length },
+  { name: 'columns', words: 'columns of the table', cell: (_, { input }) => input.columnLabels.length },
+  { name: 'total', words: 'sum of its counts', cell: (_, { input }) => input.total },
+  { name: 'seed', words: 'seed of the draws', cell: (_, { plan }) => plan.seed },
+  { name: 'version', words: 'version of keepsum', cell: (_, { tool }) => tool.version },
+];
+
+export const csv: Format = {
+  words: 'one row for each p-value, for spreadsheets',
+  write(result, { rawCsv }) {
+    const rows = result.pValues.map((p) => csvColumns.map((column) => cellText(column.cell(p, result), rawCsv)));
+    return [csvColumns.map((column) => column.name), ...rows].map((row) => `${row.join(',')}\n`).join('');
+  },
+};
+
+function cellText(cell: Cell, raw: boolean): string {
+  if (cell === null || cell === undefined) return '';
+  if (typeof cell !== 'string') return String(cell);
+  return csvField(raw ? cell : disarmed(cell));
+}
+
+// What spreadsheets take for the beginning of a formula, the full-width forms of some of them included.
+const formulaStart = /^[=+\-@\t\r\n\uff1d\uff0b\uff0d\uff20]/;
+
+/** A text cell that no spreadsheet runs and no terminal obeys. Our word for an infinite number stays a number. */
+const disarmed = (text: string): string => (formulaStart.test(text) && text !== '-infinity' ? "'" : '') + shown(text);
+
+/** Quoted where CSV needs it (RFC 4180). */
+const csvField = (text: string): string => (/[",\r\n]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text);

@@ -1,0 +1,68 @@
+// The report for documents: the same page as headings, paragraphs and a pipe table. Labels are escaped for markdown and
+// for html, so that none of them becomes a link, an image or a tag.
+import { shown } from '../result/label-words.js';
+import { countWords } from '../result/number-words.js';
+import type { InputEcho, Result } from '../result/result.js';
+import type { Format } from './format.js';
+import { pageFor, type Block, type Sentence } from './page.js';
+
+export const markdown: Format = {
+  words: 'headings, sentences and a table, for documents',
+  write(result) {
+    const { title, sections } = pageFor(result);
+    const parts = [
+      `# ${escaped(title)}`,
+      ...sections.flatMap(({ heading, blocks }) => [
+        `## ${heading}`,
+        ...blocks.map((block) => blockText(block, result)),
+      ]),
+      '## For a methods section',
+      escaped(shown(result.methods)),
+    ];
+    return `${parts.join('\n\n')}\n`;
+  },
+};
+
+function blockText(block: Block, result: Result): string {
+  switch (block.kind) {
+    case 'sentence':
+      return sentenceText(block);
+    case 'table':
+      return tableText(result.input);
+    case 'command':
+      return `    ${block.words.join(' ')}`;
+  }
+}
+
+function sentenceText({ text, tone }: Sentence): string {
+  if (tone === 'answer') return `**${escaped(text)}**`;
+  return tone === 'warning' ? `> ${escaped(text)}` : escaped(text);
+}
+
+function tableText(input: InputEcho): string {
+  const row = (cells: readonly string[]): string => `| ${cells.join(' | ')} |`;
+  const bold = (words: string): string => `**${words}**`;
+  const headings = ['', ...input.columnLabels.map(labelText), bold('all')];
+  return [
+    row(headings),
+    row(headings.map((_, j) => (j === 0 ? ':--' : '--:'))),
+    ...input.counts.map((counts, i) =>
+      row([labelText(input.rowLabels[i]!), ...counts.map(countWords), bold(countWords(input.rowTotals[i]!))]),
+    ),
+    row([bold('all'), ...[...input.columnTotals, input.total].map((total) => bold(countWords(total)))]),
+  ].join('\n');
+}
+
+const labelText = (label: string): string => (label.trim() === '' ? '(blank)' : escaped(shown(label)));
+
+/** Text in which markdown and html find nothing to act on, bare addresses and the start of a list included. */
+const escaped = (words: string): string =>
+  words
+    .trim()
+    .replace(/&(?=[#a-z])/gi, '&amp;')
+    .replaceAll('<', '&lt;')
+    .replaceAll('>', '&gt;')
+    .replace(/[\\`*_[\]|~#$]/g, '\\$&')
+    .replace(/:(?=\/\/)/g, '\\:')
+    .replace(/\bwww\./gi, (start) => start.replace('.', '\\.'))
+    .replace(/^([-+=]|\d+(?=[.)]))/, (start) => (/\d/.test(start) ? `${start}\\` : `\\${start}`));

@@ -1,0 +1,110 @@
+// What a report for people says, and in which order, before any format lays it out: what was tested, the table, the
+// answer with its error, other readings, the footing of the approximation, cautions, how to run it again.
+import {
+  citedStatistic,
+  errorSentences,
+  isOneTableOnly,
+  pSentence,
+  tableWords,
+  tiesSentence,
+} from '../result/describe.js';
+import { quoted, shown } from '../result/label-words.js';
+import { digits, percentWords } from '../result/number-words.js';
+import type { Result } from '../result/result.js';
+import { cautionsFor } from './cautions.js';
+import { againCommand, againInWords, againSentences } from './run-again.js';
+import { methodSentences, missingSentences, sourceWords } from './setting.js';
+
+export interface Sentence {
+  readonly kind: 'sentence';
+  readonly text: string;
+  readonly tone: 'plain' | 'answer' | 'warning' | 'aside';
+}
+
+/** The table of the result stands here. */
+export interface TablePlace {
+  readonly kind: 'table';
+}
+
+/** A command to type, in words that each stay whole, and the same as a sentence for where it does not fit. */
+export interface Command {
+  readonly kind: 'command';
+  readonly words: readonly string[];
+  readonly otherwise: string;
+}
+
+export type Block = Sentence | TablePlace | Command;
+
+export interface Section {
+  readonly heading: string;
+  readonly blocks: readonly Block[];
+}
+
+export interface Page {
+  readonly title: string;
+  readonly sections: readonly Section[];
+}
+
+export function pageFor(result: Result): Page {
+  return {
+    title: questionOf(result),
+    sections: sectionsOf(result).filter((section) => section.blocks.length > 0),
+  };
+}
+
+const sectionsOf = (result: Result): Section[] => [
+  { heading: 'What was tested', blocks: tested(result) },
+  { heading: 'The table', blocks: [{ kind: 'table' }] },
+  { heading: 'The answer', blocks: answer(result) },
+  { heading: 'Other readings of the same table', blocks: otherReadings(result) },
+  { heading: 'Would an approximation do?', blocks: footing(result) },
+  { heading: 'Before you use it', blocks: cautionsFor(result).map(({ text, tone }) => sentence(text, tone)) },
+  { heading: 'To run it again', blocks: again(result) },
+];
+
+function questionOf({ statistic, pValues }: Result): string {
+  if (statistic.groups === undefined || statistic.event === undefined) return 'Are rows and columns related?';
+  const [first, second] = statistic.groups.map(({ label }) => quoted(label));
+  const event = quoted(statistic.event);
+  const tail = pValues[0]!.tail;
+  if (tail === 'both') return `Is ${event} as common in ${first} as in ${second}?`;
+  return `Is ${event} more common in ${tail === 'upper' ? `${first} than in ${second}` : `${second} than in ${first}`}?`;
+}
+
+/** A result may have been read from a file, so nothing in it is printed unseen. */
+const sentence = (text: string, tone: Sentence['tone']): Sentence => ({ kind: 'sentence', text: shown(text), tone });
+const plain = (text: string): Sentence => sentence(text, 'plain');
+
+const tested = (result: Result): Block[] => [
+  plain(`A ${tableWords(result)}, ${sourceWords(result)}.`),
+  ...missingSentences(result).map(plain),
+  plain(`Measured by ${citedStatistic(result.statistic.name)}.`),
+  ...methodSentences(result).map(plain),
+];
+
+function answer(result: Result): Block[] {
+  return [sentence(result.sentence, 'answer'), ...errorSentences(result.pValues[0]!).map(plain)];
+}
+
+function otherReadings(result: Result): Block[] {
+  const [headline, ...others] = result.pValues;
+  const ties = isOneTableOnly(result) ? undefined : tiesSentence(headline!);
+  return [...(ties === undefined ? [] : [ties]), ...others.map((p) => pSentence(result, p))].map(plain);
+}
+
+function footing(result: Result): Block[] {
+  if (isOneTableOnly(result)) return [];
+  const { smallestExpected, shareBelowFive, cochranSentence } = result.diagnostics;
+  const share = shareBelowFive === 0 ? 'no cell expects' : `${percentWords(shareBelowFive)} of the cells expect`;
+  return [
+    plain(`The smallest expected count is ${digits(smallestExpected, 3)}; ${share} fewer than 5.`),
+    plain(cochranSentence),
+  ];
+}
+
+function again(result: Result): Block[] {
+  const words = againCommand(result);
+  const otherwise = againInWords(result);
+  const first: Block = words === undefined ? plain(otherwise) : { kind: 'command', words, otherwise: shown(otherwise) };
+  return [first, ...againSentences(result).map((text) => sentence(text, 'aside'))];
+}

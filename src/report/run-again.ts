@@ -1,0 +1,118 @@
+// How to run the same analysis again: a command where it can be typed safely, and the facts that decide every digit.
+import { quoted, shown } from '../result/label-words.js';
+import { countWords } from '../result/number-words.js';
+import type { InputEcho, Result } from '../result/result.js';
+
+/**
+ * The words of a command, each to stay whole on its line; undefined where there is none to give (a program passed the
+ * counts) or where a label cannot be written so that a shell reads it as it stands. Never run by us.
+ */
+export function againCommand(result: Result): readonly string[] | undefined {
+  const table = tableParts(result.input);
+  if (table === undefined) return undefined;
+  const operands = table.operands.map(shellWord);
+  const options = [...table.options, ...planOptions(result)].map(([name, value]) => optionWords(name, value));
+  const words = [...operands, ...options];
+  return words.includes(undefined) ? undefined : ['keepsum test', ...(words as string[])];
+}
+
+/** The same in a sentence. */
+export function againInWords({ input, plan }: Result): string {
+  const said = [
+    `statistic ${plan.statistic}`,
+    `tail ${plan.tail}`,
+    ...(plan.twoSidedRule === null ? [] : [`two-sided rule ${plan.twoSidedRule}`]),
+    ...(plan.groups === null ? [] : [`groups ${plan.groups}`]),
+    ...(plan.event === null ? [] : [`event ${quoted(plan.event)}`]),
+    ...(plan.reference === null ? [] : [`reference ${quoted(plan.reference)}`]),
+    `method ${plan.method}`,
+  ];
+  const { rowsFrom, columnsFrom } = input.source;
+  const table =
+    input.source.form === 'records' ? ` (rows ${quoted(rowsFrom ?? '')}, columns ${quoted(columnsFrom ?? '')})` : '';
+  return `Take the same counts${table} with ${said.join(', ')}.`;
+}
+
+type Option = readonly [name: string, value: string];
+
+interface TableParts {
+  readonly operands: readonly string[];
+  readonly options: readonly Option[];
+}
+
+function tableParts({ source, ...input }: InputEcho): TableParts | undefined {
+  switch (source.form) {
+    case 'library':
+      return undefined;
+    case 'inline': {
+      const labels = input.columnLabels;
+      const hasNames = labels.some((label, j) => label !== `column ${j + 1}`);
+      return {
+        operands: input.counts.map((row, i) => rowOperand(input.rowLabels[i]!, i, row)),
+        options: hasNames ? [['column-labels', labels.map(csvLabel).join(',')]] : [],
+      };
+    }
+    case 'cross-table':
+      return { operands: ['FILE'], options: (source.totalsLeftOut ?? []).length > 0 ? [['drop-totals', '']] : [] };
+    case 'records':
+      return {
+        operands: ['FILE'],
+        options: [
+          ['rows', source.rowsFrom ?? ''],
+          ['columns', source.columnsFrom ?? ''],
+          ...optional('count', source.countFrom),
+          ...optional('missing', input.missing?.rule),
+        ],
+      };
+  }
+}
+
+/** A row as it is typed; without its label where that is the one given to rows that have none. */
+const rowOperand = (label: string, index: number, counts: readonly number[]): string =>
+  label === `row ${index + 1}` ? counts.join(',') : `${label}=${counts.join(',')}`;
+
+const csvLabel = (label: string): string => (/[",]/.test(label) ? `"${label.replaceAll('"', '""')}"` : label);
+
+const optional = (name: string, value: string | number | null | undefined): Option[] =>
+  value === null || value === undefined ? [] : [[name, String(value)]];
+
+const planOptions = ({ plan }: Result): Option[] => [
+  ...optional('statistic', plan.statistic),
+  ...optional('tail', plan.tail),
+  ...optional('two-sided-rule', plan.twoSidedRule),
+  ...optional('groups', plan.groups),
+  ...optional('event', plan.event),
+  ...optional('reference', plan.reference),
+  ...optional('method', plan.method),
+  ...optional('draws', plan.draws),
+  ...optional('seed', plan.seed),
+  ...optional('sampling-confidence', plan.draws === null ? null : plan.samplingConfidence),
+];
+
+/** An option with its value; a value that looks like an option is joined by an equals sign. A flag has no value. */
+function optionWords(name: string, value: string): string | undefined {
+  if (name === 'drop-totals') return `--${name}`;
+  if (value.startsWith('-')) return shellWord(`--${name}=${value}`);
+  const word = shellWord(value);
+  return word === undefined ? undefined : `--${name} ${word}`;
+}
+
+/** Bare, or in the single quotes that a POSIX shell takes literally; else undefined. */
+function shellWord(word: string): string | undefined {
+  if (word === '' || (word.startsWith('-') && !word.startsWith('--'))) return undefined;
+  if (/^(--)?\w[\w.,:=+/-]*$/.test(word)) return word;
+  return shown(word) === word && !/['\u2018-\u201b]/.test(word) ? `'${word}'` : undefined;
+}
+
+/** What decides every digit, in sentences. */
+export function againSentences({ input, plan, tool }: Result): string[] {
+  const draws =
+    plan.draws === null || plan.seed === null
+      ? []
+      : [
+          `${countWords(plan.draws)} draws, seed ${quoted(plan.seed)}, generator ${plan.generator ?? 'unnamed'}` +
+            `${plan.blockSize === null ? '' : ` in blocks of ${countWords(plan.blockSize)}`}: the same seed gives the same digits on any machine.`,
+        ];
+  const bytes = input.sha256 === null ? [] : [`The bytes read have the SHA-256 ${input.sha256}.`];
+  return [...draws, ...bytes, `${tool.name} ${tool.version}; the json format holds every digit and the whole plan.`];
+}

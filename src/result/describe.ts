@@ -1,0 +1,153 @@
+// The words that the sentence, the methods paragraph and every report share: how a p-value, its method and its error
+// are named. Statistics bring their own words from the registry.
+import { statistics } from '../statistic/registry.js';
+import { quoted } from './label-words.js';
+import { countWords, digits, levelWords, probabilityWords, roundedTo, tinyWords } from './number-words.js';
+import type { PValue, PValueError, Result } from './result.js';
+
+/** A result whose sentence and methods paragraph are still to be written. */
+export type ResultBeforeWords = Omit<Result, 'sentence' | 'methods'>;
+
+export type SamplingError = Extract<PValueError, { kind: 'sampling' }>;
+
+/** Words of a statistic, from the registry; its bare name when it is none of ours. */
+export const statisticWords = (name: string): string =>
+  statistics.find((statistic) => statistic.name === name)?.words ?? `the statistic ${quoted(name)}`;
+
+/** The same without the explanation behind it, for the second mention. */
+export const shortStatisticWords = (name: string): string => statisticWords(name).split(/ \(|, /)[0]!;
+
+/** Words of a statistic with its source (author year) in brackets. */
+export function citedStatistic(name: string): string {
+  const words = statisticWords(name);
+  const source = statistics.find((one) => one.name === name)?.source.replace(/\((\d{4})\)/g, '$1');
+  if (source === undefined) return words;
+  return words.endsWith(')') ? `${words.slice(0, -1)}; ${source})` : `${words} (${source})`;
+}
+
+export const samplingErrorOf = (p: PValue): SamplingError | undefined =>
+  p.errors.find((error): error is SamplingError => error.kind === 'sampling');
+
+const tailWords = { upper: 'upper-tailed', lower: 'lower-tailed', both: 'two-tailed' } as const;
+
+/** Which p: "two-tailed permutation p (rule: distance)". */
+export function pName(p: PValue): string {
+  const kind = p.method === 'asymptotic' ? 'p' : 'permutation p';
+  return `${tailWords[p.tail]} ${kind}${p.rule === undefined ? '' : ` (rule: ${p.rule})`}`;
+}
+
+/** The number itself, no further than its error allows. */
+export function pNumber(p: PValue): string {
+  if (p.p === null) return p.log10P === null ? 'unknown' : tinyWords(p.log10P);
+  const sampling = samplingErrorOf(p);
+  return sampling === undefined ? probabilityWords(p.p) : roundedTo(sampling.standardError ?? p.p, p.p);
+}
+
+/** A probability that goes with a p (strict, mid), shown to the same error. */
+export function besideP(p: PValue, value: number): string {
+  const sampling = samplingErrorOf(p);
+  return sampling === undefined
+    ? probabilityWords(value)
+    : roundedTo(sampling.standardError ?? sampling.interval[1], value);
+}
+
+/** How the p was found, as the end of a clause: "exact", "from 100,000 random tables ...". */
+export function foundWords(p: PValue, seed: string | null): string {
+  if (p.method === 'exact') return 'exact';
+  if (p.method === 'sample') {
+    const draws = samplingErrorOf(p)?.draws;
+    const many = draws === undefined ? 'random tables' : `${countWords(draws)} random tables`;
+    return `sampled from ${many} with the same margins${seed === null ? '' : ` (seed ${quoted(seed)})`}`;
+  }
+  return `by the ${approximationName(p)} approximation`;
+}
+
+export const approximationName = (p: PValue): string => (p.degreesOfFreedom === undefined ? 'normal' : 'chi-square');
+
+/** What is known of the error of a p, as an aside: empty for an exact one. */
+export function errorAside(p: PValue): string {
+  const sampling = samplingErrorOf(p);
+  if (sampling === undefined) return p.method === 'asymptotic' ? ' (error unknown)' : '';
+  const { standardError } = sampling;
+  return ` (${standardError === null ? '' : `standard error ${standardErrorWords(standardError)}, `}${intervalWords(sampling)})`;
+}
+
+const standardErrorWords = (error: number): string => digits(error, 2);
+
+const intervalWords = ({ confidence, interval: [lower, upper] }: SamplingError): string =>
+  `${levelWords(confidence)} interval ${probabilityWords(lower)} to ${probabilityWords(upper)}`;
+
+export const degreesWords = (degrees: number): string => `${degrees} degree${degrees === 1 ? '' : 's'} of freedom`;
+
+/** What the tail means for two groups: which of them has the greater share of events. */
+export function directionWords(result: ResultBeforeWords, p: PValue): string | undefined {
+  const { groups, event } = result.statistic;
+  if (groups === undefined || event === undefined || p.tail === 'both' || p.statistic !== result.statistic.name) {
+    return undefined;
+  }
+  const [first, second] = groups;
+  return `${quoted(event)} more common in ${quoted((p.tail === 'upper' ? first : second).label)}`;
+}
+
+/** One p-value as one sentence, its error in it. */
+export function pSentence(result: ResultBeforeWords, p: PValue): string {
+  const direction = directionWords(result, p);
+  const aside = direction === undefined ? '' : ` (${direction})`;
+  const guarantee = p.guaranteed || p.method === 'asymptotic' ? '' : ', not guaranteed';
+  return `The ${pName(p)} of ${shortStatisticWords(p.statistic)}${aside} is ${pNumber(p)}${shortFoundWords(p)}${guarantee}.`;
+}
+
+function shortFoundWords(p: PValue): string {
+  if (p.method === 'exact') return ', exact';
+  if (p.method === 'sample') return `${errorAside(p)}, from the same draws`;
+  const degrees = p.degreesOfFreedom === undefined ? '' : ` on ${degreesWords(p.degreesOfFreedom)}`;
+  return ` by the ${approximationName(p)} approximation${degrees}; its error is unknown`;
+}
+
+/** What the error of a p-value is, one sentence for each kind of error it carries. */
+export const errorSentences = (p: PValue): string[] => p.errors.map((error) => errorSentence(p, error));
+
+function errorSentence(p: PValue, error: PValueError): string {
+  switch (error.kind) {
+    case 'rounding':
+      return error.relative === 0
+        ? 'It carries no error at all.'
+        : `Its only error is rounding, at most ${error.relative.toExponential(1)} of its value.`;
+    case 'sampling':
+      return samplingSentence(p, error);
+    case 'approximation':
+      return 'It rests on an approximation for large counts; its error here is not known.';
+  }
+}
+
+function samplingSentence(p: PValue, error: SamplingError): string {
+  const draws = countWords(error.draws);
+  const all = countWords(error.draws + 1);
+  const ending = `with the observed one counted in, p is ${p.rule === 'doubled' ? '2 x ' : ''}${countWords(error.atLeast + 1)} / ${all}`;
+  const limit = p.rule === 'doubled' ? ', at most 1' : '';
+  const seen =
+    error.tails === undefined
+      ? `${howMany(error)} of ${draws} random tables ${error.atLeast > 1 ? 'were' : 'was'} at least as extreme`
+      : `${countWords(error.tails.upper)} of ${draws} random tables were at least as extreme in the upper tail, ${countWords(error.tails.lower)} in the lower`;
+  return `Its error is that of drawing: ${seen}; ${ending}${limit} (Phipson & Smyth 2010).`;
+}
+
+const howMany = ({ atLeast, draws }: SamplingError): string =>
+  atLeast === 0 ? 'none' : atLeast === draws ? 'every one' : countWords(atLeast);
+
+/** What counting ties by half, or not at all, would make of the p; undefined when the null does not tell. */
+export function tiesSentence(p: PValue): string | undefined {
+  if (p.mid === null || p.strict === null || p.tied === 0) return undefined;
+  return (
+    `With ties counted by half (mid-p, Lancaster 1961) the p would be ${besideP(p, p.mid)}, ` +
+    `with ties left out ${besideP(p, p.strict)}; neither is guaranteed.`
+  );
+}
+
+/** "4 x 5 table of 592 counts". */
+export const tableWords = ({ input }: ResultBeforeWords): string =>
+  `${input.rowLabels.length} x ${input.columnLabels.length} table of ${countWords(input.total)} counts`;
+
+/** True when the margins leave one table only, so that no p below 1 can arise. */
+export const isOneTableOnly = (result: ResultBeforeWords): boolean =>
+  result.notes.some((note) => note.code === 'only-one-table');

@@ -1,0 +1,113 @@
+// The paragraph for a methods section: statistic, conditioning, tail and rule, method with its draws and seed, error,
+// software - and the sources (author, year) of exactly what was used for this result.
+import {
+  approximationName,
+  citedStatistic,
+  isOneTableOnly,
+  pName,
+  samplingErrorOf,
+  shortStatisticWords,
+  tableWords,
+  type ResultBeforeWords,
+} from './describe.js';
+import { quoted } from './label-words.js';
+import { countWords, levelWords } from './number-words.js';
+import type { PValue } from './result.js';
+
+/** A paragraph that lets a reader judge and repeat the analysis. Labels in it are quoted and show no control characters. */
+export function methodsFor(result: ResultBeforeWords): string {
+  const headline = result.pValues[0]!;
+  return [
+    testSentence(result),
+    rolesSentence(result),
+    methodSentence(result, headline),
+    ...(isOneTableOnly(result)
+      ? ['The margins allow one table only, so p is 1.']
+      : [ruleSentence(headline), tiesSentence(headline), besideSentence(result, headline)]),
+    `Computed with ${result.tool.name} ${result.tool.version}.`,
+  ]
+    .filter((sentence) => sentence !== undefined)
+    .join(' ');
+}
+
+function testSentence(result: ResultBeforeWords): string {
+  return `Association between the rows and the columns of a ${tableWords(result)} was tested with ${citedStatistic(result.statistic.name)}.`;
+}
+
+function rolesSentence({ plan, statistic }: ResultBeforeWords): string | undefined {
+  if (statistic.groups === undefined || statistic.event === undefined) return undefined;
+  const [first, second] = statistic.groups;
+  return (
+    `The groups were the ${plan.groups ?? 'rows'} and the event was ${quoted(statistic.event)}; ` +
+    `differences are ${quoted(first.label)} minus ${quoted(second.label)}.`
+  );
+}
+
+function methodSentence(result: ResultBeforeWords, p: PValue): string {
+  const name = `The ${pName(p)}`;
+  if (p.method === 'exact') {
+    const isTwoByTwo = result.input.rowLabels.length === 2 && result.input.columnLabels.length === 2;
+    const source = isTwoByTwo ? 'Fisher 1935' : 'Freeman & Halton 1951';
+    return `${name} is exact: it adds up the probabilities, given both margins, of all tables at least as extreme as the observed one (${source}).`;
+  }
+  if (p.method === 'asymptotic') return `${name} comes from ${approximationWords(p)}, which holds for large counts.`;
+  return `${name} ${samplingWords(result, p)}`;
+}
+
+function samplingWords({ plan }: ResultBeforeWords, p: PValue): string {
+  const error = samplingErrorOf(p);
+  const draws = countWords(error?.draws ?? plan.draws ?? 0);
+  const generator = plan.generator === null ? '' : `; generator ${plan.generator}`;
+  const seed = plan.seed === null ? '' : `, seed ${quoted(plan.seed)}`;
+  const [more, reported, share] =
+    p.rule === 'doubled'
+      ? ['at least as extreme in the smaller tail', '2 (b + 1) / (m + 1), at most 1', '2 b / m']
+      : ['at least as extreme', '(b + 1) / (m + 1)', 'b / m'];
+  const interval =
+    error === undefined
+      ? ''
+      : `, with a ${levelWords(error.confidence)} interval for ${share} (Clopper & Pearson 1934)`;
+  return (
+    `was estimated from m = ${draws} random tables with both margins held, drawn by dealing out labels or cell by cell ` +
+    `(Patefield 1981), whichever costs less for these margins${generator}${seed}. ` +
+    `With b of them ${more} it is reported as ${reported} (Phipson & Smyth 2010)${interval}.`
+  );
+}
+
+const approximationWords = (p: PValue, words: (name: string) => string = shortStatisticWords): string =>
+  `the ${approximationName(p)} approximation to ${words(p.statistic)}`;
+
+function ruleSentence(p: PValue): string | undefined {
+  switch (p.rule) {
+    case 'distance':
+      return 'Two-tailed, a table is as extreme when its statistic lies at least as far from the centre.';
+    case 'probability':
+      return 'Two-tailed, a table is as extreme when its statistic takes a value no more probable than the observed one (Irwin 1935).';
+    case 'doubled':
+      return p.method === 'sample' ? undefined : 'Two-tailed, the smaller one-tailed p is doubled, up to 1.';
+    case undefined:
+      return undefined;
+  }
+}
+
+function tiesSentence(p: PValue): string | undefined {
+  if (p.method === 'asymptotic') return undefined;
+  const mid = p.mid === null ? '' : ', a mid-p counts them by half (Lancaster 1961)';
+  return `Near ties with the observed table were settled by exact arithmetic; ties count as at least as extreme${mid}.`;
+}
+
+function besideSentence({ pValues, diagnostics }: ResultBeforeWords, headline: PValue): string | undefined {
+  const beside = pValues.filter((p) => p !== headline && p.method === 'asymptotic');
+  if (beside.length === 0 && headline.method !== 'asymptotic') return undefined;
+  const verdict = diagnostics.cochranAdvice === 'met' ? 'met' : 'not met';
+  const advice = `the advice on expected counts of Cochran (1954) was ${verdict}`;
+  if (beside.length === 0) return `For that approximation ${advice}.`;
+  const words = [
+    ...new Set(
+      beside.map((p) =>
+        approximationWords(p, p.statistic === headline.statistic ? shortStatisticWords : citedStatistic),
+      ),
+    ),
+  ].join(' and ');
+  return `For comparison only, ${words} stands beside; ${advice}.`;
+}

@@ -1,0 +1,65 @@
+// One line for a report: the sizes first, then the p with its tail, two-sided rule, method, draws, seed and error.
+// After the American Statistical Association's statement (Wasserstein & Lazar 2016): the p stands beside what was seen,
+// and nothing is called significant.
+import {
+  degreesWords,
+  directionWords,
+  errorAside,
+  foundWords,
+  isOneTableOnly,
+  pName,
+  pNumber,
+  shortStatisticWords,
+  tableWords,
+  type ResultBeforeWords,
+} from './describe.js';
+import { quoted } from './label-words.js';
+import { countWords, percentWords, pointsWords, statisticValueWords } from './number-words.js';
+import type { PValue, Result } from './result.js';
+
+type Group = NonNullable<Result['statistic']['groups']>[number];
+
+/** The sentence for a report; labels in it are quoted and show no control characters. */
+export function sentenceFor(result: ResultBeforeWords): string {
+  const headline = result.pValues[0]!;
+  if (isOneTableOnly(result)) return oneTableSentence(result, headline);
+  const { groups, event } = result.statistic;
+  const seen =
+    groups === undefined || event === undefined ? `In a ${tableWords(result)}, ` : sharesSeen(result, groups, event);
+  const direction = directionWords(result, headline);
+  const name = `${pName(headline)}${direction === undefined ? '' : ` (${direction})`}`;
+  const found = foundWords(headline, result.plan.seed);
+  const answer = `${pNumber(headline)}${errorAside(headline)}${headline.method === 'asymptotic' ? ' ' : ', '}${found}`;
+  return `${seen}${valueWords(result)} and its ${name} is ${answer}.`;
+}
+
+function sharesSeen(result: ResultBeforeWords, groups: readonly [Group, Group], event: string): string {
+  const [first, second] = groups;
+  const difference =
+    first.proportion === null || second.proportion === null
+      ? 'an empty group leaves no difference'
+      : `first minus second: ${pointsWords(first.proportion - second.proportion)}`;
+  return (
+    `With the ${result.plan.groups ?? 'rows'} as groups, ${shareOf(first)} against ${shareOf(second)} ` +
+    `were ${quoted(event)} (${difference}); `
+  );
+}
+
+const shareOf = (group: Group): string =>
+  `${countWords(group.events)} of ${countWords(group.size)}${percentOf(group)} in ${quoted(group.label)}`;
+
+const percentOf = (group: Group): string => (group.proportion === null ? '' : ` (${percentWords(group.proportion)})`);
+
+function valueWords({ statistic }: ResultBeforeWords): string {
+  const words = shortStatisticWords(statistic.name);
+  if (statistic.value === null) return `${words} is undefined, because a group is empty`;
+  const degrees = statistic.degreesOfFreedom === undefined ? '' : ` (${degreesWords(statistic.degreesOfFreedom)})`;
+  return `${words} is ${statisticValueWords(statistic.value)}${degrees}`;
+}
+
+function oneTableSentence(result: ResultBeforeWords, p: PValue): string {
+  return (
+    `The margins of this ${tableWords(result)} allow no other table, so the ${pName(p)} of ` +
+    `${shortStatisticWords(p.statistic)} is ${pNumber(p)} whatever the counts: it speaks neither for nor against an association.`
+  );
+}
