@@ -4,13 +4,11 @@ import { logFactorial } from './log-factorial.js';
 
 const halfLogTwoPi = 0.9189385332046727;
 
-/** Stirling's error: ln n! - [(n + 1/2) ln n - n + ln(2 pi)/2], n whole and at least 1. Absolute error below 1e-14. */
+/** Stirling's error: ln n! - [(n + 1/2) ln n - n + ln(2 pi)/2], n whole and at least 1, or any n from 16. Absolute error below 1e-14. */
 export function stirlingError(n: number): number {
   if (n < 16) return logFactorial(n) - ((n + 0.5) * Math.log(n) - n + halfLogTwoPi);
   const square = n * n;
-  return (
-    (1 / 12 - (1 / 360 - (1 / 1260 - (1 / 1680 - 1 / 1188 / square) / square) / square) / square) / n
-  );
+  return (1 / 12 - (1 / 360 - (1 / 1260 - (1 / 1680 - 1 / 1188 / square) / square) / square) / square) / n;
 }
 
 /**
@@ -37,5 +35,4 @@ export function devianceTerm(n: number, e: number): number {
 }
 
 /** What ln n! adds to n ln n - n: ln(2 pi n)/2 + Stirling's error, n whole; 0 for n = 0. Absolute error below 2e-14. */
-export const beyondEntropy = (n: number): number =>
-  n === 0 ? 0 : halfLogTwoPi + 0.5 * Math.log(n) + stirlingError(n);
+export const beyondEntropy = (n: number): number => (n === 0 ? 0 : halfLogTwoPi + 0.5 * Math.log(n) + stirlingError(n));

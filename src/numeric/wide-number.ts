@@ -65,7 +65,8 @@ export class WideSum {
       return { value: scaleByPower(quotient, shift), log10: Math.log10(quotient) + shift * Math.log10(2) };
     }
     const scale = 2 ** (this.exponent - whole.exponent);
-    if (this.sum.high === whole.sum.high && this.sum.low === whole.sum.low && scale === 1) return { value: 1, log10: 0 };
+    if (this.sum.high === whole.sum.high && this.sum.low === whole.sum.low && scale === 1)
+      return { value: 1, log10: 0 };
     const quotient = dividePairs(this.sum, whole.sum) * scale;
     return { value: quotient, log10: Math.log10(quotient) };
   }

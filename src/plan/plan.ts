@@ -1,5 +1,6 @@
 // The plan: everything a run will do, checked and frozen before work starts, echoed whole in the result.
 import type { OrderingName } from '../null/contract.js';
+import type { Forecast } from '../null/forecast.js';
 
 export const tails = ['upper', 'lower', 'both'] as const;
 export type Tail = (typeof tails)[number];
@@ -25,7 +26,7 @@ export interface PlanOptions {
   /** Number of sampled tables, 1 to 1e12. Default 100000. */
   readonly draws?: number;
   readonly seed?: string;
-  /** Bound on exact work in counted units. Default 1e8. */
+  /** Bound on exact work in counted units. Default 6e7, about two seconds. */
   readonly effort?: number;
   /** Significance level that sentences compare with, in (0, 1). Default 0.05. */
   readonly alpha?: number;
@@ -33,16 +34,6 @@ export interface PlanOptions {
   readonly confidence?: number;
   /** Level of the interval of a sampled p, in (0, 1). Default 0.99. */
   readonly samplingConfidence?: number;
-}
-
-export interface Forecast {
-  /** Counted units of exact work: one cell set in one table. */
-  readonly workUnits: number;
-  /** Tables to visit (an estimate unless `tablesAreCounted`). */
-  readonly tables: number;
-  readonly tablesAreCounted: boolean;
-  /** Seconds that much work takes on a usual machine; for display, never for a choice. */
-  readonly seconds: number;
 }
 
 export interface Plan {

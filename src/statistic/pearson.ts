@@ -38,8 +38,7 @@ function bind(live: LiveTable): BoundStatistic {
     sum: {
       cell,
       observed,
-      slack:
-        exactWeights === null ? slackOfSum(expected.length, 6, observed, Math.sqrt(live.total * observed)) : 0,
+      slack: exactWeights === null ? slackOfSum(expected.length, 6, observed, Math.sqrt(live.total * observed)) : 0,
       decide: (counts) => compareWeightedSquares(weights, counts, live.counts),
     },
   };

@@ -12,9 +12,12 @@ const transitionLimit = 8_000;
 
 /** Deterministic, from the margins alone. */
 export function countTables(live: LiveTable): TableCount {
-  const [few, many] = live.rows <= live.columns ? [live.rowTotals, live.columnTotals] : [live.columnTotals, live.rowTotals];
+  const [few, many] =
+    live.rows <= live.columns ? [live.rowTotals, live.columnTotals] : [live.columnTotals, live.rowTotals];
   const counted = few.length === 2 ? countTwoLines(few[0]!, many) : countByLines(few, many);
-  return counted === undefined ? { tables: approximateCount(few, many), counted: false } : { tables: counted, counted: true };
+  return counted === undefined
+    ? { tables: approximateCount(few, many), counted: false }
+    : { tables: counted, counted: true };
 }
 
 /** Ways to split one line's total over cells that hold at most `capacities`: one running sum a cell. */
@@ -96,6 +99,7 @@ function approximateCount(lines: Float64Array, totals: Float64Array): number {
   }
   let distance = 0;
   for (const total of totals) distance += (total - all / k) ** 2;
-  const log = logWays + 0.5 * Math.log(k) - ((k - 1) / 2) * Math.log(2 * Math.PI * variance) - distance / (2 * variance);
+  const log =
+    logWays + 0.5 * Math.log(k) - ((k - 1) / 2) * Math.log(2 * Math.PI * variance) - distance / (2 * variance);
   return Math.max(1, Math.exp(Math.min(700, log)));
 }

@@ -44,7 +44,14 @@ export function exactByEnumeration(live: LiveTable, orderings: readonly Ordering
     }
   };
 
-  const set = (cell: number, row: number, column: number, rowLeft: number, mantissa: number, exponent: number): void => {
+  const set = (
+    cell: number,
+    row: number,
+    column: number,
+    rowLeft: number,
+    mantissa: number,
+    exponent: number,
+  ): void => {
     const room = roomAfter[cell]!;
     const last = row === rows - 1;
     const from = last ? left[column]! : Math.max(0, rowLeft - room);

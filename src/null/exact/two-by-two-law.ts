@@ -69,8 +69,18 @@ export function walk(
     }
     for (let k = from; direction > 0 ? k <= to : k >= to; k += direction) {
       if (k !== at) {
-        if (direction > 0) weight.multiply(row - at).multiply(column - at).divide(k).divide(rest + k);
-        else weight.multiply(at).multiply(rest + at).divide(row - k).divide(column - k);
+        if (direction > 0)
+          weight
+            .multiply(row - at)
+            .multiply(column - at)
+            .divide(k)
+            .divide(rest + k);
+        else
+          weight
+            .multiply(at)
+            .multiply(rest + at)
+            .divide(row - k)
+            .divide(column - k);
         at = k;
       }
       if (weight.high < small) {

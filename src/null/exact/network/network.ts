@@ -1,0 +1,44 @@
+// What one exact computation walks on: the table turned, its statistic in whole numbers, weights, bounds and nodes.
+// The columns are cut in two halves; each half's partial tables are listed node by node, and the halves meet where the row
+// sums of one complete those of the other (meet in the middle on the network of Mehta & Patel 1983).
+import type { Encoding } from './encoding.js';
+import type { SummedSide } from './level.js';
+import type { NodeSpace } from './node-space.js';
+import type { OrientedTable } from './oriented-table.js';
+import type { RestBounds } from './rest-bounds.js';
+import type { ColumnTerms } from './transitions.js';
+import type { Weights } from './weights.js';
+
+export interface Network {
+  readonly table: OrientedTable;
+  readonly encoding: Encoding;
+  readonly weights: Weights;
+  readonly bounds: RestBounds;
+  /** Numbers the nodes whose lists are kept. */
+  readonly space: NodeSpace;
+  readonly columns: readonly ColumnTerms[];
+  /** Lists do not depend on the order of rows, and one list serves every arrangement of a node. */
+  readonly allAlike: boolean;
+  readonly side: SummedSide;
+  /** Nodes less probable than exp(logFloor) are left out; their mass is added up and stated as error. */
+  readonly logFloor: number;
+  /** Values are decided with this much room: the encoding's slack and the rounding of the bounds. */
+  readonly margin: number;
+  /** Most list entries that may be held at once. */
+  readonly entryLimit: number;
+}
+
+/** Thrown when the lists outgrow the stated bound. */
+export class OutOfReach extends Error {
+  constructor(readonly entries: number) {
+    super(`more than ${entries} partial sums would have to be held at once`);
+  }
+}
+
+/** Where a node's values stand to the observed one, as far as bounds tell before its list is made. */
+export interface Window {
+  /** Values below this end below the observed one whatever follows. */
+  readonly low: number;
+  /** Values above this end above it. */
+  readonly high: number;
+}

@@ -1,0 +1,88 @@
+// Which lines of a 2x2 table are the groups, which level is the event and which group comes first.
+import { nameHint } from '../problem/suggest.js';
+import { usageProblem } from '../problem/problem.js';
+import type { Roles, Statistic } from '../statistic/contract.js';
+import type { LiveTable } from '../table/live-table.js';
+import type { Table } from '../table/table.js';
+import type { PlanOptions } from './plan.js';
+import { oneOf, unused } from './settings.js';
+
+export interface NamedRoles extends Roles {
+  readonly eventLabel: string;
+  readonly firstLabel: string;
+  /** null when only one group has any units. */
+  readonly referenceLabel: string | null;
+}
+
+/** For statistics that know no groups. */
+export const noRoles: Roles = { groups: 'rows', event: 0, first: 0 };
+
+/**
+ * Groups are rows unless told; the event is the first level of the other side, the first group the first listed.
+ * @throws Problem (usage): `not-two-by-two`, `unknown-label`, `empty-line-named`.
+ */
+export function rolesOf(table: Table, live: LiveTable, statistic: Statistic, options: PlanOptions): NamedRoles {
+  if (live.rows > 2 || live.columns > 2) {
+    throw usageProblem({
+      code: 'not-two-by-two',
+      message: `${statistic.name} compares two groups with two outcomes; this table is ${live.rows} x ${live.columns}`,
+      place: '--statistic',
+      hint: 'use pearson, likelihood-ratio or probability for larger tables, or pick two rows and two columns',
+    });
+  }
+  const groups = oneOf(options.groups, 'rows', ['rows', 'columns'] as const, '--groups');
+  const [groupLabels, groupIndex, eventLabels, eventIndex] =
+    groups === 'rows'
+      ? [table.rowLabels, live.rowIndex, table.columnLabels, live.columnIndex]
+      : [table.columnLabels, live.columnIndex, table.rowLabels, live.rowIndex];
+  const event = options.event === undefined ? 0 : lineNamed(options.event, eventLabels, eventIndex, '--event');
+  const reference =
+    options.reference === undefined
+      ? groupIndex.length - 1
+      : lineNamed(options.reference, groupLabels, groupIndex, '--reference');
+  const first = groupIndex.length === 2 ? 1 - reference : 0;
+  return {
+    groups,
+    event,
+    first,
+    eventLabel: eventLabels[eventIndex[event]!]!,
+    firstLabel: groupLabels[groupIndex[first]!]!,
+    referenceLabel: groupIndex.length === 2 ? groupLabels[groupIndex[reference]!]! : null,
+  };
+}
+
+/** Index among the live lines of the line with this label. */
+function lineNamed(label: string, labels: readonly string[], index: readonly number[], option: string): number {
+  const line = labels.indexOf(label);
+  if (line < 0) {
+    throw usageProblem({
+      code: 'unknown-label',
+      message: `no line of the table is labelled "${label}"`,
+      place: option,
+      hint: nameHint(label, labels),
+    });
+  }
+  const live = index.indexOf(line);
+  if (live < 0) {
+    throw usageProblem({
+      code: 'empty-line-named',
+      message: `the line labelled "${label}" holds no counts`,
+      place: option,
+      hint: `name one of: ${index.map((k) => labels[k]).join(', ')}`,
+    });
+  }
+  return live;
+}
+
+/** Refuses options about groups for statistics that treat all rows and all columns alike. */
+export function refuseRoleOptions(statistic: Statistic, options: PlanOptions): void {
+  for (const name of ['groups', 'event', 'reference'] as const) {
+    if (options[name] !== undefined) {
+      throw unused(
+        `--${name}`,
+        `with ${statistic.name}, which treats all rows and all columns alike`,
+        'leave it out, or use wald or score to compare two proportions',
+      );
+    }
+  }
+}

@@ -1,0 +1,58 @@
+// One reported p-value before it is part of a result; the fields are those of the result's declaration.
+import type { Tail, TwoSidedRule } from '../plan/plan.js';
+
+export interface RoundingError {
+  kind: 'rounding';
+  relative: number;
+}
+
+export interface SamplingError {
+  kind: 'sampling';
+  atLeast: number;
+  draws: number;
+  estimate: number;
+  standardError: number | null;
+  reason?: 'no-spread-seen';
+  interval: [number, number];
+  confidence: number;
+  tails?: { upper: number; lower: number };
+}
+
+export interface ApproximationError {
+  kind: 'approximation';
+}
+
+export interface PValueEntry {
+  tail: Tail;
+  rule?: TwoSidedRule;
+  orderedBy: string;
+  method: 'exact' | 'sample' | 'asymptotic';
+  statistic: string;
+  p: number | null;
+  log10P: number | null;
+  reason?: 'underflow';
+  strict: number | null;
+  mid: number | null;
+  tied: number | null;
+  point?: number;
+  degreesOfFreedom?: number;
+  guaranteed: boolean;
+  errors: (RoundingError | SamplingError | ApproximationError)[];
+}
+
+/** What a p-value is asked for: a tail, and for two tails a rule. */
+export interface Question {
+  readonly tail: Tail;
+  readonly rule: TwoSidedRule | null;
+  readonly statistic: string;
+}
+
+/** The words for "as extreme": the statistic itself, its distance from the centre, or probability. */
+export function orderedBy({ tail, rule, statistic }: Question): string {
+  if (tail === 'both' && rule === 'distance') return `distance of ${statistic} from its centre`;
+  if (tail === 'both' && rule === 'probability') return `probability of the value of ${statistic}`;
+  return statistic;
+}
+
+/** The smallest double with all its digits; below it a p is given by its logarithm only. */
+export const smallestDouble = 2.2250738585072014e-308;
