@@ -13,6 +13,8 @@ export default defineConfig({
     emptyOutDir: true,
     minify: true,
     sourcemap: false,
+    // Bundled packages ask for their licences to travel with them.
+    license: { fileName: 'third-party-licenses.md' },
     rolldownOptions: {
       input: { main: 'src/cli/main.ts', index: 'src/index.ts' },
       external: [...builtinModules, /^node:/],

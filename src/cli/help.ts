@@ -24,10 +24,10 @@ const statuses: readonly (readonly [string, string])[] = [
 
 /** What `keepsum --help` prints, and, without its last part, what is shown when nothing was asked. */
 export function rootHelp(width: number): string {
-  const listed = commands.map(({ name, operands, summary }) => [`keepsum ${name} ${operands}`, summary] as const);
+  const listed = commands.map(({ name, operands, summary }) => [`${name} ${operands}`, summary] as const);
   return screen([
     wrapped(purpose, width),
-    section('Commands', listed, width),
+    section('Usage: keepsum COMMAND ...', listed, width),
     section('Examples', exampleItems(rootExamples), width),
     section(
       'Anywhere',

@@ -8,7 +8,7 @@ const longest = (text: string): number => Math.max(...text.split('\n').map((line
 
 describe('the help', () => {
   it('lists every command under its name', () => {
-    for (const { name } of commands) expect(rootHelp(80)).toContain(`keepsum ${name} `);
+    for (const { name } of commands) expect(rootHelp(80)).toContain(`\n  ${name} `);
     expect(files.map((file) => file.name)).toEqual(commands.map((entry) => entry.name));
   });
 

@@ -12,14 +12,14 @@ export interface CommandEntry {
 export const commands: readonly CommandEntry[] = [
   {
     name: 'test',
-    operands: '[ROW... | FILE | -]',
-    summary: 'one table of counts, typed in or from a file: are rows and columns related?',
+    operands: 'ROW ... | FILE | -',
+    summary: 'are the rows and columns of one table related?',
     load: async () => (await import('./test.js')).testCommand,
   },
   {
     name: 'schema',
     operands: 'result',
-    summary: 'the JSON Schema (2020-12) of what --format json prints',
+    summary: 'the JSON Schema of what --format json prints',
     load: async () => (await import('./schema.js')).schemaCommand,
   },
 ];

@@ -1,5 +1,6 @@
-// The chosen source -> the table. Each way of reading is loaded only by the runs that use it.
+// The chosen source -> the table. What reads files is loaded only by the runs that need it.
 import { stat } from 'node:fs/promises';
+import { readInline } from '../../input/inline.js';
 import type { ReadTable } from '../../input/read-table.js';
 import type { Values } from '../arguments/option.js';
 import type { Shell } from '../shell.js';
@@ -11,10 +12,7 @@ type ReadingValues = Values<typeof reading>;
 /** @throws Problem of the input stage, or that a file cannot be read. */
 export async function readSource(source: Source, values: ReadingValues, shell: Shell): Promise<ReadTable> {
   const options = { ...values, totals: totalsRule(values) };
-  if (source.form === 'inline') {
-    const { readInline } = await import('../../input/inline.js');
-    return readInline(source.rows, options);
-  }
+  if (source.form === 'inline') return readInline(source.rows, options);
   const { fileBytes } = await import('../streams/input-file.js');
   const { path } = source;
   const sourceName = path ?? 'standard input';

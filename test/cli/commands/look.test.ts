@@ -32,7 +32,6 @@ describe('colour', () => {
   it('only wraps the words, in every role', async () => {
     const { paint } = await lookFor({ color: true }, fakeShell());
     for (const role of ['bold', 'dim', 'warn'] as const) {
-      // eslint-disable-next-line no-control-regex
       expect(paint[role]('words').replace(/\u001b\[\d+m/g, '')).toBe('words');
     }
   });
