@@ -6,23 +6,22 @@ import { version } from '../result/version.js';
 import { commands, type CommandEntry } from './commands/all.js';
 import { endingOf } from './problem-text.js';
 import { processShell, type Shell } from './shell.js';
-import { endOnInterrupt } from './streams/interrupt.js';
 import { remark, writeOut } from './streams/write-out.js';
 
-/** Runs one command line (the words after the program's name) and returns the exit status. */
+/**
+ * Runs one command line (the words after the program's name) and returns the exit status.
+ * Nothing listens for Ctrl-C: the system then ends a computation at once, shells call that 130, and there is nothing to tidy.
+ */
 export async function main(words: readonly string[], shell: Shell = processShell()): Promise<number> {
   // Without a listener, a stream whose reader has gone ends the process with a stack trace.
   shell.stdout.on('error', () => undefined);
   shell.stderr.on('error', () => undefined);
-  const stopListening = endOnInterrupt();
   try {
     return await runCommand(words, shell);
   } catch (thrown) {
     const ending = endingOf(thrown, words.includes('--debug'));
     await remark(shell.stderr, ending.text);
     return ending.status;
-  } finally {
-    stopListening();
   }
 }
 

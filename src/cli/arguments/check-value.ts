@@ -26,13 +26,14 @@ export const oneOf =
     });
   };
 
-/** A whole number in digits, or with a power of ten such as 1e6; both ends included. */
+/** A whole number in digits, or with a power of ten such as 1e6 or 2.5e6; both ends included, no upper end: Infinity. */
 export const wholeNumber =
   (least: number, most: number, example: string): CheckValue<number> =>
   (text, flag) => {
-    const value = /^\d+(e\d{1,2})?$/i.test(text) ? Number(text) : NaN;
-    if (value >= least && value <= most) return value;
-    throw badNumber(text, flag, `a whole number from ${shown(least)} to ${shown(most)}`, `${flag} ${example}`);
+    const value = /^\d+(\.\d+)?(e\+?\d{1,3})?$/i.test(text) && !/\.\d+$/.test(text) ? Number(text) : NaN;
+    if (Number.isInteger(value) && value >= least && value <= most) return value;
+    const range = most === Infinity ? `from ${least} upwards` : `from ${least} to ${shown(most)}`;
+    throw badNumber(text, flag, `a whole number ${range}`, `${flag} ${example}`);
   };
 
 /** A number strictly between 0 and 1. */

@@ -74,7 +74,7 @@ export const planning = {
   ),
   draws: valued('How p is found', 'N', wholeNumber(1, 1e12, '100000'), 'random tables to draw (100000)'),
   seed: valued('How p is found', 'TEXT', anyText, 'makes the draws repeatable (one is made and shown)'),
-  effort: valued('How p is found', 'UNITS', wholeNumber(1, 1e15, '1e9'), 'most exact work that is allowed (1e8)'),
+  effort: valued('How p is found', 'UNITS', wholeNumber(1, Infinity, '1e9'), 'most exact work that is allowed (1e8)'),
   samplingConfidence: valued(
     'How p is found',
     'LEVEL',

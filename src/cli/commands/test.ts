@@ -39,7 +39,7 @@ export const testCommand = command({
     const destination = await destinationFor(values.output, shell, source.form === 'inline' ? null : source.path);
     const table = await readSource(source, values, shell);
     const { analyse } = await import('../../analyse.js');
-    const result = await analyse(table, await planOptions(values));
+    const result = await analyse(table, planOptions(values));
     const format = values.format ?? 'text';
     const report = render(result, format, await lookFor(values, shell));
     if (!values.quiet) await remarkOnSampling(result, shell);
@@ -48,13 +48,9 @@ export const testCommand = command({
   },
 });
 
-/** Only what the plan knows, with a seed made here if none was given: the core takes no chance of its own. */
-async function planOptions(values: TestValues): Promise<PlanOptions> {
-  const chosen = Object.fromEntries(Object.entries(values).filter(([name]) => name in planning)) as PlanOptions;
-  const maySample = (chosen.method ?? 'auto') === 'auto' || chosen.method === 'sample';
-  if (chosen.seed !== undefined || !maySample) return chosen;
-  return { ...chosen, seed: (await import('../seed.js')).freshSeed() };
-}
+/** Only what the plan knows; it also makes the seed when none is given. */
+const planOptions = (values: TestValues): PlanOptions =>
+  Object.fromEntries(Object.entries(values).filter(([name]) => name in planning));
 
 /** A method that was picked for the user is never a silent matter. */
 async function remarkOnSampling({ plan }: Result, shell: Shell): Promise<void> {

@@ -10,23 +10,38 @@ describe('whole numbers', () => {
     ['1', 1],
     ['100000', 100000],
     ['1e6', 1e6],
+    ['2.5e+6', 2.5e6],
     ['1000000000000', 1e12],
   ])('reads %s', (text, value) => {
     expect(draws(text, '--draws')).toBe(value);
   });
 
-  it.each(['0', '1.5', '-1', '1e13', '1,000', '0x10', ' 5', '5 ', 'abc', '', '1e-1', 'Infinity', 'NaN', '१'])(
-    'refuses %j and names the option and what it takes',
-    async (text) => {
-      const problem = await problemOf(() => draws(text, '--draws'));
-      expect(problem).toMatchObject({
-        kind: 'usage',
-        place: '--draws',
-        message: `"${text}" is not a whole number from 1 to 1e12`,
-        hint: 'write --draws 100000',
-      });
-    },
-  );
+  it.each([
+    '0',
+    '1.5',
+    '1.0',
+    '1.55e1',
+    '-1',
+    '1e13',
+    '1,000',
+    '0x10',
+    ' 5',
+    '5 ',
+    'abc',
+    '',
+    '1e-1',
+    'Infinity',
+    'NaN',
+    '१',
+  ])('refuses %j and names the option and what it takes', async (text) => {
+    const problem = await problemOf(() => draws(text, '--draws'));
+    expect(problem).toMatchObject({
+      kind: 'usage',
+      place: '--draws',
+      message: `"${text}" is not a whole number from 1 to 1e12`,
+      hint: 'write --draws 100000',
+    });
+  });
 });
 
 describe('numbers between 0 and 1', () => {
