@@ -1,30 +1,26 @@
 // From the text of an option's value to a checked value. Strict: a value that is not wholly right is refused,
 // with the option, the value seen and what to type instead.
 import { usageProblem, type Problem } from '../../problem/problem.js';
-import { nameHint } from '../../problem/suggest.js';
+import { oneOf as oneOfNames } from '../../plan/settings.js';
 
 /** Turns the text given for a flag (such as `--draws`) into a value, or throws a usage problem naming the flag. */
 export type CheckValue<T> = (text: string, flag: string) => T;
 
 export const anyText: CheckValue<string> = (text, flag) => {
-  if (text === '') throw emptyValue(flag);
-  return text;
+  if (text !== '') return text;
+  throw usageProblem({
+    code: 'empty-value',
+    message: 'the value is empty',
+    place: flag,
+    hint: `write a value after ${flag}, or leave the option out`,
+  });
 };
 
 /** One of a closed list of names. */
 export const oneOf =
   <T extends string>(allowed: readonly T[]): CheckValue<T> =>
-  (text, flag) => {
-    const found = allowed.find((name) => name === text);
-    if (found !== undefined) return found;
-    if (text === '') throw emptyValue(flag);
-    throw usageProblem({
-      code: 'unknown-value',
-      message: `"${text}" is not a value of ${flag}`,
-      place: flag,
-      hint: nameHint(text, allowed),
-    });
-  };
+  (text, flag) =>
+    oneOfNames(text, allowed[0]!, allowed, flag);
 
 /** A whole number in digits, or with a power of ten such as 1e6 or 2.5e6; both ends included, no upper end: Infinity. */
 export const wholeNumber =
@@ -48,14 +44,6 @@ export const betweenZeroAndOne =
     const meant = share > 0 && share < 1 && (text.endsWith('%') || share >= 0.5) ? String(share) : example;
     throw badNumber(text, flag, 'a number between 0 and 1', `${flag} ${meant}`);
   };
-
-const emptyValue = (flag: string): Problem =>
-  usageProblem({
-    code: 'empty-value',
-    message: 'the value is empty',
-    place: flag,
-    hint: `write a value after ${flag}, or leave the option out`,
-  });
 
 const badNumber = (text: string, flag: string, wanted: string, example: string): Problem =>
   usageProblem({ code: 'bad-number', message: `"${text}" is not ${wanted}`, place: flag, hint: `write ${example}` });

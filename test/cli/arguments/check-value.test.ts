@@ -86,8 +86,7 @@ describe('names from a list', () => {
   });
 });
 
-it('an empty value is refused, whatever the option takes', async () => {
-  for (const check of [anyText, oneOf(['a'])]) {
-    expect(await problemOf(() => check('', '--seed'))).toMatchObject({ code: 'empty-value', place: '--seed' });
-  }
+it('an empty text is refused', async () => {
+  expect(await problemOf(() => anyText('', '--seed'))).toMatchObject({ code: 'empty-value', place: '--seed' });
+  expect(anyText(' ', '--seed')).toBe(' ');
 });
