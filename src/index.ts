@@ -1,0 +1,22 @@
+// The library: what a program may use, grouped by the stages of the flow.
+
+// input -> Table
+export { makeTable, type Table, type TableParts } from './table/table.js';
+export { readCrossTable, readInline, readRecords } from './input/index.js';
+export type { ReadTable } from './input/read-table.js';
+
+// plan
+export { methods, tails, twoSidedRules, type Plan, type PlanOptions } from './plan/plan.js';
+export { statisticNames, statistics } from './statistic/registry.js';
+export type { Statistic } from './statistic/contract.js';
+
+// Table + plan -> Result
+export { analyse } from './analyse.js';
+export type { PValue, Result } from './result/result.js';
+export { resultJsonSchema } from './result/schema.js';
+
+// Result -> report
+export { render } from './report/formats.js';
+
+// what goes wrong
+export { Problem } from './problem/problem.js';

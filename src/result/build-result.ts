@@ -1,0 +1,88 @@
+// Gathers what a run found into the one reported shape, in the order of its fields, and gives it its words.
+import type { ReadTable } from '../input/read-table.js';
+import type { NamedRoles } from '../plan/roles.js';
+import type { Plan } from '../plan/plan.js';
+import type { PValueEntry } from '../pvalue/contract.js';
+import type { Table } from '../table/table.js';
+import type { ExpectationCheck } from '../table/expectation-check.js';
+import type { ResultBeforeWords } from './describe.js';
+import { methodsFor } from './methods.js';
+import type { InputEcho, Note, Result } from './result.js';
+import { sentenceFor } from './sentence.js';
+import { version } from './version.js';
+
+export interface Findings {
+  readonly read: ReadTable;
+  readonly plan: Plan;
+  readonly named: NamedRoles | null;
+  /** null where the margins leave the statistic undefined. */
+  readonly value: number | null;
+  readonly degreesOfFreedom: number | undefined;
+  readonly pValues: readonly PValueEntry[];
+  readonly expectations: ExpectationCheck;
+  /** Tables with these margins, when every one was counted. */
+  readonly tables: number | undefined;
+  readonly notes: readonly Note[];
+}
+
+export function buildResult(found: Findings): Result {
+  const { plan, read, named, value, degreesOfFreedom } = found;
+  const before: ResultBeforeWords = {
+    schema: 'keepsum/result/1',
+    tool: { name: 'keepsum', version },
+    input: inputEcho(read),
+    plan,
+    statistic: {
+      name: plan.statistic,
+      value: value === null ? null : extended(value),
+      ...(value === null ? { reason: 'empty-group' as const } : {}),
+      ...(degreesOfFreedom === undefined ? {} : { degreesOfFreedom }),
+      ...(named === null ? {} : groupsCompared(read.table, named)),
+    },
+    pValues: [...found.pValues],
+    diagnostics: {
+      ...found.expectations,
+      ...(found.tables === undefined ? {} : { tables: found.tables }),
+    },
+    notes: [...found.notes],
+  };
+  const { notes, ...parts } = before;
+  return { ...parts, sentence: sentenceFor(before), methods: methodsFor(before), notes };
+}
+
+function inputEcho({ table, source, sha256, missing }: ReadTable): InputEcho {
+  return {
+    source: {
+      ...source,
+      ...(source.totalsLeftOut ? { totalsLeftOut: [...source.totalsLeftOut] } : {}),
+    } as InputEcho['source'],
+    sha256,
+    rowLabels: [...table.rowLabels],
+    columnLabels: [...table.columnLabels],
+    counts: table.counts.map((row) => [...row]),
+    total: table.total,
+    rowTotals: [...table.rowTotals],
+    columnTotals: [...table.columnTotals],
+    emptyRows: table.rowLabels.filter((_, i) => table.rowTotals[i] === 0),
+    emptyColumns: table.columnLabels.filter((_, j) => table.columnTotals[j] === 0),
+    missing,
+  };
+}
+
+const extended = (value: number): number | 'infinity' | '-infinity' =>
+  value === Infinity ? 'infinity' : value === -Infinity ? '-infinity' : value;
+
+/** The two proportions, first minus second, as the roles name them; one group only when the other is missing. */
+function groupsCompared(table: Table, named: NamedRoles): Pick<Result['statistic'], 'groups' | 'event'> {
+  if (named.referenceLabel === null) return { event: named.eventLabel };
+  const byRows = named.groups === 'rows';
+  const groupLabels = byRows ? table.rowLabels : table.columnLabels;
+  const eventLine = (byRows ? table.columnLabels : table.rowLabels).indexOf(named.eventLabel);
+  const group = (label: string): NonNullable<Result['statistic']['groups']>[number] => {
+    const line = groupLabels.indexOf(label);
+    const events = byRows ? table.counts[line]![eventLine]! : table.counts[eventLine]![line]!;
+    const size = byRows ? table.rowTotals[line]! : table.columnTotals[line]!;
+    return { label, events, size, proportion: size === 0 ? null : events / size };
+  };
+  return { groups: [group(named.firstLabel), group(named.referenceLabel)], event: named.eventLabel };
+}

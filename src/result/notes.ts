@@ -1,0 +1,75 @@
+// Remarks that a reader of the result should not miss, each with a code that programs can look for.
+import type { Plan } from '../plan/plan.js';
+import type { PValueEntry } from '../pvalue/contract.js';
+import { drawsToSettle } from '../pvalue/draws-to-settle.js';
+import type { Table } from '../table/table.js';
+import { quoted } from './label-words.js';
+import type { Note } from './result.js';
+
+/** Lines without counts take no part in a test that holds the margins. */
+export function emptyLineNotes(table: Table): Note[] {
+  const empty = [
+    ...table.rowLabels.filter((_, i) => table.rowTotals[i] === 0).map((label) => `row ${quoted(label)}`),
+    ...table.columnLabels.filter((_, j) => table.columnTotals[j] === 0).map((label) => `column ${quoted(label)}`),
+  ];
+  if (empty.length === 0) return [];
+  return [
+    {
+      code: 'empty-lines',
+      text: `Left out because no unit falls into it (p is the same either way): ${empty.join(', ')}.`,
+    },
+  ];
+}
+
+export const onlyOneTable: Note = {
+  code: 'only-one-table',
+  text: 'These margins allow one table only, so chance has nothing to decide and p is 1.',
+};
+
+/** How far apart the approximation and the answer are: more than a factor of 1.5 either way is worth a remark. */
+export function asymptoticNotes(headline: PValueEntry, asymptotic: PValueEntry | undefined): Note[] {
+  if (asymptotic === undefined) {
+    return [
+      {
+        code: 'asymptotic-undefined',
+        text: 'The asymptotic approximation has no value for this table and is left out.',
+      },
+    ];
+  }
+  if (headline.log10P === null || asymptotic.log10P === null) return [];
+  const estimate = headline.method === 'sample' ? samplingEstimate(headline) : headline.log10P;
+  if (estimate === undefined || Math.abs(estimate - asymptotic.log10P) <= Math.log10(1.5)) return [];
+  const side = asymptotic.log10P < estimate ? 'smaller' : 'larger';
+  return [
+    {
+      code: 'asymptotic-differs',
+      text: `The asymptotic p is ${side} than the ${headline.method === 'sample' ? 'sampled' : 'exact'} one by more than a factor of 1.5: do not use it here.`,
+    },
+  ];
+}
+
+/** log10 of b/m where at least ten draws were as extreme; with fewer, sampling noise alone could pass the factor. */
+function samplingEstimate(p: PValueEntry): number | undefined {
+  const error = p.errors.find((one) => one.kind === 'sampling');
+  if (error?.kind !== 'sampling' || error.atLeast < 10) return undefined;
+  return Math.log10(error.estimate);
+}
+
+/** A sampled p whose interval still holds the level it will be compared with. */
+export async function unsettledNotes(headline: PValueEntry, plan: Plan): Promise<Note[]> {
+  const error = headline.errors.find((one) => one.kind === 'sampling');
+  if (error?.kind !== 'sampling') return [];
+  const [low, high] = error.interval;
+  if (plan.alpha < low || plan.alpha > high) return [];
+  const needed = await drawsToSettle(error.estimate, plan.alpha, plan.samplingConfidence);
+  const more =
+    needed === undefined || needed > 1e12
+      ? 'more draws than can be made here would be needed to tell the side'
+      : `about ${needed.toLocaleString('en-US')} draws (--draws ${needed}) should tell the side`;
+  return [
+    {
+      code: 'level-inside-interval',
+      text: `The interval of the sampled p holds the level ${plan.alpha}; ${more}, or an exact p.`,
+    },
+  ];
+}
