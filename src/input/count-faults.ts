@@ -5,7 +5,8 @@ import type { CountFault, CountOrigin } from './count-text.js';
 import { parseCount } from './count-text.js';
 import { shownValue } from './shown-value.js';
 
-const mostListed = 5;
+/** How many cells a message lists. */
+export const mostListed = 5;
 
 export interface BadCell {
   readonly text: string;
@@ -22,8 +23,12 @@ export function badCell(text: string, origin: CountOrigin, place: () => string):
 const described = ({ text, fault }: BadCell): string =>
   text.trim() === '' ? `an empty cell where a count belongs` : `${shownValue(text.trim())} ${fault.what}`;
 
-/** @param bad one cell or more, in reading order; `all` is how many there are when not all of them were kept. */
-export function countProblem(bad: readonly BadCell[], all = bad.length): Problem {
+/**
+ * @param bad the first five bad cells, or as many as there are, in reading order
+ * @param all how many there are
+ * @param source its name is said once, before the message, and not again in the list
+ */
+export function countProblem(bad: readonly BadCell[], all: number, source?: string): Problem {
   const first = bad[0]!;
   if (all === 1) {
     return dataProblem({
@@ -33,7 +38,9 @@ export function countProblem(bad: readonly BadCell[], all = bad.length): Problem
       hint: first.fault.hint,
     });
   }
-  const listed = bad.slice(0, mostListed).map((cell) => `${described(cell)} (${cell.place})`);
+  const short = (place: string): string =>
+    source !== undefined && place.startsWith(`${source}:`) ? place.slice(source.length + 1) : place;
+  const listed = bad.slice(0, mostListed).map((cell) => `${described(cell)} (${short(cell.place)})`);
   const more = all > listed.length ? ` and ${all - listed.length} more` : '';
   const sameCode = bad.every((cell) => cell.fault.code === first.fault.code);
   return dataProblem({

@@ -17,6 +17,8 @@ const wholeWithZeros = /^([0-9]+)\.(0+)$/;
 /** `12.000`: twelve to one reader, twelve thousand to another. */
 const readTwoWays = /^[1-9][0-9]{0,2}(\.000)+$/;
 const grouped = /^[0-9]{1,3}([,.'’_ \u00a0\u202f][0-9]{3})+$/;
+/** Counts set apart by something other than a comma: `8;2`, `8 2`. */
+export const severalCounts = /^[0-9]+([;|\s]\s*[0-9]+)+$/;
 const missingWords = new Set(['na', 'n/a', '#n/a', 'nan', 'null']);
 
 /** Missing values as people and programs write them: nothing but blanks, NA, N/A, NaN, null, in any case. */
@@ -43,7 +45,7 @@ export function parseCount(text: string, origin: CountOrigin): number | CountFau
   if (readTwoWays.test(trimmed)) return twoReadings(trimmed);
   const zeros = wholeWithZeros.exec(trimmed);
   if (origin === 'file' && zeros !== null) return withinRange(zeros[1]!);
-  return faultOf(trimmed);
+  return faultOf(trimmed, origin);
 }
 
 function withinRange(digits: string): number | CountFault {
@@ -63,7 +65,7 @@ const twoReadings = (text: string): CountFault => ({
   hint: `write ${text.slice(0, text.indexOf('.'))} or ${text.replaceAll('.', '')}, whichever is meant`,
 });
 
-function faultOf(text: string): CountFault {
+function faultOf(text: string, origin: CountOrigin): CountFault {
   if (text === '') {
     return {
       code: 'empty-count',
@@ -79,7 +81,11 @@ function faultOf(text: string): CountFault {
     };
   }
   if (!isNumberLike(text)) {
-    return { code: 'not-a-count', what: 'is not a whole number', hint: 'write each count in digits only, such as 8' };
+    const hint =
+      origin === 'typed' && severalCounts.test(text)
+        ? 'separate the counts of a row by commas, and rows by blanks: 8,2 1,9'
+        : 'write each count in digits only, such as 8';
+    return { code: 'not-a-count', what: 'is not a whole number', hint };
   }
   return numberFault(text);
 }

@@ -30,22 +30,31 @@ export const onlyHeader = (place: string): Problem =>
   });
 
 /**
- * The problem of a file whose cells are mostly text: most likely one record a line, to be counted by naming two columns.
- * Undefined when at least half of the cells are numbers, or when there are too few to tell.
+ * The problem of a file in which a column of counts would hold text only: most likely one record a line, to be counted by
+ * naming two columns. Undefined when every such column holds a number, or when there are too few lines to tell.
+ * @param lines all of them, header included; @param top, side  how many lines and columns hold names
  */
 export function looksLikeRecords(
-  texts: readonly (readonly string[])[],
-  firstLine: readonly string[],
-  place: string,
+  lines: readonly (readonly string[])[],
+  top: number,
+  side: number,
+  place: (line: number, column: number) => string,
 ): Problem | undefined {
-  const cells = texts.flat();
-  const words = cells.filter((cell) => !isMissingText(cell) && !isNumberLike(cell)).length;
-  if (texts.length < 2 || words * 2 <= cells.length) return undefined;
-  const [rows, columns] = firstLine.filter((name) => /^[\p{L}\p{N}_.-]+$/u.test(name));
+  const body = lines.slice(top);
+  const columns = lines[0]!.map((_, column) => body.map((line) => line[column]!));
+  const texts = columns.flatMap((cells, column) => (isTextOnly(cells) ? [column] : []));
+  const first = texts.find((column) => column >= side);
+  if (body.length < 2 || first === undefined) return undefined;
+  const nameOf = (column: number): string => (top === 0 ? `${column + 1}` : lines[0]![column]!);
+  const usable = texts.map(nameOf).filter((name) => /^[\p{L}\p{N}_.-]+$/u.test(name));
+  const line = body.findIndex((cells) => !isMissingText(cells[first]!));
   return dataProblem({
     code: 'raw-records',
-    message: `most cells hold text (first ${shownValue(cells.find((cell) => !isMissingText(cell) && !isNumberLike(cell))!)}), so this is no table of counts`,
-    place,
-    hint: `for raw records, name the columns to count by: --rows ${rows ?? 'COLUMN'} --columns ${columns ?? 'COLUMN'}`,
+    message: `column ${shownValue(nameOf(first))} holds text only (first ${shownValue(body[line]![first]!)}), so this is no table of counts`,
+    place: place(top + line, first),
+    hint: `if these are raw records, name the columns to count by: --rows ${usable[0] ?? 'COLUMN'} --columns ${usable[1] ?? 'COLUMN'}`,
   });
 }
+
+const isTextOnly = (cells: readonly string[]): boolean =>
+  !cells.some(isNumberLike) && cells.some((cell) => !isMissingText(cell));

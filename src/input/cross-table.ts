@@ -44,13 +44,14 @@ export function readCrossTable(bytes: Uint8Array, options: CrossTableOptions): R
   if (width === 1) throw oneColumn(sourceName, delimiter);
 
   const fields = rows.map((row) => row.fields);
-  const layout = detectLayout(fields, options, (row, column) => place(rows[row]!.record, column));
+  const fieldPlace = (row: number, column: number): string => place(rows[row]!.record, column);
+  const layout = detectLayout(fields, options, fieldPlace);
   const top = layout.headerRow ? 1 : 0;
   const side = layout.labelColumn ? 1 : 0;
   if (rows.length === top) throw onlyHeader(sourceName);
   if (width === side) throw oneColumn(sourceName, delimiter);
   const texts = fields.slice(top).map((row) => row.slice(side));
-  const raw = looksLikeRecords(texts, fields[0]!, place(rows[top]!.record, side));
+  const raw = looksLikeRecords(fields, top, side, fieldPlace);
   if (raw !== undefined) throw raw;
 
   const { table, totalsLeftOut, notes } = tableFromGrid(
@@ -59,9 +60,8 @@ export function readCrossTable(bytes: Uint8Array, options: CrossTableOptions): R
       rowLabels: layout.labelColumn ? fields.slice(top).map((row) => row[0]!) : null,
       columnLabels: layout.headerRow ? fields[0]!.slice(side) : null,
       origin: 'file',
-      cellPlace: (row, column) => place(rows[top + row]!.record, side + column),
-      labelPlace: (of, index) =>
-        of === 'row' ? place(rows[top + index]!.record, 0) : place(rows[0]!.record, side + index),
+      cellPlace: (row, column) => fieldPlace(top + row, side + column),
+      labelPlace: (of, index) => (of === 'row' ? fieldPlace(top + index, 0) : fieldPlace(0, side + index)),
       place: sourceName,
     },
     options,

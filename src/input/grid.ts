@@ -4,7 +4,7 @@ import { Problem } from '../problem/problem.js';
 import type { Table, TableParts } from '../table/table.js';
 import { makeTable } from '../table/table.js';
 import type { BadCell } from './count-faults.js';
-import { badCell, countProblem } from './count-faults.js';
+import { badCell, countProblem, mostListed } from './count-faults.js';
 import type { CountOrigin } from './count-text.js';
 import { parseCount } from './count-text.js';
 import { checkLabels, labelsOf } from './grid-labels.js';
@@ -114,10 +114,10 @@ function checkCounts(grid: Grid, view: TotalsView, left: TotalLines): void {
     row.forEach((text, j) => {
       if (view.values[i]![j] !== null || left.columns.includes(j)) return;
       all++;
-      // Five are listed; finding a place walks the text, so it is not done for the others.
-      const cell = all > 5 ? undefined : badCell(text, grid.origin, () => grid.cellPlace(i, j));
+      // Finding a place walks the text, so it is done only for the cells that are listed.
+      const cell = all > mostListed ? undefined : badCell(text, grid.origin, () => grid.cellPlace(i, j));
       if (cell !== undefined) bad.push(cell);
     });
   });
-  if (all > 0) throw countProblem(bad, all);
+  if (all > 0) throw countProblem(bad, all, grid.place);
 }

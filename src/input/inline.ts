@@ -2,7 +2,7 @@
 import { dataProblem, usageProblem } from '../problem/problem.js';
 import type { BadCell } from './count-faults.js';
 import { badCell, countProblem } from './count-faults.js';
-import { isNumberLike } from './count-text.js';
+import { isNumberLike, severalCounts } from './count-text.js';
 import type { GridOptions } from './grid.js';
 import { tableFromGrid } from './grid.js';
 import type { ReadTable } from './read-table.js';
@@ -27,8 +27,7 @@ export function looksLikeRow(operand: string): boolean {
   if (pieces.length === 0) return label !== undefined && label !== '';
   const last = pieces[pieces.length - 1]!;
   if (!isNumberLike(last) && /[/\\]|\.[a-z][a-z0-9]*$/i.test(last)) return false;
-  const severalInOne = /^\d+([;|\s]\s*\d+)+$/;
-  const numbers = pieces.filter((piece) => isNumberLike(piece) || severalInOne.test(piece.trim())).length;
+  const numbers = pieces.filter((piece) => isNumberLike(piece) || severalCounts.test(piece.trim())).length;
   return numbers * 2 >= pieces.length;
 }
 
@@ -90,7 +89,7 @@ function checkRows(
       .map((text, j) => badCell(text, 'typed', () => cellPlace(i, j)))
       .filter((cell): cell is BadCell => cell !== undefined),
   );
-  if (bad.length > 0) throw countProblem(bad);
+  if (bad.length > 0) throw countProblem(bad, bad.length);
   throw dataProblem({
     code: 'ragged-row',
     message: `${rows[ragged]!.length} count${rows[ragged]!.length === 1 ? '' : 's'} where the first row has ${rows[0]!.length}`,

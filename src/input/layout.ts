@@ -1,6 +1,6 @@
 // Does the first line of a cross-table name its columns, and does the first column name its rows? The rule:
 //   header row    every cell after the first in line 1 is text (empty and NA-like cells aside); or they are numbers, the corner
-//                 is empty and line 2 begins with text. Numbers and text mixed, under a corner that is not empty: asked back.
+//                 is empty and line 2 begins with text. Numbers and text mixed, with a corner that is not empty: asked back.
 //   label column  the cells of the first column, below the header, are text, or the corner of the header is empty. Numbers and
 //                 text mixed: asked back.
 // What cannot be told from the text is said in a note, so that no line of names is ever counted unseen.
@@ -54,7 +54,7 @@ function detectHeader(rows: readonly (readonly string[])[], place: (row: number,
   const first = rows[0]!;
   const names = first.length === 1 ? first : first.slice(1);
   const texts = names.filter(isText).length;
-  const numbers = names.filter(isNumberLike).length;
+  const numbers = first.filter(isNumberLike).length;
   const underEmptyCorner = isEmpty(first[0]) && rows.length > 1 && !isEmpty(rows[1]![0]) && isText(rows[1]![0]!);
   if (texts === 0 || underEmptyCorner) return underEmptyCorner;
   if (numbers === 0) return true;

@@ -6,7 +6,8 @@ import { missingLevel, mostLevels } from './levels.js';
 import type { RecordColumns } from './record-columns.js';
 import { shownValue } from './shown-value.js';
 
-export const badCount = (text: string, place: string): Problem => countProblem([badCell(text, 'file', () => place)!]);
+export const badCount = (text: string, place: string): Problem =>
+  countProblem([badCell(text, 'file', () => place)!], 1);
 
 export const raggedRecord = (length: number, width: number, place: string): Problem =>
   dataProblem({
