@@ -1,0 +1,134 @@
+// Laws that every exact answer keeps, whatever the table: symmetries of the question are symmetries of the p.
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { analyse } from '../src/analyse.js';
+import { exactCuts } from '../src/null/exact/exact-cuts.js';
+import type { OrderingName } from '../src/null/contract.js';
+import type { PlanOptions } from '../src/plan/plan.js';
+import { statistics } from '../src/statistic/registry.js';
+import { checked } from './helpers/checked-result.js';
+import { liveFrom, orderingOf, relativeDifference, smallTable, transpose, twoByTwoTable } from './helpers/tables.js';
+
+const bound = 1e-12;
+const exact = async (counts: number[][], options: PlanOptions = {}): Promise<number[]> => {
+  const { pValues } = checked(await analyse({ counts }, { ...options, method: 'exact' }));
+  return pValues.filter((p) => p.method === 'exact').map((p) => p.p!);
+};
+const expectSame = (ours: number[], theirs: number[]): void => {
+  expect(ours).toHaveLength(theirs.length);
+  ours.forEach((p, k) => expect(relativeDifference(p, theirs[k]!)).toBeLessThan(bound));
+};
+
+const shuffled = <T>(list: readonly T[]): fc.Arbitrary<T[]> =>
+  fc.shuffledSubarray([...list], { minLength: list.length, maxLength: list.length });
+
+for (const { name: statistic, shape, sided } of statistics) {
+  const table = shape === '2x2' ? twoByTwoTable : smallTable;
+  const runs = { numRuns: 150, seed: 11 };
+
+  describe(`laws of ${statistic}`, () => {
+    it('p is unchanged by transposing, with the groups carried along', async () => {
+      await fc.assert(
+        fc.asyncProperty(table, async (counts) => {
+          const groups = shape === '2x2' ? ({ groups: 'columns' } as const) : {};
+          expectSame(await exact(transpose(counts), { statistic, ...groups }), await exact(counts, { statistic }));
+        }),
+        runs,
+      );
+    });
+
+    if (shape === 'any') {
+      it('p is unchanged when rows and columns change places among themselves', async () => {
+        const cases = table.chain((counts) =>
+          shuffled(counts)
+            .chain((rows) => shuffled(transpose(rows)))
+            .map((other) => [counts, transpose(other)] as const),
+        );
+        await fc.assert(
+          fc.asyncProperty(cases, async ([counts, other]) => {
+            expectSame(await exact(other, { statistic }), await exact(counts, { statistic }));
+          }),
+          runs,
+        );
+      });
+    } else {
+      it('swapping the groups, or the outcomes, exchanges the tails', async () => {
+        await fc.assert(
+          fc.asyncProperty(twoByTwoTable, async (counts) => {
+            const [both, upper, lower] = await exact(counts, { statistic });
+            for (const other of [[counts[1]!, counts[0]!], counts.map((row) => [row[1]!, row[0]!])]) {
+              expectSame(await exact(other, { statistic }), [both!, lower!, upper!]);
+            }
+          }),
+          runs,
+        );
+      });
+    }
+
+    it('p is unchanged by an added empty row and an added empty column, wherever they stand', async () => {
+      await fc.assert(
+        fc.asyncProperty(table, fc.nat(), fc.nat(), async (counts, row, column) => {
+          const wider = counts.map((line) => line.toSpliced(column % (line.length + 1), 0, 0));
+          const larger = wider.toSpliced(
+            row % (wider.length + 1),
+            0,
+            wider[0]!.map(() => 0),
+          );
+          expectSame(await exact(larger, { statistic }), await exact(counts, { statistic }));
+        }),
+        runs,
+      );
+    });
+
+    it('a cut sums to 1, and the observed table counts in its own tail', async () => {
+      const names: OrderingName[] =
+        sided === 'upper' ? ['upper', 'lower'] : ['upper', 'lower', 'distance', 'probability'];
+      fc.assert(
+        fc.property(table, (counts) => {
+          const live = liveFrom(counts);
+          const { cuts, point } = exactCuts(
+            live,
+            names.map((name) => orderingOf(live, statistic, name)),
+          );
+          for (const { below, tied, above, atLeast } of cuts) {
+            expect(below.value + tied.value + above.value).toBeCloseTo(1, 13);
+            expect(tied.value).toBeGreaterThanOrEqual(point.value * (1 - bound));
+            expect(atLeast.value).toBeGreaterThanOrEqual(tied.value);
+          }
+        }),
+        runs,
+      );
+    });
+  });
+}
+
+describe('one tail of a 2x2 table (common practice)', () => {
+  it('has the same p for every statistic that rises with the corner count', async () => {
+    await fc.assert(
+      fc.asyncProperty(twoByTwoTable, async (counts) => {
+        expectSame(
+          await exact(counts, { statistic: 'wald', tail: 'upper' }),
+          await exact(counts, { statistic: 'score', tail: 'upper' }),
+        );
+      }),
+      { numRuns: 150, seed: 12 },
+    );
+  });
+
+  it('while two-tailed ones may differ, also between the two sides as groups', async () => {
+    const counts = [
+      [7, 27],
+      [1, 33],
+    ];
+    const [score] = await exact(counts, { statistic: 'score' });
+    const lopsided = [
+      [3, 1],
+      [5, 14],
+    ];
+    const [rows] = await exact(lopsided, { statistic: 'wald', groups: 'rows' });
+    const [columns] = await exact(lopsided, { statistic: 'wald', groups: 'columns' });
+    const [other] = await exact(lopsided, { statistic: 'score' });
+    expect(new Set([rows, columns, other]).size).toBeGreaterThan(1);
+    expect(score).toBeGreaterThan(0);
+  });
+});
