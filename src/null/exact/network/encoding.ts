@@ -79,7 +79,12 @@ function encodeKeyed(table: OrientedTable, rule: ExponentRule): Encoding | null 
     const exponents = rule(prime, largestCount);
     const largest = largestExponents(exponents, longestLine);
     const reach = (totals: readonly number[]): number => totals.reduce((sum, total) => sum + largest[total]!, 0);
-    return { prime, exponents, step: commonStep(exponents), bound: Math.min(reach(table.rowTotals), reach(table.columnTotals)) };
+    return {
+      prime,
+      exponents,
+      step: commonStep(exponents),
+      bound: Math.min(reach(table.rowTotals), reach(table.columnTotals)),
+    };
   });
   const radixProduct = primes.reduce((product, { bound, step }) => product * (bound / step + 1), 1);
   if (radixProduct >= 2 ** 53) return null;

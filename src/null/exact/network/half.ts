@@ -1,6 +1,6 @@
 // Builds the lists of one half, column after column: each node's list is pulled together from the lists it can come from,
 // cut to the values that are still undecided, sorted and merged.
-import { Level } from './level.js';
+import { Level, type SummedSide } from './level.js';
 import { OutOfReach, type Network } from './network.js';
 import { SortedList } from './sorted-list.js';
 import { Transitions } from './transitions.js';
@@ -41,8 +41,6 @@ function extend(network: Network, from: Level, done: readonly number[]): { level
   const observed = encoding.observedValue;
   // What may follow at most, whatever the node: if even that leaves no value certainly below, no node needs its own bound.
   const mostAfter = bounds.most(rest, table.rowTotals);
-  const leastBefore = bounds.least(done, size, table.rowTotals.map((rowTotal) => (rowTotal * size) / table.total).map(Math.floor));
-  void leastBefore;
   const left = new Float64Array(table.rows);
 
   const lost = space.visit(size, network.logFloor, (sums) => {
@@ -53,7 +51,8 @@ function extend(network: Network, from: Level, done: readonly number[]): { level
       if (side === 'high') level.append(space.numberOf(sums), list, allDone.value(sums));
       return;
     }
-    const low = observed - margin - (mostAfter < observed ? (allAlike ? mostAfter : bounds.most(rest, left)) : Infinity);
+    const low =
+      observed - margin - (mostAfter < observed ? (allAlike ? mostAfter : bounds.most(rest, left)) : Infinity);
     transitions.collect(from.index, column, sums);
     const settled = gather(from, transitions, side, low, high, list);
     list.sortAndMerge();
@@ -66,7 +65,7 @@ function extend(network: Network, from: Level, done: readonly number[]): { level
 export function gather(
   from: Level,
   transitions: Transitions,
-  side: 'low' | 'high',
+  side: SummedSide,
   low: number,
   high: number,
   list: SortedList,

@@ -34,11 +34,3 @@ export class OutOfReach extends Error {
     super(`more than ${entries} partial sums would have to be held at once`);
   }
 }
-
-/** Where a node's values stand to the observed one, as far as bounds tell before its list is made. */
-export interface Window {
-  /** Values below this end below the observed one whatever follows. */
-  readonly low: number;
-  /** Values above this end above it. */
-  readonly high: number;
-}

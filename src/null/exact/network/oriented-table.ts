@@ -19,9 +19,7 @@ export interface OrientedTable {
 
 export function orient(live: LiveTable): OrientedTable {
   const turned = live.rows > live.columns;
-  const [rowTotals, columnTotals] = turned
-    ? [live.columnTotals, live.rowTotals]
-    : [live.rowTotals, live.columnTotals];
+  const [rowTotals, columnTotals] = turned ? [live.columnTotals, live.rowTotals] : [live.rowTotals, live.columnTotals];
   const order = Array.from(rowTotals.keys()).sort((a, b) => rowTotals[a]! - rowTotals[b]! || a - b);
   const columns = columnTotals.length;
   const place = (row: number, column: number): readonly [number, number] =>

@@ -156,7 +156,8 @@ function leastAbove(f: Float64Array, slope: number, expected: number, most: numb
 /** The greatest convex function below the values (lower hull): the values themselves where they are convex already. */
 function convexEnvelope(values: Float64Array): Float64Array {
   let convex = true;
-  for (let n = 2; n < values.length && convex; n++) convex = values[n]! - values[n - 1]! >= values[n - 1]! - values[n - 2]!;
+  for (let n = 2; n < values.length && convex; n++)
+    convex = values[n]! - values[n - 1]! >= values[n - 1]! - values[n - 2]!;
   if (convex) return values;
   const corners: number[] = [];
   for (let n = 0; n < values.length; n++) {

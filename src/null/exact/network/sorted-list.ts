@@ -7,11 +7,11 @@ const shortList = 32;
 
 export class SortedList {
   length = 0;
-  values = new Float64Array(4096);
-  weights = new Float64Array(4096);
+  values: Float64Array = new Float64Array(4096);
+  weights: Float64Array = new Float64Array(4096);
   keys: Float64Array;
-  private spareValues = new Float64Array(4096);
-  private spareWeights = new Float64Array(4096);
+  private spareValues: Float64Array = new Float64Array(4096);
+  private spareWeights: Float64Array = new Float64Array(4096);
   private spareKeys: Float64Array;
   private starts = new Int32Array(4097);
 
@@ -116,7 +116,7 @@ export class SortedList {
 
   private sink(from: number, start: number, size: number): void {
     const { values } = this;
-    for (let root = start; ; ) {
+    for (let root = start; ;) {
       let child = 2 * root + 1;
       if (child >= size) return;
       if (child + 1 < size && values[from + child + 1]! > values[from + child]!) child++;
@@ -150,7 +150,7 @@ export class SortedList {
   private merge(): void {
     const { length, values, weights, keys, keyed } = this;
     let kept = 0;
-    for (let i = 0; i < length; ) {
+    for (let i = 0; i < length;) {
       const value = values[i]!;
       const key = keyed ? keys[i]! : 0;
       let sum = weights[i]!;

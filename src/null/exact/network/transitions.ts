@@ -14,11 +14,11 @@ export class Transitions {
   length = 0;
   /** Place of the source in its level. */
   sources = new Int32Array(1024);
-  values = new Float64Array(1024);
-  weights = new Float64Array(1024);
-  keys = new Float64Array(1024);
+  values: Float64Array = new Float64Array(1024);
+  weights: Float64Array = new Float64Array(1024);
+  keys: Float64Array = new Float64Array(1024);
   /** The column's counts but the last, as one number in the node space's mixed radix. */
-  columns = new Float64Array(1024);
+  columns: Float64Array = new Float64Array(1024);
   private left: Float64Array;
   private roomAfter: Float64Array;
 

@@ -37,12 +37,15 @@ export interface Completions {
  */
 export function nullWeights(table: OrientedTable, flat: boolean, around: readonly (readonly number[])[]): Weights {
   const { rows, rowTotals, columnTotals, total } = table;
-  const powers = rowTotals.map((rowTotal) => (flat ? powerTerms(rowTotal, 1, rows) : powerTerms(rowTotal, rowTotal, total)));
+  const powers = rowTotals.map((rowTotal) =>
+    flat ? powerTerms(rowTotal, 1, rows) : powerTerms(rowTotal, rowTotal, total),
+  );
   const shifts = columnTotals.map((_, j) => powers.map((power, i) => -power.exponent[around[j]![i]!]!));
   const cells = columnTotals.map((columnTotal, j) =>
     powers.map((power, i) => {
       const cell = new Float64Array(Math.min(rowTotals[i]!, columnTotal) + 1);
-      for (let n = 0; n < cell.length; n++) cell[n] = power.mantissa[n]! * powerOfTwo(power.exponent[n]! + shifts[j]![i]!);
+      for (let n = 0; n < cell.length; n++)
+        cell[n] = power.mantissa[n]! * powerOfTwo(power.exponent[n]! + shifts[j]![i]!);
       return cell;
     }),
   );

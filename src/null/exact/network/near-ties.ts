@@ -1,0 +1,188 @@
+// Level values that are not yet proof of a tie: the tables behind them are found again by walking back through the lists
+// (values are whole numbers, so a path is followed by equality), put in classes by an exact key, and one table of each
+// class is compared exactly with the observed one. No tolerance is involved and no list carries more than its values.
+import type { CellSum, Place } from '../../../statistic/contract.js';
+import { exponentRule } from './encoding.js';
+import type { Half } from './half.js';
+import type { Level } from './level.js';
+import type { Network } from './network.js';
+import { primesUpTo } from './prime-exponents.js';
+import { Transitions } from './transitions.js';
+
+/** Partial tables with the same exact key: their weight, and one of them as counts by column. */
+interface PartialClass {
+  readonly key: bigint | null;
+  /** The encoding's own key, 0 when it has none. */
+  readonly code: number;
+  weight: number;
+  readonly counts: readonly (readonly [column: number, counts: readonly number[]])[];
+}
+
+/** An entry of the first half and one of the second that are level together. */
+export interface NearPair {
+  /** The entry's value and key before `column`, or complete when that is null. */
+  readonly value: number;
+  readonly key: number;
+  /** The first half's last column as a number of the node space, where the entry was made without it. */
+  readonly column: number | null;
+  /** Row sums of the complete first half. */
+  readonly sums: ArrayLike<number>;
+  readonly otherValue: number;
+  readonly otherKey: number;
+  readonly otherSums: ArrayLike<number>;
+}
+
+/** Weights of the pairs on each side (without the first half's last column when that is given apart). */
+export interface NearMasses {
+  readonly low: number;
+  readonly tied: number;
+  readonly high: number;
+}
+
+export class NearTies {
+  private readonly cellKey: ((count: number) => bigint) | null;
+  private readonly verdicts = new Map<bigint, Place>();
+  private remembered = new Map<string, PartialClass[]>();
+
+  constructor(
+    private readonly network: Network,
+    private readonly cells: CellSum,
+    statistic: string,
+  ) {
+    this.cellKey = exactKey(network, statistic);
+  }
+
+  decide(first: Half, second: Half, pair: NearPair): NearMasses {
+    const parts: PartialClass[] = [];
+    let before: readonly number[] = Array.from(pair.sums);
+    if (pair.column !== null) {
+      const lastColumn = first.columns.at(-1)!;
+      const counts = this.countsOf(pair.column, lastColumn);
+      before = before.map((sum, i) => sum - counts[i]!);
+      parts.push(this.single(lastColumn, counts));
+    }
+    const classes = this.classes(first, first.columns.length - parts.length, before, pair.value);
+    const others = this.classes(second, second.columns.length, Array.from(pair.otherSums), pair.otherValue);
+    const masses = { low: 0, tied: 0, high: 0 };
+    for (const a of classes) {
+      if (a.code !== pair.key) continue;
+      for (const b of others) {
+        if (b.code !== pair.otherKey) continue;
+        const place = this.place([a, b, ...parts]);
+        masses[place === 0 ? 'tied' : place < 0 ? 'low' : 'high'] += a.weight * b.weight;
+      }
+    }
+    return masses;
+  }
+
+  private place(parts: readonly PartialClass[]): Place {
+    const key = parts.reduce<bigint | null>(
+      (sum, part) => (sum === null || part.key === null ? null : sum + part.key),
+      0n,
+    );
+    const known = key === null ? undefined : this.verdicts.get(key);
+    if (known !== undefined) return known;
+    const counts: (readonly number[])[] = [];
+    for (const part of parts) for (const [column, cells] of part.counts) counts[column] = cells;
+    const place = this.cells.decide(this.network.table.liveCounts(counts));
+    if (key !== null) this.verdicts.set(key, place);
+    return place;
+  }
+
+  private countsOf(column: number, j: number): number[] {
+    const { table, space } = this.network;
+    const counts: number[] = [];
+    let rest = column;
+    for (let i = table.rows - 2; i >= 0; i--) {
+      counts[i] = Math.floor(rest / space.strides[i]!);
+      rest -= counts[i]! * space.strides[i]!;
+    }
+    counts[table.rows - 1] = table.columnTotals[j]! - counts.reduce((sum, n) => sum + n, 0);
+    return counts;
+  }
+
+  private single(column: number, counts: readonly number[]): PartialClass {
+    const { cellKey } = this;
+    const { weights, keys } = this.network.columns[column]!;
+    return {
+      key: cellKey === null ? null : counts.reduce((sum, n) => sum + cellKey(n), 0n),
+      code: keys === null ? 0 : counts.reduce((sum, n, i) => sum + keys[i]![n]!, 0),
+      weight: counts.reduce((product, n, i) => product * weights[i]![n]!, 1),
+      counts: [[column, counts]],
+    };
+  }
+
+  /** The partial tables after `depth` columns with these row sums and this value, in classes. */
+  private classes(half: Half, depth: number, sums: readonly number[], value: number): PartialClass[] {
+    if (depth === 0)
+      return value === 0 ? [{ key: this.cellKey === null ? null : 0n, code: 0, weight: 1, counts: [] }] : [];
+    const name = `${half.columns.join()}/${depth}/${sums.join()}/${value}`;
+    const known = this.remembered.get(name);
+    if (known !== undefined) return known;
+    const { network } = this;
+    const column = half.columns[depth - 1]!;
+    const from = half.levels[depth - 1]!;
+    const transitions = new Transitions(network.space);
+    transitions.collect(from.index, network.columns[column]!, sums);
+    const found: PartialClass[] = [];
+    const byKey = new Map<bigint, PartialClass>();
+    for (let t = 0; t < transitions.length; t++) {
+      const wanted = value - transitions.values[t]!;
+      if (!holds(from, transitions.sources[t]!, wanted)) continue;
+      const counts = this.countsOf(transitions.columns[t]!, column);
+      const last = this.single(column, counts);
+      const before = sums.map((sum, i) => sum - counts[i]!);
+      for (const part of this.classes(half, depth - 1, before, wanted)) {
+        const key = part.key === null || last.key === null ? null : part.key + last.key;
+        const weight = part.weight * last.weight;
+        const same = key === null ? undefined : byKey.get(key);
+        if (same !== undefined) {
+          same.weight += weight;
+          continue;
+        }
+        const made: PartialClass = {
+          key,
+          code: part.code + last.code,
+          weight,
+          counts: [...part.counts, ...last.counts],
+        };
+        found.push(made);
+        if (key !== null) byKey.set(key, made);
+      }
+    }
+    if (this.remembered.size > 100_000) this.remembered = new Map();
+    this.remembered.set(name, found);
+    return found;
+  }
+}
+
+/** Whether the node's list has an entry of exactly this value. */
+function holds(level: Level, node: number, value: number): boolean {
+  let low = level.starts[node]!;
+  let high = level.starts[node + 1]!;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (level.values[middle]! < value) low = middle + 1;
+    else high = middle;
+  }
+  return low < level.starts[node + 1]! && level.values[low] === value;
+}
+
+/** Exponents of the primes side by side in one integer, 48 bits apart; null when the statistic has no such key. */
+function exactKey(network: Network, statistic: string): ((count: number) => bigint) | null {
+  const rule = exponentRule(statistic);
+  if (rule === null) return null;
+  const { rowTotals, columnTotals } = network.table;
+  const limit = Math.min(rowTotals.at(-1)!, Math.max(...columnTotals));
+  let keys: bigint[] | null = null;
+  return (count) => {
+    if (keys === null) {
+      keys = new Array<bigint>(limit + 1).fill(0n);
+      primesUpTo(limit).forEach((prime, place) => {
+        const shift = BigInt(48 * place);
+        rule(prime, limit).forEach((exponent, n) => (keys![n]! += BigInt(exponent) << shift));
+      });
+    }
+    return keys[count]!;
+  };
+}
