@@ -1,12 +1,11 @@
 // Everything outside the program that a run may touch, in one object, so that commands can be run in a test
 // without a process. Only this file and its neighbours in src/cli read `process`.
-import { isatty } from 'node:tty';
 import type { Readable, Writable } from 'node:stream';
 
 export interface Shell {
-  /** Opened on first use: touching it makes Node wait for input. */
+  /** Opened on first use, which costs time at the start. */
   readonly stdin: () => Readable;
-  readonly stdinIsTerminal: boolean;
+  readonly stdinIsTerminal: () => boolean;
   readonly stdout: Writable;
   readonly stdoutIsTerminal: boolean;
   readonly stderr: Writable;
@@ -18,7 +17,7 @@ export interface Shell {
 export function processShell(): Shell {
   return {
     stdin: () => process.stdin,
-    stdinIsTerminal: isatty(0),
+    stdinIsTerminal: () => process.stdin.isTTY === true,
     stdout: process.stdout,
     stdoutIsTerminal: process.stdout.isTTY === true,
     stderr: process.stderr,

@@ -18,7 +18,7 @@ export function fakeShell(changes: Partial<Shell> & { input?: string } = {}): Fa
   const { input, ...others } = changes;
   return {
     stdin: () => Readable.from(input === undefined ? [] : [Buffer.from(input)]),
-    stdinIsTerminal: input === undefined,
+    stdinIsTerminal: () => input === undefined,
     stdout: keep('out'),
     stdoutIsTerminal: false,
     stderr: keep('err'),

@@ -16,7 +16,11 @@ const onlyCrossTables = ['rowLabels', 'columnLabels', 'headerRow', 'labelColumn'
 const onlyFiles = ['headerRow', 'labelColumn', 'delimiter'];
 
 /** @returns undefined when nothing is named and no input is piped. @throws Problem (usage) */
-export function chooseSource(operands: readonly string[], given: Given, stdinIsTerminal: boolean): Source | undefined {
+export function chooseSource(
+  operands: readonly string[],
+  given: Given,
+  stdinIsTerminal: () => boolean,
+): Source | undefined {
   const rows = operands.filter(looksLikeRow);
   const paths = operands.filter((operand) => !looksLikeRow(operand));
   refuseBothTotals(given);
@@ -32,7 +36,7 @@ export function chooseSource(operands: readonly string[], given: Given, stdinIsT
     refuse(given, onlyCrossTables, 'raw records (--rows and --columns)', 'is for tables of counts');
   }
   const [path] = paths;
-  if (path === undefined && stdinIsTerminal) return undefined;
+  if (path === undefined && stdinIsTerminal()) return undefined;
   return { form, path: path === undefined || path === '-' ? null : path };
 }
 

@@ -1,6 +1,8 @@
 // The options of `keepsum test`, in the order of its help.
 import { anyText, betweenZeroAndOne, oneOf, wholeNumber } from '../arguments/check-value.js';
 import { toggle, valued } from '../arguments/option.js';
+import { standardEffort } from '../../null/forecast.js';
+import { standardDraws } from '../../plan/make-plan.js';
 import { methods, tails, twoSidedRules } from '../../plan/plan.js';
 import { formatNames } from '../../report/formats.js';
 import { statisticNamed, statisticNames } from '../../statistic/registry.js';
@@ -72,9 +74,14 @@ export const planning = {
     oneOf(methods),
     `${either(methods)} (auto: exact where that is cheap, else sample)`,
   ),
-  draws: valued('How p is found', 'N', wholeNumber(1, 1e12, '100000'), 'random tables to draw (100000)'),
+  draws: valued('How p is found', 'N', wholeNumber(1, 1e12, '100000'), `random tables to draw (${standardDraws})`),
   seed: valued('How p is found', 'TEXT', anyText, 'makes the draws repeatable (one is made and shown)'),
-  effort: valued('How p is found', 'UNITS', wholeNumber(1, Infinity, '1e9'), 'most exact work that is allowed (1e8)'),
+  effort: valued(
+    'How p is found',
+    'UNITS',
+    wholeNumber(1, Infinity, '1e9'),
+    `most exact work that is allowed, in steps (${standardEffort.toExponential().replace('e+', 'e')})`,
+  ),
   samplingConfidence: valued(
     'How p is found',
     'LEVEL',

@@ -2,8 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { chooseSource } from '../../../src/cli/commands/choose-source.js';
 import { problemOf } from '../problem-of.js';
 
-const piped = false;
-const terminal = true;
+const piped = (): boolean => false;
+const terminal = (): boolean => true;
 
 describe('where the table stands', () => {
   it('rows typed in are the table, even when input is piped', () => {
