@@ -11,6 +11,9 @@ const zeroWidth = /^[\p{Mn}\p{Me}\p{Cf}\p{Cc}\p{Default_Ignorable_Code_Point}]$/
 const picture =
   /\p{Emoji_Presentation}|\p{Extended_Pictographic}\ufe0f|^\p{Regional_Indicator}{2}|^[0-9#*]\ufe0f?\u20e3/u;
 
+/** Letters that join into one syllable of two columns. */
+const hangulParts = /[\u1100-\u11ff]/;
+
 let segmenter: Intl.Segmenter | undefined;
 
 function clustersOf(text: string): string[] {
@@ -23,7 +26,7 @@ function clusterWidth(cluster: string): number {
   if (plainText.test(cluster)) return cluster.length;
   if (picture.test(cluster)) return 2;
   let width = 0;
-  for (const character of cluster.normalize('NFC')) {
+  for (const character of hangulParts.test(cluster) ? cluster.normalize('NFC') : cluster) {
     if (!zeroWidth.test(character)) width += eastAsianWidth(character.codePointAt(0)!);
   }
   return width;

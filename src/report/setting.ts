@@ -92,15 +92,13 @@ const units: readonly (readonly [seconds: number, name: string])[] = [
   [86_400, 'days'],
   [3600, 'hours'],
   [60, 'minutes'],
-  [1, 'seconds'],
 ];
 
-/** A duration to be read, not computed with. */
+/** A duration to be read, not computed with: in the largest unit of which there are at least two. */
 function durationWords(seconds: number): string {
-  if (seconds < 1) return 'under a second';
+  if (seconds < 1.5) return 'about a second or less';
   const [unit, name] = units.find(([length]) => seconds >= 2 * length) ?? [1, 'seconds'];
   const amount = seconds / unit;
-  return name === 'years' && amount > 1000
-    ? 'longer than anyone can wait'
-    : `about ${countWords(Math.round(amount))} ${name}`;
+  if (name === 'years' && amount > 1000) return 'longer than anyone can wait';
+  return `about ${countWords(Math.round(amount))} ${name}`;
 }

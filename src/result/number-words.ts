@@ -31,7 +31,8 @@ export function roundedTo(error: number, value: number): string {
   const place = firstPlace(value);
   const significant = error > 0 ? Math.min(3, Math.max(1, place - roundedPlace(error) + 1)) : 1;
   if (value < 1e-4) return value.toExponential(significant - 1);
-  return notQuiteOne(value, value.toFixed(Math.max(0, significant - 1 - place)));
+  const text = value.toFixed(Math.max(0, significant - 1 - place));
+  return significant === 3 ? notQuiteOne(value, text) : text;
 }
 
 /** A probability so near 1 that three digits would say 1. */

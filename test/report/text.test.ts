@@ -1,0 +1,165 @@
+import { describe, expect, it } from 'vitest';
+import { render } from '../../src/report/formats.js';
+import * as samples from '../helpers/sample-results.js';
+
+const headingsOf = (report: string): string[] => report.split('\n').filter((line) => /^\S/.test(line));
+/** The report as running text, folded lines joined. */
+const running = (report: string): string => report.replace(/\s+/g, ' ');
+
+describe('the text report', () => {
+  it('reads from the question to how to run it again', () => {
+    expect(headingsOf(render(samples.waldExact, 'text'))).toEqual([
+      'Is "healed" as common in "treated" as in "control"?',
+      'What was tested',
+      'The table',
+      'The answer',
+      'Other readings of the same table',
+      'Would an approximation do?',
+      'Before you use it',
+      'To run it again',
+    ]);
+  });
+
+  it('asks the one-tailed question when one tail was asked for', () => {
+    const { waldExact } = samples;
+    const [, upper, lower] = waldExact.pValues;
+    const titleWith = (p: typeof upper): string => headingsOf(render({ ...waldExact, pValues: [p!] }, 'text'))[0]!;
+    expect(titleWith(upper)).toBe('Is "healed" more common in "treated" than in "control"?');
+    expect(titleWith(lower)).toBe('Is "healed" more common in "control" than in "treated"?');
+  });
+
+  it('gives the answer as the sentence of the result, and its error as a second', () => {
+    const report = running(render(samples.pearsonSampled, 'text'));
+    expect(report).toContain(
+      `The answer ${samples.pearsonSampled.sentence} Its error is that of drawing: 25 of 1,000 random tables were at least ` +
+        'as extreme; with the observed one counted in, p is 26 / 1,001 (Phipson & Smyth 2010).',
+    );
+  });
+
+  it.each([
+    ['waldExact', 'Its only error is rounding, at most 2.2e-14 of its value.'],
+    ['onlyOneTable', 'It carries no error at all.'],
+    ['asymptoticHeadline', 'It rests on an approximation for large counts; its error here is not known.'],
+    [
+      'noneAsExtreme',
+      'none of 100,000 random tables was at least as extreme; with the observed one counted in, p is 1 / 100,001',
+    ],
+    ['doubledSampled', '203 of 5,000 random tables were at least as extreme in the upper tail, 4,973 in the lower;'],
+    ['doubledSampled', 'p is 2 x 204 / 5,001, at most 1'],
+  ])('%s: says %s', (name, words) => {
+    expect(running(render(samples.sampleResults[name]!, 'text'))).toContain(words);
+  });
+
+  it('words every other p as a sentence, sampled ones with their error, approximate ones as such', () => {
+    const exact = running(render(samples.waldExact, 'text'));
+    expect(exact).toContain(
+      'The upper-tailed permutation p of the Wald statistic ("healed" more common in "treated") is 0.00274, exact.',
+    );
+    expect(exact).toContain(
+      "The upper-tailed p of Pearson's chi-square statistic is 0.00165 by the chi-square approximation on 1 degree of freedom; its error is unknown.",
+    );
+    expect(exact).toContain(
+      'With ties counted by half (mid-p, Lancaster 1961) the p would be 0.00280, with ties left out 0.000119',
+    );
+    expect(running(render(samples.doubledSampled, 'text'))).toContain(
+      'is 0.041 (standard error 0.0028, 99% interval 0.0338 to 0.0483), from the same draws.',
+    );
+  });
+
+  it('counts missing records and says what became of them', () => {
+    const { pearsonSampled } = samples;
+    const missing = pearsonSampled.input.missing!;
+    const said = (parts: Partial<typeof missing>): string =>
+      running(
+        render({ ...pearsonSampled, input: { ...pearsonSampled.input, missing: { ...missing, ...parts } } }, 'text'),
+      );
+    expect(said({})).toContain(
+      '61 records were read. Missing: the row value in 2, the column value in 3, both values in 1; these were left out (6 counts).',
+    );
+    expect(said({ rule: 'level' })).toContain('missing was kept as a level of its own.');
+    expect(said({ missingRow: 0, missingColumn: 0, missingBoth: 0 })).toContain(
+      '61 records were read, none with a value missing.',
+    );
+  });
+
+  it('says how a file was read', () => {
+    expect(running(render(samples.emptyRow, 'text'))).toContain(
+      'A 4 x 3 table of 30 counts, read from a cross-table (commas between fields, a header row, a label column, its total row left out).',
+    );
+  });
+
+  it('says which method was picked, why, and what exact work was forecast to be', () => {
+    expect(running(render(samples.probabilityExact, 'text'))).toContain(
+      'Method: exact, picked by auto (exact work is forecast to stay within the effort allowed). ' +
+        'Forecast of exact work: 2,747,230 tables, 96,153,050 steps, about a second or less.',
+    );
+    expect(running(render(samples.pearsonSampled, 'text'))).toContain('Method: sample, as asked.');
+    expect(running(render(samples.wideTable, 'text'))).toContain(
+      'about 7.0e37 tables, 4.0e39 steps, longer than anyone can wait.',
+    );
+  });
+
+  it.each([
+    [0, 'about a second or less'],
+    [2, 'about 2 seconds'],
+    [119, 'about 119 seconds'],
+    [600, 'about 10 minutes'],
+    [86_400, 'about 24 hours'],
+    [1e6, 'about 12 days'],
+    [1e9, 'about 32 years'],
+    [1e12, 'longer than anyone can wait'],
+  ])('a forecast of %d seconds is shown as %s', (seconds, words) => {
+    const { waldExact } = samples;
+    const forecast = { ...waldExact.plan.forecast, seconds };
+    expect(running(render({ ...waldExact, plan: { ...waldExact.plan, forecast } }, 'text'))).toContain(
+      `steps, ${words}.`,
+    );
+  });
+
+  it('gives every caution, those of this table first and as sentences', () => {
+    const report = running(render(samples.emptyRow, 'text'));
+    const caution = report.slice(report.indexOf('Before you use it'));
+    expect(caution).toMatch(
+      /^Before you use it Left out of the test because it is empty: row "not given"\. Association is not causation\./,
+    );
+    for (const words of ['not the size of an effect', 'independent of each other', 'qualified statistician']) {
+      expect(caution).toContain(words);
+    }
+  });
+
+  it('makes a sentence of a note that is a clause', () => {
+    const notes = [{ code: 'totals-left-out', text: 'left out as totals: row "sum"' }];
+    expect(render({ ...samples.waldExact, notes }, 'text')).toContain('  Left out as totals: row "sum".\n');
+  });
+
+  it('warns when the interval of a sampled p leaves the level of the plan undecided', () => {
+    const { pearsonSampled } = samples;
+    const words =
+      'The 99% interval of this p holds 0.03, the level of the plan: only more draws, or the exact method, can tell';
+    const at = (alpha: number): string =>
+      running(render({ ...pearsonSampled, plan: { ...pearsonSampled.plan, alpha } }, 'text'));
+    expect(at(0.03)).toContain(words);
+    expect(at(0.05)).not.toContain('the level of the plan');
+  });
+
+  it('paints nothing that words do not say: unpainted, the report is the same', () => {
+    const mark = (text: string): string => `<${text}>`;
+    const painted = render(samples.waldExact, 'text', { paint: { bold: mark, dim: mark, warn: mark } });
+    expect(painted).toContain('<The answer>');
+    expect(painted).toMatch(/< {2}The approximate p and the exact one differ/);
+    expect(painted.replace(/^<(.*)>$/gm, '$1')).toBe(render(samples.waldExact, 'text'));
+  });
+
+  it('keeps prose to a line that can be read on a very wide terminal', () => {
+    const longest = Math.max(
+      ...render(samples.waldExact, 'text', { width: 200 })
+        .split('\n')
+        .map((line) => line.length),
+    );
+    expect(longest).toBeLessThanOrEqual(96);
+  });
+
+  it('takes a width below 40 as 40', () => {
+    expect(render(samples.wideTable, 'text', { width: 5 })).toBe(render(samples.wideTable, 'text', { width: 40 }));
+  });
+});
