@@ -13,7 +13,7 @@ export interface Ending {
  */
 export function endingOf(thrown: unknown, debug: boolean): Ending {
   if (thrown instanceof Problem) {
-    const place = thrown.place === undefined ? '' : `${thrown.place}: `;
+    const place = thrown.place === undefined || namedAlready(thrown) ? '' : `${thrown.place}: `;
     return {
       text: `error: ${shown(place + thrown.message)}\nhint: ${shown(thrown.hint)}\n`,
       status: thrown.exitStatus,
@@ -28,3 +28,7 @@ export function endingOf(thrown: unknown, debug: boolean): Ending {
     status: 1,
   };
 }
+
+/** `--draws: --draws has no effect` would say it twice. */
+const namedAlready = ({ place, message }: Problem): boolean =>
+  place !== undefined && place.startsWith('--') && message.includes(place);

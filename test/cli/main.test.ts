@@ -43,7 +43,7 @@ describe('wrong usage ends with 2, two lines on standard error and nothing on st
     ['a table where a command is wanted', ['8,2', '1,9'], 'there is no command "8,2"', 'keepsum test 8,2'],
     ['an option where a command is wanted', ['--draws', '5'], '--draws stands where', 'options come after'],
     ['an unknown option', ['test', '--tial', 'both'], 'there is no option --tial', 'did you mean --tail?'],
-    ['an unknown value', ['test', '8,2', '--format', 'jsn'], '--format: "jsn"', 'did you mean json?'],
+    ['an unknown value', ['test', '8,2', '--format', 'jsn'], '"jsn" is not a value of --format', 'did you mean json?'],
     ['an unknown statistic', ['test', '8,2', '--statistic', 'pearsn'], '"pearsn"', 'did you mean pearson?'],
     ['a missing value', ['test', '8,2', '--seed'], '--seed comes last', 'write --seed TEXT'],
     ['an empty seed', ['test', '8,2', '1,9', '--seed='], '--seed: the value is empty', '--seed'],

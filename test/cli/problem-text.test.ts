@@ -10,6 +10,11 @@ describe('how a run that cannot finish ends', () => {
     expect(text).toBe('error: a.csv:2:3: m\nhint: h\n');
   });
 
+  it('names an option once, even when the message does', () => {
+    const problem = usageProblem({ ...parts, message: '--draws has no effect', place: '--draws' });
+    expect(endingOf(problem, false).text).toBe('error: --draws has no effect\nhint: h\n');
+  });
+
   it('has a status for each kind', () => {
     const statuses = [dataProblem(parts), usageProblem(parts), effortProblem(parts), new Error('x')];
     expect(statuses.map((thrown) => endingOf(thrown, false).status)).toEqual([1, 2, 3, 1]);
