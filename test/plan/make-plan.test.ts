@@ -1,0 +1,135 @@
+// What a plan settles before work starts, and what it refuses.
+import { describe, expect, it } from 'vitest';
+import { analyse } from '../../src/analyse.js';
+import type { Problem } from '../../src/problem/problem.js';
+import type { PlanOptions } from '../../src/plan/plan.js';
+import { makePlan } from '../../src/plan/make-plan.js';
+import { liveTable } from '../../src/table/live-table.js';
+import { makeTable } from '../../src/table/table.js';
+
+const twoByTwo = [
+  [8, 2],
+  [1, 9],
+];
+const larger = [
+  [3, 0, 2],
+  [1, 4, 0],
+  [2, 2, 3],
+];
+const enormous = Array.from({ length: 8 }, () => Array.from({ length: 8 }, () => 20));
+
+const planFor = (counts: number[][], options: PlanOptions = {}): ReturnType<typeof makePlan>['plan'] => {
+  const table = makeTable({ counts });
+  return makePlan(table, liveTable(table), options).plan;
+};
+
+const refusal = (counts: number[][], options: object): { code: string; status: number; hint: string } => {
+  try {
+    planFor(counts, options as PlanOptions);
+  } catch (thrown) {
+    const { code, exitStatus, hint } = thrown as Problem;
+    return { code, status: exitStatus, hint };
+  }
+  throw new Error('was not refused');
+};
+
+describe('a plan', () => {
+  it('is exact where exact is cheap and says so', () => {
+    const plan = planFor(larger);
+    expect(plan).toMatchObject({
+      statistic: 'pearson',
+      tail: 'upper',
+      method: 'exact',
+      methodAsked: 'auto',
+      draws: null,
+      seed: null,
+    });
+    expect(plan.methodReason).toMatch(/tables have these margins; exact work is forecast at/);
+    expect(plan.forecast.tables).toBeGreaterThan(1);
+  });
+
+  it('samples where it is not, with the reason, a seed and 100,000 draws', () => {
+    const plan = planFor(enormous);
+    expect(plan).toMatchObject({ method: 'sample', draws: 100_000 });
+    expect(plan.methodReason).toMatch(/^exact is out of reach: about/);
+    expect(plan.seed).toMatch(/^[2-9a-hjkmnp-z]{8}$/);
+    expect(planFor(enormous).seed).not.toBe(plan.seed);
+  });
+
+  it('is frozen', () => {
+    expect(Object.isFrozen(planFor(larger))).toBe(true);
+  });
+
+  it('names the groups, the event and the reference for signed statistics', () => {
+    expect(planFor(twoByTwo, { statistic: 'wald' })).toMatchObject({
+      tail: 'both',
+      twoSidedRule: 'distance',
+      groups: 'rows',
+      event: 'column 1',
+      reference: 'row 2',
+    });
+    expect(
+      planFor(twoByTwo, { statistic: 'score', groups: 'columns', event: 'row 2', reference: 'column 1' }),
+    ).toMatchObject({
+      groups: 'columns',
+      event: 'row 2',
+      reference: 'column 1',
+    });
+  });
+
+  it.each([
+    ['a name that is no statistic', twoByTwo, { statistic: 'pearsen' }, 'unknown-statistic', /did you mean pearson/],
+    ['wald on a 3x3', larger, { statistic: 'wald' }, 'not-two-by-two', /pearson/],
+    ['both tails of an upper statistic', twoByTwo, { tail: 'both' }, 'tail-of-upper-statistic', /--tail upper/],
+    [
+      'a two-sided rule for one tail',
+      twoByTwo,
+      { statistic: 'wald', tail: 'upper', twoSidedRule: 'doubled' },
+      'option-without-effect',
+      /leave it out/,
+    ],
+    ['groups for pearson', twoByTwo, { groups: 'columns' }, 'option-without-effect', /wald or score/],
+    ['an unknown event', twoByTwo, { statistic: 'wald', event: 'colum 1' }, 'unknown-label', /did you mean column 1/],
+    ['no draws', enormous, { draws: 0 }, 'out-of-range', /--draws/],
+    ['half a draw', enormous, { draws: 1.5 }, 'out-of-range', /--draws/],
+    ['draws for an exact p', twoByTwo, { method: 'exact', draws: 100 }, 'option-without-effect', /--method sample/],
+    ['an empty seed', enormous, { seed: '' }, 'empty-seed', /any text/],
+    ['an alpha of 2', twoByTwo, { alpha: 2 }, 'not-a-share', /0\.05/],
+    ['an unknown tail', twoByTwo, { tail: 'uper' }, 'unknown-value', /did you mean upper/],
+    [
+      'an asymptotic p of the probability',
+      twoByTwo,
+      { statistic: 'probability', method: 'asymptotic' },
+      'no-asymptotic-form',
+      /pearson/,
+    ],
+  ])('refuses %s as wrong usage', (_, counts, options, code, hint) => {
+    const found = refusal(counts, options);
+    expect(found).toMatchObject({ code, status: 2 });
+    expect(found.hint).toMatch(hint);
+  });
+
+  it('refuses exact work over the bound with the forecast and what works instead', () => {
+    const found = refusal(enormous, { method: 'exact' });
+    expect(found).toMatchObject({ code: 'exact-over-bound', status: 3 });
+    expect(found.hint).toMatch(/--method sample, or raise the bound with --effort/);
+  });
+});
+
+describe('one table only', () => {
+  it.each([
+    ['one column', [[3], [4]]],
+    [
+      'an empty row',
+      [
+        [0, 0],
+        [5, 8],
+      ],
+    ],
+  ])('%s: p is 1, with a note', async (_, counts) => {
+    const result = await analyse({ counts });
+    expect(result.pValues).toHaveLength(1);
+    expect(result.pValues[0]).toMatchObject({ p: 1, strict: 0, mid: 0.5, tied: 1, method: 'exact' });
+    expect(result.notes.map(({ code }) => code)).toContain('only-one-table');
+  });
+});
