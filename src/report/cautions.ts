@@ -1,7 +1,5 @@
 // What a reader should know before using the answer: remarks that belong to this table first, then the cautions that
 // belong to every p-value (Wasserstein & Lazar 2016).
-import { isOneTableOnly, samplingErrorOf } from '../result/describe.js';
-import { levelWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
 import type { Sentence } from './page.js';
 
@@ -14,7 +12,6 @@ const standing = [
 
 export const cautionsFor = (result: Result): Sentence[] => [
   ...result.notes.map(({ text }) => warning(asSentence(text))),
-  ...undecidedByDraws(result).map(warning),
   ...standing.map((text): Sentence => ({ kind: 'sentence', text, tone: 'plain' })),
 ];
 
@@ -23,16 +20,3 @@ const warning = (text: string): Sentence => ({ kind: 'sentence', text, tone: 'wa
 /** Notes are written as clauses or as sentences; here they all become sentences. */
 const asSentence = (text: string): string =>
   text.replace(/^[a-z]/, (letter) => letter.toUpperCase()) + (/[.!?]$/.test(text) ? '' : '.');
-
-/** More draws are needed where the interval of a sampled p leaves open on which side of the level it lies. */
-function undecidedByDraws(result: Result): string[] {
-  const sampling = samplingErrorOf(result.pValues[0]!);
-  const { alpha } = result.plan;
-  if (isOneTableOnly(result) || sampling === undefined) return [];
-  const [lower, upper] = sampling.interval;
-  if (lower > alpha || upper < alpha) return [];
-  return [
-    `The ${levelWords(sampling.confidence)} interval of this p holds ${alpha}, the level of the plan: ` +
-      'only more draws, or the exact method, can tell on which side p lies.',
-  ];
-}

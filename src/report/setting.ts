@@ -1,7 +1,7 @@
 // The setting of a test in sentences: where the counts came from, what was missing, what chance was taken to be, and
 // which method was picked and why.
 import { quoted } from '../result/label-words.js';
-import { countWords, digits } from '../result/number-words.js';
+import { countWords } from '../result/number-words.js';
 import type { InputSource, Result } from '../result/result.js';
 
 /** How the table was read, as the end of a sentence that names it. */
@@ -60,45 +60,11 @@ export function missingSentences({ input: { missing } }: Result): string[] {
 const lackingWords = (what: string, records: number): string[] =>
   records === 0 ? [] : [`${what} in ${countWords(records)}`];
 
-/** What chance was taken to be, and the method with its reason and forecast. */
+/** What chance was taken to be, and the method with the reason for it. */
 export function methodSentences({ plan }: Result): string[] {
-  const picked =
-    plan.methodAsked === plan.method
-      ? 'as asked'
-      : `picked by ${plan.methodAsked} (${plan.methodReason.replace(/\.$/, '')})`;
+  const picked = plan.methodAsked === plan.method ? '' : `picked by ${plan.methodAsked}: `;
   return [
     ...(plan.method === 'asymptotic' ? [] : ['Chance deals the counts anew with every row and column total held.']),
-    `Method: ${plan.method}, ${picked}. ${forecastSentence(plan.forecast)}`,
+    `Method: ${plan.method}, ${picked}${plan.methodReason.replace(/\.$/, '')}.`,
   ];
-}
-
-function forecastSentence(forecast: Result['plan']['forecast']): string {
-  const about = forecast.tablesAreCounted ? '' : 'about ';
-  return (
-    `Forecast of exact work: ${about}${sizeWords(forecast.tables)} table${forecast.tables === 1 ? '' : 's'}, ` +
-    `${sizeWords(forecast.workUnits)} steps, ${durationWords(forecast.seconds)}.`
-  );
-}
-
-const sizeWords = (size: number): string =>
-  Number.isSafeInteger(size) && size < 1e10
-    ? countWords(size)
-    : size < 1e6
-      ? countWords(Math.round(size))
-      : digits(size, 2);
-
-const units: readonly (readonly [seconds: number, name: string])[] = [
-  [365.25 * 86_400, 'years'],
-  [86_400, 'days'],
-  [3600, 'hours'],
-  [60, 'minutes'],
-];
-
-/** A duration to be read, not computed with: in the largest unit of which there are at least two. */
-function durationWords(seconds: number): string {
-  if (seconds < 1.5) return 'about a second or less';
-  const [unit, name] = units.find(([length]) => seconds >= 2 * length) ?? [1, 'seconds'];
-  const amount = seconds / unit;
-  if (name === 'years' && amount > 1000) return 'longer than anyone can wait';
-  return `about ${countWords(Math.round(amount))} ${name}`;
 }

@@ -45,7 +45,7 @@ export function beforeWords(parts: SampleParts): ResultBeforeWords {
       twoSidedRule: null,
       method: 'exact',
       methodAsked: 'auto',
-      methodReason: 'exact work is forecast to stay within the effort allowed',
+      methodReason: '10 tables have these margins; exact work is forecast at 10 units',
       forecast: { workUnits: 10, tables: 10, tablesAreCounted: true, seconds: 0 },
       groups: null,
       event: null,
@@ -85,7 +85,7 @@ type Facts = Partial<PValue> & Pick<PValue, 'p'>;
 
 export const exactP = (facts: Facts): PValue => ({
   tail: 'upper',
-  orderedBy: 'upper',
+  orderedBy: facts.statistic ?? 'pearson',
   method: 'exact',
   statistic: 'pearson',
   log10P: facts.p === null ? null : Math.log10(facts.p),
@@ -98,7 +98,15 @@ export const exactP = (facts: Facts): PValue => ({
 });
 
 export const asymptoticP = (facts: Facts): PValue =>
-  exactP({ method: 'asymptotic', guaranteed: false, errors: [{ kind: 'approximation' }], ...facts });
+  exactP({
+    method: 'asymptotic',
+    strict: facts.p,
+    mid: facts.p,
+    tied: 0,
+    guaranteed: false,
+    errors: [{ kind: 'approximation' }],
+    ...facts,
+  });
 
 export function sampledP(
   counts: { atLeast: number; tied: number; draws: number; interval: [number, number] },
@@ -130,7 +138,7 @@ export function sampledP(
   });
 }
 
-const sampled = { method: 'sample', methodAsked: 'auto', generator: 'xor128 by seedrandom', blockSize: 4096 } as const;
+const sampled = { method: 'sample', methodAsked: 'auto', generator: 'tyche-i', blockSize: 4096 } as const;
 
 const healing = [
   [8, 2],
@@ -154,7 +162,7 @@ export const waldExact = sample({
     exactP({
       tail: 'both',
       rule: 'distance',
-      orderedBy: 'distance',
+      orderedBy: 'distance of wald from its centre',
       statistic: 'wald',
       p: 0.005477494641581329,
       strict: 0.00011907597046915932,
@@ -163,8 +171,14 @@ export const waldExact = sample({
       point: 0.0026792093355560848,
     }),
     exactP({ tail: 'upper', statistic: 'wald', p: 0.0027387473207906646 }),
-    exactP({ tail: 'lower', orderedBy: 'lower', statistic: 'wald', p: 0.9999404620147654 }),
-    asymptoticP({ p: 0.0016536951637003395, degreesOfFreedom: 1 }),
+    exactP({ tail: 'lower', statistic: 'wald', p: 0.9999404620147654 }),
+    asymptoticP({
+      tail: 'both',
+      rule: 'distance',
+      orderedBy: 'distance of wald from its centre',
+      statistic: 'wald',
+      p: 9.546919845238127e-6,
+    }),
   ],
   diagnostics: {
     smallestExpected: 4.5,
@@ -176,8 +190,8 @@ export const waldExact = sample({
   },
   notes: [
     {
-      code: 'approximation-far-off',
-      text: 'The approximate p and the exact one differ by a factor of 3.31; trust the exact one.',
+      code: 'asymptotic-differs',
+      text: 'The asymptotic p is smaller than the exact one by more than a factor of 1.5: do not use it here.',
     },
   ],
 });
@@ -203,7 +217,13 @@ export const pearsonSampled = sample({
     ],
     missing: { rule: 'drop', records: 61, missingRow: 2, missingColumn: 3, missingBoth: 1, dropped: 6 },
   },
-  plan: { ...sampled, methodAsked: 'sample', methodReason: 'asked for', draws: 1000, seed: 'spring-7' },
+  plan: {
+    ...sampled,
+    methodAsked: 'sample',
+    methodReason: 'asked for; about 3.0e5 tables have these margins',
+    draws: 1000,
+    seed: 'spring-7',
+  },
   statistic: { name: 'pearson', value: 14.160984848484851, degreesOfFreedom: 6 },
   pValues: [
     sampledP({ atLeast: 25, tied: 0, draws: 1000, interval: [0.014066074377788722, 0.04067217464897199] }),
@@ -232,7 +252,10 @@ export const probabilityExact = sample({
       [0, 0, 0, 0, 0, 1, 2],
     ],
   },
-  plan: { forecast: { workUnits: 96_153_050, tables: 2_747_230, tablesAreCounted: true, seconds: 1.4 } },
+  plan: {
+    methodReason: '2,747,230 tables have these margins; exact work is forecast at 96,153,050 units',
+    forecast: { workUnits: 96_153_050, tables: 2_747_230, tablesAreCounted: true, seconds: 1.4 },
+  },
   statistic: { name: 'probability', value: 17.273877711426568 },
   pValues: [
     exactP({
@@ -243,7 +266,7 @@ export const probabilityExact = sample({
       tied: 0.0036783804430863256,
       point: 3.1481123918098706e-8,
     }),
-    exactP({ tail: 'lower', orderedBy: 'lower', statistic: 'probability', p: 0.9983998564460749 }),
+    exactP({ tail: 'lower', statistic: 'probability', p: 0.9983998564460749 }),
     asymptoticP({ p: 0.013128330292006742, degreesOfFreedom: 24 }),
   ],
   diagnostics: {
@@ -288,8 +311,11 @@ export const onlyOneTable = sample({
   pValues: [exactP({ p: 1, strict: 0, mid: 0.5, tied: 1, errors: [{ kind: 'rounding', relative: 0 }] })],
   diagnostics: { smallestExpected: 2 },
   notes: [
-    { code: 'only-one-table', text: 'The margins allow one table only, so p is 1 whatever the counts.' },
-    { code: 'empty-lines', text: 'Left out of the test because they are empty: column "missed".' },
+    { code: 'only-one-table', text: 'These margins allow one table only, so chance has nothing to decide and p is 1.' },
+    {
+      code: 'empty-lines',
+      text: 'Left out because no unit falls into it (p is the same either way): column "missed".',
+    },
   ],
 });
 
@@ -325,7 +351,12 @@ export const emptyRow = sample({
     cochranSentence: "Every cell expects fewer than 5, so Cochran's (1954) advice is not met.",
     tables: 2035,
   },
-  notes: [{ code: 'empty-lines', text: 'Left out of the test because it is empty: row "not given".' }],
+  notes: [
+    {
+      code: 'empty-lines',
+      text: 'Left out because no unit falls into it (p is the same either way): row "not given".',
+    },
+  ],
 });
 
 /** Two-tailed by doubling, sampled: both tails' counts stand in the error. Columns are the groups. */
@@ -361,10 +392,12 @@ export const doubledSampled = sample({
     exactP({
       tail: 'both',
       rule: 'doubled',
-      orderedBy: 'doubled',
       method: 'sample',
       statistic: 'score',
       p: (2 * 204) / 5001,
+      strict: (2 * 27) / 5000,
+      mid: (2 * 115) / 5000,
+      tied: (2 * 176) / 5000,
       errors: [
         {
           kind: 'sampling',
@@ -384,9 +417,9 @@ export const doubledSampled = sample({
     ),
     sampledP(
       { atLeast: 4973, tied: 176, draws: 5000, interval: [0.9914, 0.997] },
-      { statistic: 'score', tail: 'lower', orderedBy: 'lower' },
+      { statistic: 'score', tail: 'lower' },
     ),
-    asymptoticP({ p: 0.035077747980090244, degreesOfFreedom: 1 }),
+    asymptoticP({ tail: 'both', rule: 'doubled', orderedBy: 'score', statistic: 'score', p: 0.035077747980090244 }),
   ],
   diagnostics: { smallestExpected: 5.793103448275862 },
 });
@@ -451,7 +484,7 @@ export const asymptoticHeadline = sample({
       [22, 38, 21],
     ],
   },
-  plan: { method: 'asymptotic', methodAsked: 'asymptotic', methodReason: 'asked for' },
+  plan: { method: 'asymptotic', methodAsked: 'asymptotic', methodReason: 'asked for; 1,200 tables have these margins' },
   statistic: { name: 'likelihood-ratio', value: 8.41, degreesOfFreedom: 2 },
   pValues: [asymptoticP({ statistic: 'likelihood-ratio', p: 0.0149, degreesOfFreedom: 2 })],
   diagnostics: { smallestExpected: 16.3 },

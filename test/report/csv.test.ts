@@ -43,7 +43,7 @@ describe('the csv report', () => {
   });
 
   it('leaves the value empty beside a p of another statistic', () => {
-    expect(rowsOf(render(samples.waldExact, 'csv')).at(-1)).toMatchObject({ statistic: 'pearson', value: '' });
+    expect(rowsOf(render(samples.probabilityExact, 'csv')).at(-1)).toMatchObject({ statistic: 'pearson', value: '' });
   });
 
   it('carries the draws and the error of a sampled p, both tails of a doubled one', () => {

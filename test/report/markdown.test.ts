@@ -50,7 +50,7 @@ describe('the markdown report', () => {
 
   it('sets remarks on this table apart as quotations', () => {
     expect(render(samples.emptyRow, 'markdown')).toContain(
-      '\n> Left out of the test because it is empty: row "not given".\n',
+      '\n> Left out because no unit falls into it (p is the same either way): row "not given".\n',
     );
   });
 
