@@ -25,11 +25,14 @@ export const keepsum = (words: readonly string[], settings: RunSettings = {}): P
 export const inShell = (line: string, settings: RunSettings = {}): Promise<Ran> =>
   run('bash', ['-c', `keepsum() { "${process.execPath}" "${bin}" "$@"; }; ${line}`], settings);
 
+const noLeanings = { NO_COLOR: undefined, FORCE_COLOR: undefined, COLUMNS: undefined, TERM: 'xterm' };
+
 export function run(program: string, words: readonly string[], settings: RunSettings): Promise<Ran> {
   return new Promise((done, fail) => {
     const child = spawn(program, words, {
       cwd: settings.folder ?? root,
-      env: { ...cleanEnvironment(), ...settings.environment },
+      // Nothing that colours the output or speaks for a terminal comes from whoever runs the tests.
+      env: { ...process.env, ...noLeanings, ...settings.environment },
       stdio: ['pipe', 'pipe', 'pipe'],
     });
     let out = '';
@@ -42,10 +45,4 @@ export function run(program: string, words: readonly string[], settings: RunSett
     child.stdin.on('error', () => undefined);
     child.stdin.end(settings.input ?? '');
   });
-}
-
-/** Without what would colour the output or speak for a terminal. */
-function cleanEnvironment(): NodeJS.ProcessEnv {
-  const { NO_COLOR: _no, FORCE_COLOR: _force, COLUMNS: _columns, ...rest } = process.env;
-  return { ...rest, TERM: 'xterm' };
 }
