@@ -15,7 +15,8 @@ export function makeRectangle(
   place: (record: number, field: number) => string,
 ): { lines: readonly Line[]; notes: InputNote[] } {
   const first = lines[0]!.fields.length;
-  const used = Math.max(...lines.map(({ fields }) => lastFilled(fields) + 1));
+  let used = 0;
+  for (const { fields } of lines) used = Math.max(used, lastFilled(fields) + 1);
   // Columns past the last one in which anything stands are empty on every line, header included.
   const width = Math.min(first, used);
   for (const { fields, record } of lines) {

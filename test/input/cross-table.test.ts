@@ -183,6 +183,11 @@ describe('what is no table says what it is instead', () => {
     );
   });
 
+  it('a file of very many records is refused like a short one', () => {
+    const { code, place } = refused(`ward,outcome\n${'A,healed\n'.repeat(300_000)}`);
+    expect({ code, place }).toEqual({ code: 'raw-records', place: 'counts.csv:2:3' });
+  });
+
   it('raw records get the options to type', () => {
     expect(refused('ward,outcome\nA,healed\nB,open\n').hint).toContain('--rows ward --columns outcome');
   });

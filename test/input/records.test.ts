@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import { describe, expect, it } from 'vitest';
 import { mostLevels } from '../../src/input/levels.js';
+import { RecordTally } from '../../src/input/record-tally.js';
 import type { RecordOptions } from '../../src/input/records.js';
 import { readRecords } from '../../src/input/records.js';
 import { bytesOf, piecesOf, problemOfAsync } from './text-input.js';
@@ -86,8 +87,8 @@ describe('raw records', () => {
   });
 
   it('that spell a level with blanks around it mean the same level', async () => {
-    const { table } = await read('ward,outcome\nA,x\n A ,"x "\n"\tA",x');
-    expect(table.counts).toEqual([[3]]);
+    const { table } = await read('ward,outcome\n"A ",x\n A ,"x "\n"\tA",x');
+    expect(table).toMatchObject({ counts: [[3]], rowLabels: ['A'] });
   });
 
   it('follow the listed order, a level that does not occur being an empty line', async () => {
@@ -295,6 +296,15 @@ describe('what is wrong with a record has its line and column, or its number', (
       place: 'visits.csv:1002:1',
     });
     expect((await read(`ward,outcome\n${ids.slice(1).join('\n')}`)).table.total).toBe(mostLevels);
+  });
+
+  it('levels are not gathered any more once missing values are known to end the reading', () => {
+    const tally = new RecordTally({ rows: 'ward', columns: 'outcome' }, 'fail', 'visits.csv');
+    tally.take(['ward', 'outcome']);
+    tally.take(['', 'x']);
+    for (let i = 0; i < 2 * mostLevels; i++) tally.take([`${i}`, `${i}`]);
+    expect([tally.rows.labels.length, tally.columns.labels.length]).toEqual([0, 0]);
+    expect(tally.closingFault()?.problem('here').message).toContain('missing in 1 of 2001 records');
   });
 
   it('an error of the source itself is passed on', async () => {

@@ -33,6 +33,15 @@ describe('a line of totals is never counted in silence', () => {
     });
   });
 
+  it('one line beside a labelled total is too little to call another line its sums', () => {
+    const { message } = problemOf(() => read('g,a,b,n\nx,1,2,3\nTotal,1,2,3\n'));
+    expect(message).toBe('row "Total" is a total by its label');
+  });
+
+  it('sums that are all 0 are no sign of totals', () => {
+    expect(problemOf(() => read('0,0,0\n0,0,0\n0,0,0\n'))).toMatchObject({ code: 'no-counts' });
+  });
+
   it.each([
     ['the last row alone holds sums', '1,2\n3,5\n4,7\n'],
     ['the last column alone holds sums', '1,2,3\n3,5,8\n4,7,12\n'],
