@@ -87,8 +87,9 @@ function answer(result: Result): Block[] {
 }
 
 function otherReadings(result: Result): Block[] {
+  if (isOneTableOnly(result)) return [];
   const [headline, ...others] = result.pValues;
-  const ties = isOneTableOnly(result) ? undefined : tiesSentence(headline!);
+  const ties = tiesSentence(headline!);
   return [...(ties === undefined ? [] : [ties]), ...others.map((p) => pSentence(result, p))].map(plain);
 }
 

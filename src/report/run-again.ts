@@ -1,14 +1,14 @@
 // How to run the same analysis again: a command where it can be typed safely, and the facts that decide every digit.
 import { quoted, shown } from '../result/label-words.js';
 import { countWords } from '../result/number-words.js';
-import type { InputEcho, Result } from '../result/result.js';
+import type { Result } from '../result/result.js';
 
 /**
  * The words of a command, each to stay whole on its line; undefined where there is none to give (a program passed the
  * counts) or where a label cannot be written so that a shell reads it as it stands. Never run by us.
  */
 export function againCommand(result: Result): readonly string[] | undefined {
-  const table = tableParts(result.input);
+  const table = tableParts(result);
   if (table === undefined) return undefined;
   const operands = table.operands.map(shellWord);
   const options = [...table.options, ...planOptions(result)].map(([name, value]) => optionWords(name, value));
@@ -33,14 +33,16 @@ export function againInWords({ input, plan }: Result): string {
   return `Take the same counts${table} with ${said.join(', ')}.`;
 }
 
-type Option = readonly [name: string, value: string];
+/** A flag has no value. */
+type Option = readonly [name: string, value: string | null];
 
 interface TableParts {
   readonly operands: readonly string[];
   readonly options: readonly Option[];
 }
 
-function tableParts({ source, ...input }: InputEcho): TableParts | undefined {
+function tableParts({ input, notes }: Result): TableParts | undefined {
+  const { source } = input;
   switch (source.form) {
     case 'library':
       return undefined;
@@ -52,8 +54,11 @@ function tableParts({ source, ...input }: InputEcho): TableParts | undefined {
         options: hasNames ? [['column-labels', labels.map(csvLabel).join(',')]] : [],
       };
     }
-    case 'cross-table':
-      return { operands: ['FILE'], options: (source.totalsLeftOut ?? []).length > 0 ? [['drop-totals', '']] : [] };
+    case 'cross-table': {
+      const dropped: Option[] = (source.totalsLeftOut ?? []).length > 0 ? [['drop-totals', null]] : [];
+      const kept: Option[] = notes.some(({ code }) => code === 'totals-kept') ? [['keep-totals', null]] : [];
+      return { operands: ['FILE'], options: [...dropped, ...kept] };
+    }
     case 'records':
       return {
         operands: ['FILE'],
@@ -61,7 +66,7 @@ function tableParts({ source, ...input }: InputEcho): TableParts | undefined {
           ['rows', source.rowsFrom ?? ''],
           ['columns', source.columnsFrom ?? ''],
           ...optional('count', source.countFrom),
-          ...optional('missing', input.missing?.rule),
+          ...optional('missing', input.missing?.rule === 'fail' ? null : input.missing?.rule),
         ],
       };
   }
@@ -89,9 +94,9 @@ const planOptions = ({ plan }: Result): Option[] => [
   ...optional('sampling-confidence', plan.draws === null ? null : plan.samplingConfidence),
 ];
 
-/** An option with its value; a value that looks like an option is joined by an equals sign. A flag has no value. */
-function optionWords(name: string, value: string): string | undefined {
-  if (name === 'drop-totals') return `--${name}`;
+/** An option with its value; a value that looks like an option is joined by an equals sign. */
+function optionWords(name: string, value: string | null): string | undefined {
+  if (value === null) return `--${name}`;
   if (value.startsWith('-')) return shellWord(`--${name}=${value}`);
   const word = shellWord(value);
   return word === undefined ? undefined : `--${name} ${word}`;

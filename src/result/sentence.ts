@@ -50,10 +50,13 @@ const shareOf = (group: Group): string =>
 
 const percentOf = (group: Group): string => (group.proportion === null ? '' : ` (${percentWords(group.proportion)})`);
 
-function valueWords({ statistic }: ResultBeforeWords): string {
+function valueWords({ statistic, pValues }: ResultBeforeWords): string {
   const words = shortStatisticWords(statistic.name);
   if (statistic.value === null) return `${words} is undefined, because a group is empty`;
-  const degrees = statistic.degreesOfFreedom === undefined ? '' : ` (${degreesWords(statistic.degreesOfFreedom)})`;
+  // Degrees of freedom mean something only to a statistic that is compared with a chi-square law.
+  const hasLaw = pValues.some((p) => p.statistic === statistic.name && p.degreesOfFreedom !== undefined);
+  const { degreesOfFreedom } = statistic;
+  const degrees = hasLaw && degreesOfFreedom !== undefined ? ` (${degreesWords(degreesOfFreedom)})` : '';
   return `${words} is ${statisticValueWords(statistic.value)}${degrees}`;
 }
 

@@ -35,6 +35,11 @@ describe('the command to run it again', () => {
     expect(commandOf(samples.emptyRow)).toContain('keepsum test FILE --drop-totals --statistic pearson');
   });
 
+  it('keeps totals again where totals were kept', () => {
+    const notes = [{ code: 'totals-kept', text: 'row "Total" was counted as data, as asked' }];
+    expect(commandOf({ ...samples.wideTable, notes })).toContain('keepsum test FILE --keep-totals --statistic');
+  });
+
   it('quotes what a shell would act on', () => {
     expect(commandOf(withLabels(['a b', '$(rm x)'], ['one, two', 'x;y']))).toMatch(
       /^keepsum test 'a b=8,2' '\$\(rm x\)=1,9' --column-labels '"one, two",x;y' /,

@@ -20,6 +20,12 @@ describe('the text report', () => {
     ]);
   });
 
+  it('has nothing to say of other readings or approximations where only one table is possible', () => {
+    const headings = headingsOf(render(samples.onlyOneTable, 'text'));
+    expect(headings).not.toContain('Other readings of the same table');
+    expect(headings).not.toContain('Would an approximation do?');
+  });
+
   it('asks the one-tailed question when one tail was asked for', () => {
     const { waldExact } = samples;
     const [, upper, lower] = waldExact.pValues;

@@ -46,6 +46,12 @@ describe('the sentence for a report', () => {
     );
   });
 
+  it('counts degrees of freedom only for a statistic that has a chi-square law', () => {
+    const statistic = { ...samples.probabilityExact.statistic, degreesOfFreedom: 24 };
+    expect(sentenceFor({ ...samples.probabilityExact, statistic })).not.toContain('degrees of freedom');
+    expect(samples.emptyRow.sentence).toContain('(4 degrees of freedom)');
+  });
+
   it('names the group a one-tailed p looks to', () => {
     const { waldExact } = samples;
     const upper = { ...waldExact, pValues: waldExact.pValues.slice(1) };
