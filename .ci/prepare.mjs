@@ -8,6 +8,11 @@ if (!existsSync('node_modules/vite') || !existsSync('node_modules/typescript')) 
   console.error('hint: run `npm ci --include=dev`, or install the packed tarball, which holds the built command.');
   process.exitCode = existsSync('dist/main.js') ? 0 : 1;
 } else {
-  const { status } = spawnSync('npm', ['run', '--silent', 'build'], { stdio: ['ignore', 'ignore', 'inherit'] });
+  // Quiet unless it fails: standard output belongs to whoever asked, such as `npm pack --json`.
+  const { status, stdout } = spawnSync('npm', ['run', '--silent', 'build'], {
+    stdio: ['ignore', 'pipe', 'inherit'],
+    encoding: 'utf8',
+  });
+  if (status !== 0) console.error(stdout);
   process.exitCode = status ?? 1;
 }

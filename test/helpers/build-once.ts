@@ -1,5 +1,5 @@
 // Before the tests of the real command: builds dist, once per run, if anything it is made from is newer.
-import { execFileSync } from 'node:child_process';
+import { spawnSync } from 'node:child_process';
 import { existsSync, readdirSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 
@@ -15,7 +15,7 @@ const built = 'dist/types/index.d.ts';
 
 export default function setup(): void {
   const since = existsSync('dist/main.js') && existsSync(built) ? statSync(built).mtimeMs : 0;
-  if (Math.max(...madeFrom.map(newest)) > since) {
-    execFileSync('npm', ['run', '--silent', 'build'], { stdio: ['ignore', 'ignore', 'inherit'] });
-  }
+  if (Math.max(...madeFrom.map(newest)) <= since) return;
+  const { status, stdout, stderr } = spawnSync('npm', ['run', '--silent', 'build'], { encoding: 'utf8' });
+  if (status !== 0) throw new Error(`the build that these tests run failed:\n${stdout}${stderr}`);
 }
