@@ -13,7 +13,13 @@ import { sampleCuts } from './null/sampled/sample-cuts.js';
 import { makePlan } from './plan/make-plan.js';
 import type { Plan, PlanOptions } from './plan/plan.js';
 import type { PValueEntry } from './pvalue/contract.js';
-import { asymptoticPValue, conditionalPValues, orderingsNeeded, questionsOf } from './pvalue/p-values.js';
+import {
+  asymptoticAlone,
+  asymptoticPValue,
+  conditionalPValues,
+  orderingsNeeded,
+  questionsOf,
+} from './pvalue/p-values.js';
 import { buildResult } from './result/build-result.js';
 import { asymptoticNotes, emptyLineNotes, onlyOneTable, unsettledNotes } from './result/notes.js';
 import type { Result } from './result/result.js';
@@ -46,7 +52,7 @@ export async function analyse(data: TableParts | ReadTable, options: PlanOptions
   let found: PValueEntry[];
   let tables: number | undefined;
   if (plan.method === 'asymptotic') {
-    found = questions.flatMap((question) => asymptoticPValue(question, value ?? 0, degreesOfFreedom) ?? []);
+    found = asymptoticAlone(questions, value ?? 0, degreesOfFreedom);
   } else {
     const answer = askNull(live, bound, orderingsNeeded(questions), plan);
     tables = answer.tables;
@@ -59,7 +65,7 @@ export async function analyse(data: TableParts | ReadTable, options: PlanOptions
     plan,
     named,
     value,
-    degreesOfFreedom,
+    degreesOfFreedom: plan.statistic === 'probability' ? undefined : degreesOfFreedom,
     pValues: found,
     expectations: checkExpectations(live),
     tables,

@@ -113,7 +113,7 @@ function settleMethod(
   effort: number,
 ): { method: ChosenMethod; reason: string } {
   const tables = `${forecast.tablesAreCounted ? '' : 'about '}${inWords(forecast.tables)} ${forecast.tables === 1 ? 'table has' : 'tables have'} these margins`;
-  const work = `exact work is forecast at ${inWords(forecast.workUnits)} units (about ${inWords(forecast.seconds)} s), the bound is ${inWords(effort)}`;
+  const work = `exact work is forecast at ${inWords(forecast.workUnits)} units (${timeInWords(forecast.seconds)}), the bound is ${inWords(effort)}`;
   const fits = forecast.workUnits <= effort;
   if (asked === 'asymptotic' && statistic.name === 'probability') {
     throw usageProblem({
@@ -143,3 +143,11 @@ const inWords = (value: number): string =>
   value < 1e7
     ? value.toLocaleString('en-US', { maximumSignificantDigits: 9 })
     : value.toExponential(1).replace('e+', 'e');
+
+const timeInWords = (seconds: number): string => {
+  if (seconds < 1) return 'under a second';
+  const [size, unit] =
+    seconds < 120 ? [1, 's'] : seconds < 7200 ? [60, 'min'] : seconds < 2e5 ? [3600, 'h'] : [86_400, 'days'];
+  const amount = seconds / Number(size);
+  return `about ${amount < 1e4 ? Number(amount.toPrecision(2)) : amount.toExponential(0).replace('e+', 'e')} ${unit}`;
+};
