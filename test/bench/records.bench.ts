@@ -1,5 +1,6 @@
 // Speed and memory of reading raw records. A million of them are written to a temporary file at run time; keepsum's reader
 // is timed against a bare `for await` over csv-parse's array rows of the same file, in turns, in the same run. Bound: 1.5.
+// Other work on the machine can only add time, so the fastest of the turns is the fairest measure; the median stands beside it.
 import { createReadStream, createWriteStream } from 'node:fs';
 import { mkdtemp, rm, stat } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
@@ -70,7 +71,7 @@ async function memoryGrowth(path: string): Promise<number> {
   return (peak - before) / 2 ** 20;
 }
 
-/** Prints the ratio of the medians, and the growth of memory for a tenth of the records and for all of them. */
+/** Prints the ratios of times, and the growth of memory for a tenth of the records and for all of them. */
 export async function benchRecords(print: (line: string) => void): Promise<void> {
   const folder = await mkdtemp(join(tmpdir(), 'keepsum-bench-'));
   try {
@@ -84,12 +85,13 @@ export async function benchRecords(print: (line: string) => void): Promise<void>
       times.bare.push(await seconds(() => bare(large), million + 1));
       times.ours.push(await seconds(() => ours(large), million + 1));
     }
-    const ratios = times.ours.map((time, turn) => time / times.bare[turn]!);
     const size = ((await stat(large)).size / 2 ** 20).toFixed(0);
     print(
       `records: a million (${size} MB), medians of ${turns}: bare iteration ${median(times.bare).toFixed(2)} s, keepsum ${median(times.ours).toFixed(2)} s`,
     );
-    print(`records: ratio ${median(ratios).toFixed(2)} (bound 1.5)`);
+    print(
+      `records: ratio of the fastest ${(Math.min(...times.ours) / Math.min(...times.bare)).toFixed(2)}, of the medians ${(median(times.ours) / median(times.bare)).toFixed(2)} (bound 1.5)`,
+    );
     print(
       `records: memory grows by ${growth[0]!.toFixed(0)} MB for 100,000 records, by ${growth[1]!.toFixed(0)} MB for 1,000,000`,
     );
