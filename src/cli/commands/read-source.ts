@@ -1,5 +1,4 @@
 // The chosen source -> the table. What reads files is loaded only by the runs that need it.
-import { stat } from 'node:fs/promises';
 import { readInline } from '../../input/inline.js';
 import type { ReadTable } from '../../input/read-table.js';
 import type { Values } from '../arguments/option.js';
@@ -13,31 +12,18 @@ type ReadingValues = Values<typeof reading>;
 export async function readSource(source: Source, values: ReadingValues, shell: Shell): Promise<ReadTable> {
   const options = { ...values, totals: totalsRule(values) };
   if (source.form === 'inline') return readInline(source.rows, options);
-  const { fileBytes } = await import('../streams/input-file.js');
+  const { fileBytes, isPlainFile, pieces, whole } = await import('../streams/input-file.js');
   const { path } = source;
   const sourceName = path ?? 'standard input';
-  const bytes = (): AsyncIterable<Uint8Array> => (path === null ? shell.stdin() : fileBytes(path));
+  const bytes = (): AsyncIterable<Uint8Array> => (path === null ? pieces(shell.stdin(), sourceName) : fileBytes(path));
   if (source.form === 'cross-table') {
     const { readCrossTable } = await import('../../input/cross-table.js');
-    return readCrossTable(await whole(bytes()), { ...options, sourceName });
+    return readCrossTable(await whole(bytes(), sourceName), { ...options, sourceName });
   }
   const { readRecords } = await import('../../input/records.js');
-  const reread = path !== null && (await isRegular(path)) ? bytes : undefined;
+  const reread = path !== null && (await isPlainFile(path)) ? bytes : undefined;
   return readRecords(bytes(), { ...options, rows: values.rows!, columns: values.columns!, sourceName, reread });
 }
 
 const totalsRule = ({ dropTotals, keepTotals }: ReadingValues): 'drop' | 'keep' | 'refuse' =>
   dropTotals ? 'drop' : keepTotals ? 'keep' : 'refuse';
-
-async function whole(pieces: AsyncIterable<Uint8Array>): Promise<Uint8Array> {
-  const all: Uint8Array[] = [];
-  for await (const piece of pieces) all.push(piece);
-  return Buffer.concat(all);
-}
-
-/** Only a plain file can be read a second time; a pipe has been emptied. */
-const isRegular = (path: string): Promise<boolean> =>
-  stat(path).then(
-    (facts) => facts.isFile(),
-    () => false,
-  );

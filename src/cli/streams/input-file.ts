@@ -1,18 +1,52 @@
 // Bytes of a file or of standard input, in pieces as they come, and what is wrong when there are none.
 import { createReadStream } from 'node:fs';
-import { readdir } from 'node:fs/promises';
+import { readdir, stat } from 'node:fs/promises';
+import type { Readable } from 'node:stream';
 import { basename, dirname, join } from 'node:path';
 import { dataProblem, type Problem } from '../../problem/problem.js';
 import { nearest } from '../../problem/suggest.js';
 
-/** Pieces as they come; a failure, at the start or half-way, is a Problem (data) that names the path. */
-export async function* fileBytes(path: string): AsyncGenerator<Uint8Array> {
+/** A failure, at the start or half-way, is a Problem (data) that names the path. */
+export const fileBytes = (path: string): AsyncIterable<Uint8Array> => pieces(createReadStream(path), path);
+
+/** @param name how places name the stream; a directory can stand here too: `keepsum test < folder` */
+export async function* pieces(stream: Readable, name: string): AsyncGenerator<Uint8Array> {
   try {
-    for await (const piece of createReadStream(path)) yield piece as Uint8Array;
+    for await (const piece of stream) yield piece as Uint8Array;
   } catch (thrown) {
-    throw await unreadable(path, thrown);
+    throw await unreadable(name, thrown);
   }
 }
+
+/** Only a plain file can be read a second time; a pipe has been emptied. */
+export const isPlainFile = (path: string): Promise<boolean> =>
+  stat(path).then(
+    (facts) => facts.isFile(),
+    () => false,
+  );
+
+/** Far beyond any table of counts, and small enough to hold. */
+const mostBytes = 64 * 2 ** 20;
+
+/** All of it at once. @throws Problem (data) `input-too-long` beyond 64 MB. */
+export async function whole(all: AsyncIterable<Uint8Array>, name: string): Promise<Uint8Array> {
+  const kept: Uint8Array[] = [];
+  let length = 0;
+  for await (const piece of all) {
+    kept.push(piece);
+    length += piece.length;
+    if (length > mostBytes) throw tooLong(name);
+  }
+  return Buffer.concat(kept);
+}
+
+const tooLong = (name: string): Problem =>
+  dataProblem({
+    code: 'input-too-long',
+    message: 'there is no end after 64 MB, which is too long for a table of counts',
+    place: name,
+    hint: 'if it holds raw records, add --rows COLUMN --columns COLUMN: they are counted as they are read',
+  });
 
 async function unreadable(path: string, thrown: unknown): Promise<unknown> {
   const code = (thrown as NodeJS.ErrnoException).code;
