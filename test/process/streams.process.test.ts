@@ -43,7 +43,7 @@ describe('standard error', () => {
 
   it('says in one line that the p was sampled, and why, when the method was left to the program', async () => {
     const { err } = await keepsum(sampled);
-    expect(err).toMatch(/^note: .*exact .*\n$/);
+    expect(err).toMatch(/^note: p is sampled, 2,000 draws: exact .*\n$/);
     expect((await keepsum([...sampled, '--quiet'])).err).toBe('');
     const asked = sampled.map((word) => (word === 'auto' ? 'sample' : word));
     expect((await keepsum(asked)).err).toBe('');

@@ -2,6 +2,7 @@
 import { render } from '../../report/formats.js';
 import type { PlanOptions } from '../../plan/plan.js';
 import { usageProblem } from '../../problem/problem.js';
+import { countWords } from '../../result/number-words.js';
 import type { Result } from '../../result/result.js';
 import type { Values } from '../arguments/option.js';
 import type { Shell } from '../shell.js';
@@ -55,7 +56,7 @@ const planOptions = (values: TestValues): PlanOptions =>
 /** A method that was picked for the user is never a silent matter. */
 async function remarkOnSampling({ plan }: Result, shell: Shell): Promise<void> {
   if (plan.methodAsked !== 'auto' || plan.method !== 'sample') return;
-  await remark(shell.stderr, `note: ${plan.methodReason}\n`);
+  await remark(shell.stderr, `note: p is sampled, ${countWords(plan.draws!)} draws: ${plan.methodReason}\n`);
 }
 
 function checkCombinations(values: TestValues): void {
