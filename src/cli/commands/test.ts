@@ -1,4 +1,5 @@
 // keepsum test: one table, from where it stands to a report. Read, analyse, report, write.
+import { analyse } from '../../analyse.js';
 import { render } from '../../report/formats.js';
 import type { PlanOptions } from '../../plan/plan.js';
 import { usageProblem } from '../../problem/problem.js';
@@ -39,7 +40,6 @@ export const testCommand = command({
     if (source === undefined) return nothingNamed(shell);
     const destination = await destinationFor(values.output, shell, source.form === 'inline' ? null : source.path);
     const table = await readSource(source, values, shell);
-    const { analyse } = await import('../../analyse.js');
     const result = await analyse(table, planOptions(values));
     const format = values.format ?? 'text';
     const report = render(result, format, await lookFor(values, shell));
@@ -50,8 +50,12 @@ export const testCommand = command({
 });
 
 /** Only what the plan knows; it also makes the seed when none is given. */
-const planOptions = (values: TestValues): PlanOptions =>
-  Object.fromEntries(Object.entries(values).filter(([name]) => name in planning));
+function planOptions(values: TestValues): PlanOptions {
+  const chosen: Values<typeof planning> = Object.fromEntries(
+    Object.entries(values).filter(([name]) => name in planning),
+  );
+  return chosen;
+}
 
 /** A method that was picked for the user is never a silent matter. */
 async function remarkOnSampling({ plan }: Result, shell: Shell): Promise<void> {
