@@ -1,5 +1,6 @@
 // One reported p-value before it is part of a result; the fields are those of the result's declaration.
 import type { Tail, TwoSidedRule } from '../plan/plan.js';
+import type { sequentialRule, StopReason } from './sequential/contract.js';
 
 export interface RoundingError {
   kind: 'rounding';
@@ -15,6 +16,21 @@ export interface SamplingError {
   reason?: 'no-spread-seen';
   interval: [number, number];
   confidence: number;
+  tails?: { upper: number; lower: number };
+}
+
+/** Drawn until it was settled: what a stopping rule knows, and why it stopped. */
+export interface SequentialError {
+  kind: 'sequential';
+  rule: typeof sequentialRule;
+  level: number;
+  risk: number;
+  stoppedBecause: StopReason;
+  atLeast: number;
+  draws: number;
+  estimate: number;
+  interval: [number, number];
+  drawsToSettle: number | null;
   tails?: { upper: number; lower: number };
 }
 
@@ -37,7 +53,7 @@ export interface PValueEntry {
   point?: number;
   degreesOfFreedom?: number;
   guaranteed: boolean;
-  errors: (RoundingError | SamplingError | ApproximationError)[];
+  errors: (RoundingError | SamplingError | SequentialError | ApproximationError)[];
 }
 
 /** What a p-value is asked for: a tail, and for two tails a rule. */

@@ -1,6 +1,7 @@
 // The one reported shape, declared once. Its TypeScript type and the published JSON Schema come from here.
 // A new field is added here first; reports read nothing that is not declared.
 import { z } from 'zod';
+import { sequentialRule, stopReasons } from '../pvalue/sequential/contract.js';
 
 const count = z.int().min(0).describe('a whole number from 0 to 2^53 - 1');
 const probability = z.number().min(0).max(1);
@@ -97,6 +98,25 @@ const samplingError = z.strictObject({
   tails: z.strictObject({ upper: count, lower: count }).optional(),
 });
 
+const sequentialError = z.strictObject({
+  kind: z.literal('sequential'),
+  rule: z.literal(sequentialRule),
+  /** 1 - risk: the probability that the intervals of all looks hold the true p. */
+  level: z.number().gt(0).lt(1),
+  risk: z.number().gt(0).lt(1),
+  /** Why drawing stopped; the same for all p-values of one run. */
+  stoppedBecause: z.enum(stopReasons),
+  /** Draws at least as extreme as the observed table; the smaller of the two tails for the doubled rule. */
+  atLeast: count,
+  draws: count,
+  estimate: probability,
+  interval: z.tuple([probability, probability]),
+  /** More draws that would settle p against alpha if the share seen were the true one; 0 when settled, null when none would. */
+  drawsToSettle: count.nullable(),
+  /** For the doubled rule: draws at least as extreme in each tail. */
+  tails: z.strictObject({ upper: count, lower: count }).optional(),
+});
+
 const approximationError = z.strictObject({ kind: z.literal('approximation') });
 
 const pValue = z.strictObject({
@@ -118,7 +138,7 @@ const pValue = z.strictObject({
   degreesOfFreedom: count.optional(),
   /** True when rejecting at p <= a errs at most with probability a under the null. */
   guaranteed: z.boolean(),
-  errors: z.array(z.discriminatedUnion('kind', [roundingError, samplingError, approximationError])),
+  errors: z.array(z.discriminatedUnion('kind', [roundingError, samplingError, sequentialError, approximationError])),
 });
 
 const diagnostics = z.strictObject({

@@ -115,6 +115,8 @@ function errorSentence(p: PValue, error: PValueError): string {
         : `Its only error is rounding, at most ${error.relative.toExponential(1)} of its value.`;
     case 'sampling':
       return samplingSentence(p, error);
+    case 'sequential':
+      return sequentialSentence(error);
     case 'approximation':
       return 'It rests on an approximation for large counts; its error here is not known.';
   }
@@ -132,7 +134,16 @@ function samplingSentence(p: PValue, error: SamplingError): string {
   return `Its error is that of drawing: ${seen}; ${ending}${limit} (Phipson & Smyth 2010).`;
 }
 
-const howMany = ({ atLeast, draws }: SamplingError): string =>
+function sequentialSentence(error: Extract<PValueError, { kind: 'sequential' }>): string {
+  const { atLeast, draws, interval, risk } = error;
+  return (
+    `Its error is that of drawing under a stopping rule: ${howMany(error)} of ${countWords(draws)} random tables ` +
+    `${atLeast > 1 ? 'were' : 'was'} at least as extreme; p is the upper end of ${probabilityWords(interval[0])} to ` +
+    `${probabilityWords(interval[1])} plus ${probabilityWords(risk)}, the risk that these limits err at any look (Robbins 1970).`
+  );
+}
+
+const howMany = ({ atLeast, draws }: { atLeast: number; draws: number }): string =>
   atLeast === 0 ? 'none' : atLeast === draws ? 'every one' : countWords(atLeast);
 
 /** What counting ties by half, or not at all, would make of the p; undefined when the null does not tell. */
