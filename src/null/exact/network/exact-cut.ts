@@ -69,6 +69,7 @@ export function exactCut(
       columns,
       allAlike,
       side,
+      farUp: isFarUp(table, bounds, encoding.observedValue),
       logFloor: logObserved + Math.log(negligible),
       margin: encoding.slack + 4 * table.rows * table.columns,
       entryLimit: options.entryLimit ?? 2 ** 24,
@@ -86,6 +87,11 @@ export function exactCut(
   else other = run(side === 'low' ? 'high' : 'low').summed;
   const [below, above] = (side === 'low') === direction > 0 ? [summed, other] : [other, summed];
   return cutFrom(ordering.name, { below, tied, above, whole }, errorBound(table));
+}
+
+function isFarUp(table: OrientedTable, bounds: RestBounds, observed: number): boolean {
+  const all = table.columnTotals.map((_, j) => j);
+  return observed > (bounds.least(all, table.total, table.rowTotals) + bounds.most(all, table.rowTotals)) / 2;
 }
 
 function walk(network: Network, ties: NearTies): Tally {

@@ -1,6 +1,6 @@
 // One stage of one half of the network: for every node the sorted list of what the columns so far can have added, with
 // weights, and the running sums by which whole stretches of a list are counted at once.
-import type { NodeIndex } from './node-space.js';
+import type { NodeIndex } from './node-index.js';
 import type { SortedList } from './sorted-list.js';
 
 /** Which side of the observed value is added up; the other follows from the whole. */

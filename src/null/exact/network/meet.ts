@@ -14,7 +14,7 @@ import { Transitions } from './transitions.js';
 const blockLength = 512;
 
 export function meet(network: Network, first: Half, second: Half, ties: NearTies, tally: Tally): void {
-  const { table, encoding, bounds, space, side, margin, weights } = network;
+  const { table, encoding, bounds, space, side, margin, weights, farUp } = network;
   const { rows, rowTotals, total } = table;
   const observed = encoding.observedValue;
   const lastFirst = network.columns[first.columns.at(-1)!]!;
@@ -25,8 +25,6 @@ export function meet(network: Network, first: Half, second: Half, ties: NearTies
   const allFirst = weights.completions(first.columns);
   const allSecond = weights.completions(second.columns);
   // Upper bounds are worth their time only where the rest of a table can stay below the observed value.
-  const crudeFirst = bounds.most(first.columns, rowTotals);
-  const crudeSecond = bounds.most(second.columns, rowTotals);
   const list = new SortedList(encoding.form === 'keyed');
   const meeting = new MeetingList();
   const transitions = new Transitions(space);
@@ -51,8 +49,8 @@ export function meet(network: Network, first: Half, second: Half, ties: NearTies
       if (side === 'high') addNode();
       return;
     }
-    const mostFirst = crudeFirst < observed ? bounds.most(first.columns, sums) : Infinity;
-    const mostSecond = crudeSecond < observed ? bounds.most(second.columns, left) : Infinity;
+    const mostFirst = farUp ? bounds.most(first.columns, sums) : Infinity;
+    const mostSecond = farUp ? bounds.most(second.columns, left) : Infinity;
     if (mostFirst + mostSecond < observed - margin) {
       if (side === 'low') addNode();
       return;
@@ -185,7 +183,7 @@ class Stream {
         continue;
       }
       const masses = this.ties.decide(this.first, this.second, {
-        column: transitions.columns[t]!,
+        column: transitions.countsAt(t, level.index, this.network.columns[this.first.columns.at(-1)!]!, sums),
         value: level.values[entry]!,
         key: encoding.keys === null ? 0 : level.keys[entry]!,
         sums,

@@ -23,8 +23,8 @@ export interface NearPair {
   /** The entry's value and key before `column`, or complete when that is null. */
   readonly value: number;
   readonly key: number;
-  /** The first half's last column as a number of the node space, where the entry was made without it. */
-  readonly column: number | null;
+  /** Counts of the first half's last column, where the entry was made without it. */
+  readonly column: readonly number[] | null;
   /** Row sums of the complete first half. */
   readonly sums: ArrayLike<number>;
   readonly otherValue: number;
@@ -56,10 +56,9 @@ export class NearTies {
     const parts: PartialClass[] = [];
     let before: readonly number[] = Array.from(pair.sums);
     if (pair.column !== null) {
-      const lastColumn = first.columns.at(-1)!;
-      const counts = this.countsOf(pair.column, lastColumn);
-      before = before.map((sum, i) => sum - counts[i]!);
-      parts.push(this.single(lastColumn, counts));
+      const { column } = pair;
+      before = before.map((sum, i) => sum - column[i]!);
+      parts.push(this.single(first.columns.at(-1)!, column, 1));
     }
     const classes = this.classes(first, first.columns.length - parts.length, before, pair.value);
     const others = this.classes(second, second.columns.length, Array.from(pair.otherSums), pair.otherValue);
@@ -89,25 +88,13 @@ export class NearTies {
     return place;
   }
 
-  private countsOf(column: number, j: number): number[] {
-    const { table, space } = this.network;
-    const counts: number[] = [];
-    let rest = column;
-    for (let i = table.rows - 2; i >= 0; i--) {
-      counts[i] = Math.floor(rest / space.strides[i]!);
-      rest -= counts[i]! * space.strides[i]!;
-    }
-    counts[table.rows - 1] = table.columnTotals[j]! - counts.reduce((sum, n) => sum + n, 0);
-    return counts;
-  }
-
-  private single(column: number, counts: readonly number[]): PartialClass {
+  private single(column: number, counts: readonly number[], weight: number): PartialClass {
     const { cellKey } = this;
-    const { weights, keys } = this.network.columns[column]!;
+    const { keys } = this.network.columns[column]!;
     return {
       key: cellKey === null ? null : counts.reduce((sum, n) => sum + cellKey(n), 0n),
       code: keys === null ? 0 : counts.reduce((sum, n, i) => sum + keys[i]![n]!, 0),
-      weight: counts.reduce((product, n, i) => product * weights[i]![n]!, 1),
+      weight,
       counts: [[column, counts]],
     };
   }
@@ -129,8 +116,8 @@ export class NearTies {
     for (let t = 0; t < transitions.length; t++) {
       const wanted = value - transitions.values[t]!;
       if (!holds(from, transitions.sources[t]!, wanted)) continue;
-      const counts = this.countsOf(transitions.columns[t]!, column);
-      const last = this.single(column, counts);
+      const counts = transitions.countsAt(t, from.index, network.columns[column]!, sums);
+      const last = this.single(column, counts, transitions.weights[t]!);
       const before = sums.map((sum, i) => sum - counts[i]!);
       for (const part of this.classes(half, depth - 1, before, wanted)) {
         const key = part.key === null || last.key === null ? null : part.key + last.key;

@@ -22,6 +22,8 @@ export interface Network {
   readonly side: SummedSide;
   /** Nodes less probable than exp(logFloor) are left out; their mass is added up and stated as error. */
   readonly logFloor: number;
+  /** The observed value is so far up that partial tables can be certain to stay below it: upper bounds are worth their time. */
+  readonly farUp: boolean;
   /** Values are decided with this much room: the encoding's slack and the rounding of the bounds. */
   readonly margin: number;
   /** Most list entries that may be held at once. */

@@ -10,99 +10,138 @@ import type { OrientedTable } from './oriented-table.js';
 type CellTable = readonly (readonly Float64Array[])[];
 
 export class RestBounds {
-  private readonly convex: CellTable;
-  private readonly steepest: CellTable;
-  private readonly slopes: Float64Array;
+  // Convex lower envelopes and steepest chords of all cells end to end, with the place of each [column x rows + row].
+  private readonly convex: Float64Array;
+  private readonly steepest: Float64Array;
+  private readonly place: Int32Array;
+  private readonly columnTotals: Float64Array;
+  private readonly rowMean: Float64Array;
+  private readonly columnMean: Float64Array;
   private readonly chord: Float64Array;
   private readonly room: Float64Array;
 
   constructor(
     private readonly table: OrientedTable,
-    private readonly values: CellTable,
+    values: CellTable,
   ) {
-    this.convex = values.map((rows) => rows.map(convexEnvelope));
-    this.steepest = values.map((rows) => rows.map(steepestChords));
-    const longest = table.columns + table.rows;
-    this.slopes = new Float64Array(table.rows * table.columns);
-    this.chord = new Float64Array(longest);
-    this.room = new Float64Array(longest);
+    const { rows, columns } = table;
+    const cells = values.flat();
+    this.place = new Int32Array(cells.length + 1);
+    cells.forEach((cell, at) => (this.place[at + 1] = this.place[at]! + cell.length));
+    this.convex = new Float64Array(this.place[cells.length]!);
+    this.steepest = new Float64Array(this.place[cells.length]!);
+    cells.forEach((cell, at) => {
+      this.convex.set(convexEnvelope(cell), this.place[at]);
+      this.steepest.set(steepestChords(cell), this.place[at]);
+    });
+    this.columnTotals = Float64Array.from(table.columnTotals);
+    this.rowMean = new Float64Array(rows);
+    this.columnMean = new Float64Array(columns);
+    this.chord = new Float64Array(rows + columns);
+    this.room = new Float64Array(rows + columns);
   }
 
   /** At most the smallest sum over `columns` with these row sums; `size` is the sum of the columns' totals. */
   least(columns: readonly number[], size: number, rowSums: ArrayLike<number>): number {
-    const { columnTotals, rows } = this.table;
-    const { slopes } = this;
+    this.fitSlopes(columns, size, rowSums);
+    const { convex, place, columnTotals, rowMean, columnMean } = this;
+    const { rows } = this.table;
     const width = columns.length;
-    for (let i = 0; i < rows; i++) {
-      for (let c = 0; c < width; c++) {
-        const j = columns[c]!;
-        slopes[i * width + c] = slopeAt(this.convex[j]![i]!, (rowSums[i]! * columnTotals[j]!) / size, rowSums[i]!);
-      }
-    }
-    this.makeAdditive(width, rowSums);
     let bound = 0;
     for (let i = 0; i < rows; i++) {
+      const sum = rowSums[i]!;
       for (let c = 0; c < width; c++) {
         const j = columns[c]!;
-        const slope = slopes[i * width + c]!;
-        const expected = (rowSums[i]! * columnTotals[j]!) / size;
-        bound += leastAbove(this.convex[j]![i]!, slope, expected, Math.min(rowSums[i]!, columnTotals[j]!));
+        const total = columnTotals[j]!;
+        const slope = rowMean[i]! + columnMean[c]!;
+        const expected = (sum * total) / size;
+        const most = sum < total ? sum : total;
+        const from = place[j * rows + i]!;
+        // The lowest point of f(n) - slope x n, walking from the expected count: f is convex.
+        let n = Math.floor(expected);
+        if (n > most) n = most;
+        let best = convex[from + n]! - slope * (n - expected);
+        const start = n;
+        while (n < most) {
+          const next = convex[from + n + 1]! - slope * (n + 1 - expected);
+          if (next >= best) break;
+          best = next;
+          n++;
+        }
+        if (n === start) {
+          while (n > 0) {
+            const next = convex[from + n - 1]! - slope * (n - 1 - expected);
+            if (next >= best) break;
+            best = next;
+            n--;
+          }
+        }
+        bound += best;
       }
     }
     return bound;
   }
 
-  /** Replaces slopes by row mean + column mean - mean, taken over the rows that are not empty. */
-  private makeAdditive(width: number, rowSums: ArrayLike<number>): void {
-    const { slopes, chord: rowMean, room: columnMean } = this;
+  /** Slopes of the cells at the proportional completion, as row part + column part; empty rows have no say. */
+  private fitSlopes(columns: readonly number[], size: number, rowSums: ArrayLike<number>): void {
+    const { convex, place, columnTotals, rowMean, columnMean } = this;
     const { rows } = this.table;
+    const width = columns.length;
     let filled = 0;
     let mean = 0;
     columnMean.fill(0, 0, width);
     for (let i = 0; i < rows; i++) {
-      if (rowSums[i] === 0) continue;
+      const sum = rowSums[i]!;
+      rowMean[i] = 0;
+      if (sum === 0) continue;
       filled++;
-      let sum = 0;
+      let rowSum = 0;
       for (let c = 0; c < width; c++) {
-        sum += slopes[i * width + c]!;
-        columnMean[c]! += slopes[i * width + c]!;
+        const j = columns[c]!;
+        const total = columnTotals[j]!;
+        const last = sum < total ? sum : total;
+        const from = place[j * rows + i]!;
+        // Differences stand for the slope half way between counts.
+        let at = (sum * total) / size - 0.5;
+        if (at < 0) at = 0;
+        const low = at >= last - 1 ? last - 1 : Math.floor(at);
+        let slope = convex[from + low + 1]! - convex[from + low]!;
+        if (low + 2 <= last) slope += (at - low) * (convex[from + low + 2]! - convex[from + low + 1]! - slope);
+        rowSum += slope;
+        columnMean[c]! += slope;
       }
-      rowMean[i] = sum / width;
+      rowMean[i] = rowSum / width;
       mean += rowMean[i]!;
     }
-    for (let i = 0; i < rows; i++) {
-      for (let c = 0; c < width; c++) slopes[i * width + c] = rowMean[i]! + (columnMean[c]! - mean) / filled;
-    }
+    for (let c = 0; c < width; c++) columnMean[c] = (columnMean[c]! - mean) / filled;
   }
 
   /** At least the largest sum over `columns` with these row sums. */
   most(columns: readonly number[], rowSums: ArrayLike<number>): number {
-    const { columnTotals, rows } = this.table;
+    const { columnTotals } = this;
+    const { rows } = this.table;
+    let base = 0;
     let byColumn = 0;
     for (const j of columns) {
-      for (let i = 0; i < rows; i++) this.offer(i, j, i, rowSums[i]!);
-      byColumn += this.fill(rows, columnTotals[j]!) + this.base(j);
+      for (let i = 0; i < rows; i++) {
+        base += this.steepest[this.place[j * rows + i]!]!;
+        this.offer(i, j, i, rowSums[i]!);
+      }
+      byColumn += this.fill(rows, columnTotals[j]!);
     }
     let byRow = 0;
     for (let i = 0; i < rows; i++) {
       for (let c = 0; c < columns.length; c++) this.offer(c, columns[c]!, i, rowSums[i]!);
       byRow += this.fill(columns.length, rowSums[i]!);
     }
-    for (const j of columns) byRow += this.base(j);
-    return Math.min(byColumn, byRow);
-  }
-
-  private base(column: number): number {
-    let sum = 0;
-    for (const cell of this.values[column]!) sum += cell[0]!;
-    return sum;
+    return base + Math.min(byColumn, byRow);
   }
 
   /** Puts the chord and the room of a cell at its place in rising order of steepness. */
   private offer(filled: number, column: number, row: number, rowSum: number): void {
     const { chord, room } = this;
-    const size = Math.min(rowSum, this.table.columnTotals[column]!);
-    const slope = this.steepest[column]![row]![size]!;
+    const size = Math.min(rowSum, this.columnTotals[column]!);
+    const slope = size === 0 ? 0 : this.steepest[this.place[column * this.table.rows + row]! + size]!;
     let at = filled;
     for (; at > 0 && chord[at - 1]! > slope; at--) {
       chord[at] = chord[at - 1]!;
@@ -122,35 +161,6 @@ export class RestBounds {
     }
     return sum;
   }
-}
-
-/** Slope of a convex table of values near a real count, between neighbouring differences. */
-function slopeAt(f: Float64Array, count: number, most: number): number {
-  const last = Math.min(most, f.length - 1);
-  if (last === 0) return f.length > 1 ? f[1]! - f[0]! : 0;
-  const at = Math.max(0, Math.min(last - 1, count - 0.5));
-  const low = Math.min(last - 1, Math.floor(at));
-  const step = f[low + 1]! - f[low]!;
-  return low + 2 > last ? step : step + (at - low) * (f[low + 2]! - f[low + 1]! - step);
-}
-
-/** min over n <= most of f(n) - slope x (n - expected), f convex. */
-function leastAbove(f: Float64Array, slope: number, expected: number, most: number): number {
-  let n = Math.min(most, Math.floor(expected));
-  let best = f[n]! - slope * (n - expected);
-  while (n < most) {
-    const next = f[n + 1]! - slope * (n + 1 - expected);
-    if (next >= best) break;
-    best = next;
-    n++;
-  }
-  while (n > 0) {
-    const next = f[n - 1]! - slope * (n - 1 - expected);
-    if (next >= best) break;
-    best = next;
-    n--;
-  }
-  return best;
 }
 
 /** The greatest convex function below the values (lower hull): the values themselves where they are convex already. */
@@ -176,9 +186,10 @@ function convexEnvelope(values: Float64Array): Float64Array {
   return envelope;
 }
 
-/** For each m the steepest chord from 0 to a count up to m. */
+/** For each m > 0 the steepest chord from 0 to a count up to m; in place 0 the value at 0. */
 function steepestChords(values: Float64Array): Float64Array {
   const steepest = new Float64Array(values.length);
+  steepest[0] = values[0]!;
   for (let n = 1; n < values.length; n++) {
     const slope = (values[n]! - values[0]!) / n;
     steepest[n] = n === 1 ? slope : Math.max(slope, steepest[n - 1]!);

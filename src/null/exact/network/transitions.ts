@@ -1,6 +1,7 @@
 // All ways to set one column below a node: for each, the node it comes from, what the column adds to the value (and key) and
 // the factor it puts on the weight. Laid out in typed arrays that are used again for every node.
-import type { NodeIndex, NodeSpace } from './node-space.js';
+import type { NodeIndex } from './node-index.js';
+import type { NodeSpace } from './node-space.js';
 
 export interface ColumnTerms {
   readonly total: number;
@@ -17,91 +18,138 @@ export class Transitions {
   values: Float64Array = new Float64Array(1024);
   weights: Float64Array = new Float64Array(1024);
   keys: Float64Array = new Float64Array(1024);
-  /** The column's counts but the last, as one number in the node space's mixed radix. */
-  columns: Float64Array = new Float64Array(1024);
-  private left: Float64Array;
-  private roomAfter: Float64Array;
+  // One slot per row for the column as far as it is set.
+  private readonly counts: Float64Array;
+  private readonly amounts: Float64Array;
+  private readonly partValues: Float64Array;
+  private readonly partWeights: Float64Array;
+  private readonly partKeys: Float64Array;
+  private readonly partNumbers: Float64Array;
+  private readonly runs: Float64Array;
+  private readonly roomAfter: Float64Array;
+  private sought = -1;
+  private found: number[] = [];
 
   constructor(private readonly space: NodeSpace) {
-    this.left = new Float64Array(space.rows);
-    this.roomAfter = new Float64Array(space.rows + 1);
+    const slots = (): Float64Array => new Float64Array(space.rows + 1);
+    this.counts = slots();
+    this.amounts = slots();
+    this.partValues = slots();
+    this.partWeights = slots();
+    this.partKeys = slots();
+    this.partNumbers = slots();
+    this.runs = slots();
+    this.roomAfter = slots();
   }
 
-  /** Finds the sources, among those in `index`, from which the column leads to the node with these row sums. */
+  /**
+   * Finds the sources, among those in `index`, from which the column leads to the node with these row sums. Neighbouring
+   * interchangeable rows with equal sums take their counts in rising order only, weighted by the ways to arrange them.
+   */
   collect(index: NodeIndex, column: ColumnTerms, sums: ArrayLike<number>): void {
-    const { rows, strides, blocks } = this.space;
-    const { left, roomAfter } = this;
-    this.length = 0;
-    let number = 0;
-    for (let i = 0; i < rows; i++) {
-      left[i] = sums[i]!;
-      number += sums[i]! * strides[i]!;
-    }
+    const { counts, amounts, partValues, partWeights, partKeys, partNumbers, roomAfter, runs } = this;
+    const { rows, codes, blockOf } = this.space;
     for (let i = rows - 1; i >= 0; i--) roomAfter[i] = roomAfter[i + 1]! + sums[i]!;
-    this.descend(index, column, sums, blocks.length > 0, 0, column.total, number, number, 0, 1, 0);
+    this.length = 0;
+    amounts[0] = column.total;
+    partWeights[0] = 1;
+    counts[0] = Math.max(0, column.total - roomAfter[1]!) - 1;
+    runs[0] = 1;
+    let row = 0;
+    while (row >= 0) {
+      if (row === rows - 2) {
+        this.finish(index, column, sums);
+        row--;
+        continue;
+      }
+      const n = ++counts[row]!;
+      const amount = amounts[row]!;
+      if (n > sums[row]! || n > amount) {
+        row--;
+        continue;
+      }
+      partValues[row + 1] = partValues[row]! + column.values[row]![n]!;
+      if (column.keys !== null) partKeys[row + 1] = partKeys[row]! + column.keys[row]![n]!;
+      partNumbers[row + 1] = partNumbers[row]! + codes[row]![sums[row]! - n]!;
+      let ways = 1;
+      let least = 0;
+      if (row > 0 && blockOf[row] !== row && sums[row] === sums[row - 1]) ways = this.arrangements(row, n, sums);
+      partWeights[row + 1] = partWeights[row]! * column.weights[row]![n]! * ways;
+      amounts[row + 1] = amount - n;
+      row++;
+      if (blockOf[row] !== row && sums[row] === sums[row - 1]) least = n;
+      counts[row] = Math.max(least, amount - n - roomAfter[row + 1]!) - 1;
+    }
   }
 
-  private descend(
-    index: NodeIndex,
-    column: ColumnTerms,
-    sums: ArrayLike<number>,
-    permuted: boolean,
-    row: number,
-    amount: number,
-    number: number,
-    whole: number,
-    value: number,
-    weight: number,
-    key: number,
-  ): void {
-    const { space, left } = this;
-    const lastButOne = space.rows - 2;
-    const values = column.values[row]!;
-    const weights = column.weights[row]!;
-    const keys = column.keys === null ? null : column.keys[row]!;
-    const stride = space.strides[row]!;
-    const most = Math.min(sums[row]!, amount);
-    let n = Math.max(0, amount - this.roomAfter[row + 1]!);
-    if (row < lastButOne) {
-      for (; n <= most; n++) {
-        left[row] = sums[row]! - n;
-        this.descend(
-          index,
-          column,
-          sums,
-          permuted,
-          row + 1,
-          amount - n,
-          number - n * stride,
-          whole,
-          value + values[n]!,
-          weight * weights[n]!,
-          keys === null ? 0 : key + keys[n]!,
-        );
-      }
-      return;
+  /** The column's counts for transition t of a collection with the same arguments. */
+  countsAt(t: number, index: NodeIndex, column: ColumnTerms, sums: ArrayLike<number>): number[] {
+    this.sought = t;
+    this.collect(index, column, sums);
+    this.sought = -1;
+    return this.found;
+  }
+
+  /** Factor by which one more row of a stretch of equal ones multiplies the ways to arrange their counts. */
+  private arrangements(row: number, n: number, sums: ArrayLike<number>): number {
+    const { blockOf } = this.space;
+    let stretch = 1;
+    let same = 1;
+    let stillSame = true;
+    for (let i = row; i > 0 && blockOf[i] !== i && sums[i] === sums[i - 1]; i--) {
+      stretch++;
+      stillSame &&= this.counts[i - 1] === n;
+      if (stillSame) same++;
     }
-    this.makeRoom(most - n + 1);
+    return stretch / same;
+  }
+
+  /** The last two rows: one count settles the other. */
+  private finish(index: NodeIndex, column: ColumnTerms, sums: ArrayLike<number>): void {
+    const { space, counts } = this;
+    const { codes, blockOf, rows } = space;
+    const row = rows - 2;
+    const sum = sums[row]!;
+    const lastSum = sums[row + 1]!;
+    const amount = this.amounts[row]!;
+    const most = Math.min(sum, amount);
+    const least = counts[row]! + 1;
+    if (most < least) return;
+    this.makeRoom(most - least + 1);
+    const { sources, values, weights, keys } = this;
+    const columnValues = column.values[row]!;
     const lastValues = column.values[row + 1]!;
+    const columnWeights = column.weights[row]!;
     const lastWeights = column.weights[row + 1]!;
+    const columnKeys = column.keys === null ? null : column.keys[row]!;
     const lastKeys = column.keys === null ? null : column.keys[row + 1]!;
+    const code = codes[row]!;
+    const lastCode = codes[row + 1]!;
+    const value = this.partValues[row]!;
+    const weight = this.partWeights[row]!;
+    const key = this.partKeys[row]!;
+    const number = this.partNumbers[row]!;
+    const { plain } = index;
+    const joins = row > 0 && blockOf[row] !== row && sum === sums[row - 1];
+    const lastJoins = blockOf[row + 1] !== row + 1 && lastSum === sum;
     let at = this.length;
-    for (; n <= most; n++) {
+    for (let n = least; n <= most; n++) {
       const rest = amount - n;
-      let source: number;
-      if (permuted) {
-        left[row] = sums[row]! - n;
-        left[row + 1] = sums[row + 1]! - rest;
-        source = index.get(space.numberOf(left));
-      } else {
-        source = index.get(number - n * stride);
-      }
+      if (lastJoins && rest < n) break;
+      const from = number + code[sum - n]! + lastCode[lastSum - rest]!;
+      const source = plain !== null ? plain[from]! : index.get(from);
       if (source < 0) continue;
-      this.sources[at] = source;
-      this.values[at] = value + values[n]! + lastValues[rest]!;
-      this.weights[at] = weight * weights[n]! * lastWeights[rest]!;
-      if (keys !== null) this.keys[at] = key + keys[n]! + lastKeys![rest]!;
-      this.columns[at] = whole - number + n * stride;
+      let ways = 1;
+      if (joins || lastJoins) {
+        counts[row] = n;
+        if (joins) ways = this.arrangements(row, n, sums);
+        if (lastJoins) ways *= this.arrangements(row + 1, rest, sums);
+      }
+      sources[at] = source;
+      values[at] = value + columnValues[n]! + lastValues[rest]!;
+      weights[at] = weight * columnWeights[n]! * lastWeights[rest]! * ways;
+      if (columnKeys !== null) keys[at] = key + columnKeys[n]! + lastKeys![rest]!;
+      if (at === this.sought) this.found = [...Array.from(counts.subarray(0, row)), n, rest];
       at++;
     }
     this.length = at;
@@ -121,6 +169,5 @@ export class Transitions {
     this.values = grown(this.values);
     this.weights = grown(this.weights);
     this.keys = grown(this.keys);
-    this.columns = grown(this.columns);
   }
 }
