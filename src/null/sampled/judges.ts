@@ -1,0 +1,134 @@
+// Judges: where a drawn table stands beside the observed one. Near ties are decided exactly; what was decided is
+// remembered within stated memory, which saves time and changes no answer.
+import type { CellSum, Place } from '../../statistic/contract.js';
+import type { LiveTable } from '../../table/live-table.js';
+import type { Ordering } from '../contract.js';
+import { CellValues } from './cell-values.js';
+import { leastOf, mostOf, rangeAround, spreadOf } from './hypergeometric/spread.js';
+import type { Cells } from './cells.js';
+import { cornerEntries, decidedEntries } from './limits.js';
+
+export interface Judge {
+  place(table: Cells): Place;
+}
+
+/** The judges that a set of orderings needs. */
+export interface Panel {
+  readonly judges: readonly Judge[];
+  /** For each ordering its judge, and whether that one's answer counts as it is or turned round. */
+  readonly assigned: readonly { readonly judge: number; readonly direction: 1 | -1 }[];
+}
+
+/** Orderings by the same sum share a judge. */
+export function panelFor(live: LiveTable, orderings: readonly Ordering[]): Panel {
+  const judges: Judge[] = [];
+  const bySum = new Map<CellSum, number>();
+  const small = live.rows === 2 && live.columns === 2;
+  const share = orderings.length;
+  const assigned = orderings.map((ordering): Panel['assigned'][number] => {
+    const { sum } = ordering;
+    if (small || sum === undefined) {
+      const place = (counts: Cells): Place => ordering.place(counts);
+      const judge = small ? new ByCorner(live, place, share) : new ByMemory(live, place, share);
+      return { judge: judges.push(judge) - 1, direction: 1 };
+    }
+    const judge = bySum.get(sum.cells) ?? judges.push(new BySum(live, sum.cells, share)) - 1;
+    bySum.set(sum.cells, judge);
+    return { judge, direction: sum.direction };
+  });
+  return { judges, assigned };
+}
+
+/** By a sum over cells; asks for an exact decision only where rounding could matter. */
+class BySum implements Judge {
+  private readonly values: CellValues;
+  private readonly nearTies: ByMemory;
+
+  constructor(
+    live: LiveTable,
+    private readonly cells: CellSum,
+    share: number,
+  ) {
+    this.values = new CellValues(live, cells, share);
+    this.nearTies = new ByMemory(live, (counts) => cells.decide(counts), share);
+  }
+
+  place(table: Cells): Place {
+    const difference = this.values.sum(table) - this.cells.observed;
+    const { slack } = this.cells;
+    if (difference > slack) return 1;
+    if (difference < -slack) return -1;
+    return slack === 0 ? 0 : this.nearTies.place(table);
+  }
+}
+
+const unknown = 2;
+
+/** A 2x2 table is its first count: places are kept by it. */
+class ByCorner implements Judge {
+  private readonly from: number;
+  private readonly places: Int8Array;
+
+  constructor(
+    live: LiveTable,
+    private readonly decide: (table: Cells) => Place,
+    share: number,
+  ) {
+    const { total } = live;
+    const row = live.rowTotals[0]!;
+    const column = live.columnTotals[0]!;
+    const spread = spreadOf(total, row, column);
+    const half = Math.min(rangeAround(spread, 8).length / 2 + 8, cornerEntries / share / 2 - 1);
+    this.from = Math.max(leastOf(total, row, column), Math.floor(spread.mean - half));
+    const to = Math.min(mostOf(row, column), Math.floor(spread.mean + half));
+    this.places = new Int8Array(Math.max(0, to - this.from + 1)).fill(unknown);
+  }
+
+  place(table: Cells): Place {
+    const k = table[0]! - this.from;
+    if (!(k >= 0 && k < this.places.length)) return this.decide(table);
+    const known = this.places[k]!;
+    if (known !== unknown) return known as Place;
+    const place = this.decide(table);
+    this.places[k] = place;
+    return place;
+  }
+}
+
+/** Asks for every table; answers for the observed table and for those asked about lately come from memory. */
+class ByMemory implements Judge {
+  private readonly observed: Float64Array;
+  /** Tables asked about, one in each slot, and their places. */
+  private readonly tables: Float64Array;
+  private readonly places: Int8Array;
+
+  constructor(
+    live: LiveTable,
+    private readonly decide: (table: Cells) => Place,
+    share: number,
+  ) {
+    this.observed = live.counts;
+    const slots = 2 ** Math.floor(Math.log2(Math.max(1, decidedEntries / share / live.counts.length)));
+    this.tables = new Float64Array(slots * live.counts.length);
+    this.places = new Int8Array(slots).fill(unknown);
+  }
+
+  place(table: Cells): Place {
+    if (holds(this.observed, 0, table)) return 0;
+    const { tables, places } = this;
+    let hash = 0;
+    for (let cell = 0; cell < table.length; cell++) hash = Math.imul(hash ^ table[cell]!, 0x9e3779b1) ^ (hash >>> 15);
+    const slot = (hash ^ (hash >>> 13)) & (places.length - 1);
+    const start = slot * table.length;
+    if (places[slot] !== unknown && holds(tables, start, table)) return places[slot] as Place;
+    const place = this.decide(table);
+    tables.set(table, start);
+    places[slot] = place;
+    return place;
+  }
+}
+
+function holds(tables: Float64Array, start: number, table: Cells): boolean {
+  for (let cell = 0; cell < table.length; cell++) if (tables[start + cell] !== table[cell]) return false;
+  return true;
+}

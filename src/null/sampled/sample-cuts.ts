@@ -1,0 +1,85 @@
+// Cuts from random tables with both margins held: whole blocks of draws, each block from a stream of its own, so that blocks can
+// be counted anywhere, in any order, and one after another until enough is known.
+import { blockStream, type UniformSource } from '../../random/stream.js';
+import type { LiveTable } from '../../table/live-table.js';
+import type { Ordering, SampledCut } from '../contract.js';
+import { planDraws, type Sampler as SamplerName } from './draw-plan.js';
+import { panelFor } from './judges.js';
+import { blockSize } from './limits.js';
+import { TableDrawer } from './table-drawer.js';
+
+export interface Sampling {
+  readonly seed: string;
+  readonly tableKey: string;
+  /** Number of draws, at least 1; the last block is cut short where it is no multiple of the block size. */
+  readonly draws: number;
+}
+
+/** Draws below, tied with and above the observed table. */
+export type Tally = readonly [below: number, tied: number, above: number];
+
+/** Everything that can be worked out before the first draw, for one table and its orderings. */
+export interface Sampler {
+  /** Makes so many draws from a stream; one tally for each ordering. A function of the stream and the number alone. */
+  countBlock(stream: UniformSource, draws: number): Tally[];
+  /** Draws one table, row-major over the live table, into an array of rows x columns. */
+  drawTable(stream: UniformSource, into: { [cell: number]: number }): void;
+}
+
+/** @param prefer for tests: the sampler of rows and cells to use wherever it can be used. */
+export function prepareSampler(live: LiveTable, orderings: readonly Ordering[], prefer?: SamplerName): Sampler {
+  const drawer = new TableDrawer(planDraws(live, prefer));
+  const { judges, assigned } = panelFor(live, orderings);
+  const table = drawer.newTable();
+  return {
+    countBlock(stream, draws) {
+      const counts = new Float64Array(3 * judges.length);
+      for (let draw = 0; draw < draws; draw++) {
+        drawer.draw(stream, table);
+        for (let k = 0; k < judges.length; k++) counts[3 * k + 1 + judges[k]!.place(table)]!++;
+      }
+      return assigned.map(({ judge, direction }) => {
+        const tied = 3 * judge + 1;
+        return [counts[tied - direction]!, counts[tied]!, counts[tied + direction]!];
+      });
+    },
+    drawTable(stream, into) {
+      drawer.draw(stream, table);
+      for (let cell = 0; cell < table.length; cell++) into[cell] = table[cell]!;
+    },
+  };
+}
+
+/** Number of blocks that so many draws take. */
+export const blocksFor = (draws: number): number => Math.ceil(draws / blockSize);
+
+/** Draws in a block, counted from 0. */
+export const drawsInBlock = (draws: number, block: number): number =>
+  Math.max(0, Math.min(blockSize, draws - block * blockSize));
+
+/**
+ * Counts of draws below, tied with and above the observed table, for each ordering, over the blocks from `first` to before
+ * `end` (default: all). Same arguments, same counts; counts over parts add up to those over the whole.
+ */
+export function sampleCuts(
+  live: LiveTable,
+  orderings: readonly Ordering[],
+  sampling: Sampling,
+  first = 0,
+  end = blocksFor(sampling.draws),
+): SampledCut[] {
+  const sampler = prepareSampler(live, orderings);
+  const sums = orderings.map(() => [0, 0, 0]);
+  let draws = 0;
+  for (let block = first; block < end; block++) {
+    const size = drawsInBlock(sampling.draws, block);
+    draws += size;
+    sampler.countBlock(blockStream(sampling.seed, sampling.tableKey, block), size).forEach((tally, o) => {
+      for (let side = 0; side < 3; side++) sums[o]![side]! += tally[side]!;
+    });
+  }
+  return orderings.map(({ name }, o) => {
+    const [below, tied, above] = sums[o] as [number, number, number];
+    return { kind: 'sampled', ordering: name, below, tied, above, draws };
+  });
+}
