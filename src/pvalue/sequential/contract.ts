@@ -26,7 +26,7 @@ export interface SequenceOptions {
   readonly risk: number;
   /**
    * Half the interval over its middle at which p counts as precise enough, in [0, 1); 0: never. For a true p of exactly
-   * alpha this is what ends the run: 0.02 takes 1.2 million draws at alpha = 0.05, 0.05 takes 190,000.
+   * alpha this is what ends the run: 0.02 takes 1.1 million draws at alpha = 0.05, 0.05 takes 170,000.
    */
   readonly targetRelativeError: number;
   /** Most draws to make, at least one block. Drawing ends with the last whole block that fits. */

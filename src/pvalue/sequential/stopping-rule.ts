@@ -18,7 +18,7 @@ import { look, startInterval, type RunningInterval } from './running-interval.js
  * - so it is settled on the wrong side (below while p > alpha, above while p <= alpha) with probability at most risk;
  * - the reported p, upper limit + risk, is smaller than the true p + risk with probability at most risk. Under the null the true
  *   p falls at or below x with probability at most x, so P(reported <= a) <= P(true <= a - risk) + risk <= a.
- * A stop of its own for clearly large p (Besag & Clifford 1991) would save nothing: from twice alpha on, the first blocks settle it.
+ * A stop of its own for clearly large p (Besag & Clifford 1991) would save nothing: from twice alpha on, the first few blocks settle it.
  * @throws Problem (usage) `out-of-range` for a risk that is not below alpha, or a limit below one block
  */
 export function startSequence(options: SequenceOptions): Sequence {
