@@ -16,8 +16,10 @@ import type { Network } from './network.js';
 import { NodeSpace } from './node-space.js';
 import { orient, type OrientedTable } from './oriented-table.js';
 import { RestBounds } from './rest-bounds.js';
+import { SortedList } from './sorted-list.js';
 import { splitColumns } from './split-columns.js';
 import { Tally } from './tally.js';
+import { Transitions } from './transitions.js';
 import { nullWeights } from './weights.js';
 
 export interface NetworkOptions {
@@ -31,6 +33,8 @@ export interface NetworkOptions {
 const smallestDifference = 0.05;
 /** Nodes whose chance is below this part of the observed table's own are left out. */
 const negligible = 1e-18;
+/** Most arrangements of a node to visit where the halves meet. */
+const mostArrangements = 4e5;
 /** ln of a probability beyond which weights are scaled to the observed table. */
 const farOut = -400;
 
@@ -49,10 +53,11 @@ export function exactCut(
   const { cells, direction } = ordering.sum;
   const table = orient(live);
   const encoding = encode(table, cells, statistic);
-  const allAlike = encoding.symmetric && (options.allAlike ?? false);
+  const allAlike = encoding.symmetric && (options.allAlike ?? sharesLists(table));
   const logObserved = logProbability(table);
   const weights = nullWeights(table, allAlike, logObserved < farOut ? table.observed : expectedTable(table, allAlike));
   const bounds = new RestBounds(table, encoding.values);
+  const space = new NodeSpace(table, allAlike);
   const columns = table.columnTotals.map((total, j) => ({
     total,
     values: encoding.values[j]!,
@@ -65,7 +70,9 @@ export function exactCut(
       encoding,
       weights,
       bounds,
-      space: new NodeSpace(table, allAlike),
+      space,
+      list: new SortedList(encoding.form === 'keyed'),
+      transitions: new Transitions(space),
       columns,
       allAlike,
       side,
@@ -87,6 +94,23 @@ export function exactCut(
   else other = run(side === 'low' ? 'high' : 'low').summed;
   const [below, above] = (side === 'low') === direction > 0 ? [summed, other] : [other, summed];
   return cutFrom(ordering.name, { below, tied, above, whole }, errorBound(table));
+}
+
+/**
+ * One list for all arrangements of a node pays from four rows on, if the arrangements can all be visited: the number of
+ * ways the rows can be divided between two halves is counted and held against a bound.
+ */
+function sharesLists(table: OrientedTable): boolean {
+  if (table.rows < 4) return false;
+  let ways = new Float64Array([1]);
+  for (const total of table.rowTotals) {
+    const next = new Float64Array(ways.length + total);
+    ways.forEach((number, sum) => {
+      for (let n = 0; n <= total; n++) next[sum + n]! += number;
+    });
+    ways = next;
+  }
+  return ways[table.total >> 1]! <= mostArrangements;
 }
 
 function isFarUp(table: OrientedTable, bounds: RestBounds, observed: number): boolean {

@@ -2,8 +2,9 @@
 // cut to the values that are still undecided, sorted and merged.
 import { Level, type SummedSide } from './level.js';
 import { OutOfReach, type Network } from './network.js';
-import { SortedList } from './sorted-list.js';
-import { Transitions } from './transitions.js';
+import type { SortedList } from './sorted-list.js';
+import type { Transitions } from './transitions.js';
+import { visitNodes } from './visit-nodes.js';
 
 export interface Half {
   /** In the order in which they are set. */
@@ -16,49 +17,41 @@ export interface Half {
 
 /** @param depth how many of the columns to set; the others are set where the halves meet. */
 export function buildHalf(network: Network, columns: readonly number[], depth: number): Half {
-  const { side, encoding } = network;
-  const levels = [Level.root(network.space.newIndex(), side, encoding.form === 'keyed')];
+  const { side, encoding, space } = network;
+  const levels = [Level.root(space.newIndex(), side, encoding.form === 'keyed')];
   let leftOut = 0;
   for (let d = 1; d <= depth; d++) {
-    const { level, lost } = extend(network, levels[d - 1]!, columns.slice(0, d));
+    const level = new Level(space.newIndex(), levels[d - 1]!.size, side, encoding.form === 'keyed');
+    leftOut += extend(network, levels[d - 1]!, level, columns.slice(0, d));
     levels.push(level);
-    leftOut += lost;
-    if (level.length > network.entryLimit) throw new OutOfReach(network.entryLimit);
   }
   return { columns, levels, leftOut };
 }
 
-function extend(network: Network, from: Level, done: readonly number[]): { level: Level; lost: number } {
-  const { table, encoding, bounds, space, side, margin, allAlike } = network;
-  const keyed = encoding.form === 'keyed';
+/** Fills the level after one more column; returns the chance left out. */
+function extend(network: Network, from: Level, to: Level, done: readonly number[]): number {
+  const { table, encoding, bounds, space, side, margin, allAlike, farUp, list, transitions, entryLimit } = network;
   const column = network.columns[done.at(-1)!]!;
-  const size = from.size + column.total;
+  to.size += column.total;
   const rest = table.columnTotals.map((_, j) => j).filter((j) => !done.includes(j));
-  const level = new Level(space.newIndex(), size, side, keyed);
-  const list = new SortedList(keyed);
-  const transitions = new Transitions(space);
   const allDone = network.weights.completions(done);
   const observed = encoding.observedValue;
-  // What may follow at most, whatever the node: if even that leaves no value certainly below, no node needs its own bound.
-  const mostAfter = bounds.most(rest, table.rowTotals);
-  const left = new Float64Array(table.rows);
-
-  const lost = space.visit(size, network.logFloor, (sums) => {
-    for (let i = 0; i < table.rows; i++) left[i] = table.rowTotals[i]! - sums[i]!;
-    const high = observed + margin - bounds.least(rest, table.total - size, left);
-    if (bounds.least(done, size, sums) > high) {
+  // Lists shared by all arrangements need a bound that holds for each.
+  const mostAfter = allAlike && farUp ? bounds.most(rest, table.rowTotals) : Infinity;
+  return visitNodes(network, done, rest, {
+    above(sums) {
       list.length = 0;
-      if (side === 'high') level.append(space.numberOf(sums), list, allDone.value(sums));
-      return;
-    }
-    const low =
-      observed - margin - (mostAfter < observed ? (allAlike ? mostAfter : bounds.most(rest, left)) : Infinity);
-    transitions.collect(from.index, column, sums);
-    const settled = gather(from, transitions, side, low, high, list);
-    list.sortAndMerge();
-    if (list.length > 0 || settled > 0) level.append(space.numberOf(sums), list, settled);
+      to.append(space.numberOf(sums), list, allDone.value(sums));
+    },
+    open(sums, left, _, leastAfter) {
+      const low = observed - margin - (farUp && !allAlike ? bounds.most(rest, left) : mostAfter);
+      transitions.collect(from.index, column, sums);
+      const settled = gather(from, transitions, side, low, observed + margin - leastAfter, list);
+      list.sortAndMerge();
+      if (list.length > 0 || settled > 0) to.append(space.numberOf(sums), list, settled);
+      if (to.length > entryLimit) throw new OutOfReach(entryLimit);
+    },
   });
-  return { level, lost };
 }
 
 /** Fills the list with the undecided entries; returns the weight that is settled on the summed side. */
@@ -70,38 +63,24 @@ export function gather(
   high: number,
   list: SortedList,
 ): number {
-  const { starts, values, weights, keys, sums } = from;
-  const keyed = keys.length > 0;
-  list.length = 0;
+  const { starts, values, weights, sums } = from;
+  list.clear(high);
   let settled = 0;
   for (let t = 0; t < transitions.length; t++) {
     const node = transitions.sources[t]!;
-    const value = transitions.values[t]!;
-    const weight = transitions.weights[t]!;
-    const key = transitions.keys[t]!;
     const end = starts[node + 1]!;
     let i = starts[node]!;
-    list.makeRoom(end - i);
-    const { values: toValues, weights: toWeights, keys: toKeys } = list;
-    let at = list.length;
-    const least = low - value;
-    const most = high - value;
+    const least = low - transitions.values[t]!;
     if (i < end && values[i]! < least) {
       do i++;
       while (i < end && values[i]! < least);
-      if (side === 'low') settled += weight * (i < end ? sums[i]! : sums[end - 1]! + weights[end - 1]!);
+      if (side === 'low') {
+        settled += transitions.weights[t]! * (i < end ? sums[i]! : sums[end - 1]! + weights[end - 1]!);
+      }
     }
-    for (; i < end; i++) {
-      const v = values[i]!;
-      if (v > most) break;
-      toValues[at] = v + value;
-      toWeights[at] = weights[i]! * weight;
-      if (keyed) toKeys[at] = keys[i]! + key;
-      at++;
-    }
-    list.length = at;
-    if (side === 'high' && i < end) settled += weight * sums[i]!;
-    settled += weight * from.settled[node]!;
+    i = list.addShifted(from, i, end, transitions, t);
+    if (side === 'high' && i < end) settled += transitions.weights[t]! * sums[i]!;
+    settled += transitions.weights[t]! * from.settled[node]!;
   }
   return settled;
 }

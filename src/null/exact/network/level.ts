@@ -21,7 +21,7 @@ export class Level {
   constructor(
     readonly index: NodeIndex,
     /** Sum of the totals of the columns so far. */
-    readonly size: number,
+    public size: number,
     private readonly side: SummedSide,
     private readonly keyed: boolean,
   ) {
@@ -63,7 +63,7 @@ export class Level {
 
   private makeRoom(more: number): void {
     if (this.length + more <= this.values.length) return;
-    const size = Math.ceil(1.6 * (this.length + more));
+    const size = 4 * (this.length + more);
     const grown = (old: Float64Array): Float64Array => {
       const larger = new Float64Array(size);
       larger.set(old.subarray(0, this.length));

@@ -3,22 +3,19 @@
 import type { Half } from './half.js';
 import type { NearTies } from './near-ties.js';
 import { NodeSpace } from './node-space.js';
+import { visitAll } from './visit-nodes.js';
 import type { Network } from './network.js';
 import type { Tally } from './tally.js';
 
 export function meetAlike(network: Network, first: Half, second: Half, ties: NearTies, tally: Tally): void {
   const { table, space, weights } = network;
-  const { rows, rowTotals } = table;
   const firstLevel = first.levels.at(-1)!;
   const secondLevel = second.levels.at(-1)!;
   const allSecond = weights.completions(second.columns);
-  const arranged = new NodeSpace(table, false);
-  const left = new Float64Array(rows);
-  arranged.visit(firstLevel.size, -Infinity, (sums) => {
-    for (let i = 0; i < rows; i++) left[i] = rowTotals[i]! - sums[i]!;
+  // Every arrangement of the halves' nodes is visited, but for rows of equal total; bounds were used when lists were made.
+  visitAll(new NodeSpace(table, false), firstLevel.size, (sums, left, ways) => {
     const a = firstLevel.index.get(space.numberOf(sums));
     if (a < 0) return;
-    const ways = arranged.arrangementsOf(sums);
     const b = secondLevel.index.get(space.numberOf(left));
     const settled = firstLevel.settled[a]!;
     if (settled > 0) tally.summed.add(settled * ways * allSecond.mantissa(left), allSecond.exponent(left));

@@ -6,7 +6,8 @@ import type { SummedSide } from './level.js';
 import type { NodeSpace } from './node-space.js';
 import type { OrientedTable } from './oriented-table.js';
 import type { RestBounds } from './rest-bounds.js';
-import type { ColumnTerms } from './transitions.js';
+import type { SortedList } from './sorted-list.js';
+import type { ColumnTerms, Transitions } from './transitions.js';
 import type { Weights } from './weights.js';
 
 export interface Network {
@@ -26,6 +27,9 @@ export interface Network {
   readonly farUp: boolean;
   /** Values are decided with this much room: the encoding's slack and the rounding of the bounds. */
   readonly margin: number;
+  /** Working space, used for one node after the other. */
+  readonly list: SortedList;
+  readonly transitions: Transitions;
   /** Most list entries that may be held at once. */
   readonly entryLimit: number;
 }

@@ -41,7 +41,10 @@ export class RestBounds {
     this.room = new Float64Array(rows + columns);
   }
 
-  /** At most the smallest sum over `columns` with these row sums; `size` is the sum of the columns' totals. */
+  /**
+   * At most the smallest sum over `columns` with these row sums; `size` is the sum of the columns' totals. With the same
+   * multipliers the bound is linear in the row sums, which is what slopeBetween reports.
+   */
   least(columns: readonly number[], size: number, rowSums: ArrayLike<number>): number {
     this.fitSlopes(columns, size, rowSums);
     const { convex, place, columnTotals, rowMean, columnMean } = this;
@@ -55,8 +58,8 @@ export class RestBounds {
         const total = columnTotals[j]!;
         const slope = rowMean[i]! + columnMean[c]!;
         const expected = (sum * total) / size;
-        const most = sum < total ? sum : total;
         const from = place[j * rows + i]!;
+        const most = place[j * rows + i + 1]! - from - 1;
         // The lowest point of f(n) - slope x n, walking from the expected count: f is convex.
         let n = Math.floor(expected);
         if (n > most) n = most;
@@ -80,6 +83,11 @@ export class RestBounds {
       }
     }
     return bound;
+  }
+
+  /** By how much the last lower bound changes, at the least, for every unit moved from one row sum to another. */
+  slopeBetween(to: number, from: number): number {
+    return this.rowMean[to]! - this.rowMean[from]!;
   }
 
   /** Slopes of the cells at the proportional completion, as row part + column part; empty rows have no say. */
