@@ -13,20 +13,14 @@ import { sampleCuts } from './null/sampled/sample-cuts.js';
 import { makePlan } from './plan/make-plan.js';
 import type { Plan, PlanOptions } from './plan/plan.js';
 import type { PValueEntry } from './pvalue/contract.js';
-import {
-  asymptoticAlone,
-  asymptoticPValue,
-  conditionalPValues,
-  orderingsNeeded,
-  questionsOf,
-} from './pvalue/p-values.js';
+import { approximationsOf, asymptoticAlone, asymptoticBeside, degreesOfFreedomOf } from './pvalue/approximations.js';
+import { conditionalPValues, orderingsNeeded, questionsOf } from './pvalue/p-values.js';
 import { buildResult } from './result/build-result.js';
-import { asymptoticNotes, emptyLineNotes, onlyOneTable, unsettledNotes } from './result/notes.js';
+import { asymptoticNotes, emptyLineNotes, onlyOneTable, statisticNotes, unsettledNotes } from './result/notes.js';
 import type { Result } from './result/result.js';
 import type { BoundStatistic } from './statistic/contract.js';
-import { statisticNamed } from './statistic/registry.js';
 import { checkExpectations } from './table/expectation-check.js';
-import { hasOneTableOnly, liveTable, type LiveTable } from './table/live-table.js';
+import { liveTable, type LiveTable } from './table/live-table.js';
 import { makeTable, type TableParts } from './table/table.js';
 
 /**
@@ -40,24 +34,25 @@ export async function analyse(data: TableParts | ReadTable, options: PlanOptions
   const read = 'table' in data ? data : fromProgram(data);
   const live = liveTable(read.table);
 
-  const { plan, statistic, roles, named } = makePlan(read.table, live, options);
+  const { plan, statistic, bound, named, valueOfOnlyTable } = makePlan(read.table, live, options);
 
   const questions = questionsOf(plan);
-  const bound = hasOneTableOnly(live) ? null : statistic.bind(live, roles);
-  const value =
-    bound === null ? valueOfOnlyTable(named === null || named.referenceLabel !== null) : bound.value(live.counts);
-  const degreesOfFreedom = statistic.sided === 'upper' ? (live.rows - 1) * (live.columns - 1) : undefined;
+  const value = bound === null ? valueOfOnlyTable : bound.value(live.counts);
 
-  const asymptotic = asymptoticBeside(plan, live, bound, value, degreesOfFreedom);
+  const approximations = bound === null ? [] : approximationsOf(statistic, live, bound, value);
+  const asymptotic = asymptoticBeside(questions[0]!, approximations);
   let found: PValueEntry[];
   let tables: number | undefined;
   if (plan.method === 'asymptotic') {
-    found = asymptoticAlone(questions, value ?? 0, degreesOfFreedom);
+    found = asymptoticAlone(
+      questions,
+      bound === null ? approximationsOf(statistic, live, null, value ?? 0) : approximations,
+    );
   } else {
     const answer = askNull(live, bound, orderingsNeeded(questions), plan);
     tables = answer.tables;
     found = await conditionalPValues(questions, answer.cuts, answer.point, plan.samplingConfidence);
-    if (asymptotic !== undefined) found.push(asymptotic);
+    found.push(...asymptotic);
   }
 
   return buildResult({
@@ -65,14 +60,15 @@ export async function analyse(data: TableParts | ReadTable, options: PlanOptions
     plan,
     named,
     value,
-    degreesOfFreedom: plan.statistic === 'probability' ? undefined : degreesOfFreedom,
+    degreesOfFreedom: degreesOfFreedomOf(statistic, live),
     pValues: found,
     expectations: checkExpectations(live),
     tables,
     notes: [
       ...read.notes,
       ...emptyLineNotes(read.table),
-      ...(bound === null ? [onlyOneTable] : plan.method === 'asymptotic' ? [] : asymptoticNotes(found[0]!, asymptotic)),
+      ...(bound === null ? [onlyOneTable] : asymptoticNotes(found[0]!, asymptotic[0], statistic)),
+      ...statisticNotes(statistic, bound),
       ...(await unsettledNotes(found[0]!, plan)),
     ],
   });
@@ -85,9 +81,6 @@ const fromProgram = (parts: TableParts): ReadTable => ({
   missing: null,
   notes: [],
 });
-
-/** With one table only there is no departure to measure: 0, or nothing to say when a whole group is missing. */
-const valueOfOnlyTable = (bothGroups: boolean): number | null => (bothGroups ? 0 : null);
 
 interface NullAnswer {
   readonly cuts: readonly Cut[];
@@ -103,19 +96,4 @@ function askNull(live: LiveTable, bound: BoundStatistic | null, names: OrderingN
     cuts: sampleCuts(live, orderings, { seed: plan.seed!, tableKey: plan.tableKey, draws: plan.draws! }),
     point: null,
   };
-}
-
-/** `probability` has no limiting law of its own; Pearson's statistic stands in, and the entry says so. */
-function asymptoticBeside(
-  plan: Plan,
-  live: LiveTable,
-  bound: BoundStatistic | null,
-  value: number | null,
-  degreesOfFreedom: number | undefined,
-): PValueEntry | undefined {
-  if (bound === null || value === null) return undefined;
-  const question = { tail: plan.tail, rule: plan.twoSidedRule, statistic: plan.statistic };
-  if (plan.statistic !== 'probability') return asymptoticPValue(question, value, degreesOfFreedom);
-  const pearson = statisticNamed('pearson').bind(live, { groups: 'rows', event: 0, first: 0 });
-  return asymptoticPValue({ ...question, statistic: 'pearson' }, pearson.value(live.counts), degreesOfFreedom);
 }

@@ -22,7 +22,8 @@ const expectSame = (ours: number[], theirs: number[]): void => {
 const shuffled = <T>(list: readonly T[]): fc.Arbitrary<T[]> =>
   fc.shuffledSubarray([...list], { minLength: list.length, maxLength: list.length });
 
-for (const { name: statistic, shape, sided } of statistics) {
+for (const { name: statistic, shape, sided, takes } of statistics) {
+  const ordered = takes?.includes('scores') === true;
   const table = shape === '2x2' ? twoByTwoTable : smallTable;
   const runs = { numRuns: 150, seed: 11 };
 
@@ -37,7 +38,9 @@ for (const { name: statistic, shape, sided } of statistics) {
       );
     });
 
-    if (shape === 'any') {
+    if (ordered) {
+      ordersMatter(statistic);
+    } else if (shape === 'any') {
       it('p is unchanged when rows and columns change places among themselves', async () => {
         const cases = table.chain((counts) =>
           shuffled(counts)
@@ -74,7 +77,13 @@ for (const { name: statistic, shape, sided } of statistics) {
             0,
             wider[0]!.map(() => 0),
           );
-          expectSame(await exact(larger, { statistic }), await exact(counts, { statistic }));
+          const scores = ordered
+            ? {
+                rowScores: counts.map((_, i) => i).toSpliced(row % (wider.length + 1), 0, 7),
+                columnScores: counts[0]!.map((_, j) => j).toSpliced(column % (counts[0]!.length + 1), 0, -3),
+              }
+            : {};
+          expectSame(await exact(larger, { statistic, ...scores }), await exact(counts, { statistic }));
         }),
         runs,
       );
@@ -99,6 +108,43 @@ for (const { name: statistic, shape, sided } of statistics) {
         runs,
       );
     });
+  });
+}
+
+/** Laws of statistics of ordered lines. */
+function ordersMatter(statistic: string): void {
+  const runs = { numRuns: 150, seed: 13 };
+
+  it('the order of rows, or of columns, reversed exchanges the tails', async () => {
+    await fc.assert(
+      fc.asyncProperty(smallTable, async (counts) => {
+        const [both, upper, lower] = await exact(counts, { statistic });
+        for (const other of [counts.toReversed(), counts.map((row) => row.toReversed())]) {
+          expectSame(await exact(other, { statistic }), [both!, lower!, upper!]);
+        }
+      }),
+      runs,
+    );
+  });
+
+  it('p is unchanged when lines change places together with their scores, and when scores are moved and stretched', async () => {
+    const scored = smallTable.chain((counts) =>
+      fc
+        .tuple(
+          fc.array(fc.integer({ min: -3, max: 4 }), { minLength: counts.length, maxLength: counts.length }),
+          fc.shuffledSubarray([...counts.keys()], { minLength: counts.length, maxLength: counts.length }),
+        )
+        .map(([scores, order]) => ({ counts, scores, order })),
+    );
+    await fc.assert(
+      fc.asyncProperty(scored, async ({ counts, scores, order }) => {
+        const ours = await exact(counts, { statistic, rowScores: scores });
+        const shuffledCounts = order.map((k) => counts[k]!);
+        const moved = order.map((k) => Number((scores[k]! * 0.1 + 2.7).toFixed(1)));
+        expectSame(await exact(shuffledCounts, { statistic, rowScores: moved }), ours);
+      }),
+      runs,
+    );
   });
 }
 

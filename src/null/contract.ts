@@ -1,17 +1,26 @@
 // The one answer that every null gives: the cut. For an ordering of tables by extremeness, how much of the null law lies
 // below, level with (tied) and above the observed table.
-import type { CellSum, Place } from '../statistic/contract.js';
+import type { CellLimits, CellSum, LinearForm, Place } from '../statistic/contract.js';
 
 export type OrderingName = 'upper' | 'lower' | 'distance' | 'probability';
 
-/** What "as extreme" means. Exactly one of `sum` (fast path for sums over cells) and `corner` (2x2) may guide an engine;
- *  `place` is always right. */
+/** What "as extreme" means. `sum`, `fold`, `linear` and `limits` are shorter ways to the same answer for engines that know
+ *  them; `place` is always right. */
 export interface Ordering {
   readonly name: OrderingName;
   /** Exact place of a table (row-major live counts) relative to the observed one. */
   place(counts: ArrayLike<number>): Place;
   /** The ordering is that of a sum over cells: above means direction x (S - observed) > 0. */
   readonly sum?: { readonly cells: CellSum; readonly direction: 1 | -1 };
+  /** The ordering folds an exact sum over cells (slack 0) about a centre: above means S < low or S > high, level means S =
+   *  low or S = high, below lies between. low <= high; both whole or half numbers. */
+  readonly fold?: { readonly cells: CellSum; readonly low: number; readonly high: number };
+  /** The ordering is one of the values of this sum (by the name of the ordering): its law alone decides. */
+  readonly linear?: LinearForm;
+  /** Nothing is known of the ordering but `place`: in a 2x2 table it may go up and down with the corner count. */
+  readonly arbitrary?: true;
+  /** The ordering is that of a largest over cells, by its name the upper or lower one. */
+  readonly limits?: CellLimits;
 }
 
 /** A probability that may be too small for a double: value is then 0 and log10 tells. log10 is -Infinity for mass 0. */

@@ -1,6 +1,8 @@
 // What exact work a table would take, from its margins alone, in counted units: one unit is one cell set in one table.
 import { hasOneTableOnly, type LiveTable } from '../table/live-table.js';
+import type { BoundStatistic } from '../statistic/contract.js';
 import { countTables } from './exact/count-tables.js';
+import { forecastLinear } from './exact/linear/linear-forecast.js';
 
 export interface Forecast {
   readonly workUnits: number;
@@ -15,11 +17,16 @@ const secondsPerUnit = 3e-8;
 /** Default bound on exact work: about two seconds. */
 export const standardEffort = 6e7;
 
-export function forecastExact(live: LiveTable): Forecast {
+/** @param bound the statistic at work; some have engines of their own. Left out: what any statistic would take. */
+export function forecastExact(live: LiveTable, bound?: BoundStatistic | null): Forecast {
   if (hasOneTableOnly(live)) return { workUnits: 0, tables: 1, tablesAreCounted: true, seconds: 0 };
   const { tables, counted } = countTables(live);
-  const twoByTwo = live.rows === 2 && live.columns === 2;
-  const workUnits = Math.round(twoByTwo ? Math.min(tables, stepsOfTwoByTwo(live)) : tables * live.rows * live.columns);
+  // A statistic known by its values alone has every table listed.
+  const anyPlace = bound?.place !== undefined && bound.limits === undefined;
+  const twoByTwo = live.rows === 2 && live.columns === 2 && !anyPlace;
+  const listing = twoByTwo ? Math.min(tables, stepsOfTwoByTwo(live)) : tables * live.rows * live.columns;
+  const linear = bound?.linear === undefined ? Infinity : forecastLinear(live, bound.linear).workUnits;
+  const workUnits = Math.round(Math.min(listing, linear));
   return {
     workUnits,
     tables: counted ? tables : Number(tables.toPrecision(3)),

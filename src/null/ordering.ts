@@ -1,22 +1,34 @@
 // Turns a bound statistic into orderings of tables: what "at least as extreme as observed" means, decided exactly.
-import type { BoundStatistic, CellSum, Place } from '../statistic/contract.js';
+import type { BoundStatistic, CellSum, LinearForm, Place } from '../statistic/contract.js';
 import { sumOverCells } from '../statistic/expected.js';
 import { probability } from '../statistic/probability.js';
 import type { LiveTable } from '../table/live-table.js';
 import type { Ordering, OrderingName } from './contract.js';
+import { placesByProbability, wholeLaw } from './exact/linear/linear-law.js';
 
 /** @throws Error when the statistic has no such ordering; plans exclude that. */
 export function orderingFor(live: LiveTable, bound: BoundStatistic, name: OrderingName): Ordering {
-  const { sum, corner } = bound;
-  if (sum !== undefined) {
-    if (name === 'upper') return bySum(live, sum, 1, name);
-    if (name === 'lower') return bySum(live, sum, -1, name);
-  } else if (corner !== undefined) {
-    if (name === 'upper') return byCorner(live, corner, 1, name);
-    if (name === 'lower') return byCorner(live, corner, -1, name);
-    // In a 2x2 table a signed statistic takes each value at one table only, so P(T = t) is that table's probability.
-    if (name === 'probability') return bySum(live, probability.bind(live, anyRoles).sum!, 1, name);
-    if (bound.distance !== undefined) return { name, place: bound.distance };
+  const { sum, corner, linear, distance } = bound;
+  const byLine = linear === undefined ? {} : { linear };
+  switch (name) {
+    case 'upper':
+    case 'lower': {
+      const direction = name === 'upper' ? 1 : -1;
+      if (sum !== undefined) return { ...bySum(live, sum, direction, name), ...byLine };
+      if (corner !== undefined) return byCorner(live, corner, direction, name);
+      if (bound.place !== undefined) return byPlace(bound, direction, name);
+      break;
+    }
+    case 'distance': {
+      if (distance === undefined) break;
+      if (isArbitrary(bound)) return { name, place: distance, arbitrary: true };
+      if (sum === undefined || linear === undefined) return { name, place: distance };
+      return { name, place: distance, fold: { cells: sum, low: linear.low, high: linear.high }, linear };
+    }
+    case 'probability':
+      // In a 2x2 table a signed statistic takes each value at one table only, so P(T = t) is that table's probability.
+      if (corner !== undefined) return bySum(live, probability.bind(live, anyRoles).sum!, 1, name);
+      if (sum !== undefined && linear !== undefined) return byValueProbability(live, sum, linear);
   }
   throw new Error(`no ordering "${name}" for this statistic`);
 }
@@ -42,6 +54,30 @@ function placeBySum(live: LiveTable, cells: CellSum, counts: ArrayLike<number>):
 function byCorner(live: LiveTable, corner: number, direction: 1 | -1, name: OrderingName): Ordering {
   const observed = live.counts[corner]!;
   return { name, place: (counts) => signed(direction, Math.sign(counts[corner]! - observed) as Place) };
+}
+
+const isArbitrary = ({ place, limits }: BoundStatistic): boolean => place !== undefined && limits === undefined;
+
+function byPlace(bound: BoundStatistic, direction: 1 | -1, name: OrderingName): Ordering {
+  return {
+    name,
+    place: (counts) => signed(direction, bound.place!(counts)),
+    ...(isArbitrary(bound) ? { arbitrary: true } : {}),
+    ...(bound.limits === undefined ? {} : { limits: bound.limits }),
+  };
+}
+
+/** Values of a linear sum by P(S = s): every place needs the whole law, which is worked out once, when first asked for. */
+function byValueProbability(live: LiveTable, cells: CellSum, linear: LinearForm): Ordering {
+  let places: Map<number, Place> | undefined;
+  return {
+    name: 'probability',
+    linear,
+    place: (counts) => {
+      places ??= placesByProbability(live, linear, wholeLaw(live, linear));
+      return places.get(sumOverCells(live, counts, cells.cell))!;
+    },
+  };
 }
 
 const signed = (direction: 1 | -1, place: Place): Place => (place === 0 ? 0 : ((place * direction) as Place));

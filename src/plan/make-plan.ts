@@ -1,48 +1,43 @@
 // Raw wishes in, one checked and frozen plan out: every default filled, the method settled, the reason said.
-import { forecastExact, standardEffort, type Forecast } from '../null/forecast.js';
+import { forecastExact, standardEffort } from '../null/forecast.js';
 import { blockSize } from '../null/sampled/limits.js';
-import { effortProblem, usageProblem } from '../problem/problem.js';
+import { usageProblem } from '../problem/problem.js';
 import { generatorName } from '../random/stream.js';
-import type { Roles, Statistic } from '../statistic/contract.js';
-import { statisticNamed } from '../statistic/registry.js';
-import type { LiveTable } from '../table/live-table.js';
+import type { BoundStatistic, Statistic } from '../statistic/contract.js';
+import { hasOneTableOnly, type LiveTable } from '../table/live-table.js';
 import type { Table } from '../table/table.js';
+import { chooseStatistic, choicesOf, refuseUnread } from './choices.js';
 import { freshSeed } from './fresh-seed.js';
-import {
-  methods,
-  tails,
-  twoSidedRules,
-  type ChosenMethod,
-  type Method,
-  type Plan,
-  type PlanOptions,
-  type Tail,
-  type TwoSidedRule,
-} from './plan.js';
-import { noRoles, refuseRoleOptions, rolesOf, type NamedRoles } from './roles.js';
+import { methods, tails, twoSidedRules, type Plan, type PlanOptions, type Tail, type TwoSidedRule } from './plan.js';
+import { noRoles, rolesOf, type NamedRoles } from './roles.js';
 import { oneOf, positive, share, unused, wholeNumber } from './settings.js';
+import { settleMethod } from './settle-method.js';
 
 export const standardDraws = 100_000;
 
 export interface Prepared {
   readonly plan: Plan;
   readonly statistic: Statistic;
-  readonly roles: Roles;
-  /** null for statistics that treat all rows and all columns alike. */
+  /** null where these margins leave one table only. */
+  readonly bound: BoundStatistic | null;
+  /** The statistic there: 0, for there is no departure to measure; null when a whole group is missing. */
+  readonly valueOfOnlyTable: number | null;
+  /** null for statistics that do not compare two groups. */
   readonly named: NamedRoles | null;
 }
 
 /** @throws Problem: usage for wishes that make no sense together, effort for exact work over the bound. */
 export function makePlan(table: Table, live: LiveTable, options: PlanOptions): Prepared {
-  const statistic = statisticNamed(options.statistic ?? 'pearson');
+  const statistic = chooseStatistic(options.statistic);
+  refuseUnread(statistic, options);
   const { tail, rule } = tailOf(statistic, options);
-  const signed = statistic.shape === '2x2';
-  if (!signed) refuseRoleOptions(statistic, options);
-  const named = signed ? rolesOf(table, live, statistic, options) : null;
+  const named = statistic.shape === '2x2' ? rolesOf(table, live, statistic, options) : null;
+  const { choices, echo } = choicesOf(table, live, statistic, options);
+  const bound = hasOneTableOnly(live) ? null : statistic.bind(live, named ?? noRoles, choices);
   const effort = positive(options.effort, standardEffort, '--effort');
   const asked = oneOf(options.method, 'auto', methods, '--method');
-  const forecast = forecastExact(live);
-  const { method, reason } = settleMethod(asked, statistic, forecast, effort);
+  const forecast = forecastExact(live, bound);
+  const { method, reason } = settleMethod({ asked, statistic, bound, rule, forecast, effort });
   if (options.draws !== undefined) {
     wholeNumber(options.draws, 1, 1e12, '--draws');
     if (asked === 'exact' || asked === 'asymptotic') {
@@ -57,6 +52,12 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
       hint: 'give any text, such as --seed 2026-ward-3, or leave the option out and one is made and printed',
     });
   }
+  // A sum of scores has a value whatever the margins allow.
+  const valueOfOnlyTable = statistic.takes?.includes('scores')
+    ? statistic.bind(live, noRoles, choices).value(live.counts)
+    : named === null || named.referenceLabel !== null
+      ? 0
+      : null;
   const sampled = method === 'sample';
   const plan: Plan = Object.freeze({
     statistic: statistic.name,
@@ -69,6 +70,7 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     groups: named?.groups ?? null,
     event: named?.eventLabel ?? null,
     reference: named?.referenceLabel ?? null,
+    ...echo,
     fixed: 'both',
     draws: sampled ? (options.draws ?? standardDraws) : null,
     seed: sampled ? (options.seed ?? freshSeed()) : null,
@@ -80,7 +82,7 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     confidence: share(options.confidence, 0.95, '--confidence'),
     samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
   });
-  return { plan, statistic, roles: named ?? noRoles, named };
+  return { plan, statistic, bound, valueOfOnlyTable, named };
 }
 
 function tailOf(statistic: Statistic, options: PlanOptions): { tail: Tail; rule: TwoSidedRule | null } {
@@ -105,49 +107,3 @@ function tailOf(statistic: Statistic, options: PlanOptions): { tail: Tail; rule:
   }
   return { tail, rule: oneOf(options.twoSidedRule, 'distance', twoSidedRules, '--two-sided-rule') };
 }
-
-function settleMethod(
-  asked: Method,
-  statistic: Statistic,
-  forecast: Forecast,
-  effort: number,
-): { method: ChosenMethod; reason: string } {
-  const tables = `${forecast.tablesAreCounted ? '' : 'about '}${inWords(forecast.tables)} ${forecast.tables === 1 ? 'table has' : 'tables have'} these margins`;
-  const work = `exact work is forecast at ${inWords(forecast.workUnits)} units (${timeInWords(forecast.seconds)}), the bound is ${inWords(effort)}`;
-  const fits = forecast.workUnits <= effort;
-  if (asked === 'asymptotic' && statistic.name === 'probability') {
-    throw usageProblem({
-      code: 'no-asymptotic-form',
-      message: 'probability has no asymptotic p of its own',
-      place: '--method asymptotic',
-      hint: 'use --statistic pearson or likelihood-ratio with --method asymptotic, or --method auto',
-    });
-  }
-  if (asked === 'exact' && !fits) {
-    throw effortProblem({
-      code: 'exact-over-bound',
-      message: `exact work is over the bound: ${tables}; ${work}`,
-      place: '--method exact',
-      hint: `use --method sample, or raise the bound with --effort ${(forecast.workUnits * 1.1).toPrecision(2)}`,
-    });
-  }
-  if (asked === 'asymptotic' || asked === 'sample') return { method: asked, reason: `asked for; ${tables}` };
-  if (asked === 'exact') return { method: 'exact', reason: `asked for; ${tables}; ${work}` };
-  return fits
-    ? { method: 'exact', reason: `${tables}; ${work}` }
-    : { method: 'sample', reason: `exact is out of reach: ${tables}; ${work}` };
-}
-
-/** 1,234 in full, larger numbers to two digits. */
-const inWords = (value: number): string =>
-  value < 1e7
-    ? value.toLocaleString('en-US', { maximumSignificantDigits: 9 })
-    : value.toExponential(1).replace('e+', 'e');
-
-const timeInWords = (seconds: number): string => {
-  if (seconds < 1) return 'under a second';
-  const [size, unit] =
-    seconds < 120 ? [1, 's'] : seconds < 7200 ? [60, 'min'] : seconds < 2e5 ? [3600, 'h'] : [86_400, 'days'];
-  const amount = seconds / Number(size);
-  return `about ${amount < 1e4 ? Number(amount.toPrecision(2)) : amount.toExponential(0).replace('e+', 'e')} ${unit}`;
-};

@@ -1,6 +1,8 @@
 // The plan: everything a run will do, checked and frozen before work starts, echoed whole in the result.
 import type { OrderingName } from '../null/contract.js';
 import type { Forecast } from '../null/forecast.js';
+import type { OwnStatistic } from '../statistic/own.js';
+import type { ScoreWish } from './scores.js';
 
 export const tails = ['upper', 'lower', 'both'] as const;
 export type Tail = (typeof tails)[number];
@@ -14,7 +16,8 @@ export type ChosenMethod = Exclude<Method, 'auto'>;
 
 /** What a user may say; everything is optional. Names as on the command line, in camel case. */
 export interface PlanOptions {
-  readonly statistic?: string;
+  /** The name of a built-in one, or one of your own. */
+  readonly statistic?: string | OwnStatistic;
   readonly tail?: Tail;
   readonly twoSidedRule?: TwoSidedRule;
   readonly groups?: 'rows' | 'columns';
@@ -22,6 +25,9 @@ export interface PlanOptions {
   readonly event?: string;
   /** Label of the second group, the one compared with (default: the second listed). */
   readonly reference?: string;
+  /** For trend: one score for each row of the table, or `midranks`. Default 1, 2, 3, ... */
+  readonly rowScores?: ScoreWish;
+  readonly columnScores?: ScoreWish;
   readonly method?: Method;
   /** Number of sampled tables, 1 to 1e12. Default 100000. */
   readonly draws?: number;
@@ -48,6 +54,9 @@ export interface Plan {
   readonly groups: 'rows' | 'columns' | null;
   readonly event: string | null;
   readonly reference: string | null;
+  /** One for each row and column of the table, empty ones too; for statistics that take scores. */
+  readonly rowScores?: number[];
+  readonly columnScores?: number[];
   readonly fixed: 'both';
   readonly draws: number | null;
   readonly seed: string | null;

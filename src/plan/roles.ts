@@ -5,7 +5,7 @@ import type { Roles, Statistic } from '../statistic/contract.js';
 import type { LiveTable } from '../table/live-table.js';
 import type { Table } from '../table/table.js';
 import type { PlanOptions } from './plan.js';
-import { oneOf, unused } from './settings.js';
+import { oneOf } from './settings.js';
 
 export interface NamedRoles extends Roles {
   readonly eventLabel: string;
@@ -27,7 +27,7 @@ export function rolesOf(table: Table, live: LiveTable, statistic: Statistic, opt
       code: 'not-two-by-two',
       message: `${statistic.name} compares two groups with two outcomes; this table is ${live.rows} x ${live.columns}`,
       place: '--statistic',
-      hint: 'use pearson, likelihood-ratio or probability for larger tables, or pick two rows and two columns',
+      hint: 'use pearson, likelihood-ratio, probability or trend for larger tables, or pick two rows and two columns',
     });
   }
   const groups = oneOf(options.groups, 'rows', ['rows', 'columns'] as const, '--groups');
@@ -72,17 +72,4 @@ function lineNamed(label: string, labels: readonly string[], index: readonly num
     });
   }
   return live;
-}
-
-/** Refuses options about groups for statistics that treat all rows and all columns alike. */
-export function refuseRoleOptions(statistic: Statistic, options: PlanOptions): void {
-  for (const name of ['groups', 'event', 'reference'] as const) {
-    if (options[name] !== undefined) {
-      throw unused(
-        `--${name}`,
-        `with ${statistic.name}, which treats all rows and all columns alike`,
-        'leave it out, or use wald or score to compare two proportions',
-      );
-    }
-  }
 }

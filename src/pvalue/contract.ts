@@ -52,6 +52,8 @@ export interface PValueEntry {
   tied: number | null;
   point?: number;
   degreesOfFreedom?: number;
+  /** Asymptotic entries of a statistic that is not on the scale of its limiting law: the value on that scale. */
+  value?: number;
   guaranteed: boolean;
   errors: (RoundingError | SamplingError | SequentialError | ApproximationError)[];
 }

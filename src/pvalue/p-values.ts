@@ -1,9 +1,7 @@
-// All p-values of a run, the one asked for first: from the cuts of its null, with the asymptotic one beside them.
+// All p-values of a run, the one asked for first: from the cuts of its null, in the order of the questions.
 import type { Cut, ExactCut, Mass, OrderingName, SampledCut } from '../null/contract.js';
 import { orderingFor, type Plan } from '../plan/plan.js';
-import { usageProblem } from '../problem/problem.js';
 import type { PValueEntry, Question } from './contract.js';
-import { chiSquarePValue, normalPValue } from './from-asymptotic.js';
 import { exactDoubled, exactPValue } from './from-exact.js';
 import { sampledDoubled, sampledPValue } from './from-sampled.js';
 
@@ -41,34 +39,4 @@ export async function conditionalPValues(
         : sampledDoubled(question, first as SampledCut, second as SampledCut, samplingConfidence);
     }),
   );
-}
-
-/** @throws Problem (usage) `no-asymptotic-value` where the approximation was asked for and has nothing to say. */
-export function asymptoticAlone(
-  questions: readonly Question[],
-  value: number,
-  degreesOfFreedom: number | undefined,
-): PValueEntry[] {
-  return questions.map((question) => {
-    const found = asymptoticPValue(question, value, degreesOfFreedom);
-    if (found !== undefined) return found;
-    throw usageProblem({
-      code: 'no-asymptotic-value',
-      message: `the ${question.tail} tail of ${question.statistic} has no asymptotic p at the value ${value}`,
-      place: '--method asymptotic',
-      hint: 'use --method exact or --method sample',
-    });
-  });
-}
-
-/** The approximation, or undefined where it has nothing to say (an infinite value; no value below the observed). */
-export function asymptoticPValue(
-  question: Question,
-  value: number,
-  degreesOfFreedom: number | undefined,
-): PValueEntry | undefined {
-  if (!Number.isFinite(value)) return undefined;
-  if (degreesOfFreedom === undefined) return normalPValue(question, value);
-  if (question.tail === 'lower' && value <= 0) return undefined;
-  return chiSquarePValue(question, value, Math.max(1, degreesOfFreedom));
 }

@@ -25,6 +25,8 @@ export function againInWords({ input, plan }: Result): string {
     ...(plan.groups === null ? [] : [`groups ${plan.groups}`]),
     ...(plan.event === null ? [] : [`event ${quoted(plan.event)}`]),
     ...(plan.reference === null ? [] : [`reference ${quoted(plan.reference)}`]),
+    ...(plan.rowScores === undefined ? [] : [`row scores ${plan.rowScores.join()}`]),
+    ...(plan.columnScores === undefined ? [] : [`column scores ${plan.columnScores.join()}`]),
     `method ${plan.method}`,
   ];
   const { rowsFrom, columnsFrom } = input.source;
@@ -88,6 +90,8 @@ const planOptions = ({ plan }: Result): Option[] => [
   ...optional('groups', plan.groups),
   ...optional('event', plan.event),
   ...optional('reference', plan.reference),
+  ...optional('row-scores', plan.rowScores?.join()),
+  ...optional('column-scores', plan.columnScores?.join()),
   ...optional('method', plan.method),
   ...optional('draws', plan.draws),
   ...optional('seed', plan.seed),

@@ -68,6 +68,9 @@ const plan = z.strictObject({
   groups: z.enum(['rows', 'columns']).nullable(),
   event: z.string().nullable(),
   reference: z.string().nullable(),
+  /** For statistics that take scores: one for each line of the table, empty ones too. */
+  rowScores: z.array(z.number()).optional(),
+  columnScores: z.array(z.number()).optional(),
   fixed: z.enum(['both']),
   draws: count.nullable(),
   seed: z.string().nullable(),
@@ -136,6 +139,8 @@ const pValue = z.strictObject({
   /** Probability of the observed table itself, where the null gives it. */
   point: probability.optional(),
   degreesOfFreedom: count.optional(),
+  /** Asymptotic entries of a statistic that is not on the scale of its limiting law: the value on that scale. */
+  value: z.number().optional(),
   /** True when rejecting at p <= a errs at most with probability a under the null. */
   guaranteed: z.boolean(),
   errors: z.array(z.discriminatedUnion('kind', [roundingError, samplingError, sequentialError, approximationError])),

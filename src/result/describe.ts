@@ -11,8 +11,11 @@ export type ResultBeforeWords = Omit<Result, 'sentence' | 'methods'>;
 export type SamplingError = Extract<PValueError, { kind: 'sampling' }>;
 
 /** Words of a statistic, from the registry; its bare name when it is none of ours. */
-export const statisticWords = (name: string): string =>
-  statistics.find((statistic) => statistic.name === name)?.words ?? `the statistic ${quoted(name)}`;
+export const statisticWords = (name: string): string => known(name)?.words ?? `the statistic ${quoted(name)}`;
+
+/** A statistic of the registry, or one of the named forms of it. */
+const known = (name: string): { readonly words: string; readonly source: string } | undefined =>
+  [...statistics, ...statistics.flatMap(({ forms = [] }) => forms)].find((one) => one.name === name);
 
 /** The same without the explanation behind it, for the second mention. */
 export const shortStatisticWords = (name: string): string => statisticWords(name).split(/ \(|, /)[0]!;
@@ -20,7 +23,7 @@ export const shortStatisticWords = (name: string): string => statisticWords(name
 /** Words of a statistic with its source (author year) in brackets. */
 export function citedStatistic(name: string): string {
   const words = statisticWords(name);
-  const source = statistics.find((one) => one.name === name)?.source.replace(/\((\d{4})\)/g, '$1');
+  const source = known(name)?.source.replace(/\((\d{4})\)/g, '$1');
   if (source === undefined) return words;
   return words.endsWith(')') ? `${words.slice(0, -1)}; ${source})` : `${words} (${source})`;
 }

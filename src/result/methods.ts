@@ -20,6 +20,7 @@ export function methodsFor(result: ResultBeforeWords): string {
   return [
     testSentence(result),
     rolesSentence(result),
+    scoresSentence(result),
     methodSentence(result, headline),
     ...(isOneTableOnly(result)
       ? ['The margins allow one table only, so p is 1.']
@@ -43,11 +44,17 @@ function rolesSentence({ plan, statistic }: ResultBeforeWords): string | undefin
   );
 }
 
+function scoresSentence({ plan }: ResultBeforeWords): string | undefined {
+  if (plan.rowScores === undefined || plan.columnScores === undefined) return undefined;
+  return `Row scores were ${plan.rowScores.join(', ')}; column scores ${plan.columnScores.join(', ')}.`;
+}
+
 function methodSentence(result: ResultBeforeWords, p: PValue): string {
   const name = `The ${pName(p)}`;
   if (p.method === 'exact') {
     const isTwoByTwo = result.input.rowLabels.length === 2 && result.input.columnLabels.length === 2;
-    const source = isTwoByTwo ? 'Fisher 1935' : 'Freeman & Halton 1951';
+    const linear = result.plan.rowScores !== undefined;
+    const source = isTwoByTwo ? 'Fisher 1935' : linear ? 'Pagano & Tritchler 1983' : 'Freeman & Halton 1951';
     return `${name} is exact: it adds up the probabilities, given both margins, of all tables at least as extreme as the observed one (${source}).`;
   }
   if (p.method === 'asymptotic') return `${name} comes from ${approximationWords(p)}, which holds for large counts.`;

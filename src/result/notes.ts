@@ -2,8 +2,9 @@
 import type { Plan } from '../plan/plan.js';
 import type { PValueEntry } from '../pvalue/contract.js';
 import { drawsToSettle } from '../pvalue/draws-to-settle.js';
+import type { BoundStatistic, Statistic } from '../statistic/contract.js';
 import type { Table } from '../table/table.js';
-import { quoted } from './label-words.js';
+import { quoted, shown } from './label-words.js';
 import type { Note } from './result.js';
 
 /** Lines without counts take no part in a test that holds the margins. */
@@ -27,8 +28,14 @@ export const onlyOneTable: Note = {
 };
 
 /** How far apart the approximation and the answer are: more than a factor of 1.5 either way is worth a remark. */
-export function asymptoticNotes(headline: PValueEntry, asymptotic: PValueEntry | undefined): Note[] {
+export function asymptoticNotes(
+  headline: PValueEntry,
+  asymptotic: PValueEntry | undefined,
+  { limit, name }: Statistic,
+): Note[] {
+  if (headline.method === 'asymptotic') return [];
   if (asymptotic === undefined) {
+    if (limit === 'none' && name !== 'probability') return [];
     return [
       {
         code: 'asymptotic-undefined',
@@ -53,6 +60,27 @@ function samplingEstimate(p: PValueEntry): number | undefined {
   const error = p.errors.find((one) => one.kind === 'sampling');
   if (error?.kind !== 'sampling' || error.atLeast < 10) return undefined;
   return Math.log10(error.estimate);
+}
+
+/** What a reader should know of the statistic itself. */
+export function statisticNotes({ own, name, words }: Statistic, bound: BoundStatistic | null): Note[] {
+  if (own) {
+    return [
+      {
+        code: 'own-statistic',
+        text: `The statistic ${quoted(name)} (${shown(words)}) is not one of keepsum's: its values were compared as the doubles that its function gave, so that rounding inside it can part or join ties.`,
+      },
+    ];
+  }
+  if (bound?.linear === undefined) return [];
+  const oneScore = [bound.linear.rowScores, bound.linear.columnScores].some((scores) => scores.every((x) => x === 0));
+  if (!oneScore) return [];
+  return [
+    {
+      code: 'one-score-only',
+      text: 'All scores of a side are equal, so every table with these margins has the same trend and p is 1.',
+    },
+  ];
 }
 
 /** A sampled p whose interval still holds the level it will be compared with. */

@@ -13,6 +13,7 @@ export const likelihoodRatio: Statistic = {
   formula: '2 sum over cells of n_ij ln(n_ij / e_ij), with 0 ln 0 = 0',
   range: '0 upwards',
   source: 'Wilks (1935)',
+  limit: 'chi-square',
   bind,
 };
 

@@ -12,6 +12,7 @@ export const pearson: Statistic = {
   formula: 'sum over cells of (n_ij - e_ij)^2 / e_ij, with e_ij = R_i C_j / n',
   range: '0 (counts as expected) to n (min(rows, columns) - 1)',
   source: 'Pearson (1900)',
+  limit: 'chi-square',
   bind,
 };
 

@@ -13,6 +13,7 @@ export const probability: Statistic = {
   formula: '-ln P, with P = (prod R_i!) (prod C_j!) / (n! prod n_ij!)',
   range: '0 (the only possible table) upwards',
   source: 'Freeman & Halton (1951)',
+  limit: 'none',
   bind,
 };
 

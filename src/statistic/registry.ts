@@ -6,9 +6,10 @@ import { likelihoodRatio } from './likelihood-ratio.js';
 import { pearson } from './pearson.js';
 import { probability } from './probability.js';
 import { score } from './score.js';
+import { trend } from './trend.js';
 import { wald } from './wald.js';
 
-export const statistics: readonly Statistic[] = [pearson, likelihoodRatio, probability, wald, score];
+export const statistics: readonly Statistic[] = [pearson, likelihoodRatio, probability, wald, score, trend];
 
 export const statisticNames: readonly string[] = statistics.map((statistic) => statistic.name);
 

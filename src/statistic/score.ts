@@ -11,6 +11,8 @@ export const score: Statistic = {
   formula: '(p1 - p2) / sqrt(p (1 - p) (1/n1 + 1/n2)), p the proportion in both groups together',
   range: '-sqrt(n) to sqrt(n); centre 0',
   source: 'pooled form; its square is the statistic of Pearson (1900)',
+  limit: 'normal',
+  takes: ['roles'],
   bind,
 };
 

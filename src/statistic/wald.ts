@@ -14,6 +14,8 @@ export const wald: Statistic = {
   formula: '(p1 - p2) / sqrt(p1 (1 - p1)/n1 + p2 (1 - p2)/n2); standard error 0: 0 if p1 = p2, else + or - infinity',
   range: '-infinity to infinity; centre 0',
   source: 'unpooled form, after Wald (1943)',
+  limit: 'normal',
+  takes: ['roles'],
   bind,
 };
 

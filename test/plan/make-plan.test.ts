@@ -77,6 +77,27 @@ describe('a plan', () => {
     });
   });
 
+  it('takes scores as text, numbers or midranks, for all lines before empty ones are left out', () => {
+    const counts = [
+      [3, 0, 2],
+      [0, 0, 0],
+      [2, 4, 3],
+    ];
+    expect(planFor(counts, { statistic: 'trend', rowScores: '0, -1.50, 2e1', columnScores: 'midranks' })).toMatchObject(
+      {
+        rowScores: [0, -1.5, 20],
+        columnScores: [3, 7.5, 12],
+      },
+    );
+    expect(planFor(counts, { statistic: 'trend', rowScores: [0.1, 0.2, 0.3] })).toMatchObject({
+      rowScores: [0.1, 0.2, 0.3],
+      columnScores: [1, 2, 3],
+      tail: 'both',
+      twoSidedRule: 'distance',
+      groups: null,
+    });
+  });
+
   it.each([
     ['a name that is no statistic', twoByTwo, { statistic: 'pearsen' }, 'unknown-statistic', /did you mean pearson/],
     ['wald on a 3x3', larger, { statistic: 'wald' }, 'not-two-by-two', /pearson/],
@@ -89,6 +110,24 @@ describe('a plan', () => {
       /leave it out/,
     ],
     ['groups for pearson', twoByTwo, { groups: 'columns' }, 'option-without-effect', /wald or score/],
+    ['scores for pearson', larger, { rowScores: '1,2,3' }, 'option-without-effect', /use trend/],
+    ['groups for trend', larger, { statistic: 'trend', groups: 'rows' }, 'option-without-effect', /wald or score/],
+    ['too few scores', larger, { statistic: 'trend', rowScores: '1,2' }, 'score-count', /--row-scores 1,2,3/],
+    ['a word as a score', larger, { statistic: 'trend', columnScores: '1,two,3' }, 'not-a-score', /midranks/],
+    [
+      'a score that no number holds',
+      larger,
+      { statistic: 'trend', columnScores: '1,2,3.00000000000000000001' },
+      'score-digits',
+      /15 significant/,
+    ],
+    [
+      'random tables for the rule probability',
+      larger,
+      { statistic: 'trend', twoSidedRule: 'probability', method: 'sample' },
+      'rule-needs-exact',
+      /distance or doubled/,
+    ],
     ['an unknown event', twoByTwo, { statistic: 'wald', event: 'colum 1' }, 'unknown-label', /did you mean column 1/],
     ['no draws', enormous, { draws: 0 }, 'out-of-range', /--draws/],
     ['half a draw', enormous, { draws: 1.5 }, 'out-of-range', /--draws/],

@@ -63,11 +63,18 @@ export const reading = {
 
 export const planning = {
   statistic: valued('The test', 'NAME', (text) => statisticNamed(text).name, `${either(statisticNames)} (pearson)`),
-  tail: valued('The test', 'TAIL', oneOf(tails), `${either(tails)} (upper; for wald and score both)`),
+  tail: valued('The test', 'TAIL', oneOf(tails), `${either(tails)} (upper; for wald, score and trend both)`),
   twoSidedRule: valued('The test', 'RULE', oneOf(twoSidedRules), `for both tails: ${either(twoSidedRules)} (distance)`),
   groups: valued('The test', 'SIDE', oneOf(sides), `for wald and score, what is compared: ${either(sides)} (rows)`),
   event: valued('The test', 'LABEL', anyText, 'the outcome whose proportions are compared (the first)'),
   reference: valued('The test', 'LABEL', anyText, 'the group compared with (the second)'),
+  rowScores: valued(
+    'The test',
+    'SCORES',
+    anyText,
+    'for trend, one for each row: 0,1,2.5 or the word midranks (1,2,3 and so on)',
+  ),
+  columnScores: valued('The test', 'SCORES', anyText, 'the same of the columns'),
   method: valued(
     'How p is found',
     'NAME',

@@ -6,8 +6,8 @@ export interface ExactAnswer {
   readonly cuts: readonly ExactCut[];
   /** Probability of the observed table itself. */
   readonly point: Mass;
-  /** Number of tables with these margins. */
-  readonly tables: number;
+  /** Number of tables with these margins, where the engine met every one. */
+  readonly tables?: number;
 }
 
 export interface Masses {

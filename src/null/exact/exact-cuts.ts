@@ -3,11 +3,23 @@ import { hasOneTableOnly, type LiveTable } from '../../table/live-table.js';
 import type { Ordering, OrderingName } from '../contract.js';
 import { exactByEnumeration } from './enumerate.js';
 import type { ExactAnswer } from './exact-answer.js';
+import { exactLinear } from './linear/exact-linear.js';
+import { linearIsCheaper } from './linear/linear-forecast.js';
+import { pointMass } from './point-mass.js';
 import { exactTwoByTwo } from './two-by-two.js';
 
 /** At least two live rows and columns. */
 export function exactCuts(live: LiveTable, orderings: readonly Ordering[]): ExactAnswer {
-  return live.rows === 2 && live.columns === 2 ? exactTwoByTwo(live, orderings) : exactByEnumeration(live, orderings);
+  const linear = orderings[0]?.linear;
+  if (
+    linear !== undefined &&
+    orderings.every((ordering) => ordering.linear === linear) &&
+    linearIsCheaper(live, linear)
+  ) {
+    return { cuts: exactLinear(live, orderings), point: pointMass(live) };
+  }
+  const twoByTwo = live.rows === 2 && live.columns === 2 && orderings.every(({ arbitrary }) => arbitrary !== true);
+  return twoByTwo ? exactTwoByTwo(live, orderings) : exactByEnumeration(live, orderings);
 }
 
 /** The answer where the margins leave one table only: it ties with itself, and p = 1 on every ordering. */

@@ -1,0 +1,95 @@
+// Exact, sampled or asymptotic: what was asked for where it can be had, else - for `auto` alone - what the forecast allows.
+import type { Forecast } from '../null/forecast.js';
+import { effortProblem, usageProblem, type Problem } from '../problem/problem.js';
+import type { BoundStatistic, Statistic } from '../statistic/contract.js';
+import type { ChosenMethod, Method, TwoSidedRule } from './plan.js';
+
+export interface MethodQuestion {
+  readonly asked: Method;
+  readonly statistic: Statistic;
+  readonly bound: BoundStatistic | null;
+  readonly rule: TwoSidedRule | null;
+  readonly forecast: Forecast;
+  /** Bound on exact work, in counted units. */
+  readonly effort: number;
+}
+
+/** @throws Problem: usage where a method has no answer to the question, effort for exact work over the bound. */
+export function settleMethod(question: MethodQuestion): { method: ChosenMethod; reason: string } {
+  const { asked, statistic, forecast, effort } = question;
+  const tables = `${forecast.tablesAreCounted ? '' : 'about '}${inWords(forecast.tables)} ${forecast.tables === 1 ? 'table has' : 'tables have'} these margins`;
+  const work = `exact work is forecast at ${inWords(forecast.workUnits)} units (${timeInWords(forecast.seconds)}), the bound is ${inWords(effort)}`;
+  const fits = forecast.workUnits <= effort;
+  const more = `raise the bound with --effort ${(forecast.workUnits * 1.1).toPrecision(2)}`;
+  if (asked === 'asymptotic' && statistic.limit === 'none') throw noAsymptoticForm(statistic);
+  if (needsWholeLaw(question)) {
+    if (question.bound?.linear === undefined) throw noProbabilityRule(statistic);
+    if (asked === 'sample') throw ruleNeedsExact(statistic);
+    if (asked === 'auto' && !fits) {
+      throw effortProblem({
+        code: 'exact-over-bound',
+        message: `the rule probability needs exact work, and that is over the bound: ${tables}; ${work}`,
+        place: '--two-sided-rule probability',
+        hint: `use --two-sided-rule distance or doubled, or ${more}`,
+      });
+    }
+  }
+  if (asked === 'exact' && !fits) {
+    throw effortProblem({
+      code: 'exact-over-bound',
+      message: `exact work is over the bound: ${tables}; ${work}`,
+      place: '--method exact',
+      hint: `use --method sample, or ${more}`,
+    });
+  }
+  if (asked === 'asymptotic' || asked === 'sample') return { method: asked, reason: `asked for; ${tables}` };
+  if (asked === 'exact') return { method: 'exact', reason: `asked for; ${tables}; ${work}` };
+  return fits
+    ? { method: 'exact', reason: `${tables}; ${work}` }
+    : { method: 'sample', reason: `exact is out of reach: ${tables}; ${work}` };
+}
+
+/** Values compared by how probable they are: random tables do not tell, unless a value is one table (2x2). */
+const needsWholeLaw = ({ asked, bound, rule }: MethodQuestion): boolean =>
+  rule === 'probability' && bound !== null && bound.corner === undefined && asked !== 'asymptotic';
+
+function noAsymptoticForm({ name }: Statistic): Problem {
+  return usageProblem({
+    code: 'no-asymptotic-form',
+    message: `${name} has no asymptotic p of its own`,
+    place: '--method asymptotic',
+    hint: 'use --statistic pearson or likelihood-ratio with --method asymptotic, or --method auto',
+  });
+}
+
+function ruleNeedsExact({ name }: Statistic): Problem {
+  return usageProblem({
+    code: 'rule-needs-exact',
+    message: `the rule probability needs the probability of every value of ${name}, which random tables do not give`,
+    place: '--two-sided-rule probability',
+    hint: 'use --two-sided-rule distance or doubled, or --method exact',
+  });
+}
+
+function noProbabilityRule({ name, own }: Statistic): Problem {
+  return usageProblem({
+    code: 'rule-without-law',
+    message: `the rule probability needs the law of ${name}, which is ${own ? 'not known for a statistic of your own' : 'not worked out for scores of so many digits'}`,
+    place: '--two-sided-rule probability',
+    hint: `use --two-sided-rule distance or doubled${own ? '' : ', or scores of fewer digits'}`,
+  });
+}
+
+/** 1,234 in full, larger numbers to two digits. */
+const inWords = (value: number): string =>
+  value < 1e7
+    ? value.toLocaleString('en-US', { maximumSignificantDigits: 9 })
+    : value.toExponential(1).replace('e+', 'e');
+
+const timeInWords = (seconds: number): string => {
+  if (seconds < 1) return 'under a second';
+  const [size, unit] =
+    seconds < 120 ? [1, 's'] : seconds < 7200 ? [60, 'min'] : seconds < 2e5 ? [3600, 'h'] : [86_400, 'days'];
+  const amount = seconds / Number(size);
+  return `about ${amount < 1e4 ? Number(amount.toPrecision(2)) : amount.toExponential(0).replace('e+', 'e')} ${unit}`;
+};
