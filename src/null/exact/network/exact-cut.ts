@@ -16,6 +16,7 @@ import type { Network } from './network.js';
 import { NodeSpace } from './node-space.js';
 import { orient, type OrientedTable } from './oriented-table.js';
 import { RestBounds } from './rest-bounds.js';
+import { sharesLists } from './shared-lists.js';
 import { SortedList } from './sorted-list.js';
 import { splitColumns } from './split-columns.js';
 import { Tally } from './tally.js';
@@ -30,11 +31,9 @@ export interface NetworkOptions {
 }
 
 /** Share below which a side is added up itself instead of being taken from the whole (which would cost its digits). */
-const smallestDifference = 0.05;
+const smallestDifference = 0.02;
 /** Nodes whose chance is below this part of the observed table's own are left out. */
 const negligible = 1e-18;
-/** Most arrangements of a node to visit where the halves meet. */
-const mostArrangements = 4e5;
 /** ln of a probability beyond which weights are scaled to the observed table. */
 const farOut = -400;
 
@@ -86,31 +85,17 @@ export function exactCut(
 
   const whole = new WideSum();
   whole.add(weights.whole.mantissa, weights.whole.exponent);
-  const side = upperTailGuess(table) < 0.3 ? 'high' : 'low';
-  const { summed, tied } = run(side);
-  let other = new WideSum();
+  const side = upperTailGuess(table) < smallestDifference ? 'high' : 'low';
+  const { summed, tied, leftOut } = run(side);
   const rest = 1 - summed.over(whole).value - tied.over(whole).value;
-  if (rest >= smallestDifference) other.add(weights.whole.mantissa * rest, weights.whole.exponent);
-  else other = run(side === 'low' ? 'high' : 'low').summed;
+  let other = new WideSum();
+  let error = errorBound(table, leftOut, logObserved);
+  if (rest >= smallestDifference) {
+    other.add(weights.whole.mantissa * rest, weights.whole.exponent);
+    error /= rest;
+  } else other = run(side === 'low' ? 'high' : 'low').summed;
   const [below, above] = (side === 'low') === direction > 0 ? [summed, other] : [other, summed];
-  return cutFrom(ordering.name, { below, tied, above, whole }, errorBound(table));
-}
-
-/**
- * One list for all arrangements of a node pays from four rows on, if the arrangements can all be visited: the number of
- * ways the rows can be divided between two halves is counted and held against a bound.
- */
-function sharesLists(table: OrientedTable): boolean {
-  if (table.rows < 4) return false;
-  let ways = new Float64Array([1]);
-  for (const total of table.rowTotals) {
-    const next = new Float64Array(ways.length + total);
-    ways.forEach((number, sum) => {
-      for (let n = 0; n <= total; n++) next[sum + n]! += number;
-    });
-    ways = next;
-  }
-  return ways[table.total >> 1]! <= mostArrangements;
+  return cutFrom(ordering.name, { below, tied, above, whole }, error);
 }
 
 function isFarUp(table: OrientedTable, bounds: RestBounds, observed: number): boolean {
@@ -164,6 +149,8 @@ function upperTailGuess(table: OrientedTable): number {
 
 /**
  * A weight is a product of one rounded factor per cell (two roundings each); lists, running sums and tallies add with
- * compensation, blocks of 512 without: relative error at most (3 cells + 600) units, and 1e-14 for the nodes left out.
+ * compensation, blocks of 64 without: (3 cells + 150) units. To that the chance left out is added, against the smallest
+ * mass that is stated, the observed table's own.
  */
-const errorBound = (table: OrientedTable): number => 2 ** -53 * (3 * table.rows * table.columns + 600) + 1e-14;
+const errorBound = (table: OrientedTable, leftOut: number, logObserved: number): number =>
+  2 ** -53 * (3 * table.rows * table.columns + 150) + leftOut * Math.exp(-logObserved);

@@ -3,6 +3,7 @@
 import { Level, type SummedSide } from './level.js';
 import { OutOfReach, type Network } from './network.js';
 import type { SortedList } from './sorted-list.js';
+import { SourceRanges } from './source-ranges.js';
 import type { Transitions } from './transitions.js';
 import { visitNodes } from './visit-nodes.js';
 
@@ -18,10 +19,16 @@ export interface Half {
 /** @param depth how many of the columns to set; the others are set where the halves meet. */
 export function buildHalf(network: Network, columns: readonly number[], depth: number): Half {
   const { side, encoding, space } = network;
-  const levels = [Level.root(space.newIndex(), side, encoding.form === 'keyed')];
+  const levels = [Level.root(space, side, encoding.form === 'keyed')];
   let leftOut = 0;
   for (let d = 1; d <= depth; d++) {
-    const level = new Level(space.newIndex(), levels[d - 1]!.size, side, encoding.form === 'keyed');
+    const level = new Level(
+      space.newIndex(),
+      new SourceRanges(space),
+      levels[d - 1]!.size,
+      side,
+      encoding.form === 'keyed',
+    );
     leftOut += extend(network, levels[d - 1]!, level, columns.slice(0, d));
     levels.push(level);
   }
@@ -41,14 +48,14 @@ function extend(network: Network, from: Level, to: Level, done: readonly number[
   return visitNodes(network, done, rest, {
     above(sums) {
       list.length = 0;
-      to.append(space.numberOf(sums), list, allDone.value(sums));
+      to.append(sums, space.numberOf(sums), list, allDone.value(sums));
     },
     open(sums, left, _, leastAfter) {
       const low = observed - margin - (farUp && !allAlike ? bounds.most(rest, left) : mostAfter);
-      transitions.collect(from.index, column, sums);
+      transitions.collect(from, column, sums);
       const settled = gather(from, transitions, side, low, observed + margin - leastAfter, list);
       list.sortAndMerge();
-      if (list.length > 0 || settled > 0) to.append(space.numberOf(sums), list, settled);
+      if (list.length > 0 || settled > 0) to.append(sums, space.numberOf(sums), list, settled);
       if (to.length > entryLimit) throw new OutOfReach(entryLimit);
     },
   });

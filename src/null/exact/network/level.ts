@@ -1,7 +1,9 @@
 // One stage of one half of the network: for every node the sorted list of what the columns so far can have added, with
 // weights, and the running sums by which whole stretches of a list are counted at once.
 import type { NodeIndex } from './node-index.js';
+import type { NodeSpace } from './node-space.js';
 import type { SortedList } from './sorted-list.js';
+import { SourceRanges } from './source-ranges.js';
 
 /** Which side of the observed value is added up; the other follows from the whole. */
 export type SummedSide = 'low' | 'high';
@@ -20,6 +22,7 @@ export class Level {
 
   constructor(
     readonly index: NodeIndex,
+    readonly ranges: SourceRanges,
     /** Sum of the totals of the columns so far. */
     public size: number,
     private readonly side: SummedSide,
@@ -32,9 +35,10 @@ export class Level {
   }
 
   /** The level before any column: one node, one empty partial table. */
-  static root(index: NodeIndex, side: SummedSide, keyed: boolean): Level {
-    const level = new Level(index, 0, side, keyed);
-    index.set(0, 0);
+  static root(space: NodeSpace, side: SummedSide, keyed: boolean): Level {
+    const level = new Level(space.newIndex(), new SourceRanges(space), 0, side, keyed);
+    level.index.set(0, 0);
+    level.ranges.note(new Float64Array(space.rows));
     level.weights[0] = 1;
     level.sums[0] = side === 'high' ? 1 : 0;
     level.length = 1;
@@ -47,10 +51,11 @@ export class Level {
     return this.settled.length;
   }
 
-  append(number: number, list: SortedList, settled: number): void {
+  append(sums: Float64Array, number: number, list: SortedList, settled: number): void {
     const { length } = list;
     this.makeRoom(length);
     this.index.set(number, this.nodes);
+    this.ranges.note(sums);
     const from = this.length;
     this.values.set(list.values.subarray(0, length), from);
     this.weights.set(list.weights.subarray(0, length), from);

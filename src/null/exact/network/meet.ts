@@ -35,14 +35,14 @@ export function meet(network: Network, first: Half, second: Half, ties: NearTies
         return;
       }
       const ways = space.arrangementsOf(sums);
-      transitions.collect(secondLevel.index, lastSecond, left);
+      transitions.collect(secondLevel, lastSecond, left);
       const low = observed - margin;
       const high = observed + margin;
       const settled = gather(secondLevel, transitions, side, low - mostFirst, high - leastFirst, list);
       tally.work += list.length + transitions.length;
       list.sortAndMerge();
       meeting.take(list, side, settled);
-      transitions.collect(firstLevel.index, lastFirst, sums);
+      transitions.collect(firstLevel, lastFirst, sums);
       tally.work += transitions.length;
       const whole = stream.run(transitions, sums, left, ways, low - mostSecond, high - leastSecond);
       tally.summed.add(whole * ways * allSecond.mantissa(left), allSecond.exponent(left));

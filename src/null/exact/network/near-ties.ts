@@ -110,13 +110,13 @@ export class NearTies {
     const column = half.columns[depth - 1]!;
     const from = half.levels[depth - 1]!;
     const transitions = new Transitions(network.space);
-    transitions.collect(from.index, network.columns[column]!, sums);
+    transitions.collect(from, network.columns[column]!, sums);
     const found: PartialClass[] = [];
     const byKey = new Map<bigint, PartialClass>();
     for (let t = 0; t < transitions.length; t++) {
       const wanted = value - transitions.values[t]!;
       if (!holds(from, transitions.sources[t]!, wanted)) continue;
-      const counts = transitions.countsAt(t, from.index, network.columns[column]!, sums);
+      const counts = transitions.countsAt(t, from, network.columns[column]!, sums);
       const last = this.single(column, counts, transitions.weights[t]!);
       const before = sums.map((sum, i) => sum - counts[i]!);
       for (const part of this.classes(half, depth - 1, before, wanted)) {

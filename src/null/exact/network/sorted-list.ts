@@ -24,6 +24,8 @@ export class SortedList {
   // For merging on arrival: entry + 1 by slot, and the slots in use.
   private slots = new Int32Array(0);
   private used = new Int32Array(0);
+  /** What rounding took from the weights merged on arrival. */
+  private lost = new Float64Array(0);
   private merging = false;
   private arrived = 0;
   private different = 0;
@@ -72,7 +74,7 @@ export class SortedList {
   }
 
   private mergeShifted(level: Level, from: number, end: number, transitions: Transitions, t: number): number {
-    const { values, weights, keys, slots, used, keyed, most } = this;
+    const { values, weights, keys, slots, used, lost, keyed, most } = this;
     const { values: theirValues, weights: theirWeights, keys: theirKeys } = level;
     const value = transitions.values[t]!;
     const weight = transitions.weights[t]!;
@@ -92,12 +94,17 @@ export class SortedList {
         entry = slots[slot]!;
       }
       if (entry !== 0) {
-        weights[entry - 1]! += theirWeights[i]! * weight;
+        const sum = weights[entry - 1]!;
+        const next = theirWeights[i]! * weight;
+        const total = sum + next;
+        lost[entry - 1]! += sum >= next ? sum - total + next : next - total + sum;
+        weights[entry - 1] = total;
         continue;
       }
       values[length] = v;
       weights[length] = theirWeights[i]! * weight;
       if (keyed) keys[length] = k;
+      lost[length] = 0;
       used[length] = slot;
       slots[slot] = ++length;
     }
@@ -132,6 +139,8 @@ export class SortedList {
   private makeSlots(needed: number): void {
     const slots = new Int32Array(2 ** Math.ceil(Math.log2(4 * needed)));
     const used = new Int32Array(slots.length);
+    const lost = new Float64Array(slots.length);
+    lost.set(this.lost.subarray(0, this.length));
     const mask = slots.length - 1;
     for (let entry = 0; entry < this.length; entry++) {
       const v = this.values[entry]!;
@@ -143,11 +152,18 @@ export class SortedList {
     }
     this.slots = slots;
     this.used = used;
+    this.lost = lost;
   }
 
   sortAndMerge(): void {
     const { length } = this;
-    if (this.merging) for (let entry = 0; entry < length; entry++) this.slots[this.used[entry]!] = 0;
+    if (this.merging) {
+      const { slots, used, lost, weights } = this;
+      for (let entry = 0; entry < length; entry++) {
+        slots[used[entry]!] = 0;
+        weights[entry]! += lost[entry]!;
+      }
+    }
     if (length > shortList) this.distribute();
     this.insert(0, length);
     if (this.merging) return;

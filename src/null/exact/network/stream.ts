@@ -8,7 +8,7 @@ import type { Tally } from './tally.js';
 import type { Transitions } from './transitions.js';
 
 /** Entries added plainly before the sum is carried over to a compensated one. */
-const blockLength = 512;
+const blockLength = 64;
 
 /** Runs the first half's entries at one node past the second half's list. */
 export class Stream {
@@ -118,7 +118,7 @@ export class Stream {
         continue;
       }
       const masses = this.ties.decide(this.first, this.second, {
-        column: transitions.countsAt(t, level.index, this.network.columns[this.first.columns.at(-1)!]!, sums),
+        column: transitions.countsAt(t, level, this.network.columns[this.first.columns.at(-1)!]!, sums),
         value: level.values[entry]!,
         key: encoding.keys === null ? 0 : level.keys[entry]!,
         sums,

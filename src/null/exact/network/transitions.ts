@@ -2,6 +2,7 @@
 // the factor it puts on the weight. Laid out in typed arrays that are used again for every node.
 import type { NodeIndex } from './node-index.js';
 import type { NodeSpace } from './node-space.js';
+import type { SourceRanges } from './source-ranges.js';
 
 export interface ColumnTerms {
   readonly total: number;
@@ -9,6 +10,12 @@ export interface ColumnTerms {
   readonly values: readonly Float64Array[];
   readonly keys: readonly Float64Array[] | null;
   readonly weights: readonly Float64Array[];
+}
+
+/** What is asked of the level that transitions come from. */
+export interface Sources {
+  readonly index: NodeIndex;
+  readonly ranges: SourceRanges;
 }
 
 export class Transitions {
@@ -25,7 +32,8 @@ export class Transitions {
   private readonly partWeights: Float64Array;
   private readonly partKeys: Float64Array;
   private readonly partNumbers: Float64Array;
-  private readonly runs: Float64Array;
+  private readonly partPlaces: Float64Array;
+  private readonly most: Float64Array;
   private readonly roomAfter: Float64Array;
   private sought = -1;
   private found: number[] = [];
@@ -38,33 +46,32 @@ export class Transitions {
     this.partWeights = slots();
     this.partKeys = slots();
     this.partNumbers = slots();
-    this.runs = slots();
+    this.partPlaces = slots();
+    this.most = slots();
     this.roomAfter = slots();
   }
 
   /**
-   * Finds the sources, among those in `index`, from which the column leads to the node with these row sums. Neighbouring
+   * Finds the sources, among those of the level, from which the column leads to the node with these row sums. Neighbouring
    * interchangeable rows with equal sums take their counts in rising order only, weighted by the ways to arrange them.
    */
-  collect(index: NodeIndex, column: ColumnTerms, sums: ArrayLike<number>): void {
-    const { counts, amounts, partValues, partWeights, partKeys, partNumbers, roomAfter, runs } = this;
+  collect(from: Sources, column: ColumnTerms, sums: ArrayLike<number>): void {
+    const { counts, amounts, partValues, partWeights, partKeys, partNumbers, partPlaces, roomAfter, most } = this;
     const { rows, codes, blockOf } = this.space;
     for (let i = rows - 1; i >= 0; i--) roomAfter[i] = roomAfter[i + 1]! + sums[i]!;
     this.length = 0;
     amounts[0] = column.total;
     partWeights[0] = 1;
-    counts[0] = Math.max(0, column.total - roomAfter[1]!) - 1;
-    runs[0] = 1;
+    this.begin(0, 0, from.ranges, sums);
     let row = 0;
     while (row >= 0) {
       if (row === rows - 2) {
-        this.finish(index, column, sums);
+        this.finish(from, column, sums);
         row--;
         continue;
       }
       const n = ++counts[row]!;
-      const amount = amounts[row]!;
-      if (n > sums[row]! || n > amount) {
+      if (n > most[row]!) {
         row--;
         continue;
       }
@@ -72,20 +79,35 @@ export class Transitions {
       if (column.keys !== null) partKeys[row + 1] = partKeys[row]! + column.keys[row]![n]!;
       partNumbers[row + 1] = partNumbers[row]! + codes[row]![sums[row]! - n]!;
       let ways = 1;
-      let least = 0;
       if (row > 0 && blockOf[row] !== row && sums[row] === sums[row - 1]) ways = this.arrangements(row, n, sums);
       partWeights[row + 1] = partWeights[row]! * column.weights[row]![n]! * ways;
-      amounts[row + 1] = amount - n;
+      amounts[row + 1] = amounts[row]! - n;
+      partPlaces[row + 1] = partPlaces[row]! + (sums[row]! - n) * from.ranges.strides[row]!;
       row++;
-      if (blockOf[row] !== row && sums[row] === sums[row - 1]) least = n;
-      counts[row] = Math.max(least, amount - n - roomAfter[row + 1]!) - 1;
+      this.begin(row, blockOf[row] !== row && sums[row] === sums[row - 1] ? n : 0, from.ranges, sums);
     }
   }
 
+  /** Sets the range of a row's count, from `least` on, to what fits and can lead to a source. */
+  private begin(row: number, least: number, ranges: SourceRanges, sums: ArrayLike<number>): void {
+    const sum = sums[row]!;
+    const amount = this.amounts[row]!;
+    let from = Math.max(least, amount - this.roomAfter[row + 1]!);
+    let to = Math.min(sum, amount);
+    const low = ranges.least[row];
+    if (low !== null && low !== undefined) {
+      const place = this.partPlaces[row]!;
+      from = Math.max(from, sum - ranges.most[row]![place]!);
+      to = Math.min(to, sum - low[place]!);
+    }
+    this.counts[row] = from - 1;
+    this.most[row] = to;
+  }
+
   /** The column's counts for transition t of a collection with the same arguments. */
-  countsAt(t: number, index: NodeIndex, column: ColumnTerms, sums: ArrayLike<number>): number[] {
+  countsAt(t: number, from: Sources, column: ColumnTerms, sums: ArrayLike<number>): number[] {
     this.sought = t;
-    this.collect(index, column, sums);
+    this.collect(from, column, sums);
     this.sought = -1;
     return this.found;
   }
@@ -105,14 +127,14 @@ export class Transitions {
   }
 
   /** The last two rows: one count settles the other. */
-  private finish(index: NodeIndex, column: ColumnTerms, sums: ArrayLike<number>): void {
+  private finish(from: Sources, column: ColumnTerms, sums: ArrayLike<number>): void {
     const { space, counts } = this;
     const { codes, blockOf, rows } = space;
     const row = rows - 2;
     const sum = sums[row]!;
     const lastSum = sums[row + 1]!;
     const amount = this.amounts[row]!;
-    const most = Math.min(sum, amount);
+    const most = this.most[row]!;
     const least = counts[row]! + 1;
     if (most < least) return;
     this.makeRoom(most - least + 1);
@@ -129,6 +151,7 @@ export class Transitions {
     const weight = this.partWeights[row]!;
     const key = this.partKeys[row]!;
     const number = this.partNumbers[row]!;
+    const { index } = from;
     const { plain } = index;
     const joins = row > 0 && blockOf[row] !== row && sum === sums[row - 1];
     const lastJoins = blockOf[row + 1] !== row + 1 && lastSum === sum;
@@ -136,8 +159,8 @@ export class Transitions {
     for (let n = least; n <= most; n++) {
       const rest = amount - n;
       if (lastJoins && rest < n) break;
-      const from = number + code[sum - n]! + lastCode[lastSum - rest]!;
-      const source = plain !== null ? plain[from]! : index.get(from);
+      const node = number + code[sum - n]! + lastCode[lastSum - rest]!;
+      const source = plain !== null ? plain[node]! : index.get(node);
       if (source < 0) continue;
       let ways = 1;
       if (joins || lastJoins) {
