@@ -1,6 +1,5 @@
-// Chooses the sampler of each cell that is drawn from its conditional law, under the memory that guides and weights may take.
-import { mostOutcomes, type GuidedLaws } from './hypergeometric/guide.js';
-import { binomialLaw, hypergeometricLaw } from './hypergeometric/laws.js';
+// Chooses the sampler of each cell that is drawn from its conditional law, within the memory that look-up tables may take.
+import { mostOutcomes, type GuidedLaws, type VaryingLaw } from './hypergeometric/guide.js';
 import { leastVarianceForRejection } from './hypergeometric/rejection.js';
 import { leastOf, mostOf, rangeAround, spreadOf, varianceOf, type Range } from './hypergeometric/spread.js';
 import type { TrialGrid } from './hypergeometric/trial.js';
@@ -21,18 +20,18 @@ export type CellPlan = { readonly work: number } & (
 
 /** Nanoseconds on a usual machine, measured once: units of a forecast, not promises. */
 const work = {
-  guide: 12,
-  trial: 24,
+  guide: 16,
+  trial: 27,
   failedTrial: 15,
-  inversion: 48,
+  inversion: 50,
   inversionPerDeviation: 4,
-  wideInversion: 300,
+  wideInversion: 280,
   rejection: 46,
-  wideRejection: 150,
+  wideRejection: 100,
 } as const;
 
 /** Look-up tables reach so many deviations; what lies beyond (one draw in millions) is drawn without them. */
-const reach = 5.5;
+const usualReach = 5.5;
 /** Outcomes of any law that a table holds lie within so many deviations of the expected count, and as many units more. */
 const outcomeReach = 14;
 const outcomeMargin = 10;
@@ -43,6 +42,9 @@ const mostShares = 4096;
 export class CellPlanner {
   private readonly total: number;
   private readonly wide: boolean;
+  /** Units in the rows (columns) from each one on. */
+  private readonly rowsFrom: readonly number[];
+  private readonly columnsFrom: readonly number[];
   private entriesLeft = guideEntries;
   private bordersLeft = guideBorders;
   private chancesLeft = trialChances;
@@ -50,16 +52,19 @@ export class CellPlanner {
   constructor(
     private readonly rowTotals: readonly number[],
     private readonly columnTotals: readonly number[],
-    private readonly prefer: CellSampler | undefined,
+    private readonly prefer: string | undefined,
+    private readonly reach = usualReach,
   ) {
-    this.total = sumFrom(rowTotals, 0);
+    this.rowsFrom = sumsFrom(rowTotals);
+    this.columnsFrom = sumsFrom(columnTotals);
+    this.total = this.rowsFrom[0]!;
     this.wide = isWide(this.total);
   }
 
-  /** Plans of the cells of all rows but the last, from row `first` on. */
+  /** Plans of the cells of all rows but the last, from row `first` on, without the last column. */
   planRows(first: number): CellPlan[][] {
-    const rows = this.rowTotals.slice(0, -1).map((_, i) => i);
-    return rows.slice(first).map((i) => this.columnTotals.slice(0, -1).map((_, j) => this.planCell(i, j)));
+    const rows = Array.from({ length: this.rowTotals.length - 1 - first }, (_, k) => first + k);
+    return rows.map((i) => this.columnTotals.slice(0, -1).map((_, j) => this.planCell(i, j)));
   }
 
   private planCell(i: number, j: number): CellPlan {
@@ -86,8 +91,8 @@ export class CellPlanner {
 
   /** Deviation of the cell's count given the cells before it, when those are as expected. */
   private conditionalDeviation(i: number, j: number): number {
-    const rowsLeft = sumFrom(this.rowTotals, i);
-    const columnsLeft = sumFrom(this.columnTotals, j);
+    const rowsLeft = this.rowsFrom[i]!;
+    const columnsLeft = this.columnsFrom[j]!;
     const left = rowsLeft * (columnsLeft / this.total);
     const marked = rowsLeft * (this.columnTotals[j]! / this.total);
     const drawn = columnsLeft * (this.rowTotals[i]! / this.total);
@@ -99,12 +104,11 @@ export class CellPlanner {
     if (i > 0 && j > 0) return null;
     const row = this.rowTotals[i]!;
     const column = this.columnTotals[j]!;
-    const total = i === 0 ? sumFrom(this.columnTotals, j) : sumFrom(this.rowTotals, i);
+    const total = i === 0 ? this.columnsFrom[j]! : this.rowsFrom[i]!;
     const key = i === 0 ? 'drawn' : 'marked';
     const varying = i === 0 ? this.range(total, row) : this.range(total, column);
-    const lawAt = (value: number): ReturnType<GuidedLaws['lawAt']> =>
-      i === 0 ? hypergeometricLaw(total, column, value) : hypergeometricLaw(total, value, row);
-    const laws = this.lawsWithin(i, j, deviation, varying, lawAt);
+    const fixed = i === 0 ? column : row;
+    const laws = this.lawsWithin(i, j, deviation, varying, { kind: 'hypergeometric', total, fixed });
     return laws === null ? null : { sampler: 'guide', key, laws, work: work.guide };
   }
 
@@ -112,8 +116,8 @@ export class CellPlanner {
     if (this.wide) return null;
     const row = this.rowTotals[i]!;
     const column = this.columnTotals[j]!;
-    const rowsLeft = sumFrom(this.rowTotals, i);
-    const columnsLeft = sumFrom(this.columnTotals, j);
+    const rowsLeft = this.rowsFrom[i]!;
+    const columnsLeft = this.columnsFrom[j]!;
     // Proposals are spared on the side that has more units still to come.
     const key = columnsLeft - column >= rowsLeft - row ? 'marked' : 'drawn';
     const toCome = key === 'marked' ? columnsLeft - column : rowsLeft - row;
@@ -122,23 +126,17 @@ export class CellPlanner {
     const grid: TrialGrid = {
       share,
       units: key === 'marked' ? this.range(rowsLeft, toCome) : this.range(columnsLeft, toCome),
-      taken: rangeAround(spreadOf(this.total, toCome, key === 'marked' ? row : column), reach),
+      taken: rangeAround(spreadOf(this.total, toCome, key === 'marked' ? row : column), this.reach),
     };
     if (grid.units.length * grid.taken.length > this.chancesLeft) return null;
-    const laws = this.lawsWithin(i, j, deviation, varying, (value) => binomialLaw(value, share));
+    const laws = this.lawsWithin(i, j, deviation, varying, { kind: 'binomial', share });
     const proposals = Math.sqrt(this.total / toCome);
     const cost = proposals * work.trial + (proposals - 1) * work.failedTrial;
     return laws === null ? null : { sampler: 'trial', key, laws, grid, work: cost };
   }
 
   /** Laws of the outcome at (i, j) with as many shares as memory allows, if that is enough; else null. */
-  private lawsWithin(
-    i: number,
-    j: number,
-    deviation: number,
-    varying: Range,
-    lawAt: GuidedLaws['lawAt'],
-  ): GuidedLaws | null {
+  private lawsWithin(i: number, j: number, deviation: number, varying: Range, law: VaryingLaw): GuidedLaws | null {
     const spread = spreadOf(this.total, this.rowTotals[i]!, this.columnTotals[j]!);
     const around = rangeAround(spread, outcomeReach);
     const from = Math.max(0, around.from - outcomeMargin);
@@ -153,7 +151,7 @@ export class CellPlanner {
       outcomes.length <= mostOutcomes &&
       outcomes.length * varying.length <= this.bordersLeft &&
       shares >= Math.max(leastShares, 8 * deviation);
-    return fits ? { varying, outcomes, shares, lawAt } : null;
+    return fits ? { law, varying, outcomes, shares } : null;
   }
 
   private setAside(plan: CellPlan): void {
@@ -166,11 +164,14 @@ export class CellPlanner {
 
   /** Where the count of a block lies that so many of one side share with so many of the other. */
   private range(one: number, other: number): Range {
-    const around = rangeAround(spreadOf(this.total, one, other), reach);
+    const around = rangeAround(spreadOf(this.total, one, other), this.reach);
     const from = Math.max(around.from, leastOf(this.total, one, other));
     return { from, length: Math.min(around.from + around.length - 1, mostOf(one, other)) - from + 1 };
   }
 }
 
-const sumFrom = (totals: readonly number[], start: number): number =>
-  totals.slice(start).reduce((sum, total) => sum + total, 0);
+function sumsFrom(totals: readonly number[]): number[] {
+  const sums = [...totals];
+  for (let k = totals.length - 2; k >= 0; k--) sums[k]! += sums[k + 1]!;
+  return sums;
+}

@@ -23,14 +23,21 @@ export interface DrawPlan {
   readonly work: number;
 }
 
-/** @param prefer for tests: use this sampler wherever it can be used at all. */
-export function planDraws(live: LiveTable, prefer?: Sampler): DrawPlan {
-  const upright = planOneWay(live, false, prefer);
-  const turned = planOneWay(live, true, prefer);
+/** For tests: bends the choice, so that every sampler and every switch between samplers can be put to the proof. */
+export interface Forced {
+  /** The sampler to use wherever it can be used at all. */
+  readonly prefer?: Sampler;
+  /** How many deviations the look-up tables reach; beyond them other samplers take over. */
+  readonly reach?: number;
+}
+
+export function planDraws(live: LiveTable, forced: Forced = {}): DrawPlan {
+  const upright = planOneWay(live, false, forced);
+  const turned = planOneWay(live, true, forced);
   return turned.work < upright.work ? turned : upright;
 }
 
-function planOneWay(live: LiveTable, turned: boolean, prefer: Sampler | undefined): DrawPlan {
+function planOneWay(live: LiveTable, turned: boolean, forced: Forced): DrawPlan {
   const [rowsOf, columnsOf] = turned ? [live.columnTotals, live.rowTotals] : [live.rowTotals, live.columnTotals];
   const rowOrder = ascending(rowsOf);
   const columnOrder = ascending(columnsOf);
@@ -39,7 +46,7 @@ function planOneWay(live: LiveTable, turned: boolean, prefer: Sampler | undefine
   const positions = rowOrder.flatMap((i) =>
     columnOrder.map((j) => (turned ? j * live.columns + i : i * live.columns + j)),
   );
-  return { rowTotals, columnTotals, total: live.total, positions, ...planRows(rowTotals, columnTotals, prefer) };
+  return { rowTotals, columnTotals, total: live.total, positions, ...planRows(rowTotals, columnTotals, forced) };
 }
 
 /** Indexes by rising total; equal totals keep their order. */
@@ -50,24 +57,35 @@ const ascending = (totals: Float64Array): number[] =>
 function planRows(
   rowTotals: readonly number[],
   columnTotals: readonly number[],
-  prefer: Sampler | undefined,
+  { prefer, reach }: Forced,
 ): Pick<DrawPlan, 'labelRows' | 'cells' | 'work'> {
-  const most = rowTotals.length - 1;
-  if (prefer === 'labels') return { labelRows: most, cells: [], work: labelWork(rowTotals, most) };
-  let best: ReturnType<typeof planRows> | undefined;
-  for (let labelRows = 0; labelRows <= (prefer === undefined ? most : 0); labelRows++) {
-    const labels = labelWork(rowTotals, labelRows);
-    if (best !== undefined && labels >= best.work) break;
-    const cells = new CellPlanner(rowTotals, columnTotals, prefer).planRows(labelRows);
-    const work = labels + cells.flat().reduce((sum, cell) => sum + cell.work, 0);
-    if (best === undefined || work < best.work) best = { labelRows, cells, work };
+  const rows = rowTotals.length - 1;
+  const planFrom = (first: number): CellPlan[][] =>
+    new CellPlanner(rowTotals, columnTotals, prefer, reach).planRows(first);
+  const allCells = prefer === 'labels' ? [] : planFrom(0);
+  let labelRows = prefer === 'labels' ? rows : 0;
+  if (prefer === undefined) {
+    let rest = workOf(allCells);
+    let least = rest;
+    for (let i = 0; i < rows; i++) {
+      rest -= workOf([allCells[i]!]);
+      if (labelWork(rowTotals, i + 1) + rest < least) {
+        labelRows = i + 1;
+        least = labelWork(rowTotals, labelRows) + rest;
+      }
+    }
   }
-  return best!;
+  const cells = labelRows === 0 ? allCells : planFrom(labelRows);
+  return { labelRows, cells, work: labelWork(rowTotals, labelRows) + workOf(cells) };
 }
 
+const workOf = (cells: readonly (readonly CellPlan[])[]): number =>
+  cells.flat().reduce((sum, cell) => sum + cell.work, 0);
+
+/** Nanoseconds as in the plans of cells: a unit from the bag, a unit searched for, the copy of the bag. */
 function labelWork(rowTotals: readonly number[], labelRows: number): number {
   if (labelRows === 0) return 0;
   const total = rowTotals.reduce((sum, row) => sum + row, 0);
   const units = rowTotals.slice(0, labelRows).reduce((sum, row) => sum + row, 0);
-  return total <= bagUnits ? total / 4 + 5 * units : 20 * units;
+  return total <= bagUnits ? total / 4 + 7 * units : 20 * units;
 }

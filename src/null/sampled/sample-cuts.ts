@@ -3,7 +3,7 @@
 import { blockStream, type UniformSource } from '../../random/stream.js';
 import type { LiveTable } from '../../table/live-table.js';
 import type { Ordering, SampledCut } from '../contract.js';
-import { planDraws, type Sampler as SamplerName } from './draw-plan.js';
+import { planDraws, type Forced } from './draw-plan.js';
 import { panelFor } from './judges.js';
 import { blockSize } from './limits.js';
 import { TableDrawer } from './table-drawer.js';
@@ -26,9 +26,8 @@ export interface Sampler {
   drawTable(stream: UniformSource, into: { [cell: number]: number }): void;
 }
 
-/** @param prefer for tests: the sampler of rows and cells to use wherever it can be used. */
-export function prepareSampler(live: LiveTable, orderings: readonly Ordering[], prefer?: SamplerName): Sampler {
-  const drawer = new TableDrawer(planDraws(live, prefer));
+export function prepareSampler(live: LiveTable, orderings: readonly Ordering[], forced?: Forced): Sampler {
+  const drawer = new TableDrawer(planDraws(live, forced));
   const { judges, assigned } = panelFor(live, orderings);
   const table = drawer.newTable();
   return {

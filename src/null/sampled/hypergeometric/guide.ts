@@ -1,24 +1,31 @@
-// One look-up in place of an inversion, for laws that depend on one number only and are laid out before the first draw.
+// One look-up in place of an inversion, for laws that depend on one number only.
 // A guide table (Chen & Asau 1974): [0, 1) is cut into equal shares; each keeps the outcome at its lower end, and a flag
-// if a border between outcomes lies inside. Only then the borders are searched, from that outcome on.
+// if a border between outcomes lies inside. Only then the borders are searched, from that outcome on. A law is laid out when it is
+// first asked for; that changes no answer.
 import type { UniformSource } from '../../../random/stream.js';
-import type { Law } from './laws.js';
+import { layBinomial, layHypergeometric } from './laws.js';
 import type { Range } from './spread.js';
 
 const resolution = 2 ** -32;
-const flag = 0x8000;
 /** Outcomes are counted from the least one of their cell, in the bits below the flag. */
-export const mostOutcomes = flag;
+const flag = 0x8000;
+const notLaidOut = 0xffff;
+export const mostOutcomes = flag - 1;
 
 /** The laws of one cell, one for each value of the number they depend on. */
 export interface GuidedLaws {
+  readonly law: VaryingLaw;
   readonly varying: Range;
   /** What the laws give: anything outside has no mass that a double could add to 1. */
   readonly outcomes: Range;
   /** Shares per law, a power of two. */
   readonly shares: number;
-  lawAt(value: number): Law;
 }
+
+/** A hypergeometric law with two of its numbers fixed, or a binomial one with its share fixed. */
+export type VaryingLaw =
+  | { readonly kind: 'hypergeometric'; readonly total: number; readonly fixed: number }
+  | { readonly kind: 'binomial'; readonly share: number };
 
 /** Numbers kept per cell. */
 const stride = 8;
@@ -29,26 +36,20 @@ export class Guides {
   /** P(outcome <= k) for each law, over the outcomes of its cell. */
   private readonly borders: Float64Array;
 
-  constructor(cells: readonly GuidedLaws[]) {
+  constructor(private readonly cells: readonly GuidedLaws[]) {
     let entries = 0;
     let borders = 0;
-    this.numbers = new Int32Array(cells.length * stride);
-    cells.forEach(({ varying, outcomes, shares }, cell) => {
-      const bits = Math.log2(shares);
-      this.numbers.set([varying.from, varying.length, entries, bits, 32 - bits, outcomes.from, borders, outcomes.length], cell * stride); // prettier-ignore
-      entries += varying.length * shares;
-      borders += varying.length * outcomes.length;
-    });
-    this.entries = new Uint16Array(entries);
+    this.numbers = Int32Array.from(
+      cells.flatMap(({ varying, outcomes, shares }) => {
+        const bits = Math.log2(shares);
+        const starts = [entries, borders] as const;
+        entries += varying.length * shares;
+        borders += varying.length * outcomes.length;
+        return [varying.from, varying.length, starts[0], bits, 32 - bits, outcomes.from, starts[1], outcomes.length];
+      }),
+    );
+    this.entries = new Uint16Array(entries).fill(notLaidOut);
     this.borders = new Float64Array(borders);
-    cells.forEach((laws, cell) => {
-      for (let law = 0; law < laws.varying.length; law++) {
-        const n = cell * stride;
-        const start = this.numbers[n + 2]! + law * laws.shares;
-        const row = this.numbers[n + 6]! + law * laws.outcomes.length;
-        this.lay(laws.lawAt(laws.varying.from + law), laws, start, row);
-      }
-    });
   }
 
   /**
@@ -61,14 +62,16 @@ export class Guides {
     const law = value - numbers[n]!;
     if (!(law >= 0 && law < numbers[n + 1]!)) return -1;
     const entry = this.entries[numbers[n + 2]! + (law << numbers[n + 3]!) + (word >>> numbers[n + 4]!)]!;
-    return entry < flag ? numbers[n + 5]! + entry : numbers[n + 5]! + this.search(source, n, law, entry - flag, word);
+    return numbers[n + 5]! + (entry < flag ? entry : this.search(source, cell, law, entry, word));
   }
 
-  private search(source: UniformSource, n: number, law: number, first: number, word: number): number {
+  private search(source: UniformSource, cell: number, law: number, entry: number, word: number): number {
     const { borders, numbers } = this;
+    const n = cell * stride;
+    if (entry === notLaidOut) this.layOut(cell, law);
     const row = numbers[n + 6]! + law * numbers[n + 7]!;
     let u = (word >>> 0) * resolution;
-    let outcome = first;
+    let outcome = entry === notLaidOut ? 0 : entry - flag;
     while (borders[row + outcome]! <= u) outcome++;
     if (borders[row + outcome]! - u < resolution) {
       u += resolution * source.uniform();
@@ -77,20 +80,23 @@ export class Guides {
     return outcome;
   }
 
-  private lay({ least, masses }: Law, { outcomes, shares }: GuidedLaws, start: number, row: number): void {
-    const { borders, entries } = this;
-    let sum = 0;
-    for (let k = 0; k < outcomes.length; k++) {
-      sum += masses[outcomes.from + k - least] ?? 0;
-      borders[row + k] = sum;
-    }
+  private layOut(cell: number, index: number): void {
+    const { law, varying, outcomes, shares } = this.cells[cell]!;
+    const { borders, entries, numbers } = this;
+    const value = varying.from + index;
+    const start = numbers[cell * stride + 6]! + index * outcomes.length;
+    const stretch = { array: borders, start, length: outcomes.length, from: outcomes.from };
+    if (law.kind === 'binomial') layBinomial(stretch, value, law.share);
+    else layHypergeometric(stretch, law.total, law.fixed, value);
+    let last = outcomes.length - 1;
+    while (borders[start + last] === 0) last--;
+    for (let k = 1; k < last; k++) borders[start + k]! += borders[start + k - 1]!;
     // The last outcome takes what rounding leaves of 1, so that every search ends.
-    const last = Math.min(outcomes.length, least + masses.length - outcomes.from) - 1;
-    borders.fill(2, row + last, row + outcomes.length);
-    let outcome = 0;
-    for (let share = 0; share < shares; share++) {
-      while (borders[row + outcome]! <= share / shares) outcome++;
-      entries[start + share] = outcome + (borders[row + outcome]! < (share + 1) / shares ? flag : 0);
+    borders.fill(2, start + last, start + outcomes.length);
+    const first = numbers[cell * stride + 2]! + index * shares;
+    for (let share = 0, outcome = 0; share < shares; share++) {
+      while (borders[start + outcome]! <= share / shares) outcome++;
+      entries[first + share] = outcome + (borders[start + outcome]! < (share + 1) / shares ? flag : 0);
     }
   }
 }

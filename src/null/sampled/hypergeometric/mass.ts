@@ -37,14 +37,21 @@ export class HypergeometricMass {
     const { logs } = this;
     if (total < logs.length) {
       return exponentialOfNegative(
-        logs[marked]! + logs[unmarked]! + (logs[drawn]! + logs[left]!) - logs[total]! -
+        logs[marked]! +
+          logs[unmarked]! +
+          (logs[drawn]! + logs[left]!) -
+          logs[total]! -
           (logs[x]! + logs[marked - x]! + (logs[drawn - x]! + logs[unmarked - drawn + x]!)),
-      ); // prettier-ignore
+      );
     }
     return Math.exp(
-      fringe(marked) + fringe(unmarked) + fringe(drawn) + fringe(left) - fringe(total) -
+      fringe(marked) +
+        fringe(unmarked) +
+        fringe(drawn) +
+        fringe(left) -
+        fringe(total) -
         distance(total, marked, drawn, x),
-    ); // prettier-ignore
+    );
   }
 
   /** P(x) / P(mode) for x and mode in the support; 0 where it is below e^-60. */
@@ -53,9 +60,11 @@ export class HypergeometricMass {
     if (total < logs.length) {
       const rest = total - marked - drawn;
       return exponentialOfNegative(
-        logs[mode]! + logs[marked - mode]! + (logs[drawn - mode]! + logs[rest + mode]!) -
+        logs[mode]! +
+          logs[marked - mode]! +
+          (logs[drawn - mode]! + logs[rest + mode]!) -
           (logs[x]! + logs[marked - x]! + (logs[drawn - x]! + logs[rest + x]!)),
-      ); // prettier-ignore
+      );
     }
     return exponentialOfNegative(distance(total, marked, drawn, mode) - distance(total, marked, drawn, x));
   }

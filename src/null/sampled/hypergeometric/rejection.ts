@@ -7,7 +7,7 @@ import { invert } from './inversion.js';
 import type { HypergeometricMass } from './mass.js';
 import { leastOf, modeOf, mostOf, varianceOf } from './spread.js';
 
-/** The hat is proven from here on. */
+/** From here on hat and squeeze are shown to hold. */
 export const leastVarianceForRejection = 9;
 
 /** Shape of the hat for a standard deviation; exported for the proof. A proposal is floor((2 a/(1/2 - |v|) + b) v + c). */
@@ -18,7 +18,7 @@ export const squeezeHeight = (slope: number): number => 0.92 - 4.2 / slope;
 export const squeezeEdge = 0.07;
 
 /**
- * A count from the law of (total, marked, drawn), by inversion where the hat is not proven.
+ * A count from the law of (total, marked, drawn), by inversion where the hat may not hold.
  * The position takes 53 bits, because a wide law spreads 2^32 points too thinly over its outcomes; so does the height where
  * it matters.
  */
@@ -39,7 +39,7 @@ export function reject(
   const fraction = centre - whole;
   const squeeze = squeezeHeight(slope);
   for (;;) {
-    const v = source.uniform() + (source.uniform() - 0.5) * 2 ** -32 - 0.5;
+    const v = source.uniform() + source.uniform() * 2 ** -32 - 0.5;
     const height = source.uniform();
     const edge = 0.5 - Math.abs(v);
     const x = whole + Math.floor((curve / edge + slope) * v + fraction);

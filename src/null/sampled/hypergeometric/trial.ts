@@ -37,13 +37,8 @@ export class Trials {
         return [units.from, units.length, taken.from, taken.length, start];
       }),
     );
-    this.chances = new Float64Array(size);
-    grids.forEach(({ units, taken }, cell) => {
-      for (let i = 0, at = this.numbers[cell * stride + 4]!; i < units.length; i++) {
-        for (let j = 0; j < taken.length; j++, at++)
-          this.chances[at] = this.chance(cell, units.from + i, taken.from + j);
-      }
-    });
+    // NaN: not worked out yet.
+    this.chances = new Float64Array(size).fill(NaN);
   }
 
   /** True with probability b(taken; units, share) / max b(.; units, share). */
@@ -52,12 +47,16 @@ export class Trials {
     const n = cell * stride;
     const row = units - numbers[n]!;
     const column = taken - numbers[n + 2]!;
-    const chance =
-      row >>> 0 < numbers[n + 1]! && column >>> 0 < numbers[n + 3]!
-        ? this.chances[numbers[n + 4]! + Math.imul(row, numbers[n + 3]!) + column]!
-        : this.chance(cell, units, taken);
+    const within = row >>> 0 < numbers[n + 1]! && column >>> 0 < numbers[n + 3]!;
+    const at = within ? numbers[n + 4]! + Math.imul(row, numbers[n + 3]!) + column : -1;
     const u = source.uniform();
+    let chance = within ? this.chances[at]! : NaN;
     if (u + resolution <= chance) return true;
+    if (chance !== chance) {
+      chance = this.chance(cell, units, taken);
+      if (within) this.chances[at] = chance;
+      if (u + resolution <= chance) return true;
+    }
     return u < chance && u + resolution * source.uniform() < chance;
   }
 
@@ -69,9 +68,12 @@ export class Trials {
     return Math.min(
       1,
       Math.exp(
-        logs[mode]! + logs[units - mode]! - logs[taken]! - logs[units - taken]! +
+        logs[mode]! +
+          logs[units - mode]! -
+          logs[taken]! -
+          logs[units - taken]! +
           (taken - mode) * Math.log(share / (1 - share)),
       ),
-    ); // prettier-ignore
+    );
   }
 }

@@ -1,0 +1,70 @@
+// Where blocks of draws come from: this thread, or several. The order in which they are handed on is that of their numbers,
+// and each is a function of seed, table and number alone, so the source changes no digit.
+import { blockStream } from '../../random/stream.js';
+import type { LiveTable } from '../../table/live-table.js';
+import type { Ordering } from '../contract.js';
+import { planDraws } from './draw-plan.js';
+import { blockSize } from './limits.js';
+import { blocksFor, drawsInBlock, prepareSampler, type Sampling, type Tally } from './sample-cuts.js';
+
+export interface BlockSource {
+  /** One entry a block, from `first` to before `end`; in each, one tally for each ordering. */
+  tallies(first: number, end: number): Promise<readonly (readonly Tally[])[]>;
+  /** Blocks to ask for at once: some tens of milliseconds of work. */
+  readonly stride: number;
+  /** Whether the next blocks should be asked for while the last are being read (they are made elsewhere). */
+  readonly ahead: boolean;
+  close(): Promise<void>;
+}
+
+const millisecondsAtOnce = 40;
+
+/** Forecast of one block's work in milliseconds of a usual machine. Feeds strides and the use of threads, never a digit. */
+export const blockMilliseconds = (live: LiveTable): number => ((planDraws(live).work + 30) * blockSize) / 1e6;
+
+/** Blocks counted on this thread, when asked. */
+export function localSource(live: LiveTable, orderings: readonly Ordering[], sampling: Sampling): BlockSource {
+  const sampler = prepareSampler(live, orderings);
+  return {
+    stride: strideFor(live),
+    ahead: false,
+    tallies(first, end) {
+      const found: Tally[][] = [];
+      for (let block = first; block < end; block++) {
+        const stream = blockStream(sampling.seed, sampling.tableKey, block);
+        found.push(sampler.countBlock(stream, drawsInBlock(sampling.draws, block)));
+      }
+      return Promise.resolve(found);
+    },
+    close: () => Promise.resolve(),
+  };
+}
+
+export const strideFor = (live: LiveTable): number =>
+  Math.max(1, Math.floor(millisecondsAtOnce / blockMilliseconds(live)));
+
+/** Lets timers and signals have their turn between two stretches of work. */
+const pause = (): Promise<void> => new Promise((resolve) => setImmediate(resolve));
+
+export interface Block {
+  readonly tallies: readonly Tally[];
+  readonly draws: number;
+}
+
+/** All blocks of a sampling, in order; whoever has seen enough just stops reading. */
+export async function* blocksInOrder(source: BlockSource, sampling: Sampling): AsyncGenerator<Block> {
+  const last = blocksFor(sampling.draws);
+  const ask = (first: number): ReturnType<BlockSource['tallies']> =>
+    source.tallies(first, Math.min(last, first + source.stride));
+  let next = ask(0);
+  for (let first = 0; first < last; first += source.stride) {
+    const tallies = await next;
+    if (source.ahead && first + source.stride < last) next = ask(first + source.stride);
+    for (let k = 0; k < tallies.length; k++) {
+      yield { tallies: tallies[k]!, draws: drawsInBlock(sampling.draws, first + k) };
+    }
+    await pause();
+    if (!source.ahead && first + source.stride < last) next = ask(first + source.stride);
+  }
+  await next;
+}
