@@ -1,4 +1,4 @@
-// Builds two entries that share chunks: the command (main) and the library (index).
+// Builds three entries that share chunks: the command (main), the library (index) and what its threads run.
 // Everything a run needs at once is bundled, because loading loose files is what makes a Node command slow to start;
 // what only some runs need (dynamic imports) becomes chunks of its own.
 import { builtinModules } from 'node:module';
@@ -16,8 +16,9 @@ export default defineConfig({
     // Bundled packages ask for their licences to travel with them.
     license: { fileName: 'third-party-licenses.md' },
     rolldownOptions: {
-      input: { main: 'src/cli/main.ts', index: 'src/index.ts' },
-      external: [...builtinModules, /^node:/],
+      input: { main: 'src/cli/main.ts', index: 'src/index.ts', 'sampling-worker': 'src/sampling-worker.ts' },
+      // piscina starts threads from files of its own, so it stays a package.
+      external: [...builtinModules, /^node:/, 'piscina'],
       output: { format: 'es', entryFileNames: '[name].js', chunkFileNames: 'chunk-[name].js' },
     },
   },

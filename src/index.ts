@@ -15,6 +15,9 @@ export { analyse } from './analyse.js';
 export type { PValue, Result } from './result/result.js';
 export { resultJsonSchema } from './result/schema.js';
 
+// random tables with given margins
+export { drawTables, type DrawOptions } from './draw-tables.js';
+
 // Result -> report
 export { render } from './report/formats.js';
 

@@ -17,6 +17,12 @@ export const commands: readonly CommandEntry[] = [
     load: async () => (await import('./test.js')).testCommand,
   },
   {
+    name: 'draw',
+    operands: 'ROW ... | FILE | -',
+    summary: 'random tables that keep all row and column totals',
+    load: async () => (await import('./draw.js')).drawCommand,
+  },
+  {
     name: 'schema',
     operands: 'result',
     summary: 'the JSON Schema of what --format json prints',

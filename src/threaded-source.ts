@@ -1,0 +1,33 @@
+// Blocks of draws counted on several threads: the same numbers as on one, since each block is a function of its own number.
+import { strideFor, type BlockSource } from './null/sampled/block-source.js';
+import type { Tally } from './null/sampled/sample-cuts.js';
+import type { CountTask, SamplingRecipe } from './sampling-worker.js';
+import type { LiveTable } from './table/live-table.js';
+
+/** Threads take built files only; undefined where there is none (the sources themselves are being run). */
+const workerFile = import.meta.url.endsWith('.ts') ? undefined : new URL('./sampling-worker.js', import.meta.url).href;
+
+export const canUseThreads = workerFile !== undefined;
+
+/** @param threads at least 1. The pool is closed by `close`, which ends work under way. */
+export async function threadedSource(recipe: SamplingRecipe, live: LiveTable, threads: number): Promise<BlockSource> {
+  const { Piscina } = await import('piscina');
+  const pool = new Piscina<CountTask, readonly (readonly Tally[])[]>({
+    filename: workerFile!,
+    minThreads: threads,
+    maxThreads: threads,
+  });
+  const each = strideFor(live);
+  return {
+    stride: each * threads,
+    ahead: true,
+    async tallies(first, end) {
+      const tasks: Promise<readonly (readonly Tally[])[]>[] = [];
+      for (let from = first; from < end; from += each) {
+        tasks.push(pool.run({ recipe, first: from, end: Math.min(end, from + each) }));
+      }
+      return (await Promise.all(tasks)).flat();
+    },
+    close: () => pool.destroy(),
+  };
+}
