@@ -23,7 +23,7 @@ export function orderingFor(live: LiveTable, bound: BoundStatistic, name: Orderi
       if (distance === undefined) break;
       if (isArbitrary(bound)) return { name, place: distance, arbitrary: true };
       if (sum === undefined || linear === undefined) return { name, place: distance };
-      return { name, place: distance, fold: { cells: sum, low: linear.low, high: linear.high }, linear };
+      return byFold(live, sum, linear, name);
     }
     case 'probability':
       // In a 2x2 table a signed statistic takes each value at one table only, so P(T = t) is that table's probability.
@@ -64,6 +64,20 @@ function byPlace(bound: BoundStatistic, direction: 1 | -1, name: OrderingName): 
     place: (counts) => signed(direction, bound.place!(counts)),
     ...(isArbitrary(bound) ? { arbitrary: true } : {}),
     ...(bound.limits === undefined ? {} : { limits: bound.limits }),
+  };
+}
+
+/** The sum is exact: further out means outside the two values level with the observed one. */
+function byFold(live: LiveTable, cells: CellSum, linear: LinearForm, name: OrderingName): Ordering {
+  const { low, high } = linear;
+  return {
+    name,
+    fold: { cells, low, high },
+    linear,
+    place: (counts) => {
+      const sum = sumOverCells(live, counts, cells.cell);
+      return sum > high || sum < low ? 1 : sum < high && sum > low ? -1 : 0;
+    },
   };
 }
 

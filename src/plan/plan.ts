@@ -28,6 +28,8 @@ export interface PlanOptions {
   /** For trend: one score for each row of the table, or `midranks`. Default 1, 2, 3, ... */
   readonly rowScores?: ScoreWish;
   readonly columnScores?: ScoreWish;
+  /** For power-divergence: above -1, a decimal or a fraction such as 2/3 (the default), read as the rational it is. */
+  readonly lambda?: string | number;
   readonly method?: Method;
   /** Number of sampled tables, 1 to 1e12. Default 100000. */
   readonly draws?: number;
@@ -57,6 +59,8 @@ export interface Plan {
   /** One for each row and column of the table, empty ones too; for statistics that take scores. */
   readonly rowScores?: number[];
   readonly columnScores?: number[];
+  /** In lowest terms, such as "2/3"; for power-divergence. */
+  readonly lambda?: string;
   readonly fixed: 'both';
   readonly draws: number | null;
   readonly seed: string | null;

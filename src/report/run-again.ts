@@ -27,6 +27,7 @@ export function againInWords({ input, plan }: Result): string {
     ...(plan.reference === null ? [] : [`reference ${quoted(plan.reference)}`]),
     ...(plan.rowScores === undefined ? [] : [`row scores ${plan.rowScores.join()}`]),
     ...(plan.columnScores === undefined ? [] : [`column scores ${plan.columnScores.join()}`]),
+    ...(plan.lambda === undefined ? [] : [`lambda ${plan.lambda}`]),
     `method ${plan.method}`,
   ];
   const { rowsFrom, columnsFrom } = input.source;
@@ -92,6 +93,7 @@ const planOptions = ({ plan }: Result): Option[] => [
   ...optional('reference', plan.reference),
   ...optional('row-scores', plan.rowScores?.join()),
   ...optional('column-scores', plan.columnScores?.join()),
+  ...optional('lambda', plan.lambda),
   ...optional('method', plan.method),
   ...optional('draws', plan.draws),
   ...optional('seed', plan.seed),

@@ -51,6 +51,8 @@ const input = z.strictObject({
 });
 
 const forecast = z.strictObject({
+  /** The exact engine that would answer. */
+  engine: z.enum(['two-by-two', 'enumeration', 'linear', 'network', 'within-limits']),
   workUnits: z.number().min(0),
   tables: z.number().min(0),
   tablesAreCounted: z.boolean(),
@@ -71,6 +73,11 @@ const plan = z.strictObject({
   /** For statistics that take scores: one for each line of the table, empty ones too. */
   rowScores: z.array(z.number()).optional(),
   columnScores: z.array(z.number()).optional(),
+  /** Exponent of the power-divergence family, in lowest terms. */
+  lambda: z
+    .string()
+    .regex(/^-?\d+(\/\d+)?$/)
+    .optional(),
   fixed: z.enum(['both']),
   draws: count.nullable(),
   seed: z.string().nullable(),

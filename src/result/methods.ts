@@ -20,7 +20,7 @@ export function methodsFor(result: ResultBeforeWords): string {
   return [
     testSentence(result),
     rolesSentence(result),
-    scoresSentence(result),
+    settingsSentence(result),
     methodSentence(result, headline),
     ...(isOneTableOnly(result)
       ? ['The margins allow one table only, so p is 1.']
@@ -44,7 +44,8 @@ function rolesSentence({ plan, statistic }: ResultBeforeWords): string | undefin
   );
 }
 
-function scoresSentence({ plan }: ResultBeforeWords): string | undefined {
+function settingsSentence({ plan }: ResultBeforeWords): string | undefined {
+  if (plan.lambda !== undefined) return `Its exponent lambda was ${plan.lambda}.`;
   if (plan.rowScores === undefined || plan.columnScores === undefined) return undefined;
   return `Row scores were ${plan.rowScores.join(', ')}; column scores ${plan.columnScores.join(', ')}.`;
 }

@@ -2,14 +2,27 @@
 import { nameHint } from '../problem/suggest.js';
 import { usageProblem } from '../problem/problem.js';
 import type { Statistic } from './contract.js';
+import { freemanTukey } from './freeman-tukey.js';
 import { likelihoodRatio } from './likelihood-ratio.js';
+import { maxResidual } from './max-residual.js';
 import { pearson } from './pearson.js';
+import { powerDivergence } from './power-divergence.js';
 import { probability } from './probability.js';
 import { score } from './score.js';
 import { trend } from './trend.js';
 import { wald } from './wald.js';
 
-export const statistics: readonly Statistic[] = [pearson, likelihoodRatio, probability, wald, score, trend];
+export const statistics: readonly Statistic[] = [
+  pearson,
+  likelihoodRatio,
+  probability,
+  powerDivergence,
+  freemanTukey,
+  maxResidual,
+  wald,
+  score,
+  trend,
+];
 
 export const statisticNames: readonly string[] = statistics.map((statistic) => statistic.name);
 

@@ -75,6 +75,7 @@ export const planning = {
     'for trend, one for each row: 0,1,2.5 or the word midranks (1,2,3 and so on)',
   ),
   columnScores: valued('The test', 'SCORES', anyText, 'the same of the columns'),
+  lambda: valued('The test', 'NUMBER', anyText, 'for power-divergence, its exponent: a decimal or a fraction (2/3)'),
   method: valued(
     'How p is found',
     'NAME',

@@ -2,7 +2,6 @@
 // law of every partial sum: in the counted units of forecast.ts.
 import type { LinearForm } from '../../../statistic/contract.js';
 import type { LiveTable } from '../../../table/live-table.js';
-import { countTables } from '../count-tables.js';
 import { codesOf, mostCodes } from './deal.js';
 import { moments, side } from './moments.js';
 import { scoredSides, type ScoredLine, type ScoredSides } from './scored-sides.js';
@@ -45,12 +44,6 @@ export function forecastLinear(live: LiveTable, form: LinearForm): LinearForecas
     values.peak > mostValues ? Infinity : Math.round(moves * perMove + values.values * each + sides.total);
   const [denseWork, sparseWork] = [work(dense, perDenseValue), work(sparse, perSparseValue)];
   return { workUnits: Math.min(denseWork, sparseWork), sparse: sparseWork < denseWork };
-}
-
-/** Against listing every table, which takes a unit a cell. */
-export function linearIsCheaper(live: LiveTable, form: LinearForm): boolean {
-  const { tables } = countTables(live);
-  return forecastLinear(live, form).workUnits <= tables * live.rows * live.columns;
 }
 
 export const usesHashMaps = (live: LiveTable, form: LinearForm): boolean => forecastLinear(live, form).sparse;
