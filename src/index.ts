@@ -9,6 +9,7 @@ export type { ReadTable } from './input/read-table.js';
 export { methods, tails, twoSidedRules, type Plan, type PlanOptions } from './plan/plan.js';
 export { statisticNames, statistics } from './statistic/registry.js';
 export type { Statistic } from './statistic/contract.js';
+export type { Margins, OwnStatistic } from './statistic/own.js';
 
 // Table + plan -> Result
 export { analyse } from './analyse.js';

@@ -49,6 +49,10 @@ export function choicesOf(
   statistic: Statistic,
   options: PlanOptions,
 ): { choices: Choices; echo: Partial<Plan> } {
+  if (statistic.own) {
+    const { statisticDigest } = options;
+    return { choices: {}, echo: statisticDigest === undefined ? {} : { statisticDigest } };
+  }
   if (statistic.takes?.includes('lambda')) {
     const lambda = lambdaOf(options.lambda);
     return { choices: { lambda }, echo: { lambda: rationalText(lambda) } };

@@ -18,6 +18,8 @@ export type ChosenMethod = Exclude<Method, 'auto'>;
 export interface PlanOptions {
   /** The name of a built-in one, or one of your own. */
   readonly statistic?: string | OwnStatistic;
+  /** SHA-256 of the module that a statistic of your own came from, 64 hexadecimal digits; kept in the plan. */
+  readonly statisticDigest?: string;
   readonly tail?: Tail;
   readonly twoSidedRule?: TwoSidedRule;
   readonly groups?: 'rows' | 'columns';
@@ -31,8 +33,14 @@ export interface PlanOptions {
   /** For power-divergence: above -1, a decimal or a fraction such as 2/3 (the default), read as the rational it is. */
   readonly lambda?: string | number;
   readonly method?: Method;
-  /** Number of sampled tables, 1 to 1e12. Default 100000. */
-  readonly draws?: number;
+  /** Number of sampled tables, 1 to 1e12, or (the default) until p is settled against alpha. */
+  readonly draws?: number | 'auto';
+  /** For draws `auto`: most tables to draw, at least one block. Default 1e7. */
+  readonly mostDraws?: number;
+  /** For draws `auto`: probability that any interval ever shown misses; below alpha. Default alpha / 500. */
+  readonly samplingRisk?: number;
+  /** For draws `auto`: half the interval over its middle at which p is precise enough, 0 to 1. Default 0.02. */
+  readonly relativeError?: number;
   readonly seed?: string;
   /** Bound on exact work in counted units. Default 6e7, about two seconds. */
   readonly effort?: number;
@@ -46,6 +54,8 @@ export interface PlanOptions {
 
 export interface Plan {
   readonly statistic: string;
+  /** SHA-256 of the module of a statistic of the user's own. */
+  readonly statisticDigest?: string;
   readonly tail: Tail;
   readonly twoSidedRule: TwoSidedRule | null;
   readonly method: ChosenMethod;
@@ -62,7 +72,11 @@ export interface Plan {
   /** In lowest terms, such as "2/3"; for power-divergence. */
   readonly lambda?: string;
   readonly fixed: 'both';
-  readonly draws: number | null;
+  readonly draws: number | 'auto' | null;
+  /** These three for draws `auto` only. */
+  readonly mostDraws?: number;
+  readonly samplingRisk?: number;
+  readonly relativeError?: number;
   readonly seed: string | null;
   readonly tableKey: string;
   readonly generator: string | null;

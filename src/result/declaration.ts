@@ -61,6 +61,11 @@ const forecast = z.strictObject({
 
 const plan = z.strictObject({
   statistic: z.string(),
+  /** SHA-256 of the module of a statistic of the user's own. */
+  statisticDigest: z
+    .string()
+    .regex(/^[0-9a-f]{64}$/)
+    .optional(),
   tail: z.enum(['upper', 'lower', 'both']),
   twoSidedRule: z.enum(['distance', 'probability', 'doubled']).nullable(),
   method: z.enum(['exact', 'sample', 'asymptotic']),
@@ -79,7 +84,11 @@ const plan = z.strictObject({
     .regex(/^-?\d+(\/\d+)?$/)
     .optional(),
   fixed: z.enum(['both']),
-  draws: count.nullable(),
+  /** `auto`: until p is settled against alpha, by the rule that the error of the p-value names. */
+  draws: z.union([count, z.literal('auto')]).nullable(),
+  mostDraws: count.optional(),
+  samplingRisk: z.number().gt(0).lt(1).optional(),
+  relativeError: z.number().min(0).lt(1).optional(),
   seed: z.string().nullable(),
   tableKey: z.string(),
   generator: z.string().nullable(),

@@ -1,0 +1,67 @@
+// A statistic of the user's own from a module named by --statistic: its bytes are digested for the record, then it is run.
+import { createHash } from 'node:crypto';
+import { readFile } from 'node:fs/promises';
+import { resolve } from 'node:path';
+import { pathToFileURL } from 'node:url';
+import type { PlanOptions } from '../../plan/plan.js';
+import { usageProblem } from '../../problem/problem.js';
+import type { OwnStatistic } from '../../statistic/own.js';
+
+/** `./mine.mjs`, `stats/mine.js`: what has an ending of a module, or a slash. */
+export const isModulePath = (text: string): boolean => /[/\\]|\.[cm]?js$/.test(text);
+
+export interface LoadedStatistic {
+  /** The default export, checked by the plan. */
+  readonly statistic: OwnStatistic;
+  /** SHA-256 of the bytes of the module itself (not of what it imports). */
+  readonly statisticDigest: string;
+}
+
+/** @throws Problem (usage) `no-module`, `module-failed`, `no-default-export`. */
+export async function loadStatistic(path: string): Promise<LoadedStatistic> {
+  const file = resolve(path);
+  let bytes: Uint8Array;
+  try {
+    bytes = await readFile(file);
+  } catch (thrown) {
+    throw usageProblem({
+      code: 'no-module',
+      message: `the module "${path}" cannot be read (${reasonOf(thrown)})`,
+      place: '--statistic',
+      hint: 'give the path of a file such as ./mine.mjs, or the name of a statistic',
+    });
+  }
+  let exports: { default?: unknown };
+  try {
+    exports = (await import(/* @vite-ignore */ pathToFileURL(file).href)) as { default?: unknown };
+  } catch (thrown) {
+    throw usageProblem({
+      code: 'module-failed',
+      message: `the module "${path}" could not be run: ${reasonOf(thrown)}`,
+      place: '--statistic',
+      hint: 'it must be a JavaScript module; node runs it, so try it with node first',
+    });
+  }
+  if (exports.default === undefined) {
+    throw usageProblem({
+      code: 'no-default-export',
+      message: `the module "${path}" has no default export`,
+      place: '--statistic',
+      hint: "export default { name: 'mine', sided: 'upper', words: 'my statistic', value: (counts, margins) => ... }",
+    });
+  }
+  return {
+    statistic: exports.default as OwnStatistic,
+    statisticDigest: createHash('sha256').update(bytes).digest('hex'),
+  };
+}
+
+/** Wishes with the statistic loaded, where it is named by a path; else as they are. */
+export async function withOwnStatistic(wishes: PlanOptions): Promise<PlanOptions> {
+  const { statistic } = wishes;
+  if (typeof statistic !== 'string' || !isModulePath(statistic)) return wishes;
+  return { ...wishes, ...(await loadStatistic(statistic)) };
+}
+
+const reasonOf = (thrown: unknown): string =>
+  thrown instanceof Error ? ((thrown as NodeJS.ErrnoException).code ?? thrown.message.split('\n')[0]!) : String(thrown);
