@@ -6,19 +6,19 @@
 //   5. What that says, with its error.                    pvalue
 //   6. How far the usual approximation could be trusted.  table
 import type { ReadTable } from './input/read-table.js';
-import type { Cut, Mass, OrderingName } from './null/contract.js';
+import type { ExactAnswer } from './null/exact/exact-answer.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
 import { orderingFor } from './null/ordering.js';
-import { sampleCuts } from './null/sampled/sample-cuts.js';
-import { makePlan } from './plan/make-plan.js';
-import type { Plan, PlanOptions } from './plan/plan.js';
+import { OutOfReach } from './null/exact/network/network.js';
+import { makePlan, planWithoutExact, type Prepared } from './plan/make-plan.js';
+import type { PlanOptions } from './plan/plan.js';
 import type { PValueEntry } from './pvalue/contract.js';
 import { approximationsOf, asymptoticAlone, asymptoticBeside, degreesOfFreedomOf } from './pvalue/approximations.js';
 import { conditionalPValues, orderingsNeeded, questionsOf } from './pvalue/p-values.js';
 import { buildResult } from './result/build-result.js';
 import { asymptoticNotes, emptyLineNotes, onlyOneTable, statisticNotes, unsettledNotes } from './result/notes.js';
 import type { Result } from './result/result.js';
-import type { BoundStatistic } from './statistic/contract.js';
+import { sampledPValues, type Surroundings } from './sampled-answer.js';
 import { checkExpectations } from './table/expectation-check.js';
 import { liveTable, type LiveTable } from './table/live-table.js';
 import { makeTable, type TableParts } from './table/table.js';
@@ -27,33 +27,40 @@ import { makeTable, type TableParts } from './table/table.js';
  * Decides whether the rows and columns of a table of counts are associated.
  * @param data counts with optional labels, or a table that an input function has read.
  * @param options wishes; every one has a default.
+ * @param surroundings what the run may use of the machine; changes no digit.
  * @returns everything found, in the published shape `keepsum/result/1`.
  * @throws Problem, of kind `data`, `usage` or `effort`, with code, place and hint.
  */
-export async function analyse(data: TableParts | ReadTable, options: PlanOptions = {}): Promise<Result> {
+export async function analyse(
+  data: TableParts | ReadTable,
+  options: PlanOptions = {},
+  surroundings: Surroundings = {},
+): Promise<Result> {
   const read = 'table' in data ? data : fromProgram(data);
   const live = liveTable(read.table);
+  const prepared = makePlan(read.table, live, options);
+  try {
+    return await carryOut(read, live, prepared, options, surroundings);
+  } catch (thrown) {
+    if (!(thrown instanceof OutOfReach)) throw thrown;
+    return carryOut(read, live, planWithoutExact(read.table, live, options, prepared.plan), options, surroundings);
+  }
+}
 
-  const { plan, statistic, bound, named, valueOfOnlyTable } = makePlan(read.table, live, options);
-
+async function carryOut(
+  read: ReadTable,
+  live: LiveTable,
+  { plan, statistic, bound, named, valueOfOnlyTable }: Prepared,
+  options: PlanOptions,
+  surroundings: Surroundings,
+): Promise<Result> {
   const questions = questionsOf(plan);
   const value = bound === null ? valueOfOnlyTable : bound.value(live.counts);
 
   const approximations = bound === null ? [] : approximationsOf(statistic, live, bound, value);
   const asymptotic = asymptoticBeside(questions[0]!, approximations);
-  let found: PValueEntry[];
-  let tables: number | undefined;
-  if (plan.method === 'asymptotic') {
-    found = asymptoticAlone(
-      questions,
-      bound === null ? approximationsOf(statistic, live, null, value ?? 0) : approximations,
-    );
-  } else {
-    const answer = askNull(live, bound, orderingsNeeded(questions), plan);
-    tables = answer.tables;
-    found = await conditionalPValues(questions, answer.cuts, answer.point, plan.samplingConfidence);
-    found.push(...asymptotic);
-  }
+  const { found, tables } = await askNull();
+  if (plan.method !== 'asymptotic') found.push(...asymptotic);
 
   return buildResult({
     read,
@@ -72,6 +79,26 @@ export async function analyse(data: TableParts | ReadTable, options: PlanOptions
       ...(await unsettledNotes(found[0]!, plan)),
     ],
   });
+
+  async function askNull(): Promise<{ found: PValueEntry[]; tables?: number }> {
+    if (plan.method === 'asymptotic') {
+      const known = bound === null ? approximationsOf(statistic, live, null, value ?? 0) : approximations;
+      return { found: asymptoticAlone(questions, known) };
+    }
+    const names = orderingsNeeded(questions);
+    if (bound === null) return fromAnswer(onlyTable(live, names));
+    const orderings = names.map((name) => orderingFor(live, bound, name));
+    if (plan.method === 'exact') {
+      return fromAnswer(exactCuts(live, orderings, plan.forecast.engine, plan.statistic));
+    }
+    const recipe = statistic.own ? null : { parts: partsOf(read), options };
+    return { found: await sampledPValues(questions, live, orderings, plan, recipe, surroundings) };
+  }
+
+  async function fromAnswer({ cuts, point, tables }: ExactAnswer): Promise<{ found: PValueEntry[]; tables?: number }> {
+    const found = await conditionalPValues(questions, cuts, point, plan.samplingConfidence);
+    return tables === undefined ? { found } : { found, tables };
+  }
 }
 
 const fromProgram = (parts: TableParts): ReadTable => ({
@@ -82,18 +109,9 @@ const fromProgram = (parts: TableParts): ReadTable => ({
   notes: [],
 });
 
-interface NullAnswer {
-  readonly cuts: readonly Cut[];
-  readonly point: Mass | null;
-  readonly tables?: number;
-}
-
-function askNull(live: LiveTable, bound: BoundStatistic | null, names: OrderingName[], plan: Plan): NullAnswer {
-  if (bound === null) return onlyTable(live, names);
-  const orderings = names.map((name) => orderingFor(live, bound, name));
-  if (plan.method === 'exact') return exactCuts(live, orderings);
-  return {
-    cuts: sampleCuts(live, orderings, { seed: plan.seed!, tableKey: plan.tableKey, draws: plan.draws! }),
-    point: null,
-  };
-}
+/** What a worker thread needs to make the same table. */
+const partsOf = ({ table: { counts, rowLabels, columnLabels } }: ReadTable): TableParts => ({
+  counts,
+  rowLabels,
+  columnLabels,
+});

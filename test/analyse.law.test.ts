@@ -4,10 +4,19 @@ import { describe, expect, it } from 'vitest';
 import { analyse } from '../src/analyse.js';
 import { exactCuts } from '../src/null/exact/exact-cuts.js';
 import type { OrderingName } from '../src/null/contract.js';
+import { forecastExact } from '../src/null/forecast.js';
 import type { PlanOptions } from '../src/plan/plan.js';
 import { statistics } from '../src/statistic/registry.js';
 import { checked } from './helpers/checked-result.js';
-import { liveFrom, orderingOf, relativeDifference, smallTable, transpose, twoByTwoTable } from './helpers/tables.js';
+import {
+  boundTo,
+  liveFrom,
+  orderingOf,
+  relativeDifference,
+  smallTable,
+  transpose,
+  twoByTwoTable,
+} from './helpers/tables.js';
 
 const bound = 1e-12;
 const exact = async (counts: number[][], options: PlanOptions = {}): Promise<number[]> => {
@@ -95,9 +104,12 @@ for (const { name: statistic, shape, sided, takes } of statistics) {
       fc.assert(
         fc.property(table, (counts) => {
           const live = liveFrom(counts);
+          const { engine } = forecastExact(live, boundTo(live, statistic), statistic);
           const { cuts, point } = exactCuts(
             live,
             names.map((name) => orderingOf(live, statistic, name)),
+            engine,
+            statistic,
           );
           for (const { below, tied, above, atLeast } of cuts) {
             expect(below.value + tied.value + above.value).toBeCloseTo(1, 13);

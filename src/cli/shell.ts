@@ -9,6 +9,7 @@ export interface Shell {
   readonly stdout: Writable;
   readonly stdoutIsTerminal: boolean;
   readonly stderr: Writable;
+  readonly stderrIsTerminal: boolean;
   /** Width of the terminal in characters; 80 where there is none. */
   readonly columns: number;
   readonly environment: Readonly<Record<string, string | undefined>>;
@@ -21,6 +22,7 @@ export function processShell(): Shell {
     stdout: process.stdout,
     stdoutIsTerminal: process.stdout.isTTY === true,
     stderr: process.stderr,
+    stderrIsTerminal: process.stderr.isTTY === true,
     columns: process.stdout.columns || 80,
     environment: process.env,
   };

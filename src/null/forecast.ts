@@ -2,9 +2,15 @@
 import { hasOneTableOnly, type LiveTable } from '../table/live-table.js';
 import type { BoundStatistic } from '../statistic/contract.js';
 import { countTables } from './exact/count-tables.js';
+import { forecastWithinLimits } from './exact/within-limits.js';
 import { forecastLinear } from './exact/linear/linear-forecast.js';
+import { forecastNetwork } from './exact/network/forecast.js';
+
+export type ExactEngine = 'two-by-two' | 'enumeration' | 'linear' | 'network' | 'within-limits';
 
 export interface Forecast {
+  /** The engine that would do the exact work. */
+  readonly engine: ExactEngine;
   readonly workUnits: number;
   readonly tables: number;
   readonly tablesAreCounted: boolean;
@@ -17,22 +23,64 @@ const secondsPerUnit = 3e-8;
 /** Default bound on exact work: about two seconds. */
 export const standardEffort = 6e7;
 
-/** @param bound the statistic at work; some have engines of their own. Left out: what any statistic would take. */
-export function forecastExact(live: LiveTable, bound?: BoundStatistic | null): Forecast {
-  if (hasOneTableOnly(live)) return { workUnits: 0, tables: 1, tablesAreCounted: true, seconds: 0 };
+/** Memory that an exact engine may take; what would take more is out of reach. */
+export const mostMemoryBytes = 1.5e9;
+
+/** The network's units of 12 ns, and its start of about 40 ms, in ours of 30 ns. */
+const perNetworkUnit = 0.4;
+const networkStart = 1.3e6;
+
+/** Statistics that the network knows exact keys for. */
+const networkStatistics = ['pearson', 'likelihood-ratio', 'probability'];
+
+/**
+ * The cheapest engine that answers, and what it would take.
+ * @param bound the statistic at work; some have engines of their own. Left out: what any statistic would take.
+ */
+export function forecastExact(live: LiveTable, bound?: BoundStatistic | null, statistic?: string): Forecast {
+  if (hasOneTableOnly(live)) {
+    return { engine: 'enumeration', workUnits: 0, tables: 1, tablesAreCounted: true, seconds: 0 };
+  }
   const { tables, counted } = countTables(live);
-  // A statistic known by its values alone has every table listed.
-  const anyPlace = bound?.place !== undefined && bound.limits === undefined;
-  const twoByTwo = live.rows === 2 && live.columns === 2 && !anyPlace;
-  const listing = twoByTwo ? Math.min(tables, stepsOfTwoByTwo(live)) : tables * live.rows * live.columns;
-  const linear = bound?.linear === undefined ? Infinity : forecastLinear(live, bound.linear).workUnits;
-  const workUnits = Math.round(Math.min(listing, linear));
+  const { engine, workUnits } = cheapest(live, tables, bound, statistic);
   return {
-    workUnits,
+    engine,
+    workUnits: Math.round(workUnits),
     tables: counted ? tables : Number(tables.toPrecision(3)),
     tablesAreCounted: counted,
     seconds: Number((workUnits * secondsPerUnit).toPrecision(2)),
   };
+}
+
+interface Choice {
+  readonly engine: ExactEngine;
+  readonly workUnits: number;
+}
+
+function cheapest(
+  live: LiveTable,
+  tables: number,
+  bound: BoundStatistic | null | undefined,
+  statistic: string | undefined,
+): Choice {
+  // A statistic known by its values alone has every table listed.
+  const anyPlace = bound?.place !== undefined && bound.limits === undefined;
+  if (live.rows === 2 && live.columns === 2 && !anyPlace) {
+    return { engine: 'two-by-two', workUnits: Math.min(tables, stepsOfTwoByTwo(live)) };
+  }
+  const choices: Choice[] = [{ engine: 'enumeration', workUnits: tables * live.rows * live.columns }];
+  if (bound?.linear !== undefined) {
+    choices.push({ engine: 'linear', workUnits: forecastLinear(live, bound.linear).workUnits });
+  }
+  if (bound?.limits !== undefined) {
+    choices.push({ engine: 'within-limits', workUnits: forecastWithinLimits(live, bound.limits) });
+  }
+  if (bound?.sum !== undefined && statistic !== undefined && networkStatistics.includes(statistic)) {
+    const { workUnits, memoryBytes } = forecastNetwork(live, statistic);
+    const fits = memoryBytes <= mostMemoryBytes;
+    choices.push({ engine: 'network', workUnits: fits ? networkStart + perNetworkUnit * workUnits : Infinity });
+  }
+  return choices.reduce((best, choice) => (choice.workUnits < best.workUnits ? choice : best));
 }
 
 /** The 2x2 law is walked some ten standard deviations to each side, and as far as the observed table lies (39 at most). */

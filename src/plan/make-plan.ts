@@ -1,7 +1,7 @@
 // Raw wishes in, one checked and frozen plan out: every default filled, the method settled, the reason said.
 import { forecastExact, standardEffort } from '../null/forecast.js';
 import { blockSize } from '../null/sampled/limits.js';
-import { usageProblem } from '../problem/problem.js';
+import { effortProblem, usageProblem } from '../problem/problem.js';
 import { generatorName } from '../random/stream.js';
 import type { BoundStatistic, Statistic } from '../statistic/contract.js';
 import { hasOneTableOnly, type LiveTable } from '../table/live-table.js';
@@ -10,10 +10,9 @@ import { chooseStatistic, choicesOf, refuseUnread } from './choices.js';
 import { freshSeed } from './fresh-seed.js';
 import { methods, tails, twoSidedRules, type Plan, type PlanOptions, type Tail, type TwoSidedRule } from './plan.js';
 import { noRoles, rolesOf, type NamedRoles } from './roles.js';
-import { oneOf, positive, share, unused, wholeNumber } from './settings.js';
+import { oneOf, positive, share, unused } from './settings.js';
+import { drawsOf } from './draws.js';
 import { settleMethod } from './settle-method.js';
-
-export const standardDraws = 100_000;
 
 export interface Prepared {
   readonly plan: Plan;
@@ -36,14 +35,10 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
   const bound = hasOneTableOnly(live) ? null : statistic.bind(live, named ?? noRoles, choices);
   const effort = positive(options.effort, standardEffort, '--effort');
   const asked = oneOf(options.method, 'auto', methods, '--method');
-  const forecast = forecastExact(live, bound);
+  const forecast = forecastExact(live, bound, statistic.name);
   const { method, reason } = settleMethod({ asked, statistic, bound, rule, forecast, effort });
-  if (options.draws !== undefined) {
-    wholeNumber(options.draws, 1, 1e12, '--draws');
-    if (asked === 'exact' || asked === 'asymptotic') {
-      throw unused('--draws', `with --method ${asked}`, 'leave it out, or use --method sample');
-    }
-  }
+  const alpha = share(options.alpha, 0.05, '--alpha');
+  const drawing = drawsOf(options, asked, alpha);
   if (options.seed === '') {
     throw usageProblem({
       code: 'empty-seed',
@@ -72,17 +67,37 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     reference: named?.referenceLabel ?? null,
     ...echo,
     fixed: 'both',
-    draws: sampled ? (options.draws ?? standardDraws) : null,
+    ...(sampled ? drawing : { draws: null }),
     seed: sampled ? (options.seed ?? freshSeed()) : null,
     tableKey: '',
     generator: sampled ? generatorName : null,
     blockSize: sampled ? blockSize : null,
     effort,
-    alpha: share(options.alpha, 0.05, '--alpha'),
+    alpha,
     confidence: share(options.confidence, 0.95, '--confidence'),
     samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
   });
   return { plan, statistic, bound, valueOfOnlyTable, named };
+}
+
+/**
+ * The plan where exact work turned out to need more memory than it may have, although its forecast did not say so.
+ * @throws Problem (effort) when exact was asked for.
+ */
+export function planWithoutExact(table: Table, live: LiveTable, options: PlanOptions, first: Plan): Prepared {
+  const { methodAsked } = first;
+  const outgrown = 'exact work outgrew its forecast: more partial sums than memory is allowed for';
+  if (methodAsked === 'exact') {
+    throw effortProblem({
+      code: 'exact-over-memory',
+      message: outgrown,
+      place: '--method exact',
+      hint: 'use --method sample',
+    });
+  }
+  const prepared = makePlan(table, live, { ...options, method: 'sample' });
+  const plan = Object.freeze({ ...prepared.plan, methodAsked, methodReason: outgrown, forecast: first.forecast });
+  return { ...prepared, plan };
 }
 
 function tailOf(statistic: Statistic, options: PlanOptions): { tail: Tail; rule: TwoSidedRule | null } {

@@ -14,7 +14,15 @@ interface Column {
 type ErrorOf<Kind> = Extract<PValue['errors'][number], { kind: Kind }>;
 
 const rounding = (p: PValue): ErrorOf<'rounding'> | undefined => p.errors.find((error) => error.kind === 'rounding');
-const sampling = (p: PValue): ErrorOf<'sampling'> | undefined => p.errors.find((error) => error.kind === 'sampling');
+/** What drawing left unknown, of a fixed number of draws or until settled. */
+const sampling = (p: PValue): ErrorOf<'sampling'> | ErrorOf<'sequential'> | undefined =>
+  p.errors.find((error) => error.kind === 'sampling' || error.kind === 'sequential');
+const sequential = (p: PValue): ErrorOf<'sequential'> | undefined =>
+  p.errors.find((error) => error.kind === 'sequential');
+const levelOf = (error: ReturnType<typeof sampling>): number | undefined =>
+  error?.kind === 'sampling' ? error.confidence : error?.level;
+const standardErrorOf = (error: ReturnType<typeof sampling>): number | null | undefined =>
+  error?.kind === 'sampling' ? error.standardError : undefined;
 const isHeadlineStatistic = (p: PValue, { statistic }: Result): boolean => p.statistic === statistic.name;
 
 /** The published columns, in order; names as in the JSON result. An empty cell says: does not apply, or not known. */
@@ -49,10 +57,16 @@ export const csvColumns: readonly Column[] = [
   { name: 'atLeastLower', words: 'the same in the lower tail, rule doubled', cell: (p) => sampling(p)?.tails?.lower },
   { name: 'draws', words: 'draws made', cell: (p) => sampling(p)?.draws },
   { name: 'estimate', words: 'share of draws at least as extreme', cell: (p) => sampling(p)?.estimate },
-  { name: 'standardError', words: 'of the estimate', cell: (p) => sampling(p)?.standardError },
+  { name: 'standardError', words: 'of the estimate', cell: (p) => standardErrorOf(sampling(p)) },
   { name: 'intervalLower', words: 'interval of the estimate', cell: (p) => sampling(p)?.interval[0] },
   { name: 'intervalUpper', words: 'interval of the estimate', cell: (p) => sampling(p)?.interval[1] },
-  { name: 'intervalConfidence', words: 'its level', cell: (p) => sampling(p)?.confidence },
+  { name: 'intervalConfidence', words: 'its level', cell: (p) => levelOf(sampling(p)) },
+  {
+    name: 'stoppedBecause',
+    words: 'why drawing ended, where it went on until settled',
+    cell: (p) => sequential(p)?.stoppedBecause,
+  },
+  { name: 'risk', words: 'probability that the interval errs at any look, in p', cell: (p) => sequential(p)?.risk },
   { name: 'groups', words: 'rows or columns, for two groups', cell: (_, { plan }) => plan.groups },
   { name: 'event', words: 'the event whose proportions are compared', cell: (_, { statistic }) => statistic.event },
   { name: 'first', words: 'the first group', cell: (_, { statistic }) => statistic.groups?.[0].label },

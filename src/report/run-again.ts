@@ -96,8 +96,12 @@ const planOptions = ({ plan }: Result): Option[] => [
   ...optional('lambda', plan.lambda),
   ...optional('method', plan.method),
   ...optional('draws', plan.draws),
+  ...optional('most-draws', plan.mostDraws),
+  ...optional('sampling-risk', plan.samplingRisk),
+  ...optional('relative-error', plan.relativeError),
+  ...optional('alpha', plan.draws === 'auto' ? plan.alpha : null),
   ...optional('seed', plan.seed),
-  ...optional('sampling-confidence', plan.draws === null ? null : plan.samplingConfidence),
+  ...optional('sampling-confidence', typeof plan.draws === 'number' ? plan.samplingConfidence : null),
 ];
 
 /** An option with its value; a value that looks like an option is joined by an equals sign. */
@@ -121,7 +125,7 @@ export function againSentences({ input, plan, tool }: Result): string[] {
     plan.draws === null || plan.seed === null
       ? []
       : [
-          `${countWords(plan.draws)} draws, seed ${quoted(plan.seed)}, generator ${plan.generator ?? 'unnamed'}` +
+          `${plan.draws === 'auto' ? 'Draws until settled' : `${countWords(plan.draws)} draws`}, seed ${quoted(plan.seed)}, generator ${plan.generator ?? 'unnamed'}` +
             `${plan.blockSize === null ? '' : ` in blocks of ${countWords(plan.blockSize)}`}: the same seed gives the same digits on any machine.`,
         ];
   const bytes = input.sha256 === null ? [] : [`The bytes read have the SHA-256 ${input.sha256}.`];

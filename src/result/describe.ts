@@ -28,6 +28,14 @@ export function citedStatistic(name: string): string {
   return words.endsWith(')') ? `${words.slice(0, -1)}; ${source})` : `${words} (${source})`;
 }
 
+export type SequentialError = Extract<PValueError, { kind: 'sequential' }>;
+
+/** What drawing, of a fixed number or until settled, left unknown. */
+export const drawingErrorOf = (p: PValue): SamplingError | SequentialError | undefined =>
+  p.errors.find(
+    (error): error is SamplingError | SequentialError => error.kind === 'sampling' || error.kind === 'sequential',
+  );
+
 export const samplingErrorOf = (p: PValue): SamplingError | undefined =>
   p.errors.find((error): error is SamplingError => error.kind === 'sampling');
 
@@ -42,23 +50,21 @@ export function pName(p: PValue): string {
 /** The number itself, no further than its error allows. */
 export function pNumber(p: PValue): string {
   if (p.p === null) return p.log10P === null ? 'unknown' : tinyWords(p.log10P);
-  const sampling = samplingErrorOf(p);
-  return sampling === undefined ? probabilityWords(p.p) : roundedTo(sampling.standardError ?? p.p, p.p);
+  const drawn = drawingErrorOf(p);
+  return drawn === undefined ? probabilityWords(p.p) : roundedTo(spreadOf(drawn) ?? p.p, p.p);
 }
 
 /** A probability that goes with a p (strict, mid), shown to the same error. */
 export function besideP(p: PValue, value: number): string {
-  const sampling = samplingErrorOf(p);
-  return sampling === undefined
-    ? probabilityWords(value)
-    : roundedTo(sampling.standardError ?? sampling.interval[1], value);
+  const drawn = drawingErrorOf(p);
+  return drawn === undefined ? probabilityWords(value) : roundedTo(spreadOf(drawn) ?? drawn.interval[1], value);
 }
 
 /** How the p was found, as the end of a clause: "exact", "from 100,000 random tables ...". */
 export function foundWords(p: PValue, seed: string | null): string {
   if (p.method === 'exact') return 'exact';
   if (p.method === 'sample') {
-    const draws = samplingErrorOf(p)?.draws;
+    const draws = drawingErrorOf(p)?.draws;
     const many = draws === undefined ? 'random tables' : `${countWords(draws)} random tables`;
     return `sampled from ${many} with the same margins${seed === null ? '' : ` (seed ${quoted(seed)})`}`;
   }
@@ -69,16 +75,27 @@ export const approximationName = (p: PValue): string => (p.degreesOfFreedom === 
 
 /** What is known of the error of a p, as an aside: empty for an exact one. */
 export function errorAside(p: PValue): string {
-  const sampling = samplingErrorOf(p);
-  if (sampling === undefined) return p.method === 'asymptotic' ? ' (error unknown)' : '';
-  const { standardError } = sampling;
-  return ` (${standardError === null ? '' : `standard error ${standardErrorWords(standardError)}, `}${intervalWords(sampling)})`;
+  const drawn = drawingErrorOf(p);
+  if (drawn === undefined) return p.method === 'asymptotic' ? ' (error unknown)' : '';
+  if (drawn.kind === 'sequential') return ` (${limitsWords(drawn)} at every look)`;
+  const { standardError } = drawn;
+  return ` (${standardError === null ? '' : `standard error ${standardErrorWords(standardError)}, `}${intervalWords(drawn)})`;
 }
 
 const standardErrorWords = (error: number): string => digits(error, 2);
 
 const intervalWords = ({ confidence, interval: [lower, upper] }: SamplingError): string =>
   `${levelWords(confidence)} interval ${probabilityWords(lower)} to ${probabilityWords(upper)}`;
+
+const limitsWords = ({ level, interval: [lower, upper] }: SequentialError): string =>
+  `${levelWords(level)} limits ${probabilityWords(lower)} to ${probabilityWords(upper)}`;
+
+/** A standard error, or for limits a quarter of their distance; undefined where draws saw no spread. */
+function spreadOf(error: SamplingError | SequentialError): number | undefined {
+  if (error.kind === 'sampling') return error.standardError ?? undefined;
+  const [lower, upper] = error.interval;
+  return error.atLeast === 0 ? undefined : (upper - lower) / 4;
+}
 
 export const degreesWords = (degrees: number): string => `${degrees} degree${degrees === 1 ? '' : 's'} of freedom`;
 
@@ -137,13 +154,35 @@ function samplingSentence(p: PValue, error: SamplingError): string {
   return `Its error is that of drawing: ${seen}; ${ending}${limit} (Phipson & Smyth 2010).`;
 }
 
-function sequentialSentence(error: Extract<PValueError, { kind: 'sequential' }>): string {
+function sequentialSentence(error: SequentialError): string {
   const { atLeast, draws, interval, risk } = error;
   return (
     `Its error is that of drawing under a stopping rule: ${howMany(error)} of ${countWords(draws)} random tables ` +
     `${atLeast > 1 ? 'were' : 'was'} at least as extreme; p is the upper end of ${probabilityWords(interval[0])} to ` +
-    `${probabilityWords(interval[1])} plus ${probabilityWords(risk)}, the risk that these limits err at any look (Robbins 1970).`
+    `${probabilityWords(interval[1])} plus ${probabilityWords(risk)}, the risk that these limits err at any look ` +
+    `(Robbins 1970). ${stopWords(error)}`
   );
+}
+
+/** Why drawing ended, and what more would take. */
+function stopWords({ stoppedBecause, drawsToSettle }: SequentialError): string {
+  switch (stoppedBecause) {
+    case 'settled-below':
+      return 'Drawing ended because p is settled at or below the level it is compared with.';
+    case 'settled-above':
+      return 'Drawing ended because p is settled above the level it is compared with.';
+    case 'precise-enough':
+      return `Drawing ended because p is known as precisely as asked for${moreWords(drawsToSettle)}.`;
+    case 'limit':
+      return `Drawing ended at the most draws allowed${moreWords(drawsToSettle)}.`;
+  }
+}
+
+function moreWords(drawsToSettle: number | null): string {
+  if (drawsToSettle === 0) return '';
+  return drawsToSettle === null
+    ? '; p lies so near the level that no number of draws would settle its side'
+    : `; about ${countWords(drawsToSettle)} more draws would settle its side of the level`;
 }
 
 const howMany = ({ atLeast, draws }: { atLeast: number; draws: number }): string =>

@@ -5,6 +5,7 @@ import {
   citedStatistic,
   isOneTableOnly,
   pName,
+  drawingErrorOf,
   samplingErrorOf,
   shortStatisticWords,
   tableWords,
@@ -64,7 +65,7 @@ function methodSentence(result: ResultBeforeWords, p: PValue): string {
 
 function samplingWords({ plan }: ResultBeforeWords, p: PValue): string {
   const error = samplingErrorOf(p);
-  const draws = countWords(error?.draws ?? plan.draws ?? 0);
+  const draws = countWords(drawingErrorOf(p)?.draws ?? 0);
   const generator = plan.generator === null ? '' : `; generator ${plan.generator}`;
   const seed = plan.seed === null ? '' : `, seed ${quoted(plan.seed)}`;
   const [more, reported, share] =
@@ -75,6 +76,14 @@ function samplingWords({ plan }: ResultBeforeWords, p: PValue): string {
     error === undefined
       ? ''
       : `, with a ${levelWords(error.confidence)} interval for ${share} (Clopper & Pearson 1934)`;
+  if (plan.draws === 'auto') {
+    return (
+      `was estimated from ${draws} random tables with both margins held, drawn by dealing out labels or cell by cell ` +
+      `(Patefield 1981), whichever costs less for these margins${generator}${seed}. Drawing went on in whole blocks until p was ` +
+      `settled against ${plan.alpha}, by limits that hold at every look at once, from a mixture of beta-binomial laws (Darling & ` +
+      `Robbins 1967; Robbins 1970; Howard et al. 2021); p is their upper limit plus the risk ${plan.samplingRisk ?? ''} that they ever err.`
+    );
+  }
   return (
     `was estimated from m = ${draws} random tables with both margins held, drawn by dealing out labels or cell by cell ` +
     `(Patefield 1981), whichever costs less for these margins${generator}${seed}. ` +

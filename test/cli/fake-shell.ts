@@ -21,6 +21,7 @@ export function fakeShell(changes: Partial<Shell> & { input?: string } = {}): Fa
     stdinIsTerminal: () => input === undefined,
     stdout: keep('out'),
     stdoutIsTerminal: false,
+    stderrIsTerminal: false,
     stderr: keep('err'),
     columns: 80,
     environment: {},

@@ -46,7 +46,7 @@ export function beforeWords(parts: SampleParts): ResultBeforeWords {
       method: 'exact',
       methodAsked: 'auto',
       methodReason: '10 tables have these margins; exact work is forecast at 10 units',
-      forecast: { workUnits: 10, tables: 10, tablesAreCounted: true, seconds: 0 },
+      forecast: { engine: 'enumeration', workUnits: 10, tables: 10, tablesAreCounted: true, seconds: 0 },
       groups: null,
       event: null,
       reference: null,
@@ -254,7 +254,7 @@ export const probabilityExact = sample({
   },
   plan: {
     methodReason: '2,747,230 tables have these margins; exact work is forecast at 96,153,050 units',
-    forecast: { workUnits: 96_153_050, tables: 2_747_230, tablesAreCounted: true, seconds: 1.4 },
+    forecast: { engine: 'enumeration', workUnits: 96_153_050, tables: 2_747_230, tablesAreCounted: true, seconds: 1.4 },
   },
   statistic: { name: 'probability', value: 17.273877711426568 },
   pValues: [
@@ -464,7 +464,7 @@ export const wideTable = sample({
     ...sampled,
     draws: 20_000,
     seed: 'shop',
-    forecast: { workUnits: 4e39, tables: 7e37, tablesAreCounted: false, seconds: 5e31 },
+    forecast: { engine: 'enumeration', workUnits: 4e39, tables: 7e37, tablesAreCounted: false, seconds: 5e31 },
   },
   statistic: { name: 'pearson', value: 40.04123063017694, degreesOfFreedom: 39 },
   pValues: [

@@ -3,13 +3,17 @@ import fc from 'fast-check';
 import type { Ordering, OrderingName } from '../../src/null/contract.js';
 import { orderingFor } from '../../src/null/ordering.js';
 import { statisticNamed } from '../../src/statistic/registry.js';
-import type { Roles } from '../../src/statistic/contract.js';
+import type { BoundStatistic, Roles } from '../../src/statistic/contract.js';
 import { liveTable, type LiveTable } from '../../src/table/live-table.js';
 import { makeTable } from '../../src/table/table.js';
 
 export const rowsFirst: Roles = { groups: 'rows', event: 0, first: 0 };
 
 export const liveFrom = (counts: number[][]): LiveTable => liveTable(makeTable({ counts }));
+
+/** The statistic bound to a table, rows as groups. */
+export const boundTo = (live: LiveTable, statistic: string): BoundStatistic =>
+  statisticNamed(statistic).bind(live, rowsFirst);
 
 export function orderingOf(live: LiveTable, statistic: string, name: OrderingName, roles = rowsFirst): Ordering {
   return orderingFor(live, statisticNamed(statistic).bind(live, roles), name);

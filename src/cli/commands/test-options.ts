@@ -1,17 +1,23 @@
 // The options of `keepsum test`, in the order of its help.
-import { anyText, betweenZeroAndOne, oneOf, wholeNumber } from '../arguments/check-value.js';
+import { anyText, betweenZeroAndOne, oneOf, wholeNumber, type CheckValue } from '../arguments/check-value.js';
 import { toggle, valued } from '../arguments/option.js';
 import { standardEffort } from '../../null/forecast.js';
-import { standardDraws } from '../../plan/make-plan.js';
+import { standardMostDraws, standardRelativeError } from '../../plan/draws.js';
 import { methods, tails, twoSidedRules } from '../../plan/plan.js';
 import { formatNames } from '../../report/formats.js';
 import { statisticNamed, statisticNames } from '../../statistic/registry.js';
+import { isModulePath } from './load-statistic.js';
 import { debugOption, helpOption, outputOption } from './shared-options.js';
 
 const delimiters = ['comma', 'semicolon', 'tab', 'pipe'] as const;
 const answers = ['yes', 'no', 'detect'] as const;
 const missingRules = ['fail', 'drop', 'level'] as const;
 const sides = ['rows', 'columns'] as const;
+
+const orAuto =
+  (check: CheckValue<number>): CheckValue<number | 'auto'> =>
+  (text, flag) =>
+    text === 'auto' ? 'auto' : check(text, flag);
 
 const either = (names: readonly string[]): string => names.join(', ');
 
@@ -62,7 +68,12 @@ export const reading = {
 };
 
 export const planning = {
-  statistic: valued('The test', 'NAME', (text) => statisticNamed(text).name, `${either(statisticNames)} (pearson)`),
+  statistic: valued(
+    'The test',
+    'NAME',
+    (text) => (isModulePath(text) ? text : statisticNamed(text).name),
+    `${either(statisticNames)} (pearson), or one of your own: ./mine.mjs`,
+  ),
   tail: valued('The test', 'TAIL', oneOf(tails), `${either(tails)} (upper; for wald, score and trend both)`),
   twoSidedRule: valued('The test', 'RULE', oneOf(twoSidedRules), `for both tails: ${either(twoSidedRules)} (distance)`),
   groups: valued('The test', 'SIDE', oneOf(sides), `for wald and score, what is compared: ${either(sides)} (rows)`),
@@ -82,7 +93,30 @@ export const planning = {
     oneOf(methods),
     `${either(methods)} (auto: exact where that is cheap, else sample)`,
   ),
-  draws: valued('How p is found', 'N', wholeNumber(1, 1e12, '100000'), `random tables to draw (${standardDraws})`),
+  draws: valued(
+    'How p is found',
+    'N',
+    orAuto(wholeNumber(1, 1e12, '100000')),
+    'random tables to draw, or auto: until p is settled against --alpha (auto)',
+  ),
+  mostDraws: valued(
+    'How p is found',
+    'N',
+    wholeNumber(1000, 1e12, '1e7'),
+    `with auto, never more than these (${standardMostDraws.toExponential().replace('e+', 'e')})`,
+  ),
+  relativeError: valued(
+    'How p is found',
+    'SHARE',
+    betweenZeroAndOne('0.02'),
+    `with auto, enough when p is known this well (${standardRelativeError})`,
+  ),
+  samplingRisk: valued(
+    'How p is found',
+    'RISK',
+    betweenZeroAndOne('0.0001'),
+    'with auto, probability that an interval ever errs (alpha / 500)',
+  ),
   seed: valued('How p is found', 'TEXT', anyText, 'makes the draws repeatable (one is made and shown)'),
   effort: valued(
     'How p is found',
@@ -112,6 +146,13 @@ const reporting = {
   ),
   color: toggle('The report', 'coloured text even where it goes to a file or a pipe'),
   noColor: toggle('The report', 'no coloured text'),
+  threads: valued(
+    'How p is found',
+    'N',
+    wholeNumber(1, 256, '2'),
+    'threads for long sampling; the digits are the same (all)',
+  ),
+  noProgress: toggle('The report', 'no line on standard error that says how far a long run is'),
   quiet: toggle('The report', 'no remarks on standard error', 'q'),
 };
 

@@ -3,10 +3,10 @@ import { analyse } from '../../analyse.js';
 import { render } from '../../report/formats.js';
 import type { PlanOptions } from '../../plan/plan.js';
 import { usageProblem } from '../../problem/problem.js';
-import { countWords } from '../../result/number-words.js';
 import type { Result } from '../../result/result.js';
 import type { Values } from '../arguments/option.js';
 import type { Shell } from '../shell.js';
+import { withProgress } from '../streams/progress.js';
 import { remark } from '../streams/write-out.js';
 import { chooseSource } from './choose-source.js';
 import { command } from './command-file.js';
@@ -40,7 +40,9 @@ export const testCommand = command({
     if (source === undefined) return nothingNamed(shell);
     const destination = await destinationFor(values.output, shell, source.form === 'inline' ? null : source.path);
     const table = await readSource(source, values, shell);
-    const result = await analyse(table, planOptions(values));
+    const result = await withProgress(values, shell, (surroundings) =>
+      analyse(table, planOptions(values), surroundings),
+    );
     const format = values.format ?? 'text';
     const report = render(result, format, await lookFor(values, shell));
     if (!values.quiet) await remarkOnSampling(result, shell);
@@ -60,7 +62,7 @@ function planOptions(values: TestValues): PlanOptions {
 /** A method that was picked for the user is never a silent matter. */
 async function remarkOnSampling({ plan }: Result, shell: Shell): Promise<void> {
   if (plan.methodAsked !== 'auto' || plan.method !== 'sample') return;
-  await remark(shell.stderr, `note: p is sampled, ${countWords(plan.draws!)} draws: ${plan.methodReason}\n`);
+  await remark(shell.stderr, `note: p is sampled: ${plan.methodReason}\n`);
 }
 
 function checkCombinations(values: TestValues): void {

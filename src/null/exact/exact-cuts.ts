@@ -4,22 +4,31 @@ import type { Ordering, OrderingName } from '../contract.js';
 import { exactByEnumeration } from './enumerate.js';
 import type { ExactAnswer } from './exact-answer.js';
 import { exactLinear } from './linear/exact-linear.js';
-import { linearIsCheaper } from './linear/linear-forecast.js';
+import type { ExactEngine } from '../forecast.js';
+import { exactCut } from './network/exact-cut.js';
 import { pointMass } from './point-mass.js';
+import { exactWithinLimits } from './within-limits.js';
 import { exactTwoByTwo } from './two-by-two.js';
 
-/** At least two live rows and columns. */
-export function exactCuts(live: LiveTable, orderings: readonly Ordering[]): ExactAnswer {
-  const linear = orderings[0]?.linear;
-  if (
-    linear !== undefined &&
-    orderings.every((ordering) => ordering.linear === linear) &&
-    linearIsCheaper(live, linear)
-  ) {
-    return { cuts: exactLinear(live, orderings), point: pointMass(live) };
+/** At least two live rows and columns. `statistic` is the name of the one that the orderings came from. */
+export function exactCuts(
+  live: LiveTable,
+  orderings: readonly Ordering[],
+  engine: ExactEngine,
+  statistic: string,
+): ExactAnswer {
+  switch (engine) {
+    case 'two-by-two':
+      return exactTwoByTwo(live, orderings);
+    case 'linear':
+      return { cuts: exactLinear(live, orderings), point: pointMass(live) };
+    case 'network':
+      return { cuts: orderings.map((ordering) => exactCut(live, ordering, statistic)), point: pointMass(live) };
+    case 'within-limits':
+      return { cuts: exactWithinLimits(live, orderings), point: pointMass(live) };
+    case 'enumeration':
+      return exactByEnumeration(live, orderings);
   }
-  const twoByTwo = live.rows === 2 && live.columns === 2 && orderings.every(({ arbitrary }) => arbitrary !== true);
-  return twoByTwo ? exactTwoByTwo(live, orderings) : exactByEnumeration(live, orderings);
 }
 
 /** The answer where the margins leave one table only: it ties with itself, and p = 1 on every ordering. */

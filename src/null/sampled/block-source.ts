@@ -51,13 +51,18 @@ export interface Block {
   readonly draws: number;
 }
 
-/** All blocks of a sampling, in order; whoever has seen enough just stops reading. */
-export async function* blocksInOrder(source: BlockSource, sampling: Sampling): AsyncGenerator<Block> {
-  const last = blocksFor(sampling.draws);
+/** The blocks from `begin` to before `last`, in order; whoever has seen enough just stops reading. */
+export async function* blocksInOrder(
+  source: BlockSource,
+  sampling: Sampling,
+  begin = 0,
+  last = blocksFor(sampling.draws),
+): AsyncGenerator<Block> {
+  if (begin >= last) return;
   const ask = (first: number): ReturnType<BlockSource['tallies']> =>
     source.tallies(first, Math.min(last, first + source.stride));
-  let next = ask(0);
-  for (let first = 0; first < last; first += source.stride) {
+  let next = ask(begin);
+  for (let first = begin; first < last; first += source.stride) {
     const tallies = await next;
     if (source.ahead && first + source.stride < last) next = ask(first + source.stride);
     for (let k = 0; k < tallies.length; k++) {

@@ -1,0 +1,120 @@
+// From blocks of draws to p-values: all of a fixed number, or block after block until the verdict is settled. On one thread
+// while the work is short, on several once it is long; the digits are the same.
+import { availableParallelism } from 'node:os';
+import type { Ordering, OrderingName, SampledCut } from './null/contract.js';
+import {
+  blockMilliseconds,
+  blocksInOrder,
+  localSource,
+  type Block,
+  type BlockSource,
+} from './null/sampled/block-source.js';
+import { blocksFor, type Sampling } from './null/sampled/sample-cuts.js';
+import type { Plan } from './plan/plan.js';
+import type { PValueEntry, Question } from './pvalue/contract.js';
+import { conditionalPValues } from './pvalue/p-values.js';
+import { followQuestions } from './pvalue/sequential/follow-questions.js';
+import type { SamplingRecipe } from './sampling-worker.js';
+import { canUseThreads, threadedSource } from './threaded-source.js';
+import type { LiveTable } from './table/live-table.js';
+
+/** What a run may use of the machine, and whom it tells how far it is; none of it changes a digit. */
+export interface Surroundings {
+  /** Worker threads for long sampling, from 1; default: as many as the machine runs at once. */
+  readonly threads?: number;
+  /** Told now and then how many draws are made, and the most that will be. */
+  readonly onProgress?: (draws: number, most: number) => void;
+}
+
+/** Work worth the start of threads, and what is done on one thread before they are thought of. */
+const longMilliseconds = 300;
+const shortMilliseconds = 150;
+
+export async function sampledPValues(
+  questions: readonly Question[],
+  live: LiveTable,
+  orderings: readonly Ordering[],
+  plan: Plan,
+  recipe: Pick<SamplingRecipe, 'parts' | 'options'> | null,
+  surroundings: Surroundings,
+): Promise<PValueEntry[]> {
+  const most = plan.draws === 'auto' ? plan.mostDraws! : plan.draws!;
+  const sampling: Sampling = { seed: plan.seed!, tableKey: plan.tableKey, draws: most };
+  const names = orderings.map(({ name }) => name);
+  const counted = new Counted(names);
+  const sources = sourcesFor(live, orderings, sampling, recipe, surroundings, plan.draws === 'auto');
+  const follower = plan.draws === 'auto' ? followQuestions(questions, plan) : null;
+  for await (const block of inTurn(sources, sampling)) {
+    counted.add(block);
+    surroundings.onProgress?.(counted.draws, most);
+    if (follower?.settles((name) => atLeast(block, names.indexOf(name)), block.draws)) break;
+  }
+  const cuts = counted.cuts();
+  return follower === null
+    ? conditionalPValues(questions, cuts, null, plan.samplingConfidence)
+    : follower.pValues((name) => cuts.find(({ ordering }) => ordering === name)!);
+}
+
+const atLeast = ({ tallies }: Block, ordering: number): number => tallies[ordering]![1] + tallies[ordering]![2];
+
+class Counted {
+  draws = 0;
+  private readonly sums: [number, number, number][];
+
+  constructor(private readonly names: readonly OrderingName[]) {
+    this.sums = names.map(() => [0, 0, 0]);
+  }
+
+  add({ tallies, draws }: Block): void {
+    this.draws += draws;
+    tallies.forEach((tally, o) => tally.forEach((count, side) => (this.sums[o]![side]! += count)));
+  }
+
+  cuts(): SampledCut[] {
+    return this.names.map((ordering, o) => {
+      const [below, tied, above] = this.sums[o]!;
+      return { kind: 'sampled', ordering, below, tied, above, draws: this.draws };
+    });
+  }
+}
+
+interface Stretch {
+  readonly begin: number;
+  readonly end: number;
+  readonly open: () => Promise<BlockSource>;
+}
+
+/** Which blocks come from where. A run that may end early starts on this thread. */
+function sourcesFor(
+  live: LiveTable,
+  orderings: readonly Ordering[],
+  sampling: Sampling,
+  recipe: Pick<SamplingRecipe, 'parts' | 'options'> | null,
+  surroundings: Surroundings,
+  mayEndEarly: boolean,
+): Stretch[] {
+  const blocks = blocksFor(sampling.draws);
+  const each = blockMilliseconds(live);
+  const threads = surroundings.threads ?? availableParallelism();
+  const local = (begin: number, end: number): Stretch => ({
+    begin,
+    end,
+    open: () => Promise.resolve(localSource(live, orderings, sampling)),
+  });
+  if (recipe === null || threads < 2 || !canUseThreads || blocks * each < longMilliseconds) return [local(0, blocks)];
+  const first = mayEndEarly ? Math.min(blocks, Math.ceil(shortMilliseconds / each)) : 0;
+  const whole: SamplingRecipe = { ...recipe, orderings: orderings.map(({ name }) => name), sampling };
+  return [local(0, first), { begin: first, end: blocks, open: () => threadedSource(whole, live, threads) }];
+}
+
+async function* inTurn(stretches: readonly Stretch[], sampling: Sampling): AsyncGenerator<Block> {
+  for (const { begin, end, open } of stretches) {
+    if (begin >= end) continue;
+    const source = await open();
+    try {
+      yield* blocksInOrder(source, sampling, begin, end);
+    } finally {
+      await source.close();
+    }
+  }
+}
