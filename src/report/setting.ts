@@ -64,6 +64,12 @@ const lackingWords = (what: string, records: number): string[] =>
 export function methodSentences({ plan }: Result): string[] {
   const picked = plan.methodAsked === plan.method ? '' : `picked by ${plan.methodAsked}: `;
   return [
+    ...(plan.rowScores === undefined ? [] : [`Row scores: ${plan.rowScores.join(', ')}.`]),
+    ...(plan.columnScores === undefined ? [] : [`Column scores: ${plan.columnScores.join(', ')}.`]),
+    ...(plan.lambda === undefined ? [] : [`Lambda: ${plan.lambda}.`]),
+    ...(plan.statisticDigest === undefined
+      ? []
+      : [`The module of the statistic has the SHA-256 ${plan.statisticDigest}.`]),
     ...(plan.method === 'asymptotic' ? [] : ['Chance deals the counts anew with every row and column total held.']),
     `Method: ${plan.method}, ${picked}${plan.methodReason.replace(/\.$/, '')}.`,
   ];

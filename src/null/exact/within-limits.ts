@@ -34,12 +34,14 @@ function shapeOf(live: LiveTable): Shape {
 }
 
 const mostUnits = 2 ** 20;
+/** What the first steps of a program cost before it is warm: some 10 ms. */
+const start = 3e5;
 
 /** Work in the units of forecast.ts, from how many partial tables the limits leave room for; Infinity where it does not apply. */
 export function forecastWithinLimits(live: LiveTable, limits: CellLimits): number {
   const { rows, columns, cell } = shapeOf(live);
   if (live.total > mostUnits || codesOf(rows.map((total) => ({ score: 0, total }))) > mostCodes) return Infinity;
-  let work = live.total;
+  let work = start + live.total;
   let nodes = 1;
   const room = rows.map(() => 1);
   columns.forEach((column, j) => {
@@ -47,7 +49,7 @@ export function forecastWithinLimits(live: LiveTable, limits: CellLimits): numbe
       const width = limits.highest[cell(i, j)]! - limits.lowest[cell(i, j)]! + 1;
       const possible = Math.min(row, column) + 1;
       const free = i < rows.length - 1 && j < columns.length - 1;
-      work += nodes * (free ? possible + 3 * width : 4);
+      work += nodes * (free ? 2 * possible + 6 * width : 8);
       room[i] = Math.min(row + 1, room[i]! + width - 1);
       // At a column's end the last row follows from the others.
       const places = room.reduce((all, x, h) => (h === rows.length - 1 ? all : all * x), 1);

@@ -58,7 +58,7 @@ describe('exact cuts of max-residual equal those of the oracle', () => {
     ]);
     const bound = maxResidual.bind(live, rowsFirst);
     expect(bound.value(live.counts)).toBeCloseTo(1.5936381457791915, 12);
-    expect(forecastWithinLimits(live, bound.limits!)).toBeLessThan(2e7);
+    expect(forecastWithinLimits(live, bound.limits!)).toBeLessThan(5e7);
     const [cut] = exactWithinLimits(live, [orderingOf(live, 'max-residual', 'upper')]);
     expect(cut!.below.value + cut!.atLeast.value).toBeCloseTo(1, 13);
     expect(cut!.atLeast.value).toBeGreaterThan(0.5);

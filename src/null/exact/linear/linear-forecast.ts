@@ -16,13 +16,15 @@ export interface LinearForecast {
 const perDenseValue = 0.06;
 const perSparseValue = 3;
 const perMove = 7;
+/** What the first steps of a program cost before it is warm: some 10 ms. */
+const start = 3e5;
 /** Values of two stages are held at once: 2^25 of them take 256 MB. */
 const mostValues = 2 ** 25;
 const mostUnits = 2 ** 20;
 
 export function forecastLinear(live: LiveTable, form: LinearForm): LinearForecast {
   const sides = scoredSides(live, form);
-  if (sides.rows.length === 1 || sides.columns.length === 2) return { workUnits: 1000, sparse: false };
+  if (sides.rows.length === 1 || sides.columns.length === 2) return { workUnits: start, sparse: false };
   if (sides.total > mostUnits || codesOf(sides.rows) > mostCodes) return { workUnits: Infinity, sparse: false };
   const { mean, deviation } = moments(live, form);
   // Values are kept down to e^-50 of the foreseen p, whose logarithm is about -z^2 / 2.
@@ -36,12 +38,13 @@ export function forecastLinear(live: LiveTable, form: LinearForm): LinearForecas
       [dense, stage.range],
       [sparse, Math.min(stage.range, stage.distinct)],
     ] as const) {
-      kind.values += stage.moves * size;
+      // Each move adds its node's values; each new node's are set to nothing, trimmed and added up.
+      kind.values += stage.moves * size + 3 * stage.nodes * (kind === dense ? stage.nextRange : 1);
       kind.peak = Math.max(kind.peak, stage.nodes * size);
     }
   }
   const work = (values: { values: number; peak: number }, each: number): number =>
-    values.peak > mostValues ? Infinity : Math.round(moves * perMove + values.values * each + sides.total);
+    values.peak > mostValues ? Infinity : Math.round(moves * perMove + values.values * each + sides.total + start);
   const [denseWork, sparseWork] = [work(dense, perDenseValue), work(sparse, perSparseValue)];
   return { workUnits: Math.min(denseWork, sparseWork), sparse: sparseWork < denseWork };
 }
@@ -54,6 +57,8 @@ interface Stage {
   readonly nodes: number;
   /** Values between the ends of a node's law before the stage, and how many partial tables it may hold. */
   readonly range: number;
+  /** The same after the stage. */
+  readonly nextRange: number;
   readonly distinct: number;
 }
 
@@ -65,6 +70,7 @@ function* stagesOf({ rows, columns, total }: ScoredSides, reach: number): Genera
     const column = columns[j]!;
     const after = before + column.total;
     const range = rangeOfSum(rows, columns.slice(0, j), before, total, reach);
+    const nextRange = rangeOfSum(rows, columns.slice(0, j + 1), after, total, reach);
     for (let i = 0; i < rows.length - 1; i++) {
       // The last column is forced, else a cell varies as a hypergeometric count.
       const ways = j === columns.length - 1 ? 1 : spread(rows[i]!.total, column.total, total, reach);
@@ -78,7 +84,7 @@ function* stagesOf({ rows, columns, total }: ScoredSides, reach: number): Genera
       });
       if (i < rows.length - 2) places *= Math.min(ways, spread(rows[i + 1]!.total, column.total, total, reach));
       const next = Math.min(moves, places, tables);
-      yield { moves, nodes: next, range, distinct: Math.max(1, tables / ways / nodes) };
+      yield { moves, nodes: next, range, nextRange, distinct: Math.max(1, tables / ways / nodes) };
       nodes = next;
     }
     before = after;
