@@ -28,6 +28,8 @@ export interface NetworkOptions {
   readonly entryLimit?: number;
   /** Force or forbid lists shared by all arrangements of the rows. */
   readonly allAlike?: boolean;
+  /** Add up both sides and take neither from the whole: a check of the weights, at twice the work. */
+  readonly sumBothSides?: boolean;
 }
 
 /** Share below which a side is added up itself instead of being taken from the whole (which would cost its digits). */
@@ -90,7 +92,7 @@ export function exactCut(
   const rest = 1 - summed.over(whole).value - tied.over(whole).value;
   let other = new WideSum();
   let error = errorBound(table, leftOut, logObserved);
-  if (rest >= smallestDifference) {
+  if (rest >= smallestDifference && options.sumBothSides !== true) {
     other.add(weights.whole.mantissa * rest, weights.whole.exponent);
     error /= rest;
   } else other = run(side === 'low' ? 'high' : 'low').summed;

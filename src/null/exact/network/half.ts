@@ -1,7 +1,8 @@
 // Builds the lists of one half, column after column: each node's list is pulled together from the lists it can come from,
 // cut to the values that are still undecided, sorted and merged.
 import { Level, type SummedSide } from './level.js';
-import { OutOfReach, type Network } from './network.js';
+import type { Network } from './network.js';
+import { OutOfReach } from './out-of-reach.js';
 import type { SortedList } from './sorted-list.js';
 import { SourceRanges } from './source-ranges.js';
 import type { Transitions } from './transitions.js';

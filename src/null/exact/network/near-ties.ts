@@ -155,21 +155,23 @@ function holds(level: Level, node: number, value: number): boolean {
   return low < level.starts[node + 1]! && level.values[low] === value;
 }
 
-/** Exponents of the primes side by side in one integer, 48 bits apart; null when the statistic has no such key. */
+/** Up to here exponents of primes make short keys; beyond, the multiset of counts stands in (equal multisets tie). */
+const largestFactored = 120;
+const largestKeyed = 5000;
+
+/** A key that adds up over cells and is equal only for tables that tie; null when the statistic or the counts have none. */
 function exactKey(network: Network, statistic: string): ((count: number) => bigint) | null {
   const rule = exponentRule(statistic);
   if (rule === null) return null;
   const { rowTotals, columnTotals } = network.table;
   const limit = Math.min(rowTotals.at(-1)!, Math.max(...columnTotals));
-  let keys: bigint[] | null = null;
-  return (count) => {
-    if (keys === null) {
-      keys = new Array<bigint>(limit + 1).fill(0n);
-      primesUpTo(limit).forEach((prime, place) => {
-        const shift = BigInt(48 * place);
-        rule(prime, limit).forEach((exponent, n) => (keys![n]! += BigInt(exponent) << shift));
-      });
-    }
-    return keys[count]!;
-  };
+  if (limit > largestKeyed) return null;
+  // How often each count occurs, 16 bits apart.
+  if (limit > largestFactored) return (count) => 1n << BigInt(16 * count);
+  const keys = new Array<bigint>(limit + 1).fill(0n);
+  primesUpTo(limit).forEach((prime, place) => {
+    const shift = BigInt(48 * place);
+    rule(prime, limit).forEach((exponent, n) => (keys[n]! += BigInt(exponent) << shift));
+  });
+  return (count) => keys[count]!;
 }

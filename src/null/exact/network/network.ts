@@ -34,9 +34,4 @@ export interface Network {
   readonly entryLimit: number;
 }
 
-/** Thrown when the lists outgrow the stated bound. */
-export class OutOfReach extends Error {
-  constructor(readonly entries: number) {
-    super(`more than ${entries} partial sums would have to be held at once`);
-  }
-}
+export { OutOfReach } from './out-of-reach.js';

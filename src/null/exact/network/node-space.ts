@@ -2,6 +2,7 @@
 // whose sum follows from the others), and lists those worth visiting.
 import { nodeCodes } from './node-codes.js';
 import { NodeIndex } from './node-index.js';
+import { OutOfReach } from './out-of-reach.js';
 import type { OrientedTable } from './oriented-table.js';
 
 export class NodeSpace {
@@ -29,7 +30,9 @@ export class NodeSpace {
     // Without a code that fits, rows are told apart after all: more nodes, the same answer.
     const coded = nodeCodes(rowTotals, blocks);
     this.blocks = coded === null ? [] : blocks;
-    const { codes, size } = coded ?? nodeCodes(rowTotals, [])!;
+    const plain = coded ?? nodeCodes(rowTotals, []);
+    if (plain === null) throw new OutOfReach(Infinity);
+    const { codes, size } = plain;
     this.codes = codes;
     this.size = size;
     this.blockOf = Int32Array.from(rowTotals, (_, row) => row);

@@ -2,6 +2,7 @@
 // turn out equal they are merged on arrival (open addressing), else after sorting. Values of one node spread evenly enough
 // for one pass of distribution into as many cells as entries, finished by insertion; crowded cells are sorted apart, so
 // that the time stays n log n whatever the values.
+import { sortCrowd } from './crowd-sort.js';
 import type { Level } from './level.js';
 import type { Transitions } from './transitions.js';
 
@@ -201,7 +202,7 @@ export class SortedList {
     if (crowd <= shortList) return;
     for (let cell = 0, from = 0; cell < length; cell++) {
       const to = starts[cell]!;
-      if (to - from > shortList && !this.allEqual(from, to)) this.heapSort(from, to);
+      if (to - from > shortList) sortCrowd(this.values, this.weights, this.keyed ? this.keys : null, from, to);
       from = to;
     }
   }
@@ -230,47 +231,6 @@ export class SortedList {
       weights[at] = weight;
       if (keyed) keys[at] = key;
     }
-  }
-
-  private heapSort(from: number, to: number): void {
-    const size = to - from;
-    for (let root = (size >> 1) - 1; root >= 0; root--) this.sink(from, root, size);
-    for (let end = size - 1; end > 0; end--) {
-      this.exchange(from, from + end);
-      this.sink(from, 0, end);
-    }
-  }
-
-  private sink(from: number, start: number, size: number): void {
-    const { values } = this;
-    for (let root = start; ;) {
-      let child = 2 * root + 1;
-      if (child >= size) return;
-      if (child + 1 < size && values[from + child + 1]! > values[from + child]!) child++;
-      if (values[from + root]! >= values[from + child]!) return;
-      this.exchange(from + root, from + child);
-      root = child;
-    }
-  }
-
-  private exchange(a: number, b: number): void {
-    const { values, weights, keys } = this;
-    const value = values[a]!;
-    values[a] = values[b]!;
-    values[b] = value;
-    const weight = weights[a]!;
-    weights[a] = weights[b]!;
-    weights[b] = weight;
-    if (!this.keyed) return;
-    const key = keys[a]!;
-    keys[a] = keys[b]!;
-    keys[b] = key;
-  }
-
-  private allEqual(from: number, to: number): boolean {
-    const value = this.values[from]!;
-    for (let i = from + 1; i < to; i++) if (this.values[i] !== value) return false;
-    return true;
   }
 
   /** Adds up neighbours with equal value (and key), with a compensated sum (Neumaier's form, all terms being positive). */

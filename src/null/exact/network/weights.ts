@@ -40,17 +40,20 @@ export function nullWeights(table: OrientedTable, flat: boolean, around: readonl
   const powers = rowTotals.map((rowTotal) =>
     flat ? powerTerms(rowTotal, 1, rows) : powerTerms(rowTotal, rowTotal, total),
   );
-  const shifts = columnTotals.map((_, j) => powers.map((power, i) => -power.exponent[around[j]![i]!]!));
-  const cells = columnTotals.map((columnTotal, j) =>
-    powers.map((power, i) => {
-      const cell = new Float64Array(Math.min(rowTotals[i]!, columnTotal) + 1);
-      for (let n = 0; n < cell.length; n++)
-        cell[n] = power.mantissa[n]! * powerOfTwo(power.exponent[n]! + shifts[j]![i]!);
-      return cell;
-    }),
-  );
+  // Each cell's factor also takes C_j^n, whose product over a column is C_j^(C_j): it then peaks at the expected count.
+  const shifts: number[][] = [];
+  const cells = columnTotals.map((columnTotal, j) => {
+    shifts.push([]);
+    return rowTotals.map((rowTotal, i) => {
+      const limit = Math.min(rowTotal, columnTotal);
+      const terms = flat ? powerTerms(limit, columnTotal, rows) : powerTerms(limit, rowTotal * columnTotal, total);
+      const shift = -terms.exponent[around[j]![i]!]!;
+      shifts[j]!.push(shift);
+      return terms.mantissa.map((mantissa, n) => mantissa * powerOfTwo(terms.exponent[n]! + shift));
+    });
+  });
   const completions = (columns: readonly number[]): Completions => {
-    const arrangements = multinomial(columns.map((j) => columnTotals[j]!));
+    const arrangements = arrangementsWithin(columns.map((j) => columnTotals[j]!));
     const shift = columns.reduce((sum, j) => sum + shifts[j]!.reduce((a, b) => a + b, 0), arrangements.exponent);
     const mantissa = (rowSums: ArrayLike<number>): number => {
       let product = arrangements.mantissa;
@@ -88,25 +91,22 @@ function powerTerms(limit: number, numerator: number, denominator: number): Wide
   return { mantissa, exponent };
 }
 
-/** (sum of parts)! / product of parts!, as mantissa x 2^exponent. */
-function multinomial(parts: readonly number[]): { mantissa: number; exponent: number } {
+/** (sum of parts)! x product of part^part / product of part!, as mantissa x 2^exponent. */
+function arrangementsWithin(parts: readonly number[]): { mantissa: number; exponent: number } {
   const term = new DoubleDouble(1);
   let shift = 0;
+  const keepSmall = (): void => {
+    if (term.high < 2 ** 200) return;
+    const e = exponentOf(term.high);
+    term.set(term.high * 2 ** -e, term.low * 2 ** -e);
+    shift += e;
+  };
   let n = 0;
-  // The longest part needs no steps: its factorial cancels the first factors.
-  for (const part of [...parts].sort((a, b) => b - a)) {
-    if (n === 0) {
-      n = part;
-      continue;
-    }
+  for (const part of parts) {
     for (let i = 1; i <= part; i++) {
       n++;
-      term.multiply(n).divide(i);
-      if (term.high > 2 ** 200) {
-        const e = exponentOf(term.high);
-        term.set(term.high * 2 ** -e, term.low * 2 ** -e);
-        shift += e;
-      }
+      term.multiply(n).multiply(part).divide(i);
+      keepSmall();
     }
   }
   const e = exponentOf(term.high);

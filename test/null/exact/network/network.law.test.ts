@@ -117,6 +117,27 @@ describe('the network gives the masses of plain enumeration', () => {
   });
 });
 
+describe('both sides and the ties, each added up by itself, make 1', () => {
+  const wide = fc.oneof(
+    tableOf({ rows: [2, 2], columns: [3, 5], largest: 400 }),
+    tableOf({ rows: [3, 3], columns: [3, 3], largest: 90 }),
+    tableOf({ rows: [4, 5], columns: [4, 5], largest: 3 }),
+  );
+  for (const statistic of statistics) {
+    it(`${statistic}, totals up to thousands`, () => {
+      fc.assert(
+        fc.property(wide, (table) => {
+          const live = liveFrom(table);
+          const options = { sumBothSides: true };
+          const cut = exactCut(live, orderingOf(live, statistic, 'upper'), statistic, options);
+          expectClose(JSON.stringify(table), cut.below.value + cut.tied.value + cut.above.value, 1);
+        }),
+        { numRuns: 40, seed: 6 },
+      );
+    });
+  }
+});
+
 describe('what must not change the answer does not', () => {
   const table = tableOf({ rows: [3, 4], columns: [3, 5], largest: 5 });
   for (const statistic of statistics) {
