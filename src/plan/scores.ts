@@ -55,13 +55,14 @@ function oneScore(text: string, option: string): Rational {
     });
   }
   // The plan holds scores as numbers; a run again must read the same ones.
-  const again = decimalRational(String(toDouble(score)));
+  const size = Math.abs(toDouble(score));
+  const again = size > 1e100 || (size > 0 && size < 1e-100) ? undefined : decimalRational(String(toDouble(score)));
   if (again === undefined || again.numerator !== score.numerator || again.denominator !== score.denominator) {
     throw usageProblem({
       code: 'score-digits',
-      message: `"${text.trim()}" has more digits than a score can carry`,
+      message: `"${text.trim()}" is longer, larger or smaller than a score can be`,
       place: option,
-      hint: 'give at most 15 significant digits',
+      hint: 'give at most 15 significant digits, and sizes from 1e-100 to 1e100',
     });
   }
   return score;

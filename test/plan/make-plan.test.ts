@@ -48,9 +48,10 @@ describe('a plan', () => {
     expect(plan.forecast.tables).toBeGreaterThan(1);
   });
 
-  it('samples where it is not, with the reason, a seed and 100,000 draws', () => {
+  it('samples where it is not, with the reason and a seed, until p is settled', () => {
     const plan = planFor(enormous);
-    expect(plan).toMatchObject({ method: 'sample', draws: 100_000 });
+    expect(plan).toMatchObject({ method: 'sample', draws: 'auto', mostDraws: 1e7, relativeError: 0.02 });
+    expect(plan.samplingRisk).toBeCloseTo(0.05 / 500, 12);
     expect(plan.methodReason).toMatch(/^exact is out of reach: about/);
     expect(plan.seed).toMatch(/^[2-9a-hjkmnp-z]{8}$/);
     expect(planFor(enormous).seed).not.toBe(plan.seed);
@@ -98,6 +99,12 @@ describe('a plan', () => {
     });
   });
 
+  it('reads lambda as the fraction it is, and echoes it in lowest terms', () => {
+    const lambdaOf = (lambda?: string | number): string | undefined =>
+      planFor(larger, { statistic: 'power-divergence', ...(lambda === undefined ? {} : { lambda }) }).lambda;
+    expect([undefined, '4/6', 0.25, '-0.5', 2].map(lambdaOf)).toEqual(['2/3', '2/3', '1/4', '-1/2', '2']);
+  });
+
   it.each([
     ['a name that is no statistic', twoByTwo, { statistic: 'pearsen' }, 'unknown-statistic', /did you mean pearson/],
     ['wald on a 3x3', larger, { statistic: 'wald' }, 'not-two-by-two', /pearson/],
@@ -128,10 +135,28 @@ describe('a plan', () => {
       'rule-needs-exact',
       /distance or doubled/,
     ],
+    ['a lambda for pearson', larger, { lambda: 1 }, 'option-without-effect', /use power-divergence/],
+    [
+      'a lambda of -1',
+      larger,
+      { statistic: 'power-divergence', lambda: -1 },
+      'lambda-out-of-range',
+      /infinitely far out/,
+    ],
+    ['a lambda in words', larger, { statistic: 'power-divergence', lambda: 'two' }, 'not-a-lambda', /2\/3/],
     ['an unknown event', twoByTwo, { statistic: 'wald', event: 'colum 1' }, 'unknown-label', /did you mean column 1/],
     ['no draws', enormous, { draws: 0 }, 'out-of-range', /--draws/],
     ['half a draw', enormous, { draws: 1.5 }, 'out-of-range', /--draws/],
     ['draws for an exact p', twoByTwo, { method: 'exact', draws: 100 }, 'option-without-effect', /--method sample/],
+    [
+      'most draws beside a fixed number',
+      enormous,
+      { draws: 1000, mostDraws: 5000 },
+      'option-without-effect',
+      /--draws auto/,
+    ],
+    ['a risk above alpha', enormous, { samplingRisk: 0.2 }, 'option-without-effect', /--sampling-risk/],
+    ['a limit below one block', enormous, { mostDraws: 500 }, 'out-of-range', /--most-draws/],
     ['an empty seed', enormous, { seed: '' }, 'empty-seed', /any text/],
     ['an alpha of 2', twoByTwo, { alpha: 2 }, 'not-a-share', /0\.05/],
     ['an unknown tail', twoByTwo, { tail: 'uper' }, 'unknown-value', /did you mean upper/],
