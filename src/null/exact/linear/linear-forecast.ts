@@ -18,17 +18,21 @@ const perSparseValue = 3;
 const perMove = 7;
 /** What the first steps of a program cost before it is warm: some 10 ms. */
 const start = 3e5;
-/** Values of two stages are held at once: 2^25 of them take 256 MB. */
-const mostValues = 2 ** 25;
+/** Values of two stages are held at once: 2^24 of them a stage take 256 MB. */
+const mostValues = 2 ** 24;
 const mostUnits = 2 ** 20;
 
 export function forecastLinear(live: LiveTable, form: LinearForm): LinearForecast {
   const sides = scoredSides(live, form);
-  if (sides.rows.length === 1 || sides.columns.length === 2) return { workUnits: start, sparse: false };
-  if (sides.total > mostUnits || codesOf(sides.rows) > mostCodes) return { workUnits: Infinity, sparse: false };
   const { mean, deviation } = moments(live, form);
+  if (sides.rows.length === 1) return { workUnits: start, sparse: false };
+  const z = Math.abs(form.observed - mean) / deviation;
+  // Two scores a side: a hypergeometric law is walked, some ten deviations to each side and as far as the observed value.
+  if (sides.columns.length === 2)
+    return { workUnits: Math.round(start + deviation * (Math.min(39, z + 10) + 12)), sparse: false };
+  if (sides.total > mostUnits || codesOf(sides.rows) > mostCodes) return { workUnits: Infinity, sparse: false };
   // Values are kept down to e^-50 of the foreseen p, whose logarithm is about -z^2 / 2.
-  const reach = Math.sqrt(((form.observed - mean) / deviation) ** 2 + 2 * 53);
+  const reach = Math.sqrt(z ** 2 + 2 * 53);
   const dense = { values: 0, peak: 0 };
   const sparse = { values: 0, peak: 0 };
   let moves = 0;
