@@ -1,4 +1,5 @@
 // Exact, sampled or asymptotic: what was asked for where it can be had, else - for `auto` alone - what the forecast allows.
+import { groupedDigits } from '../numeric/digit-groups.js';
 import type { Forecast } from '../null/forecast.js';
 import { effortProblem, usageProblem, type Problem } from '../problem/problem.js';
 import type { BoundStatistic, Statistic } from '../statistic/contract.js';
@@ -82,9 +83,7 @@ function noProbabilityRule({ name, own }: Statistic): Problem {
 
 /** 1,234 in full, larger numbers to two digits. */
 const inWords = (value: number): string =>
-  value < 1e7
-    ? value.toLocaleString('en-US', { maximumSignificantDigits: 9 })
-    : value.toExponential(1).replace('e+', 'e');
+  value < 1e7 ? groupedDigits(Math.round(value)) : value.toExponential(1).replace('e+', 'e');
 
 const timeInWords = (seconds: number): string => {
   if (seconds < 1) return 'under a second';

@@ -4,6 +4,7 @@ import type { PValueEntry } from '../pvalue/contract.js';
 import { drawsToSettle } from '../pvalue/draws-to-settle.js';
 import type { BoundStatistic, Statistic } from '../statistic/contract.js';
 import type { Table } from '../table/table.js';
+import { groupedDigits } from '../numeric/digit-groups.js';
 import { quoted, shown } from './label-words.js';
 import type { Note } from './result.js';
 
@@ -93,7 +94,7 @@ export async function unsettledNotes(headline: PValueEntry, plan: Plan): Promise
   const more =
     needed === undefined || needed > 1e12
       ? 'more draws than can be made here would be needed to tell the side'
-      : `about ${needed.toLocaleString('en-US')} draws (--draws ${needed}) should tell the side`;
+      : `about ${groupedDigits(needed)} draws (--draws ${needed}) should tell the side`;
   return [
     {
       code: 'level-inside-interval',

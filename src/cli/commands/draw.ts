@@ -46,8 +46,7 @@ export const drawCommand = command({
     for (const counts of drawTables(table, { number: values.number ?? 1, seed })) {
       lines += `${JSON.stringify({ key: String(++key), counts, ...labels })}\n`;
       if (lines.length < 65_536) continue;
-      if (shell.stdout.destroyed) return 0; // nobody reads on
-      await writeOut(shell.stdout, lines, 'standard output');
+      if (!(await writeOut(shell.stdout, lines, 'standard output'))) return 0; // nobody reads on
       lines = '';
     }
     await writeOut(shell.stdout, lines, 'standard output');

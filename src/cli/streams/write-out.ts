@@ -4,18 +4,19 @@ import type { Writable } from 'node:stream';
 import { dataProblem } from '../../problem/problem.js';
 
 export interface Destination {
-  write(text: string): Promise<void>;
+  write(text: string): Promise<unknown>;
 }
 
 /**
- * Resolves when the stream has taken the whole text, or when nobody reads it any more.
+ * Resolves when the stream has taken the whole text (true), or when nobody reads it any more (false).
  * @throws Problem (data) `cannot-write` when the stream refuses for another reason, such as a full disk.
  */
-export async function writeOut(stream: Writable, text: string, name: string): Promise<void> {
+export async function writeOut(stream: Writable, text: string, name: string): Promise<boolean> {
   const failure = await new Promise<NodeJS.ErrnoException | null | undefined>((resolve) => {
     stream.write(text, resolve);
   });
-  if (!failure || failure.code === 'EPIPE' || failure.code === 'ERR_STREAM_DESTROYED') return;
+  if (!failure) return true;
+  if (failure.code === 'EPIPE' || failure.code === 'ERR_STREAM_DESTROYED') return false;
   throw dataProblem({
     code: 'cannot-write',
     message: `the result could not be written (${failure.code ?? failure.message})`,
