@@ -30,9 +30,6 @@ export const mostMemoryBytes = 1.5e9;
 const perNetworkUnit = 0.4;
 const networkStart = 1.3e6;
 
-/** Statistics that the network knows exact keys for. */
-const networkStatistics = ['pearson', 'likelihood-ratio', 'probability'];
-
 /**
  * The cheapest engine that answers, and what it would take.
  * @param bound the statistic at work; some have engines of their own. Left out: what any statistic would take.
@@ -75,7 +72,7 @@ function cheapest(
   if (bound?.limits !== undefined) {
     choices.push({ engine: 'within-limits', workUnits: forecastWithinLimits(live, bound.limits) });
   }
-  if (bound?.sum !== undefined && statistic !== undefined && networkStatistics.includes(statistic)) {
+  if (bound?.sum !== undefined && bound.linear === undefined && statistic !== undefined) {
     const { workUnits, memoryBytes } = forecastNetwork(live, statistic);
     const fits = memoryBytes <= mostMemoryBytes;
     choices.push({ engine: 'network', workUnits: fits ? networkStart + perNetworkUnit * workUnits : Infinity });
