@@ -49,6 +49,20 @@ describe('exact cuts of max-residual equal those of the oracle', () => {
     });
   }
 
+  it('keeps its digits far out: p = 1e-166 as by the walk over a 2x2 law', () => {
+    const live = liveFrom([
+      [300, 5],
+      [10, 350],
+    ]);
+    const ordering = orderingOf(live, 'max-residual', 'upper');
+    const [dealt] = exactWithinLimits(live, [ordering]);
+    const [walked] = exactTwoByTwo(live, [ordering]).cuts;
+    expect(walked!.atLeast.value).toBeLessThan(1e-150);
+    for (const mass of ['atLeast', 'tied', 'above'] as const) {
+      expect(relativeDifference(dealt![mass].value, walked![mass].value), mass).toBeLessThan(dealt!.relativeError);
+    }
+  });
+
   it('answers a table of 90 million in its own tail, and forecasts it as cheap', () => {
     const live = liveFrom([
       [1, 3, 10, 6],

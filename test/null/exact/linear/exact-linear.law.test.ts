@@ -84,6 +84,37 @@ describe('exact cuts of trend equal those of the oracle', () => {
   });
 });
 
+describe('scores whose sums no double holds', () => {
+  const huge = fc.constantFrom(0, 1, 2 ** 52, 2 ** 53 - 1);
+  for (const name of ['upper', 'lower', 'distance'] as const) {
+    it(`are compared in whole numbers, ordered by ${name}`, () => {
+      const cases = tableOf({ rows: [2, 3], columns: [3, 3], largest: 3 }).chain((table) =>
+        fc
+          .tuple(
+            fc.array(huge, { minLength: table.length, maxLength: table.length }),
+            fc.array(huge, { minLength: 3, maxLength: 3 }),
+          )
+          .map(([rows, columns]) => ({ table, scores: { rows, columns } })),
+      );
+      fc.assert(
+        fc.property(cases, ({ table, scores }) => hold(table, scores, name)),
+        { numRuns: 150, seed: 24 },
+      );
+    });
+  }
+
+  it('leave no sum for engines that add in doubles', () => {
+    const live = liveFrom([
+      [1, 2, 3],
+      [3, 2, 1],
+      [1, 1, 2],
+    ]);
+    const scores = { rows: [0, 1, 2 ** 53 - 1], columns: [0, 1, 2 ** 53 - 1] };
+    expect(bindTrend(live, scores).linear).toBeUndefined();
+    expect(bindTrend(live, scores).sum!.slack).toBeGreaterThan(0);
+  });
+});
+
 describe('the law of a linear statistic', () => {
   const table = tableOf({ rows: [2, 3], columns: [3, 4], largest: 5 });
 
