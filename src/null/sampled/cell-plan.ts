@@ -1,5 +1,5 @@
 // Chooses the sampler of each cell that is drawn from its conditional law, within the memory that look-up tables may take.
-import { mostOutcomes, type GuidedLaws, type VaryingLaw } from './hypergeometric/guide.js';
+import { mostOutcome, type GuidedLaws, type VaryingLaw } from './hypergeometric/guide.js';
 import { leastVarianceForRejection } from './hypergeometric/rejection.js';
 import { leastOf, mostOf, rangeAround, spreadOf, varianceOf, type Range } from './hypergeometric/spread.js';
 import type { TrialGrid } from './hypergeometric/trial.js';
@@ -20,14 +20,15 @@ export type CellPlan = { readonly work: number } & (
 
 /** Nanoseconds on a usual machine, measured once: units of a forecast, not promises. */
 const work = {
-  guide: 16,
+  guide: 13,
   trial: 27,
   failedTrial: 15,
-  inversion: 50,
-  inversionPerDeviation: 4,
+  inversion: 42,
   wideInversion: 280,
-  rejection: 46,
-  wideRejection: 100,
+  inversionPerDeviation: 3.3,
+  rejection: 30,
+  wideRejection: 70,
+  rejectionOverDeviation: 85,
 } as const;
 
 /** Look-up tables reach so many deviations; what lies beyond (one draw in millions) is drawn without them. */
@@ -76,7 +77,10 @@ export class CellPlanner {
       },
     ];
     if (deviation ** 2 >= leastVarianceForRejection) {
-      plans.push({ sampler: 'rejection', work: this.wide ? work.wideRejection : work.rejection });
+      plans.push({
+        sampler: 'rejection',
+        work: (this.wide ? work.wideRejection : work.rejection) + work.rejectionOverDeviation / deviation,
+      });
     }
     const guided = this.guidedCell(i, j, deviation);
     if (guided !== null) plans.push(guided);
@@ -125,6 +129,7 @@ export class CellPlanner {
     const varying = key === 'marked' ? this.range(rowsLeft, column) : this.range(columnsLeft, row);
     const grid: TrialGrid = {
       share,
+      mostUnits: this.total,
       units: key === 'marked' ? this.range(rowsLeft, toCome) : this.range(columnsLeft, toCome),
       taken: rangeAround(spreadOf(this.total, toCome, key === 'marked' ? row : column), this.reach),
     };
@@ -146,9 +151,8 @@ export class CellPlanner {
     const affordable = 2 ** Math.floor(Math.log2(this.entriesLeft / varying.length));
     const shares = Math.min(wanted, affordable, mostShares);
     const fits =
-      varying.from + varying.length < 2 ** 31 &&
-      most < 2 ** 31 &&
-      outcomes.length <= mostOutcomes &&
+      (varying.from + varying.length) * shares < 2 ** 31 &&
+      most <= mostOutcome &&
       outcomes.length * varying.length <= this.bordersLeft &&
       shares >= Math.max(leastShares, 8 * deviation);
     return fits ? { law, varying, outcomes, shares } : null;

@@ -31,10 +31,15 @@ export interface Forced {
   readonly reach?: number;
 }
 
+/** What a row takes beside its cells. */
+const perRow = 5;
+
 export function planDraws(live: LiveTable, forced: Forced = {}): DrawPlan {
   const upright = planOneWay(live, false, forced);
   const turned = planOneWay(live, true, forced);
-  return turned.work < upright.work ? turned : upright;
+  return turned.work + perRow * turned.rowTotals.length < upright.work + perRow * upright.rowTotals.length
+    ? turned
+    : upright;
 }
 
 function planOneWay(live: LiveTable, turned: boolean, forced: Forced): DrawPlan {
@@ -87,5 +92,5 @@ function labelWork(rowTotals: readonly number[], labelRows: number): number {
   if (labelRows === 0) return 0;
   const total = rowTotals.reduce((sum, row) => sum + row, 0);
   const units = rowTotals.slice(0, labelRows).reduce((sum, row) => sum + row, 0);
-  return total <= bagUnits ? total / 4 + 7 * units : 20 * units;
+  return total <= bagUnits ? total / 4 + 5 * units : 20 * units;
 }

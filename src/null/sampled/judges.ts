@@ -4,11 +4,13 @@ import type { CellSum, Place } from '../../statistic/contract.js';
 import type { LiveTable } from '../../table/live-table.js';
 import type { Ordering } from '../contract.js';
 import { CellValues } from './cell-values.js';
+import type { DrawPlan } from './draw-plan.js';
 import { leastOf, mostOf, rangeAround, spreadOf } from './hypergeometric/spread.js';
 import type { Cells } from './cells.js';
 import { cornerEntries, decidedEntries } from './limits.js';
 
 export interface Judge {
+  /** @param table its cells in the order of drawing. */
   place(table: Cells): Place;
 }
 
@@ -19,8 +21,8 @@ export interface Panel {
   readonly assigned: readonly { readonly judge: number; readonly direction: 1 | -1 }[];
 }
 
-/** Orderings by the same sum share a judge. */
-export function panelFor(live: LiveTable, orderings: readonly Ordering[]): Panel {
+/** Orderings by the same sum share a judge. Tables come in the order of the plan. */
+export function panelFor(live: LiveTable, orderings: readonly Ordering[], plan: DrawPlan): Panel {
   const judges: Judge[] = [];
   const bySum = new Map<CellSum, number>();
   const small = live.rows === 2 && live.columns === 2;
@@ -28,11 +30,11 @@ export function panelFor(live: LiveTable, orderings: readonly Ordering[]): Panel
   const assigned = orderings.map((ordering): Panel['assigned'][number] => {
     const { sum } = ordering;
     if (small || sum === undefined) {
-      const place = (counts: Cells): Place => ordering.place(counts);
-      const judge = small ? new ByCorner(live, place, share) : new ByMemory(live, place, share);
+      const place = (counts: Float64Array): Place => ordering.place(counts);
+      const judge = small ? new ByCorner(live, place, plan, share) : new ByMemory(live, place, plan, share);
       return { judge: judges.push(judge) - 1, direction: 1 };
     }
-    const judge = bySum.get(sum.cells) ?? judges.push(new BySum(live, sum.cells, share)) - 1;
+    const judge = bySum.get(sum.cells) ?? judges.push(new BySum(live, sum.cells, plan, share)) - 1;
     bySum.set(sum.cells, judge);
     return { judge, direction: sum.direction };
   });
@@ -47,10 +49,11 @@ class BySum implements Judge {
   constructor(
     live: LiveTable,
     private readonly cells: CellSum,
+    plan: DrawPlan,
     share: number,
   ) {
-    this.values = new CellValues(live, cells, share);
-    this.nearTies = new ByMemory(live, (counts) => cells.decide(counts), share);
+    this.values = new CellValues(live, cells, plan, share);
+    this.nearTies = new ByMemory(live, (counts) => cells.decide(counts), plan, share);
   }
 
   place(table: Cells): Place {
@@ -62,73 +65,93 @@ class BySum implements Judge {
   }
 }
 
+/** Asks about a table in the live table's own order. */
+type Decide = (counts: Float64Array) => Place;
+
 const unknown = 2;
 
-/** A 2x2 table is its first count: places are kept by it. */
+/** A 2x2 table is one of its counts: places are kept by the first one drawn. */
 class ByCorner implements Judge {
+  private readonly positions: readonly number[];
   private readonly from: number;
   private readonly places: Int8Array;
+  private readonly arranged = new Float64Array(4);
 
   constructor(
     live: LiveTable,
-    private readonly decide: (table: Cells) => Place,
+    private readonly decide: Decide,
+    { positions }: DrawPlan,
     share: number,
   ) {
-    const { total } = live;
-    const row = live.rowTotals[0]!;
-    const column = live.columnTotals[0]!;
-    const spread = spreadOf(total, row, column);
+    this.positions = positions;
+    const row = live.rowTotals[positions[0]! >> 1]!;
+    const column = live.columnTotals[positions[0]! & 1]!;
+    const spread = spreadOf(live.total, row, column);
     const half = Math.min(rangeAround(spread, 8).length / 2 + 8, cornerEntries / share / 2 - 1);
-    this.from = Math.max(leastOf(total, row, column), Math.floor(spread.mean - half));
+    this.from = Math.max(leastOf(live.total, row, column), Math.floor(spread.mean - half));
     const to = Math.min(mostOf(row, column), Math.floor(spread.mean + half));
     this.places = new Int8Array(Math.max(0, to - this.from + 1)).fill(unknown);
   }
 
   place(table: Cells): Place {
     const k = table[0]! - this.from;
-    if (!(k >= 0 && k < this.places.length)) return this.decide(table);
-    const known = this.places[k]!;
-    if (known !== unknown) return known as Place;
-    const place = this.decide(table);
-    this.places[k] = place;
+    const kept = k >= 0 && k < this.places.length;
+    if (kept && this.places[k] !== unknown) return this.places[k] as Place;
+    arrange(table, this.positions, this.arranged);
+    const place = this.decide(this.arranged);
+    if (kept) this.places[k] = place;
     return place;
   }
 }
 
 /** Asks for every table; answers for the observed table and for those asked about lately come from memory. */
 class ByMemory implements Judge {
+  private readonly positions: readonly number[];
   private readonly observed: Float64Array;
   /** Tables asked about, one in each slot, and their places. */
   private readonly tables: Float64Array;
   private readonly places: Int8Array;
+  private readonly arranged: Float64Array;
 
   constructor(
     live: LiveTable,
-    private readonly decide: (table: Cells) => Place,
+    private readonly decide: Decide,
+    { positions }: DrawPlan,
     share: number,
   ) {
-    this.observed = live.counts;
-    const slots = 2 ** Math.floor(Math.log2(Math.max(1, decidedEntries / share / live.counts.length)));
-    this.tables = new Float64Array(slots * live.counts.length);
+    this.positions = positions;
+    this.observed = Float64Array.from(positions, (position) => live.counts[position]!);
+    const slots = 2 ** Math.floor(Math.log2(Math.max(1, decidedEntries / share / positions.length)));
+    this.tables = new Float64Array(slots * positions.length);
     this.places = new Int8Array(slots).fill(unknown);
+    this.arranged = new Float64Array(positions.length);
   }
 
   place(table: Cells): Place {
     if (holds(this.observed, 0, table)) return 0;
     const { tables, places } = this;
-    let hash = 0;
-    for (let cell = 0; cell < table.length; cell++) hash = Math.imul(hash ^ table[cell]!, 0x9e3779b1) ^ (hash >>> 15);
-    const slot = (hash ^ (hash >>> 13)) & (places.length - 1);
+    const slot = hashOf(table) & (places.length - 1);
     const start = slot * table.length;
     if (places[slot] !== unknown && holds(tables, start, table)) return places[slot] as Place;
-    const place = this.decide(table);
+    arrange(table, this.positions, this.arranged);
+    const place = this.decide(this.arranged);
     tables.set(table, start);
     places[slot] = place;
     return place;
   }
 }
 
+function arrange(table: Cells, positions: readonly number[], into: Float64Array): void {
+  for (let cell = 0; cell < positions.length; cell++) into[positions[cell]!] = table[cell]!;
+}
+
 function holds(tables: Float64Array, start: number, table: Cells): boolean {
   for (let cell = 0; cell < table.length; cell++) if (tables[start + cell] !== table[cell]) return false;
   return true;
+}
+
+function hashOf(table: Cells): number {
+  let hash = 0;
+  for (let cell = 0; cell < table.length; cell++) hash = Math.imul(hash ^ table[cell]!, 0x9e3779b1) ^ (hash >>> 15);
+  return hash ^ (hash >>> 13);
 }

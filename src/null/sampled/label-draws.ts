@@ -13,17 +13,12 @@ export interface LabelDraws {
   draw(source: UniformSource, into: Cells): void;
 }
 
-/** @param positions where cell (i, j) of the drawing lies in the table. @param rows how many first rows to draw. */
-export function labelDraws(
-  rowTotals: readonly number[],
-  columnTotals: readonly number[],
-  positions: Int32Array,
-  rows: number,
-): LabelDraws {
+/** @param rows how many first rows to draw. */
+export function labelDraws(rowTotals: readonly number[], columnTotals: readonly number[], rows: number): LabelDraws {
   const total = columnTotals.reduce((sum, units) => sum + units, 0);
   return total <= bagUnits
-    ? new LabelBag(rowTotals, columnTotals, positions, rows)
-    : new LabelSearch(rowTotals, total, positions, rows, columnTotals.length);
+    ? new LabelBag(rowTotals, columnTotals, rows)
+    : new LabelSearch(rowTotals, columnTotals.length, rows, total);
 }
 
 /** For small tables: the column of every unit, a byte each, drawn without putting back. */
@@ -32,17 +27,12 @@ class LabelBag implements LabelDraws {
   /** The same bytes, four at a time: filled anew for every table. */
   private readonly words: Int32Array;
   private readonly bag: Uint8Array;
-  /** For each unit to be drawn, the start of its row in `positions`. */
+  /** For each unit to be drawn, the first cell of its row. */
   private readonly rowStarts: Int32Array;
-  private readonly lastRow: Int32Array;
+  private readonly lastRow: number;
   private readonly total: number;
 
-  constructor(
-    rowTotals: readonly number[],
-    columnTotals: readonly number[],
-    private readonly positions: Int32Array,
-    rows: number,
-  ) {
+  constructor(rowTotals: readonly number[], columnTotals: readonly number[], rows: number) {
     const columns = columnTotals.length;
     this.total = columnTotals.reduce((sum, units) => sum + units, 0);
     const labels = new Uint8Array((this.total + 3) & ~3);
@@ -52,42 +42,45 @@ class LabelBag implements LabelDraws {
     this.bag = new Uint8Array(this.words.buffer);
     const drawn = rowTotals.slice(0, rows);
     this.rowStarts = Int32Array.from(drawn.flatMap((units, i) => new Array<number>(units).fill(i * columns)));
-    this.lastRow = positions.slice(-columns);
+    this.lastRow = (rowTotals.length - 1) * columns;
   }
 
   draw(source: UniformSource, into: Cells): void {
-    const { positions, lastRow, bag, full, words, rowStarts } = this;
+    const { lastRow, bag, full, words, rowStarts } = this;
     for (let k = 0; k < full.length; k++) words[k] = full[k]!;
-    for (let unit = 0, left = this.total; unit < rowStarts.length; unit++, left--) {
-      let place = source.uniform() * left;
-      // Where 32 bits cannot tell two places apart, 32 more decide: every place has exactly the same chance.
-      if (place - Math.floor(place) > 1 - left * resolution) place += source.uniform() * left * resolution;
-      const label = bag[place | 0]!;
-      bag[place | 0] = bag[left - 1]!;
-      into[lastRow[label]!]!--;
-      into[positions[rowStarts[unit]! + label]!]!++;
+    let word = 0;
+    for (let unit = 0, left = this.total; unit < rowStarts.length; unit++) {
+      // Half a word for a unit. Where 16 bits cannot tell two places apart, 32 more decide, to the same chance for every place.
+      if ((unit & 1) === 0) word = source.word();
+      const scaled = ((unit & 1) === 0 ? word >>> 16 : word & 0xffff) * left;
+      const place =
+        (scaled & 0xffff) + left <= 0x10000 ? scaled >>> 16 : ((scaled + source.uniform() * left) / 0x10000) | 0;
+      const label = bag[place]!;
+      left--;
+      bag[place] = bag[left]!;
+      into[lastRow + label]!--;
+      into[rowStarts[unit]! + label]!++;
     }
   }
 }
 
 /** For rows of few units in larger tables: the column is searched from the last one on, which is the largest. */
 class LabelSearch implements LabelDraws {
-  private readonly lastRow: Int32Array;
+  private readonly lastRow: number;
   private readonly units: readonly number[];
 
   constructor(
     rowTotals: readonly number[],
-    private readonly total: number,
-    private readonly positions: Int32Array,
-    rows: number,
     private readonly columns: number,
+    rows: number,
+    private readonly total: number,
   ) {
     this.units = rowTotals.slice(0, rows);
-    this.lastRow = positions.slice(-columns);
+    this.lastRow = (rowTotals.length - 1) * columns;
   }
 
   draw(source: UniformSource, into: Cells): void {
-    const { positions, lastRow, columns, units } = this;
+    const { lastRow, columns, units } = this;
     let left = this.total;
     for (let i = 0; i < units.length; i++) {
       for (let unit = units[i]!; unit > 0; unit--, left--) {
@@ -95,7 +88,7 @@ class LabelSearch implements LabelDraws {
         let width = left * resolution;
         let j = columns - 1;
         for (;;) {
-          const inColumn = into[lastRow[j]!]!;
+          const inColumn = into[lastRow + j]!;
           if (place + width <= inColumn) break;
           if (place >= inColumn) {
             place -= inColumn;
@@ -106,8 +99,8 @@ class LabelSearch implements LabelDraws {
             width = 0;
           }
         }
-        into[lastRow[j]!]!--;
-        into[positions[i * columns + j]!]!++;
+        into[lastRow + j]!--;
+        into[i * columns + j]!++;
       }
     }
   }

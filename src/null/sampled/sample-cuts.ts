@@ -27,8 +27,9 @@ export interface Sampler {
 }
 
 export function prepareSampler(live: LiveTable, orderings: readonly Ordering[], forced?: Forced): Sampler {
-  const drawer = new TableDrawer(planDraws(live, forced));
-  const { judges, assigned } = panelFor(live, orderings);
+  const plan = planDraws(live, forced);
+  const drawer = new TableDrawer(plan);
+  const { judges, assigned } = panelFor(live, orderings, plan);
   const table = drawer.newTable();
   return {
     countBlock(stream, draws) {
@@ -44,7 +45,7 @@ export function prepareSampler(live: LiveTable, orderings: readonly Ordering[], 
     },
     drawTable(stream, into) {
       drawer.draw(stream, table);
-      for (let cell = 0; cell < table.length; cell++) into[cell] = table[cell]!;
+      drawer.arrange(table, into);
     },
   };
 }

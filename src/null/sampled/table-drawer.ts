@@ -1,9 +1,10 @@
 // Draws tables with both margins held: row by row, each row from what the rows before have left of the columns
 // (Patefield 1981), so that no row is ever expanded. Order, orientation and samplers come from a plan.
 import type { UniformSource } from '../../random/stream.js';
-import { CellSamplers } from './cell-samplers.js';
+import { CellSampler } from './cell-sampler.js';
 import { cellsFor, type Cells } from './cells.js';
 import type { DrawPlan } from './draw-plan.js';
+import { HypergeometricMass } from './hypergeometric/mass.js';
 import { labelDraws, type LabelDraws } from './label-draws.js';
 
 export class TableDrawer {
@@ -11,63 +12,79 @@ export class TableDrawer {
   private readonly columns: number;
   private readonly rowTotals: Cells;
   private readonly columnTotals: Cells;
+  private readonly total: number;
   private readonly positions: Int32Array;
   private readonly labelRows: number;
+  private readonly labelUnits: number;
   private readonly labels: LabelDraws;
-  private readonly cells: CellSamplers;
-  private readonly total: number;
+  /** Rows of cells, without the last column, from the first row after those of labels. */
+  private readonly cells: readonly (readonly CellSampler[])[];
 
   constructor(plan: DrawPlan) {
-    this.rows = plan.rowTotals.length;
-    this.columns = plan.columnTotals.length;
-    this.total = plan.total;
-    this.rowTotals = cellsFor(plan.total, plan.rowTotals);
-    this.columnTotals = cellsFor(plan.total, plan.columnTotals);
+    const { rowTotals, columnTotals, total, labelRows } = plan;
+    this.rows = rowTotals.length;
+    this.columns = columnTotals.length;
+    this.total = total;
+    this.rowTotals = cellsFor(total, rowTotals);
+    this.columnTotals = cellsFor(total, columnTotals);
     this.positions = Int32Array.from(plan.positions);
-    this.labelRows = plan.labelRows;
-    this.labels = labelDraws(plan.rowTotals, plan.columnTotals, this.positions, plan.labelRows);
-    this.cells = new CellSamplers(plan);
+    this.labelRows = labelRows;
+    this.labelUnits = rowTotals.slice(0, labelRows).reduce((sum, units) => sum + units, 0);
+    this.labels = labelDraws(rowTotals, columnTotals, labelRows);
+    const mass = new HypergeometricMass(total);
+    this.cells = plan.cells.map((row) => row.map((cell) => new CellSampler(cell, mass)));
   }
 
-  /** A table of zeros to draw into; always pass the same kind, for speed. */
+  /** A table of zeros to draw into: always one of these, so that its kind is the one that is fast. */
   newTable(): Cells {
     return cellsFor(this.total, new Array<number>(this.rows * this.columns).fill(0));
   }
 
-  /** Writes one table, row-major over the live table, into `into` (length rows x columns). */
+  /** Draws one table, its cells in the plan's order of rows and columns; `arrange` puts them into the table's own. */
   draw(source: UniformSource, into: Cells): void {
-    const { rows, columns, positions, columnTotals, rowTotals, labelRows } = this;
+    const { rows, columns, columnTotals, rowTotals, labelRows } = this;
     const last = (rows - 1) * columns;
     // The last row is kept at what the rows so far have left of the columns.
-    for (let j = 0; j < columns; j++) into[positions[last + j]!] = columnTotals[j]!;
+    for (let j = 0; j < columns; j++) into[last + j] = columnTotals[j]!;
     let left = this.total;
     if (labelRows > 0) {
-      for (let cell = 0; cell < labelRows * columns; cell++) into[positions[cell]!] = 0;
+      for (let cell = labelRows * columns - 1; cell >= 0; cell--) into[cell] = 0;
       this.labels.draw(source, into);
-      for (let i = 0; i < labelRows; i++) left -= rowTotals[i]!;
+      left -= this.labelUnits;
     }
     for (let i = labelRows; i < rows - 1; i++) {
-      this.drawRow(source, i, left, into);
+      this.drawRow(source, this.cells[i - labelRows]!, i * columns, left, rowTotals[i]!, into);
       left -= rowTotals[i]!;
     }
   }
 
-  private drawRow(source: UniformSource, i: number, total: number, into: Cells): void {
-    const { positions, columns, cells } = this;
-    const start = i * columns;
-    const last = (this.rows - 1) * columns;
+  /** Copies a drawn table into row-major order over the live table. */
+  arrange(drawn: Cells, into: { [cell: number]: number }): void {
+    const { positions } = this;
+    for (let cell = 0; cell < positions.length; cell++) into[positions[cell]!] = drawn[cell]!;
+  }
+
+  private drawRow(
+    source: UniformSource,
+    cells: readonly CellSampler[],
+    start: number,
+    total: number,
+    rowTotal: number,
+    into: Cells,
+  ): void {
+    const last = (this.rows - 1) * this.columns;
     let left = total;
-    let drawn = this.rowTotals[i]!;
-    for (let j = 0; j < columns - 1; j++) {
-      const rest = positions[last + j]!;
-      const marked = into[rest]!;
-      const count = cells.draw(source, start + j, left, marked, drawn);
-      into[positions[start + j]!] = count;
-      into[rest] = marked - count;
+    let drawn = rowTotal;
+    let j = 0;
+    for (; j < cells.length; j++) {
+      const marked = into[last + j]!;
+      const count = cells[j]!.draw(source, left, marked, drawn);
+      into[start + j] = count;
+      into[last + j] = marked - count;
       drawn -= count;
       left -= marked;
     }
-    into[positions[start + columns - 1]!] = drawn;
-    into[positions[last + columns - 1]!]! -= drawn;
+    into[start + j] = drawn;
+    into[last + j]! -= drawn;
   }
 }

@@ -3,8 +3,8 @@ import { describe, expect, it } from 'vitest';
 import { prepareSampler } from '../../../src/null/sampled/sample-cuts.js';
 import { invert } from '../../../src/null/sampled/hypergeometric/inversion.js';
 import { HypergeometricMass } from '../../../src/null/sampled/hypergeometric/mass.js';
-import { Guides } from '../../../src/null/sampled/hypergeometric/guide.js';
-import { Trials } from '../../../src/null/sampled/hypergeometric/trial.js';
+import { Guide } from '../../../src/null/sampled/hypergeometric/guide.js';
+import { Trial } from '../../../src/null/sampled/hypergeometric/trial.js';
 import type { UniformSource } from '../../../src/random/stream.js';
 import { liveFrom } from '../../helpers/tables.js';
 
@@ -53,17 +53,15 @@ describe('inversion', () => {
 });
 
 describe('a guide', () => {
-  const guides = new Guides([
-    {
-      law: { kind: 'hypergeometric', total: 3, fixed: 1 },
-      varying: { from: 1, length: 2 },
-      outcomes: { from: 0, length: 2 },
-      shares: 64,
-    },
-  ]);
+  const guide = new Guide({
+    law: { kind: 'hypergeometric', total: 3, fixed: 1 },
+    varying: { from: 1, length: 2 },
+    outcomes: { from: 0, length: 2 },
+    shares: 64,
+  });
   const outcome = (value: number, ...numbers: number[]): [count: number, words: number] => {
     const source = scripted(...numbers);
-    return [guides.select(source, 0, value, source.word()), source.taken];
+    return [guide.select(source, value), source.taken];
   };
 
   it('takes one word where that decides, and a second one where it does not', () => {
@@ -80,17 +78,17 @@ describe('a guide', () => {
   });
 
   it('has no answer for a law that it does not hold', () => {
-    expect(outcome(0, 0.5)).toEqual([-1, 1]);
-    expect(outcome(3, 0.5)).toEqual([-1, 1]);
+    expect(outcome(0, 0.5)).toEqual([-1, 0]);
+    expect(outcome(3, 0.5)).toEqual([-1, 0]);
   });
 });
 
 describe('a trial', () => {
   // Three units to come, each taken with probability 1/2: 0 is kept with 1/3 of the chance of 1.
-  const trials = new Trials(10, [{ share: 0.5, units: { from: 3, length: 1 }, taken: { from: 0, length: 2 } }]);
+  const trial = new Trial({ share: 0.5, mostUnits: 10, units: { from: 3, length: 1 }, taken: { from: 0, length: 2 } });
   const kept = (units: number, taken: number, ...numbers: number[]): [boolean, number] => {
     const source = scripted(...numbers);
-    return [trials.keeps(source, 0, units, taken), source.taken];
+    return [trial.keeps(source, units, taken), source.taken];
   };
 
   it('takes one word where that decides, and a second one where it does not', () => {
@@ -111,7 +109,7 @@ describe('a trial', () => {
 });
 
 describe('labels', () => {
-  it('out of the bag: a second word decides between two units that the first cannot tell apart', () => {
+  it('out of the bag: a second word decides between two units that half a word cannot tell apart', () => {
     const drawn = (...numbers: number[]): number[] => {
       const table = [0, 0, 0, 0];
       prepareSampler(
@@ -125,13 +123,28 @@ describe('labels', () => {
       return table;
     };
     // Three units, the first of them in the smaller column; one is drawn.
-    expect(drawn(third - step)).toEqual([1, 0, 0, 2]);
-    expect(drawn(third + step)).toEqual([0, 1, 1, 1]);
+    const half = 2 ** -16;
+    expect(drawn(third - half)).toEqual([1, 0, 0, 2]);
+    expect(drawn(third + half)).toEqual([0, 1, 1, 1]);
     expect(drawn(third, 0.2)).toEqual([1, 0, 0, 2]);
     expect(drawn(third, 0.8)).toEqual([0, 1, 1, 1]);
   });
 
-  it('searched for: likewise, and from the largest column on', () => {
+  it('out of the bag: half a word for each unit', () => {
+    const source = scripted(0.999, 0.999);
+    const table = [0, 0, 0, 0];
+    prepareSampler(
+      liveFrom([
+        [2, 1],
+        [0, 2],
+      ]),
+      [],
+      { prefer: 'labels' },
+    ).drawTable(source, table);
+    expect(source.taken).toBe(1);
+  });
+
+  it('searched for: likewise with whole words, and from the largest column on', () => {
     const drawn = (...numbers: number[]): number[] => {
       const table = [0, 0, 0, 0];
       prepareSampler(

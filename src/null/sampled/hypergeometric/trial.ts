@@ -14,66 +14,52 @@ export interface TrialGrid {
   readonly share: number;
   readonly units: Range;
   readonly taken: Range;
+  /** Units never exceed this; below 2^16. */
+  readonly mostUnits: number;
 }
 
-const stride = 5;
-
-export class Trials {
-  private readonly numbers: Int32Array;
+export class Trial {
+  private readonly unitsFrom: number;
+  private readonly unitsLength: number;
+  private readonly takenFrom: number;
+  private readonly takenLength: number;
+  /** By units, then by taken; NaN: not worked out yet. */
   private readonly chances: Float64Array;
   private readonly logs: Float64Array;
+  private readonly logOdds: number;
 
-  /** @param total of the table; below 2^16. */
-  constructor(
-    total: number,
-    private readonly grids: readonly TrialGrid[],
-  ) {
-    this.logs = logFactorialsUpTo(total);
-    let size = 0;
-    this.numbers = Int32Array.from(
-      grids.flatMap(({ units, taken }) => {
-        const start = size;
-        size += units.length * taken.length;
-        return [units.from, units.length, taken.from, taken.length, start];
-      }),
-    );
-    // NaN: not worked out yet.
-    this.chances = new Float64Array(size).fill(NaN);
+  constructor(private readonly grid: TrialGrid) {
+    const { share, units, taken } = grid;
+    this.unitsFrom = units.from;
+    this.unitsLength = units.length;
+    this.takenFrom = taken.from;
+    this.takenLength = taken.length;
+    this.chances = new Float64Array(units.length * taken.length).fill(NaN);
+    this.logs = logFactorialsUpTo(grid.mostUnits);
+    this.logOdds = Math.log(share / (1 - share));
   }
 
   /** True with probability b(taken; units, share) / max b(.; units, share). */
-  keeps(source: UniformSource, cell: number, units: number, taken: number): boolean {
-    const { numbers } = this;
-    const n = cell * stride;
-    const row = units - numbers[n]!;
-    const column = taken - numbers[n + 2]!;
-    const within = row >>> 0 < numbers[n + 1]! && column >>> 0 < numbers[n + 3]!;
-    const at = within ? numbers[n + 4]! + Math.imul(row, numbers[n + 3]!) + column : -1;
+  keeps(source: UniformSource, units: number, taken: number): boolean {
+    const row = units - this.unitsFrom;
+    const column = taken - this.takenFrom;
+    const within = row >= 0 && row < this.unitsLength && column >= 0 && column < this.takenLength;
+    const at = within ? row * this.takenLength + column : -1;
     const u = source.uniform();
     let chance = within ? this.chances[at]! : NaN;
     if (u + resolution <= chance) return true;
     if (chance !== chance) {
-      chance = this.chance(cell, units, taken);
+      chance = this.chance(units, taken);
       if (within) this.chances[at] = chance;
-      if (u + resolution <= chance) return true;
     }
-    return u < chance && u + resolution * source.uniform() < chance;
+    return u + resolution <= chance || (u < chance && u + resolution * source.uniform() < chance);
   }
 
-  private chance(cell: number, units: number, taken: number): number {
+  private chance(units: number, taken: number): number {
     if (taken < 0 || taken > units) return 0;
-    const { share } = this.grids[cell]!;
     const { logs } = this;
-    const mode = Math.min(units, Math.floor((units + 1) * share));
-    return Math.min(
-      1,
-      Math.exp(
-        logs[mode]! +
-          logs[units - mode]! -
-          logs[taken]! -
-          logs[units - taken]! +
-          (taken - mode) * Math.log(share / (1 - share)),
-      ),
-    );
+    const mode = Math.min(units, Math.floor((units + 1) * this.grid.share));
+    const atMode = logs[mode]! + logs[units - mode]!;
+    return Math.min(1, Math.exp(atMode - logs[taken]! - logs[units - taken]! + (taken - mode) * this.logOdds));
   }
 }

@@ -32,7 +32,7 @@ export const squares: readonly SquareCase[] = [
   },
   { claim: 'inner cell by rejection', ...larger, forced: { prefer: 'rejection' }, inner: 'rejection' },
   { claim: 'inner cell by inversion', ...margins, forced: { prefer: 'inversion' }, inner: 'inversion' },
-  { claim: 'inner cell as chosen', ...margins, inner: 'trial' },
+  { claim: 'inner cell as chosen', rows: [50, 56, 94], columns: [52, 60, 88], inner: 'trial' },
 ];
 
 const cut = 3;

@@ -40,7 +40,7 @@ export const tableCases: readonly TableCase[] = [
   ...forcedOn('trial'),
   ...forcedOn('inversion'),
   ...shortReach,
-  { claim: 'as chosen: guides, then a trial', rows: [20, 22, 24], columns: [18, 22, 26], uses: ['guide', 'trial'] },
+  { claim: 'as chosen: guides, then a trial', rows: [14, 16, 36], columns: [14, 18, 34], uses: ['guide', 'trial'] },
   {
     claim: 'rejection, 2x2',
     rows: [90, 110],
@@ -64,8 +64,8 @@ export const tableCases: readonly TableCase[] = [
   },
   {
     claim: 'as chosen: a row of labels, then a guide and a trial',
-    rows: [1, 9, 14],
-    columns: [6, 8, 10],
+    rows: [1, 14, 20],
+    columns: [9, 12, 14],
     uses: ['labels', 'trial'],
   },
   ...(['labels', 'guide', 'inversion'] as const).flatMap((prefer): TableCase[] => [
