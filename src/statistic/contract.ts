@@ -83,7 +83,7 @@ export interface BoundStatistic {
   value(counts: ArrayLike<number>): number;
   /** The statistic itself or an increasing transform of it, as a sum over cells. */
   readonly sum?: CellSum;
-  /** Upper statistics that are no sum over cells: exact sign of T(table) - T(observed). */
+  /** Statistics that are no exact sum over cells: exact sign of T(table) - T(observed). */
   place?(counts: ArrayLike<number>): Place;
   /** Upper statistics that are a largest over cells. */
   readonly limits?: CellLimits;

@@ -3,7 +3,16 @@
 // which every comparison is made.
 import { lowest, toDouble, type Rational } from '../numeric/rational.js';
 import type { LiveTable } from '../table/live-table.js';
-import type { BoundStatistic, CellSum, Choices, LinearForm, Roles, StandardisedForm, Statistic } from './contract.js';
+import type {
+  BoundStatistic,
+  CellSum,
+  Choices,
+  LinearForm,
+  Place,
+  Roles,
+  StandardisedForm,
+  Statistic,
+} from './contract.js';
 import { sumOverCells } from './expected.js';
 import { standardScores, wholeScores, type WholeScores } from './scores.js';
 import { magnitude, order } from './two-by-two.js';
@@ -40,7 +49,7 @@ function bind(live: LiveTable, _roles: Roles, choices: Choices = {}): BoundStati
   const linear = sum?.slack === 0 ? linearForm(rows, columns, observed, moments) : undefined;
   return {
     value: (counts) => valueInUnits(live, rows, columns, exactSum(counts)),
-    ...(sum === undefined ? {} : { sum }),
+    ...(sum === undefined ? {} : linear === undefined ? { place: placeBy(live, sum) } : { sum }),
     ...(corner === undefined ? {} : { corner }),
     ...(linear === undefined ? {} : { linear }),
     distance: (counts) => order(magnitude(exactSum(counts) * moments.total - moments.product), deviation),
@@ -137,6 +146,14 @@ function cellSum(
     decide: (counts) => order(exactSum(counts), observedSum),
   };
 }
+
+/** Scores of so many digits that sums are rounded: the sum decides where it can; no engine adds it up. */
+const placeBy =
+  (live: LiveTable, { cell, observed, slack, decide }: CellSum) =>
+  (counts: ArrayLike<number>): Place => {
+    const difference = sumOverCells(live, counts, cell) - observed;
+    return difference > slack ? 1 : difference < -slack ? -1 : decide(counts);
+  };
 
 /** The value mirrored in the centre is 2 E - S; a fraction is pushed to the half above its floor: no S lies between. */
 function linearForm(rows: WholeScores, columns: WholeScores, observed: bigint, moments: Moments): LinearForm {
