@@ -6,7 +6,13 @@
 //   scaled  the statistic's terms rounded to multiples of a power of two: level within `slack` is only a near tie.
 import type { CellSum } from '../../../statistic/contract.js';
 import type { OrientedTable } from './oriented-table.js';
-import { factorialExponents, largestExponents, primesUpTo, selfPowerExponents } from './prime-exponents.js';
+import {
+  factorialBound,
+  factorialExponents,
+  primesUpTo,
+  selfPowerBound,
+  selfPowerExponents,
+} from './prime-exponents.js';
 
 export interface Encoding {
   readonly form: 'exact' | 'keyed' | 'scaled';
@@ -23,10 +29,15 @@ export interface Encoding {
 }
 
 /** The exponents that tell tables apart exactly, for the statistics that are products over cells. */
-export type ExponentRule = (prime: number, limit: number) => Float64Array;
+export interface ExponentRule {
+  /** Exponent of the prime for counts 0 to limit. */
+  readonly exponents: (prime: number, limit: number) => Float64Array;
+  /** At least the sum of exponents over counts with this total. */
+  readonly bound: (prime: number, total: number) => number;
+}
 const rules: Readonly<Record<string, ExponentRule>> = {
-  probability: factorialExponents,
-  'likelihood-ratio': selfPowerExponents,
+  probability: { exponents: factorialExponents, bound: factorialBound },
+  'likelihood-ratio': { exponents: selfPowerExponents, bound: selfPowerBound },
 };
 export const exponentRule = (statistic: string): ExponentRule | null => rules[statistic] ?? null;
 
@@ -74,19 +85,14 @@ const valueBits = 51;
 function encodeKeyed(table: OrientedTable, rule: ExponentRule): Encoding | null {
   const largestCount = Math.min(table.rowTotals.at(-1)!, Math.max(...table.columnTotals));
   if (largestCount > largestKeyedCount) return null;
-  const longestLine = Math.max(table.rowTotals.at(-1)!, ...table.columnTotals);
   const primes = primesUpTo(largestCount).map((prime) => {
-    const exponents = rule(prime, largestCount);
-    const largest = largestExponents(exponents, longestLine);
-    const reach = (totals: readonly number[]): number => totals.reduce((sum, total) => sum + largest[total]!, 0);
-    return {
-      prime,
-      exponents,
-      step: commonStep(exponents),
-      bound: Math.min(reach(table.rowTotals), reach(table.columnTotals)),
-    };
+    const exponents = rule.exponents(prime, largestCount);
+    const reach = (totals: readonly number[]): number =>
+      totals.reduce((sum, total) => sum + rule.bound(prime, total), 0);
+    const bound = Math.min(reach(table.rowTotals), reach(table.columnTotals));
+    return { prime, exponents, step: commonStep(exponents), bound };
   });
-  const radixProduct = primes.reduce((product, { bound, step }) => product * (bound / step + 1), 1);
+  const radixProduct = primes.reduce((product, { bound, step }) => product * (Math.floor(bound / step) + 1), 1);
   if (radixProduct >= 2 ** 53) return null;
 
   const exponentSum = primes.reduce((sum, { bound }) => sum + bound, 0);
@@ -101,7 +107,7 @@ function encodeKeyed(table: OrientedTable, rule: ExponentRule): Encoding | null 
       value[n]! += exponents[n]! * log;
       key[n]! += (exponents[n]! / step) * place;
     }
-    place *= bound / step + 1;
+    place *= Math.floor(bound / step) + 1;
   }
   const values = tabulate(table, (_, __, count) => value[count]!);
   const keys = tabulate(table, (_, __, count) => key[count]!);

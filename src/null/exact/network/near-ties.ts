@@ -171,7 +171,7 @@ function exactKey(network: Network, statistic: string): ((count: number) => bigi
   const keys = new Array<bigint>(limit + 1).fill(0n);
   primesUpTo(limit).forEach((prime, place) => {
     const shift = BigInt(48 * place);
-    rule(prime, limit).forEach((exponent, n) => (keys[n]! += BigInt(exponent) << shift));
+    rule.exponents(prime, limit).forEach((exponent, n) => (keys[n]! += BigInt(exponent) << shift));
   });
   return (count) => keys[count]!;
 }

@@ -33,16 +33,16 @@ export function selfPowerExponents(prime: number, limit: number): Float64Array {
   return multiplicities(prime, limit).map((times, n) => times * n);
 }
 
-/** Largest sum of exponents over counts that add up to each total, for totals 0 to limit: what one line can reach. */
-export function largestExponents(exponents: Float64Array, limit: number): Float64Array {
-  const largest = new Float64Array(limit + 1);
-  for (let total = 1; total <= limit; total++) {
-    let best = 0;
-    for (let n = 0; n <= total && n < exponents.length; n++) {
-      const reach = exponents[n]! + (n === 0 ? largest[total - 1]! : largest[total - n]!);
-      if (reach > best) best = reach;
-    }
-    largest[total] = best;
-  }
-  return largest;
+/** At least the exponent of the prime in any product of n! over counts that add up to the total: it divides total!. */
+export function factorialBound(prime: number, total: number): number {
+  let sum = 0;
+  for (let left = Math.floor(total / prime); left > 0; left = Math.floor(left / prime)) sum += left;
+  return sum;
+}
+
+/** The same for n^n: only multiples of the prime count, each at most with its highest power. */
+export function selfPowerBound(prime: number, total: number): number {
+  let highest = 0;
+  for (let power = prime; power <= total; power *= prime) highest++;
+  return Math.floor(total / prime) * prime * highest;
 }
