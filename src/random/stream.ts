@@ -2,10 +2,11 @@
 // JSON.stringify([seed, tableKey, k]) and by nothing else, so that any block of draws can be made anywhere, in any order.
 //
 // Generator: Tyche-i (Neves & Araujo 2012), 128 bits of state, 32 bits a step, the inverse of ChaCha's quarter round.
-// Its start is the first 128 bits of the key's SHA-256, which leaves neighbouring keys nothing in common. It is carried here
-// rather than taken from seedrandom because that package's `tychei` writes c >>> 16 where d >>> 16 belongs: 65,536 states
+// Its start is the first 128 bits that seedrandom's xor4096 (xorgens: Brent 2007) gives for the key as text: a large generator
+// that takes text of any length, here only to spread a key, since a call of it costs three times one of ours. Tyche-i is carried
+// here because that package's `tychei` writes c >>> 16 where d >>> 16 belongs: 65,536 states
 // then run into one at every step. Its `alea` obeys u[t+3] = 2091639 u[t] + small (mod 1), which ties rare events together.
-import { createHash } from 'node:crypto';
+import xor4096 from 'seedrandom/lib/xor4096.js';
 
 /** The generator's name, as records give it. A change of its numbers is a change of this name. */
 export const generatorName = 'tyche-i';
@@ -63,8 +64,6 @@ export class Stream implements UniformSource {
 
 /** The stream of one block of draws. Equal arguments give equal streams; a seed is text (`42` is the seed "42"). */
 export function blockStream(seed: string, tableKey: string, block: number): Stream {
-  const digest = createHash('sha256')
-    .update(JSON.stringify([seed, tableKey, block]))
-    .digest();
-  return new Stream(digest.readInt32LE(0), digest.readInt32LE(4), digest.readInt32LE(8), digest.readInt32LE(12));
+  const spread = xor4096(JSON.stringify([seed, tableKey, block]));
+  return new Stream(spread.int32(), spread.int32(), spread.int32(), spread.int32());
 }

@@ -1,5 +1,5 @@
 // The numbers behind a seed are a public promise: a change here is a major release.
-// The values come from a second implementation in Python: struct.unpack('<4I', sha256(json)[:16]), then the inverse quarter rounds.
+// The start of each comes from seedrandom 3.0.5 (xor4096 of the key), the words after it from the inverse quarter rounds.
 import { describe, expect, it } from 'vitest';
 import { blockStream, generatorName } from '../../src/random/stream.js';
 
@@ -11,13 +11,13 @@ const words = (seed: string, tableKey: string, block: number): number[] => {
 describe('the streams of tyche-i', () => {
   it('are the ones that every release has given', () => {
     expect(generatorName).toBe('tyche-i');
-    expect(words('1', '', 0)).toEqual([528036055, 3281683834, 3392452141, 3281575423, 4038893104, 596095255]);
-    expect(words('2026-03', 'ward', 0)).toEqual([83444817, 2270757190, 432804469, 3438658059, 461436009, 3507827367]);
-    expect(words('2026-03', 'ward', 1)).toEqual([
-      3437172082, 1025068194, 2283685634, 1864981401, 2887637112, 640687341,
+    expect(words('1', '', 0)).toEqual([1874889397, 1954292888, 1568618255, 150544488, 303995897, 4069942406]);
+    expect(words('2026-03', 'ward', 0)).toEqual([
+      2497804417, 3874258934, 319321841, 1267313891, 2936553228, 3422238825,
     ]);
+    expect(words('2026-03', 'ward', 1)).toEqual([905838555, 1818310125, 4135089497, 2512637521, 3357901130, 215386720]);
     expect(words('Kräuter, 7 €', 'a/b', 123456789)).toEqual([
-      2684316390, 3697246685, 175998769, 1041213958, 4194754066, 35131680,
+      2900363910, 1817123886, 308490045, 2642725359, 66487972, 2767334384,
     ]);
   });
 });

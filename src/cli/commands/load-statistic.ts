@@ -3,12 +3,8 @@ import { createHash } from 'node:crypto';
 import { readFile } from 'node:fs/promises';
 import { resolve } from 'node:path';
 import { pathToFileURL } from 'node:url';
-import type { PlanOptions } from '../../plan/plan.js';
 import { usageProblem } from '../../problem/problem.js';
 import type { OwnStatistic } from '../../statistic/own.js';
-
-/** `./mine.mjs`, `stats/mine.js`: what has an ending of a module, or a slash. */
-export const isModulePath = (text: string): boolean => /[/\\]|\.[cm]?js$/.test(text);
 
 export interface LoadedStatistic {
   /** The default export, checked by the plan. */
@@ -54,13 +50,6 @@ export async function loadStatistic(path: string): Promise<LoadedStatistic> {
     statistic: exports.default as OwnStatistic,
     statisticDigest: createHash('sha256').update(bytes).digest('hex'),
   };
-}
-
-/** Wishes with the statistic loaded, where it is named by a path; else as they are. */
-export async function withOwnStatistic(wishes: PlanOptions): Promise<PlanOptions> {
-  const { statistic } = wishes;
-  if (typeof statistic !== 'string' || !isModulePath(statistic)) return wishes;
-  return { ...wishes, ...(await loadStatistic(statistic)) };
 }
 
 const reasonOf = (thrown: unknown): string =>

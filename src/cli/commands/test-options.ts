@@ -6,7 +6,7 @@ import { standardMostDraws, standardRelativeError } from '../../plan/draws.js';
 import { methods, tails, twoSidedRules } from '../../plan/plan.js';
 import { formatNames } from '../../report/formats.js';
 import { statisticNamed, statisticNames } from '../../statistic/registry.js';
-import { isModulePath } from './load-statistic.js';
+import { isModulePath } from './module-path.js';
 import { debugOption, helpOption, outputOption } from './shared-options.js';
 
 const delimiters = ['comma', 'semicolon', 'tab', 'pipe'] as const;

@@ -10,6 +10,7 @@ import { withProgress } from '../streams/progress.js';
 import { remark } from '../streams/write-out.js';
 import { chooseSource } from './choose-source.js';
 import { command } from './command-file.js';
+import { withOwnStatistic } from './module-path.js';
 import { lookFor } from './look.js';
 import { readSource } from './read-source.js';
 import { destinationFor } from './shared-options.js';
@@ -40,9 +41,8 @@ export const testCommand = command({
     if (source === undefined) return nothingNamed(shell);
     const destination = await destinationFor(values.output, shell, source.form === 'inline' ? null : source.path);
     const table = await readSource(source, values, shell);
-    const result = await withProgress(values, shell, (surroundings) =>
-      analyse(table, planOptions(values), surroundings),
-    );
+    const wishes = await withOwnStatistic(planOptions(values));
+    const result = await withProgress(values, shell, (surroundings) => analyse(table, wishes, surroundings));
     const format = values.format ?? 'text';
     const report = render(result, format, await lookFor(values, shell));
     if (!values.quiet) await remarkOnSampling(result, shell);

@@ -5,7 +5,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { analyse } from '../../../src/analyse.js';
-import { isModulePath, withOwnStatistic } from '../../../src/cli/commands/load-statistic.js';
+import { isModulePath, withOwnStatistic } from '../../../src/cli/commands/module-path.js';
 import type { Problem } from '../../../src/problem/problem.js';
 import { checked } from '../../helpers/checked-result.js';
 
