@@ -3,6 +3,7 @@
 // for one pass of distribution into as many cells as entries, finished by insertion; crowded cells are sorted apart, so
 // that the time stays n log n whatever the values.
 import { sortCrowd } from './crowd-sort.js';
+import { insertInPlace } from './insert-in-place.js';
 import type { Level } from './level.js';
 import type { Transitions } from './transitions.js';
 
@@ -166,7 +167,7 @@ export class SortedList {
       }
     }
     if (length > shortList) this.distribute();
-    this.insert(0, length);
+    insertInPlace(this.values, this.weights, this.keyed ? this.keys : null, length);
     if (this.merging) return;
     this.merge();
     this.arrived += length;
@@ -211,26 +212,6 @@ export class SortedList {
     [this.values, this.spareValues] = [this.spareValues, this.values];
     [this.weights, this.spareWeights] = [this.spareWeights, this.weights];
     [this.keys, this.spareKeys] = [this.spareKeys, this.keys];
-  }
-
-  private insert(from: number, to: number): void {
-    const { values, weights, keys, keyed } = this;
-    for (let i = from + 1; i < to; i++) {
-      const value = values[i]!;
-      if (value >= values[i - 1]!) continue;
-      const weight = weights[i]!;
-      const key = keyed ? keys[i]! : 0;
-      let at = i;
-      do {
-        values[at] = values[at - 1]!;
-        weights[at] = weights[at - 1]!;
-        if (keyed) keys[at] = keys[at - 1]!;
-        at--;
-      } while (at > from && values[at - 1]! > value);
-      values[at] = value;
-      weights[at] = weight;
-      if (keyed) keys[at] = key;
-    }
   }
 
   /** Adds up neighbours with equal value (and key), with a compensated sum (Neumaier's form, all terms being positive). */
