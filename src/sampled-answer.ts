@@ -104,7 +104,14 @@ function sourcesFor(
   if (recipe === null || threads < 2 || !canUseThreads || blocks * each < longMilliseconds) return [local(0, blocks)];
   const first = mayEndEarly ? Math.min(blocks, Math.ceil(shortMilliseconds / each)) : 0;
   const whole: SamplingRecipe = { ...recipe, orderings: orderings.map(({ name }) => name), sampling };
-  return [local(0, first), { begin: first, end: blocks, open: () => threadedSource(whole, live, threads) }];
+  return [
+    local(0, first),
+    {
+      begin: first,
+      end: blocks,
+      open: async () => (await threadedSource(whole, live, threads)) ?? localSource(live, orderings, sampling),
+    },
+  ];
 }
 
 async function* inTurn(stretches: readonly Stretch[], sampling: Sampling): AsyncGenerator<Block> {

@@ -9,9 +9,18 @@ const workerFile = import.meta.url.endsWith('.ts') ? undefined : new URL('./samp
 
 export const canUseThreads = workerFile !== undefined;
 
-/** @param threads at least 1. The pool is closed by `close`, which ends work under way. */
-export async function threadedSource(recipe: SamplingRecipe, live: LiveTable, threads: number): Promise<BlockSource> {
-  const { Piscina } = await import('piscina');
+/**
+ * @param threads at least 1. The pool is closed by `close`, which ends work under way.
+ * @returns null where the package that runs threads is not installed: one thread does the same.
+ */
+export async function threadedSource(
+  recipe: SamplingRecipe,
+  live: LiveTable,
+  threads: number,
+): Promise<BlockSource | null> {
+  const found = await import('piscina').catch(() => null);
+  if (found === null) return null;
+  const { Piscina } = found;
   const pool = new Piscina<CountTask, readonly (readonly Tally[])[]>({
     filename: workerFile!,
     minThreads: threads,
