@@ -58,9 +58,8 @@ export function asymptoticNotes(
 
 /** log10 of b/m where at least ten draws were as extreme; with fewer, sampling noise alone could pass the factor. */
 function samplingEstimate(p: PValueEntry): number | undefined {
-  const error = p.errors.find((one) => one.kind === 'sampling');
-  if (error?.kind !== 'sampling' || error.atLeast < 10) return undefined;
-  return Math.log10(error.estimate);
+  const error = p.errors.find((one) => one.kind === 'sampling' || one.kind === 'sequential');
+  return error === undefined || error.atLeast < 10 ? undefined : Math.log10(error.estimate);
 }
 
 /** What a reader should know of the statistic itself. */
