@@ -142,6 +142,7 @@ export class CellPlanner {
 
   /** Laws of the outcome at (i, j) with as many shares as memory allows, if that is enough; else null. */
   private lawsWithin(i: number, j: number, deviation: number, varying: Range, law: VaryingLaw): GuidedLaws | null {
+    if (varying.length < 1) return null;
     const spread = spreadOf(this.total, this.rowTotals[i]!, this.columnTotals[j]!);
     const around = rangeAround(spread, outcomeReach);
     const from = Math.max(0, around.from - outcomeMargin);

@@ -31,9 +31,11 @@ export class CellSampler {
       const key = this.goesByDrawn ? drawn : marked;
       const other = this.goesByDrawn ? marked : drawn;
       for (;;) {
-        const count = guide.select(source, key);
+        // For a trial, half a word proposes and half a word decides.
+        const word = source.word();
+        const count = guide.select(source, key, word, trial !== null);
         if (count < 0) break;
-        if (trial === null || trial.keeps(source, left - key, other - count)) return count;
+        if (trial === null || trial.keeps(source, left - key, other - count, word & 0xffff)) return count;
       }
     } else if (this.rejects) {
       return reject(source, this.mass, left, marked, drawn);

@@ -1,18 +1,12 @@
-// Judges: where a drawn table stands beside the observed one. Near ties are decided exactly; what was decided is
-// remembered within stated memory, which saves time and changes no answer.
-import type { CellSum, Place } from '../../statistic/contract.js';
+// Judges: where a drawn table stands beside the observed one, by the shortest way that its ordering knows. Near ties are decided
+// exactly.
+import type { CellLimits, CellSum, Place } from '../../statistic/contract.js';
 import type { LiveTable } from '../../table/live-table.js';
 import type { Ordering } from '../contract.js';
 import { CellValues } from './cell-values.js';
 import type { DrawPlan } from './draw-plan.js';
-import { leastOf, mostOf, rangeAround, spreadOf } from './hypergeometric/spread.js';
 import type { Cells } from './cells.js';
-import { cornerEntries, decidedEntries } from './limits.js';
-
-export interface Judge {
-  /** @param table its cells in the order of drawing. */
-  place(table: Cells): Place;
-}
+import { ByCorner, ByMemory, type Decide, type Judge } from './remembered-places.js';
 
 /** The judges that a set of orderings needs. */
 export interface Panel {
@@ -25,20 +19,27 @@ export interface Panel {
 export function panelFor(live: LiveTable, orderings: readonly Ordering[], plan: DrawPlan): Panel {
   const judges: Judge[] = [];
   const bySum = new Map<CellSum, number>();
-  const small = live.rows === 2 && live.columns === 2;
   const share = orderings.length;
   const assigned = orderings.map((ordering): Panel['assigned'][number] => {
     const { sum } = ordering;
-    if (small || sum === undefined) {
-      const place = (counts: Float64Array): Place => ordering.place(counts);
-      const judge = small ? new ByCorner(live, place, plan, share) : new ByMemory(live, place, plan, share);
-      return { judge: judges.push(judge) - 1, direction: 1 };
+    if (sum === undefined || isTwoByTwo(live)) {
+      return { judge: judges.push(judgeFor(live, ordering, plan, share)) - 1, direction: 1 };
     }
     const judge = bySum.get(sum.cells) ?? judges.push(new BySum(live, sum.cells, plan, share)) - 1;
     bySum.set(sum.cells, judge);
     return { judge, direction: sum.direction };
   });
   return { judges, assigned };
+}
+
+const isTwoByTwo = (live: LiveTable): boolean => live.rows === 2 && live.columns === 2;
+
+function judgeFor(live: LiveTable, ordering: Ordering, plan: DrawPlan, share: number): Judge {
+  const place: Decide = (counts) => ordering.place(counts);
+  if (isTwoByTwo(live)) return new ByCorner(live, place, plan, share);
+  if (ordering.fold !== undefined) return new ByFold(live, ordering.fold, plan, share);
+  if (ordering.limits !== undefined) return new ByLimits(ordering.limits, plan, ordering.name === 'lower' ? -1 : 1);
+  return new ByMemory(live, place, plan, share);
 }
 
 /** By a sum over cells; asks for an exact decision only where rounding could matter. */
@@ -65,93 +66,52 @@ class BySum implements Judge {
   }
 }
 
-/** Asks about a table in the live table's own order. */
-type Decide = (counts: Float64Array) => Place;
-
-const unknown = 2;
-
-/** A 2x2 table is one of its counts: places are kept by the first one drawn. */
-class ByCorner implements Judge {
-  private readonly positions: readonly number[];
-  private readonly from: number;
-  private readonly places: Int8Array;
-  private readonly arranged = new Float64Array(4);
+/** By an exact sum folded about a centre. */
+class ByFold implements Judge {
+  private readonly values: CellValues;
 
   constructor(
     live: LiveTable,
-    private readonly decide: Decide,
-    { positions }: DrawPlan,
+    private readonly fold: NonNullable<Ordering['fold']>,
+    plan: DrawPlan,
     share: number,
   ) {
-    this.positions = positions;
-    const row = live.rowTotals[positions[0]! >> 1]!;
-    const column = live.columnTotals[positions[0]! & 1]!;
-    const spread = spreadOf(live.total, row, column);
-    const half = Math.min(rangeAround(spread, 8).length / 2 + 8, cornerEntries / share / 2 - 1);
-    this.from = Math.max(leastOf(live.total, row, column), Math.floor(spread.mean - half));
-    const to = Math.min(mostOf(row, column), Math.floor(spread.mean + half));
-    this.places = new Int8Array(Math.max(0, to - this.from + 1)).fill(unknown);
+    this.values = new CellValues(live, fold.cells, plan, share);
   }
 
   place(table: Cells): Place {
-    const k = table[0]! - this.from;
-    const kept = k >= 0 && k < this.places.length;
-    if (kept && this.places[k] !== unknown) return this.places[k] as Place;
-    arrange(table, this.positions, this.arranged);
-    const place = this.decide(this.arranged);
-    if (kept) this.places[k] = place;
-    return place;
+    const { low, high } = this.fold;
+    const sum = this.values.sum(table);
+    return sum > high || sum < low ? 1 : sum < high && sum > low ? -1 : 0;
   }
 }
 
-/** Asks for every table; answers for the observed table and for those asked about lately come from memory. */
-class ByMemory implements Judge {
-  private readonly positions: readonly number[];
-  private readonly observed: Float64Array;
-  /** Tables asked about, one in each slot, and their places. */
-  private readonly tables: Float64Array;
-  private readonly places: Int8Array;
-  private readonly arranged: Float64Array;
+/** By what the cells may hold. */
+class ByLimits implements Judge {
+  private readonly limits: CellLimits;
 
   constructor(
-    live: LiveTable,
-    private readonly decide: Decide,
+    limits: CellLimits,
     { positions }: DrawPlan,
-    share: number,
+    private readonly outside: 1 | -1,
   ) {
-    this.positions = positions;
-    this.observed = Float64Array.from(positions, (position) => live.counts[position]!);
-    const slots = 2 ** Math.floor(Math.log2(Math.max(1, decidedEntries / share / positions.length)));
-    this.tables = new Float64Array(slots * positions.length);
-    this.places = new Int8Array(slots).fill(unknown);
-    this.arranged = new Float64Array(positions.length);
+    this.limits = {
+      lowest: Float64Array.from(positions, (position) => limits.lowest[position]!),
+      highest: Float64Array.from(positions, (position) => limits.highest[position]!),
+      lowestTies: Uint8Array.from(positions, (position) => limits.lowestTies[position]!),
+      highestTies: Uint8Array.from(positions, (position) => limits.highestTies[position]!),
+    };
   }
 
   place(table: Cells): Place {
-    if (holds(this.observed, 0, table)) return 0;
-    const { tables, places } = this;
-    const slot = hashOf(table) & (places.length - 1);
-    const start = slot * table.length;
-    if (places[slot] !== unknown && holds(tables, start, table)) return places[slot] as Place;
-    arrange(table, this.positions, this.arranged);
-    const place = this.decide(this.arranged);
-    tables.set(table, start);
-    places[slot] = place;
-    return place;
+    const { lowest, highest, lowestTies, highestTies } = this.limits;
+    let ties = false;
+    for (let cell = 0; cell < table.length; cell++) {
+      const count = table[cell]!;
+      if (count < lowest[cell]! || count > highest[cell]!) return this.outside;
+      ties ||=
+        (count === lowest[cell] && lowestTies[cell] === 1) || (count === highest[cell] && highestTies[cell] === 1);
+    }
+    return ties ? 0 : this.outside === 1 ? -1 : 1;
   }
-}
-
-function arrange(table: Cells, positions: readonly number[], into: Float64Array): void {
-  for (let cell = 0; cell < positions.length; cell++) into[positions[cell]!] = table[cell]!;
-}
-
-function holds(tables: Float64Array, start: number, table: Cells): boolean {
-  for (let cell = 0; cell < table.length; cell++) if (tables[start + cell] !== table[cell]) return false;
-  return true;
-}
-
-function hashOf(table: Cells): number {
-  let hash = 0;
-  for (let cell = 0; cell < table.length; cell++) hash = Math.imul(hash ^ table[cell]!, 0x9e3779b1) ^ (hash >>> 15);
-  return hash ^ (hash >>> 13);
 }

@@ -61,7 +61,11 @@ describe('a guide', () => {
   });
   const outcome = (value: number, ...numbers: number[]): [count: number, words: number] => {
     const source = scripted(...numbers);
-    return [guide.select(source, value), source.taken];
+    return [guide.select(source, value, source.word(), false), source.taken];
+  };
+  const byHalf = (value: number, ...numbers: number[]): [count: number, words: number] => {
+    const source = scripted(...numbers);
+    return [guide.select(source, value, source.word(), true), source.taken];
   };
 
   it('takes one word where that decides, and a second one where it does not', () => {
@@ -77,34 +81,49 @@ describe('a guide', () => {
     expect(outcome(2, third, 0.8)).toEqual([1, 2]);
   });
 
+  it('with half a word goes by the upper half, and asks for a word where that does not decide', () => {
+    const halfStep = 2 ** -16;
+    expect(byHalf(1, 0.25)).toEqual([0, 1]);
+    expect(byHalf(1, 0.75)).toEqual([1, 1]);
+    // 2/3 lies in the stretch that begins at 43690 / 2^16, two thirds into it; what the lower half says does not count.
+    expect(byHalf(1, 2 * third, 0.6)).toEqual([0, 2]);
+    expect(byHalf(1, 2 * third, 0.7)).toEqual([1, 2]);
+    expect(byHalf(1, 43690 * halfStep, 0.7)).toEqual([1, 2]);
+    // In the share of the border, but not on it: the word that fills the place of the lower half changes nothing.
+    expect(byHalf(1, 2 * third - 2 * halfStep, 0.99)).toEqual([0, 2]);
+    expect(byHalf(1, 2 * third + 2 * halfStep, 0.01)).toEqual([1, 2]);
+  });
+
   it('has no answer for a law that it does not hold', () => {
-    expect(outcome(0, 0.5)).toEqual([-1, 0]);
-    expect(outcome(3, 0.5)).toEqual([-1, 0]);
+    expect(outcome(0, 0.5)).toEqual([-1, 1]);
+    expect(outcome(3, 0.5)).toEqual([-1, 1]);
   });
 });
 
 describe('a trial', () => {
   // Three units to come, each taken with probability 1/2: 0 is kept with 1/3 of the chance of 1.
   const trial = new Trial({ share: 0.5, mostUnits: 10, units: { from: 3, length: 1 }, taken: { from: 0, length: 2 } });
-  const kept = (units: number, taken: number, ...numbers: number[]): [boolean, number] => {
+  const kept = (units: number, taken: number, half: number, ...numbers: number[]): [boolean, number] => {
     const source = scripted(...numbers);
-    return [trial.keeps(source, units, taken), source.taken];
+    return [trial.keeps(source, units, taken, half), source.taken];
   };
+  // 2^16 / 3 = 21845 + 1/3.
+  const border = 21845;
 
-  it('takes one word where that decides, and a second one where it does not', () => {
-    expect(kept(3, 0, third - step)).toEqual([true, 1]);
-    expect(kept(3, 0, third + step)).toEqual([false, 1]);
-    expect(kept(3, 0, third, 0.2)).toEqual([true, 2]);
-    expect(kept(3, 0, third, 0.8)).toEqual([false, 2]);
-    expect(kept(3, 1, 1 - step)).toEqual([true, 1]);
+  it('is decided by half a word, and by one word more where that does not suffice', () => {
+    expect(kept(3, 0, border - 1)).toEqual([true, 0]);
+    expect(kept(3, 0, border + 1)).toEqual([false, 0]);
+    expect(kept(3, 0, border, 0.33)).toEqual([true, 1]);
+    expect(kept(3, 0, border, 0.34)).toEqual([false, 1]);
+    expect(kept(3, 1, 65_535)).toEqual([true, 0]);
   });
 
   it('works out what its grid does not hold, and never keeps what cannot be', () => {
-    expect(kept(3, 3, third - step)).toEqual([true, 1]);
-    expect(kept(3, 3, third + step)).toEqual([false, 1]);
-    expect(kept(1, 1, 1 - step)).toEqual([true, 1]);
-    expect(kept(3, 4, 0)).toEqual([false, 1]);
-    expect(kept(3, -1, 0)).toEqual([false, 1]);
+    expect(kept(3, 3, border - 1)).toEqual([true, 0]);
+    expect(kept(3, 3, border + 1)).toEqual([false, 0]);
+    expect(kept(1, 1, 65_535)).toEqual([true, 0]);
+    expect(kept(3, 4, 0)).toEqual([false, 0]);
+    expect(kept(3, -1, 0)).toEqual([false, 0]);
   });
 });
 

@@ -55,6 +55,24 @@ describe('a block of draws', () => {
     );
   });
 
+  it('puts every table where its ordering puts it: sums folded about a centre, and largest values over cells', () => {
+    fc.assert(
+      fc.property(smallTable, fc.string(), (counts, seed) => {
+        const live = liveFrom(counts);
+        fc.pre(live.rows > 1 && live.columns > 1 && live.rows * live.columns > 4);
+        const trend = (['upper', 'lower', 'distance', 'probability'] as const).map((name) =>
+          orderingOf(live, 'trend', name),
+        );
+        expect(trend[2]!.fold).toBeDefined();
+        expectSameCounts(live, trend, seed, 100);
+        const largest = (['upper', 'lower'] as const).map((name) => orderingOf(live, 'max-residual', name));
+        expect(largest[0]!.limits).toBeDefined();
+        expectSameCounts(live, largest, seed, 100);
+      }),
+      { numRuns: 100, seed: 7 },
+    );
+  });
+
   it('does so where values have to be worked out beyond the look-up table, for wide totals', () => {
     for (const counts of [
       [

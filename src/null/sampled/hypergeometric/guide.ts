@@ -7,6 +7,7 @@ import { layBinomial, layHypergeometric } from './laws.js';
 import type { Range } from './spread.js';
 
 const resolution = 2 ** -32;
+/** Set where the share holds a border. */
 const flag = 0x8000;
 const notLaidOut = 0xffff;
 /** Outcomes are kept in the bits below the flag. */
@@ -45,30 +46,31 @@ export class Guide {
   }
 
   /**
-   * An outcome of the law at `value`; -1 when there is no law for it. Takes one word, and one more if the first cannot
-   * tell on which side of a border it lies.
+   * The outcome that `word` (32 random bits, signed) selects from the law at `value`; -1 when there is no law for it. With
+   * `half`, its upper 16 bits alone select, and the lower ones are left for another purpose. More bits are taken
+   * from `source` where these cannot tell on which side of a border they lie.
    */
-  select(source: UniformSource, value: number): number {
+  select(source: UniformSource, value: number, word: number, half: boolean): number {
     const law = value - this.from;
     if (!(law >= 0 && law < this.count)) return -1;
-    const word = source.word();
     // A shift by -bits is one by 32 - bits.
     const entry = this.entries[(law << this.bits) + (word >>> -this.bits)]!;
-    return entry < flag ? entry : this.search(source, law, entry, word);
+    if (entry < flag) return entry;
+    const u = half ? ((word >>> 16) + source.uniform()) / 0x10000 : (word >>> 0) * resolution;
+    return this.search(source, law, entry, u, half ? resolution / 0x10000 : resolution);
   }
 
-  private search(source: UniformSource, law: number, entry: number, word: number): number {
+  /** @param width u is known to lie between u and u + width. */
+  private search(source: UniformSource, law: number, entry: number, u: number, width: number): number {
     if (entry === notLaidOut) this.layOut(law);
     const { borders } = this;
     const { from, length } = this.laws.outcomes;
     const row = law * length - from;
-    let u = (word >>> 0) * resolution;
     let outcome = entry === notLaidOut ? from : entry - flag;
     while (borders[row + outcome]! <= u) outcome++;
-    if (borders[row + outcome]! - u < resolution) {
-      u += resolution * source.uniform();
-      while (borders[row + outcome]! <= u) outcome++;
-    }
+    if (borders[row + outcome]! - u >= width) return outcome;
+    const refined = u + width * source.uniform();
+    while (borders[row + outcome]! <= refined) outcome++;
     return outcome;
   }
 

@@ -7,8 +7,6 @@ import type { UniformSource } from '../../../random/stream.js';
 import { logFactorialsUpTo } from './mass.js';
 import type { Range } from './spread.js';
 
-const resolution = 2 ** -32;
-
 /** Chances of keeping a proposal: of `units` still to come, `taken` would have to be taken, at an expected `share` of them. */
 export interface TrialGrid {
   readonly share: number;
@@ -23,7 +21,7 @@ export class Trial {
   private readonly unitsLength: number;
   private readonly takenFrom: number;
   private readonly takenLength: number;
-  /** By units, then by taken; NaN: not worked out yet. */
+  /** In units of 2^-16, by units, then by taken; NaN: not worked out yet. */
   private readonly chances: Float64Array;
   private readonly logs: Float64Array;
   private readonly logOdds: number;
@@ -39,27 +37,31 @@ export class Trial {
     this.logOdds = Math.log(share / (1 - share));
   }
 
-  /** True with probability b(taken; units, share) / max b(.; units, share). */
-  keeps(source: UniformSource, units: number, taken: number): boolean {
+  /**
+   * True with probability b(taken; units, share) / max b(.; units, share). Decided by `half`, 16 random bits, and by more
+   * from `source` where these do not suffice.
+   */
+  keeps(source: UniformSource, units: number, taken: number, half: number): boolean {
     const row = units - this.unitsFrom;
     const column = taken - this.takenFrom;
     const within = row >= 0 && row < this.unitsLength && column >= 0 && column < this.takenLength;
     const at = within ? row * this.takenLength + column : -1;
-    const u = source.uniform();
     let chance = within ? this.chances[at]! : NaN;
-    if (u + resolution <= chance) return true;
+    if (half + 1 <= chance) return true;
     if (chance !== chance) {
       chance = this.chance(units, taken);
       if (within) this.chances[at] = chance;
     }
-    return u + resolution <= chance || (u < chance && u + resolution * source.uniform() < chance);
+    return half + 1 <= chance || (half < chance && half + source.uniform() < chance);
   }
 
+  /** The chance in units of 2^-16. */
   private chance(units: number, taken: number): number {
     if (taken < 0 || taken > units) return 0;
     const { logs } = this;
     const mode = Math.min(units, Math.floor((units + 1) * this.grid.share));
     const atMode = logs[mode]! + logs[units - mode]!;
-    return Math.min(1, Math.exp(atMode - logs[taken]! - logs[units - taken]! + (taken - mode) * this.logOdds));
+    const log = atMode - logs[taken]! - logs[units - taken]! + (taken - mode) * this.logOdds;
+    return Math.min(1, Math.exp(log)) * 0x10000;
   }
 }

@@ -30,8 +30,8 @@ const forcedOn = (prefer: 'labels' | 'guide' | 'trial' | 'inversion'): TableCase
 
 /** Look-up tables that hardly reach past the expected counts: most tables then need a cell from beyond them. */
 const shortReach = (['guide', 'trial'] as const).flatMap((prefer): TableCase[] => [
-  { claim: `${prefer} with a short reach, larger`, ...larger, forced: { prefer, reach: 0.2 }, uses: [prefer] },
-  { claim: `${prefer} with a short reach, tall`, ...tall, forced: { prefer, reach: 0 }, uses: [prefer] },
+  { claim: `${prefer} with a short reach, larger`, ...larger, forced: { prefer, reach: -1 }, uses: [prefer] },
+  { claim: `${prefer} with a short reach, tall`, ...tall, forced: { prefer, reach: -0.6 }, uses: [prefer] },
 ]);
 
 export const tableCases: readonly TableCase[] = [
