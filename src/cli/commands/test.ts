@@ -1,6 +1,7 @@
 // keepsum test: one table, from where it stands to a report. Read, analyse, report, write.
 import { analyse } from '../../analyse.js';
 import { render } from '../../report/formats.js';
+import { groupedDigits } from '../../numeric/digit-groups.js';
 import type { PlanOptions } from '../../plan/plan.js';
 import { usageProblem } from '../../problem/problem.js';
 import type { Result } from '../../result/result.js';
@@ -62,7 +63,8 @@ function planOptions(values: TestValues): PlanOptions {
 /** A method that was picked for the user is never a silent matter. */
 async function remarkOnSampling({ plan }: Result, shell: Shell): Promise<void> {
   if (plan.methodAsked !== 'auto' || plan.method !== 'sample') return;
-  await remark(shell.stderr, `note: p is sampled: ${plan.methodReason}\n`);
+  const draws = plan.draws === 'auto' ? 'until it is settled' : `${groupedDigits(plan.draws!)} draws`;
+  await remark(shell.stderr, `note: p is sampled, ${draws}: ${plan.methodReason}\n`);
 }
 
 function checkCombinations(values: TestValues): void {
