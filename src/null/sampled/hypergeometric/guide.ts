@@ -54,19 +54,24 @@ export class Guide {
     const law = value - this.from;
     if (!(law >= 0 && law < this.count)) return -1;
     // A shift by -bits is one by 32 - bits.
-    const entry = this.entries[(law << this.bits) + (word >>> -this.bits)]!;
+    const share = (law << this.bits) + (word >>> -this.bits);
+    let entry = this.entries[share]!;
+    if (entry === notLaidOut) {
+      // Before any bit is taken: what a draw takes from the source must not depend on the draws before it.
+      this.layOut(law);
+      entry = this.entries[share]!;
+    }
     if (entry < flag) return entry;
     const u = half ? ((word >>> 16) + source.uniform()) / 0x10000 : (word >>> 0) * resolution;
-    return this.search(source, law, entry, u, half ? resolution / 0x10000 : resolution);
+    return this.search(source, law, entry - flag, u, half ? resolution / 0x10000 : resolution);
   }
 
-  /** @param width u is known to lie between u and u + width. */
-  private search(source: UniformSource, law: number, entry: number, u: number, width: number): number {
-    if (entry === notLaidOut) this.layOut(law);
+  /** @param from the outcome at the lower end of the share. @param width u is known to lie between u and u + width. */
+  private search(source: UniformSource, law: number, from: number, u: number, width: number): number {
     const { borders } = this;
-    const { from, length } = this.laws.outcomes;
-    const row = law * length - from;
-    let outcome = entry === notLaidOut ? from : entry - flag;
+    const { outcomes } = this.laws;
+    const row = law * outcomes.length - outcomes.from;
+    let outcome = from;
     while (borders[row + outcome]! <= u) outcome++;
     if (borders[row + outcome]! - u >= width) return outcome;
     const refined = u + width * source.uniform();
