@@ -2,24 +2,19 @@
 // b/m with its standard error and its Clopper-Pearson interval. For a number of draws fixed beforehand only.
 import type { SampledCut } from '../null/contract.js';
 import { clopperPearson } from './clopper-pearson.js';
-import { orderedBy, type PValueEntry, type Question, type SamplingError } from './contract.js';
+import type { PValueEntry, Question, SamplingError } from './contract.js';
+import { drawnEntry } from './drawn-entry.js';
 
 /** From the cut of the ordering that the question calls for. */
 export async function sampledPValue(question: Question, cut: SampledCut, confidence: number): Promise<PValueEntry> {
   const atLeast = cut.tied + cut.above;
-  return entry(question, {
-    p: (atLeast + 1) / (cut.draws + 1),
-    strict: cut.above / cut.draws,
-    mid: (cut.above + cut.tied / 2) / cut.draws,
-    tied: cut.tied / cut.draws,
-    error: {
-      kind: 'sampling',
-      atLeast,
-      draws: cut.draws,
-      ...spread(atLeast, cut.draws, 1),
-      interval: await clopperPearson(atLeast, cut.draws, confidence),
-      confidence,
-    },
+  return drawnEntry(question, cut, 1, (atLeast + 1) / (cut.draws + 1), {
+    kind: 'sampling',
+    atLeast,
+    draws: cut.draws,
+    ...spread(atLeast, cut.draws, 1),
+    interval: await clopperPearson(atLeast, cut.draws, confidence),
+    confidence,
   });
 }
 
@@ -43,20 +38,14 @@ export async function sampledDoubled(
     clopperPearson(tails.lower, draws, each),
   ]);
   const capped = (x: number): number => Math.min(1, 2 * x);
-  return entry(question, {
-    p: capped((atLeast + 1) / (draws + 1)),
-    strict: capped(smaller.above / draws),
-    mid: capped((smaller.above + smaller.tied / 2) / draws),
-    tied: capped(smaller.tied / draws),
-    error: {
-      kind: 'sampling',
-      atLeast,
-      draws,
-      ...spread(atLeast, draws, 2),
-      interval: [capped(Math.min(one[0], other[0])), capped(Math.min(one[1], other[1]))],
-      confidence,
-      tails,
-    },
+  return drawnEntry(question, smaller, 2, capped((atLeast + 1) / (draws + 1)), {
+    kind: 'sampling',
+    atLeast,
+    draws,
+    ...spread(atLeast, draws, 2),
+    interval: [capped(Math.min(one[0], other[0])), capped(Math.min(one[1], other[1]))],
+    confidence,
+    tails,
   });
 }
 
@@ -70,25 +59,4 @@ function spread(
   const estimate = Math.min(1, times * share);
   if (atLeast === 0 || atLeast === draws) return { estimate, standardError: null, reason: 'no-spread-seen' };
   return { estimate, standardError: times * Math.sqrt((share * (1 - share)) / draws) };
-}
-
-function entry(
-  question: Question,
-  parts: { p: number; strict: number; mid: number; tied: number; error: SamplingError },
-): PValueEntry {
-  const { tail, rule, statistic } = question;
-  return {
-    tail,
-    ...(rule === null ? {} : { rule }),
-    orderedBy: orderedBy(question),
-    method: 'sample',
-    statistic,
-    p: parts.p,
-    log10P: Math.log10(parts.p),
-    strict: parts.strict,
-    mid: parts.mid,
-    tied: parts.tied,
-    guaranteed: true,
-    errors: [parts.error],
-  };
 }
