@@ -7,6 +7,7 @@ export default defineConfig({
   test: {
     testTimeout: 120_000,
     hookTimeout: 120_000,
+    setupFiles: ['test/helpers/steady-seed.ts'],
     projects: [
       { extends: true, test: { name: 'source', include: ['test/**/*.test.ts'], exclude: [ofTheCommand] } },
       {

@@ -4,7 +4,7 @@ import { shown } from '../result/label-words.js';
 import { countWords } from '../result/number-words.js';
 import type { InputEcho, Result } from '../result/result.js';
 import type { Format } from './format.js';
-import { pageFor, type Block, type Sentence } from './page.js';
+import { pageFor, type Block, type Grid, type Sentence } from './page.js';
 
 export const markdown: Format = {
   words: 'headings, sentences and a table, for documents',
@@ -29,6 +29,8 @@ function blockText(block: Block, result: Result): string {
       return sentenceText(block);
     case 'table':
       return tableText(result.input);
+    case 'grid':
+      return gridText(block);
     case 'command':
       return `    ${block.words.join(' ')}`;
   }
@@ -39,13 +41,18 @@ function sentenceText({ text, tone }: Sentence): string {
   return tone === 'warning' ? `> ${escaped(text)}` : escaped(text);
 }
 
+const row = (cells: readonly string[]): string => `| ${cells.join(' | ')} |`;
+const ruleUnder = (headings: readonly string[]): string => row(headings.map((_, j) => (j === 0 ? ':--' : '--:')));
+
+const gridText = ({ headings, rows }: Grid): string =>
+  [row(headings.map(escaped)), ruleUnder(headings), ...rows.map((cells) => row(cells.map(escaped)))].join('\n');
+
 function tableText(input: InputEcho): string {
-  const row = (cells: readonly string[]): string => `| ${cells.join(' | ')} |`;
   const bold = (words: string): string => `**${words}**`;
   const headings = ['', ...input.columnLabels.map(labelText), bold('all')];
   return [
     row(headings),
-    row(headings.map((_, j) => (j === 0 ? ':--' : '--:'))),
+    ruleUnder(headings),
     ...input.counts.map((counts, i) =>
       row([labelText(input.rowLabels[i]!), ...counts.map(countWords), bold(countWords(input.rowTotals[i]!))]),
     ),

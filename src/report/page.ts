@@ -33,7 +33,14 @@ export interface Command {
   readonly otherwise: string;
 }
 
-export type Block = Sentence | TablePlace | Command;
+/** A small table of words and numbers, headed; the first column holds names, the others stand to the right. */
+export interface Grid {
+  readonly kind: 'grid';
+  readonly headings: readonly string[];
+  readonly rows: readonly (readonly string[])[];
+}
+
+export type Block = Sentence | TablePlace | Command | Grid;
 
 export interface Section {
   readonly heading: string;

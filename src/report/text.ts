@@ -4,6 +4,7 @@ import { displayWidth } from './display-width.js';
 import { fold } from './fold.js';
 import type { Format, Painter, ReportSettings } from './format.js';
 import { pageFor, type Block, type Command, type Section, type Sentence } from './page.js';
+import { gridLines } from './text-grid.js';
 import { tableLines } from './text-table.js';
 
 const narrowest = 40;
@@ -39,6 +40,10 @@ function blockLines(block: Block, result: Result, { width, paint }: ReportSettin
         const indented = `${' '.repeat(line === '' ? 0 : margin)}${line}`.trimEnd();
         return part === 'counts' || indented === '' ? indented : paint.dim(indented);
       });
+    case 'grid':
+      return gridLines(block, Math.min(width, widestProse) - margin).map((line) =>
+        `${' '.repeat(margin)}${line}`.trimEnd(),
+      );
     case 'command':
       return commandLines(block, Math.min(width, widestProse));
   }

@@ -9,7 +9,7 @@ import { chooseSource } from './choose-source.js';
 import { command } from './command-file.js';
 import { readSource } from './read-source.js';
 import { debugOption, helpOption } from './shared-options.js';
-import { reading } from './test-options.js';
+import { reading } from './options/reading.js';
 
 const drawing = {
   number: valued('The tables', 'N', wholeNumber(1, 1e12, '10'), 'how many tables (1)', 'n'),

@@ -4,7 +4,7 @@ import type { ReadTable } from '../../input/read-table.js';
 import type { Values } from '../arguments/option.js';
 import type { Shell } from '../shell.js';
 import type { Source } from './choose-source.js';
-import type { reading } from './test-options.js';
+import type { reading } from './options/reading.js';
 
 type ReadingValues = Values<typeof reading>;
 

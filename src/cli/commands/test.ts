@@ -15,7 +15,8 @@ import { withOwnStatistic } from './module-path.js';
 import { lookFor } from './look.js';
 import { readSource } from './read-source.js';
 import { destinationFor } from './shared-options.js';
-import { planning, testOptions } from './test-options.js';
+import { planning } from './options/planning.js';
+import { testOptions } from './test-options.js';
 
 type TestValues = Values<typeof testOptions>;
 

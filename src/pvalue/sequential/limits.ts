@@ -2,6 +2,7 @@
 // For a fixed p that ratio is a martingale of mean 1, so by Ville's inequality (1939) it ever reaches 1 / risk with
 // probability at most risk: the intervals of all looks hold the true p together (Robbins 1970).
 import { devianceTerm } from '../../numeric/saddle-point.js';
+import { smallestDouble } from '../contract.js';
 import { logEvidence, type BetaMixture } from './beta-mixture.js';
 
 /** How far (in ln likelihood) p may fall behind hits/draws before it is discredited. Positive; grows with ln draws. */
@@ -45,7 +46,9 @@ function below(hits: number, draws: number, allowed: number): number {
   // deviance >= draws (share - p)^2 / (2 share), and >= hits ln(share / p) + misses ln(1 - share).
   const bySquare = share - Math.sqrt((2 * share * allowed) / draws);
   const byHits = share * Math.exp((misses * Math.log1p(-share) - allowed) / hits);
-  return descend(hits, draws, allowed, Math.max(bySquare, byHits));
+  const start = Math.max(bySquare, byHits);
+  // Beyond the doubles that have all their digits 0 is as good a limit, and no quotient overflows.
+  return start < smallestDouble ? 0 : descend(hits, draws, allowed, start);
 }
 
 function descend(hits: number, draws: number, allowed: number, start: number): number {

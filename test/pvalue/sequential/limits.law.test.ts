@@ -77,6 +77,21 @@ describe('the limits of one look', () => {
     );
   });
 
+  it('stay limits where the lower one is below every double with all its digits', () => {
+    const mixture = mixtureAround(0.001);
+    for (const hits of [1, 2, 3]) {
+      for (const risk of [1e-300, 1e-306, 1e-308]) {
+        for (const draws of [3, 10, 1000, 1e6]) {
+          const [lower, upper] = limitsAt(mixture, risk, hits, draws);
+          expect(lower).toBeGreaterThanOrEqual(0);
+          expect(lower).toBeLessThan(hits / draws);
+          expect(upper).toBeGreaterThanOrEqual(hits / draws);
+          expect(upper).toBeLessThanOrEqual(1);
+        }
+      }
+    }
+  });
+
   it('are wider at a smaller risk', () => {
     fc.assert(
       fc.property(looks, ({ hits, draws, level, risk }) => {

@@ -1,0 +1,83 @@
+// Options that become the plan: names as in PlanOptions, so that they pass through unchanged.
+import { anyText, betweenZeroAndOne, oneOf, wholeNumber, type CheckValue } from '../../arguments/check-value.js';
+import { valued } from '../../arguments/option.js';
+import { standardEffort } from '../../../null/forecast.js';
+import { standardMostDraws, standardRelativeError } from '../../../plan/draws.js';
+import { methods, tails, twoSidedRules } from '../../../plan/plan.js';
+import { statisticNamed, statisticNames } from '../../../statistic/registry.js';
+import { isModulePath } from '../module-path.js';
+import { either } from './words.js';
+
+const sides = ['rows', 'columns'] as const;
+
+const orAuto =
+  (check: CheckValue<number>): CheckValue<number | 'auto'> =>
+  (text, flag) =>
+    text === 'auto' ? 'auto' : check(text, flag);
+
+export const planning = {
+  statistic: valued(
+    'The test',
+    'NAME',
+    (text) => (isModulePath(text) ? text : statisticNamed(text).name),
+    `${either(statisticNames)} (pearson), or one of your own: ./mine.mjs`,
+  ),
+  tail: valued('The test', 'TAIL', oneOf(tails), `${either(tails)} (upper; for wald, score and trend both)`),
+  twoSidedRule: valued('The test', 'RULE', oneOf(twoSidedRules), `for both tails: ${either(twoSidedRules)} (distance)`),
+  groups: valued('The test', 'SIDE', oneOf(sides), `for wald and score, what is compared: ${either(sides)} (rows)`),
+  event: valued('The test', 'LABEL', anyText, 'the outcome whose proportions are compared (the first)'),
+  reference: valued('The test', 'LABEL', anyText, 'the group compared with (the second)'),
+  rowScores: valued(
+    'The test',
+    'SCORES',
+    anyText,
+    'for trend, one for each row: 0,1,2.5 or the word midranks (1,2,3 and so on)',
+  ),
+  columnScores: valued('The test', 'SCORES', anyText, 'the same of the columns'),
+  lambda: valued('The test', 'NUMBER', anyText, 'for power-divergence, its exponent: a decimal or a fraction (2/3)'),
+  method: valued(
+    'How p is found',
+    'NAME',
+    oneOf(methods),
+    `${either(methods)} (auto: exact where that is cheap, else sample)`,
+  ),
+  draws: valued(
+    'How p is found',
+    'N',
+    orAuto(wholeNumber(1, 1e12, '100000')),
+    'random tables to draw, or auto: until p is settled against --alpha (auto)',
+  ),
+  mostDraws: valued(
+    'How p is found',
+    'N',
+    wholeNumber(1000, 1e12, '1e7'),
+    `with auto, never more than these (${standardMostDraws.toExponential().replace('e+', 'e')})`,
+  ),
+  relativeError: valued(
+    'How p is found',
+    'SHARE',
+    betweenZeroAndOne('0.02'),
+    `with auto, enough when p is known this well (${standardRelativeError})`,
+  ),
+  samplingRisk: valued(
+    'How p is found',
+    'RISK',
+    betweenZeroAndOne('0.0001'),
+    'with auto, probability that an interval ever errs (alpha / 500)',
+  ),
+  seed: valued('How p is found', 'TEXT', anyText, 'makes the draws repeatable (one is made and shown)'),
+  effort: valued(
+    'How p is found',
+    'UNITS',
+    wholeNumber(1, Infinity, '1e9'),
+    `most exact work that is allowed, in steps (${standardEffort.toExponential().replace('e+', 'e')})`,
+  ),
+  samplingConfidence: valued(
+    'How p is found',
+    'LEVEL',
+    betweenZeroAndOne('0.99'),
+    'of the interval around a sampled p (0.99)',
+  ),
+  alpha: valued('The report', 'LEVEL', betweenZeroAndOne('0.05'), 'the level that p is compared with in words (0.05)'),
+  confidence: valued('The report', 'LEVEL', betweenZeroAndOne('0.95'), 'of intervals for effects (0.95)'),
+};

@@ -1,0 +1,28 @@
+// Options that change how a result is shown, and no digit of it.
+import { oneOf, wholeNumber } from '../../arguments/check-value.js';
+import { toggle, valued } from '../../arguments/option.js';
+import { formatNames } from '../../../report/formats.js';
+import { outputOption } from '../shared-options.js';
+import { either } from './words.js';
+
+export const reporting = {
+  format: valued('The report', 'NAME', oneOf(formatNames), `${either(formatNames)} (text)`),
+  output: outputOption,
+  rawCsv: toggle('The report', 'leave text cells of CSV output that a spreadsheet would run as a formula as they are'),
+  width: valued(
+    'The report',
+    'N',
+    wholeNumber(40, 1000, '100'),
+    'characters in a line of text (as wide as the terminal, else 80)',
+  ),
+  color: toggle('The report', 'coloured text even where it goes to a file or a pipe'),
+  noColor: toggle('The report', 'no coloured text'),
+  threads: valued(
+    'How p is found',
+    'N',
+    wholeNumber(1, 256, '2'),
+    'threads for long sampling; the digits are the same (all)',
+  ),
+  noProgress: toggle('The report', 'no line on standard error that says how far a long run is'),
+  quiet: toggle('The report', 'no remarks on standard error', 'q'),
+};

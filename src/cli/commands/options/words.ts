@@ -1,0 +1,3 @@
+// Words that the help of several options shares.
+
+export const either = (names: readonly string[]): string => names.join(', ');

@@ -1,0 +1,32 @@
+// A small table of words and numbers for a given width; where it does not fit side by side, each row becomes a short list.
+import { displayWidth, padLeft, padRight } from './display-width.js';
+import { fold } from './fold.js';
+import type { Grid } from './page.js';
+
+const gap = 3;
+
+/** Lines of at most `width` columns; words that are wider than a line are broken. */
+export function gridLines({ headings, rows }: Grid, width: number): string[] {
+  const widths = headings.map((heading, j) =>
+    Math.max(displayWidth(heading), ...rows.map((row) => displayWidth(row[j]!))),
+  );
+  const whole = widths.reduce((sum, each) => sum + each, gap * (widths.length - 1));
+  if (whole > width) return rows.flatMap((row) => listLines(headings, row, width));
+  const laid = (cells: readonly string[]): string =>
+    cells
+      .map((cell, j) => (j === 0 ? padRight(cell, widths[j]!) : padLeft(cell, widths[j]! + gap)))
+      .join('')
+      .trimEnd();
+  return [laid(headings), ...rows.map(laid)];
+}
+
+function listLines(headings: readonly string[], [name, ...cells]: readonly string[], width: number): string[] {
+  return [
+    ...fold(name!, width),
+    ...cells.flatMap((cell, j) =>
+      cell === ''
+        ? []
+        : fold(`${headings[j + 1] === '' ? '' : `${headings[j + 1]!}: `}${cell}`, width, { first: 2, rest: 4 }),
+    ),
+  ];
+}

@@ -1,0 +1,42 @@
+// What was read and how: the counts with their labels and margins.
+import { z } from 'zod';
+import { count, digest } from './pieces.js';
+
+const source = z.strictObject({
+  form: z.enum(['inline', 'cross-table', 'records', 'library']),
+  /** As detected or told, for files and standard input. */
+  delimiter: z.enum(['comma', 'semicolon', 'tab', 'pipe']).optional(),
+  headerRow: z.boolean().optional(),
+  labelColumn: z.boolean().optional(),
+  /** Lines named as totals that were left out. */
+  totalsLeftOut: z.array(z.enum(['row', 'column'])).optional(),
+  rowsFrom: z.string().optional(),
+  columnsFrom: z.string().optional(),
+  countFrom: z.string().nullable().optional(),
+});
+
+const missing = z.strictObject({
+  rule: z.enum(['drop', 'level', 'fail']),
+  /** Records read. */
+  records: count,
+  /** Records with the row value, the column value, or both missing. */
+  missingRow: count,
+  missingColumn: count,
+  missingBoth: count,
+  /** What the left-out records counted for. */
+  dropped: count,
+});
+
+export const input = z.strictObject({
+  source,
+  sha256: digest.nullable(),
+  rowLabels: z.array(z.string()),
+  columnLabels: z.array(z.string()),
+  counts: z.array(z.array(count)),
+  total: count,
+  rowTotals: z.array(count),
+  columnTotals: z.array(count),
+  emptyRows: z.array(z.string()),
+  emptyColumns: z.array(z.string()),
+  missing: missing.nullable(),
+});

@@ -1,0 +1,67 @@
+// One p-value: what it is of, the number, and each error that it carries.
+import { z } from 'zod';
+import { sequentialRule, stopReasons } from '../../pvalue/sequential/contract.js';
+import { count, level, probability } from './pieces.js';
+
+const roundingError = z.strictObject({ kind: z.literal('rounding'), relative: z.number().min(0) });
+
+const samplingError = z.strictObject({
+  kind: z.literal('sampling'),
+  /** Draws at least as extreme as the observed table. */
+  atLeast: count,
+  draws: count,
+  estimate: probability,
+  /** null with a reason when every draw fell on the same side, so that none can be estimated. */
+  standardError: z.number().min(0).nullable(),
+  reason: z.enum(['no-spread-seen']).optional(),
+  /** Clopper-Pearson. */
+  interval: z.tuple([probability, probability]),
+  confidence: level,
+  /** For the doubled rule: draws at least as extreme in each tail. */
+  tails: z.strictObject({ upper: count, lower: count }).optional(),
+});
+
+const sequentialError = z.strictObject({
+  kind: z.literal('sequential'),
+  rule: z.literal(sequentialRule),
+  /** 1 - risk: the probability that the intervals of all looks hold the true p. */
+  level: level,
+  risk: level,
+  /** Why drawing stopped; the same for all p-values of one run. */
+  stoppedBecause: z.enum(stopReasons),
+  /** Draws at least as extreme as the observed table; the smaller of the two tails for the doubled rule. */
+  atLeast: count,
+  draws: count,
+  estimate: probability,
+  interval: z.tuple([probability, probability]),
+  /** More draws that would settle p against alpha if the share seen were the true one; 0 when settled, null when none would. */
+  drawsToSettle: count.nullable(),
+  /** For the doubled rule: draws at least as extreme in each tail. */
+  tails: z.strictObject({ upper: count, lower: count }).optional(),
+});
+
+const approximationError = z.strictObject({ kind: z.literal('approximation') });
+
+export const pValue = z.strictObject({
+  tail: z.enum(['upper', 'lower', 'both']),
+  rule: z.enum(['distance', 'probability', 'doubled']).optional(),
+  /** What makes a table "as extreme" as the observed one. */
+  orderedBy: z.string(),
+  method: z.enum(['exact', 'sample', 'asymptotic']),
+  statistic: z.string(),
+  /** The guaranteed p; null beside a reason when it is below the smallest double. */
+  p: probability.nullable(),
+  log10P: z.number().nullable(),
+  reason: z.enum(['underflow']).optional(),
+  strict: probability.nullable(),
+  mid: probability.nullable(),
+  tied: probability.nullable(),
+  /** Probability of the observed table itself, where the null gives it. */
+  point: probability.optional(),
+  degreesOfFreedom: count.optional(),
+  /** Asymptotic entries of a statistic that is not on the scale of its limiting law: the value on that scale. */
+  value: z.number().optional(),
+  /** True when rejecting at p <= a errs at most with probability a under the null. */
+  guaranteed: z.boolean(),
+  errors: z.array(z.discriminatedUnion('kind', [roundingError, samplingError, sequentialError, approximationError])),
+});

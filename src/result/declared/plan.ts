@@ -1,0 +1,49 @@
+// The plan as it was carried out: every choice, its reason, and what decides every digit.
+import { z } from 'zod';
+import { count, digest, level } from './pieces.js';
+
+const forecast = z.strictObject({
+  /** The exact engine that would answer. */
+  engine: z.enum(['two-by-two', 'enumeration', 'linear', 'network', 'within-limits']),
+  workUnits: z.number().min(0),
+  tables: z.number().min(0),
+  tablesAreCounted: z.boolean(),
+  seconds: z.number().min(0),
+});
+
+export const plan = z.strictObject({
+  statistic: z.string(),
+  /** SHA-256 of the module of a statistic of the user's own. */
+  statisticDigest: digest.optional(),
+  tail: z.enum(['upper', 'lower', 'both']),
+  twoSidedRule: z.enum(['distance', 'probability', 'doubled']).nullable(),
+  method: z.enum(['exact', 'sample', 'asymptotic']),
+  methodAsked: z.enum(['auto', 'exact', 'sample', 'asymptotic']),
+  methodReason: z.string(),
+  forecast,
+  groups: z.enum(['rows', 'columns']).nullable(),
+  event: z.string().nullable(),
+  reference: z.string().nullable(),
+  /** For statistics that take scores: one for each line of the table, empty ones too. */
+  rowScores: z.array(z.number()).optional(),
+  columnScores: z.array(z.number()).optional(),
+  /** Exponent of the power-divergence family, in lowest terms. */
+  lambda: z
+    .string()
+    .regex(/^-?\d+(\/\d+)?$/)
+    .optional(),
+  fixed: z.enum(['both']),
+  /** `auto`: until p is settled against alpha, by the rule that the error of the p-value names. */
+  draws: z.union([count, z.literal('auto')]).nullable(),
+  mostDraws: count.optional(),
+  samplingRisk: level.optional(),
+  relativeError: z.number().min(0).lt(1).optional(),
+  seed: z.string().nullable(),
+  tableKey: z.string(),
+  generator: z.string().nullable(),
+  blockSize: count.nullable(),
+  effort: z.number().positive(),
+  alpha: level,
+  confidence: level,
+  samplingConfidence: level,
+});
