@@ -5,6 +5,8 @@
 //   4. How much of what chance alone does lies as far.    null -> cut
 //   5. What that says, with its error.                    pvalue
 //   6. How far the usual approximation could be trusted.  table
+// Steps 1 to 5 are `answer`, which is all that a compact line of a batch takes; what stands around the p-values is added by
+// `analyse` alone.
 import type { ReadTable } from './input/read-table.js';
 import type { ExactAnswer } from './null/exact/exact-answer.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
@@ -15,13 +17,26 @@ import type { PlanOptions } from './plan/plan.js';
 import type { PValueEntry } from './pvalue/contract.js';
 import { approximationsOf, asymptoticAlone, asymptoticBeside, degreesOfFreedomOf } from './pvalue/approximations.js';
 import { conditionalPValues, orderingsNeeded, questionsOf } from './pvalue/p-values.js';
-import { buildResult } from './result/build-result.js';
+import { buildResult, type Findings } from './result/build-result.js';
 import { asymptoticNotes, emptyLineNotes, onlyOneTable, statisticNotes, unsettledNotes } from './result/notes.js';
-import type { Result } from './result/result.js';
+import type { Note, Result } from './result/result.js';
 import { sampledPValues, type Surroundings } from './sampled-answer.js';
 import { checkExpectations } from './table/expectation-check.js';
 import { liveTable, type LiveTable } from './table/live-table.js';
 import { makeTable, type TableParts } from './table/table.js';
+
+/** What the p-values are and what they rest on, before anything is put into words. */
+export interface Answer {
+  readonly read: ReadTable;
+  readonly live: LiveTable;
+  readonly prepared: Prepared;
+  /** null where the margins leave the statistic undefined. */
+  readonly value: number | null;
+  readonly pValues: readonly PValueEntry[];
+  /** Tables with these margins, when every one was counted. */
+  readonly tables: number | undefined;
+  readonly notes: readonly Note[];
+}
 
 /**
  * Decides whether the rows and columns of a table of counts are associated.
@@ -36,6 +51,25 @@ export async function analyse(
   options: PlanOptions = {},
   surroundings: Surroundings = {},
 ): Promise<Result> {
+  const found = await answer(data, options, surroundings);
+  return buildResult({ ...findingsOf(found), expectations: checkExpectations(found.live) });
+}
+
+/** What a result takes over from the answer as it is. */
+export const findingsOf = ({ read, live, prepared, ...found }: Answer): Omit<Findings, 'expectations'> => ({
+  ...found,
+  read,
+  plan: prepared.plan,
+  named: prepared.named,
+  degreesOfFreedom: degreesOfFreedomOf(prepared.statistic, live),
+});
+
+/** The p-values alone, by the same steps and with the same digits. Arguments and problems as for `analyse`. */
+export async function answer(
+  data: TableParts | ReadTable,
+  options: PlanOptions = {},
+  surroundings: Surroundings = {},
+): Promise<Answer> {
   const read = 'table' in data ? data : fromProgram(data);
   const live = liveTable(read.table);
   const prepared = makePlan(read.table, live, options);
@@ -50,10 +84,11 @@ export async function analyse(
 async function carryOut(
   read: ReadTable,
   live: LiveTable,
-  { plan, statistic, bound, named, valueOfOnlyTable }: Prepared,
+  prepared: Prepared,
   options: PlanOptions,
   surroundings: Surroundings,
-): Promise<Result> {
+): Promise<Answer> {
+  const { plan, statistic, bound, valueOfOnlyTable } = prepared;
   const questions = questionsOf(plan);
   const value = bound === null ? valueOfOnlyTable : bound.value(live.counts);
 
@@ -62,14 +97,12 @@ async function carryOut(
   const { found, tables } = await askNull();
   if (plan.method !== 'asymptotic') found.push(...asymptotic);
 
-  return buildResult({
+  return {
     read,
-    plan,
-    named,
+    live,
+    prepared,
     value,
-    degreesOfFreedom: degreesOfFreedomOf(statistic, live),
     pValues: found,
-    expectations: checkExpectations(live),
     tables,
     notes: [
       ...read.notes,
@@ -78,7 +111,7 @@ async function carryOut(
       ...statisticNotes(statistic, bound),
       ...(await unsettledNotes(found[0]!, plan)),
     ],
-  });
+  };
 
   async function askNull(): Promise<{ found: PValueEntry[]; tables?: number }> {
     if (plan.method === 'asymptotic') {

@@ -69,7 +69,7 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     fixed: 'both',
     ...(sampled ? drawing : { draws: null }),
     seed: sampled ? (options.seed ?? freshSeed()) : null,
-    tableKey: '',
+    tableKey: options.tableKey ?? '',
     generator: sampled ? generatorName : null,
     blockSize: sampled ? blockSize : null,
     effort,

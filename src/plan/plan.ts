@@ -42,6 +42,8 @@ export interface PlanOptions {
   /** For draws `auto`: half the interval over its middle at which p is precise enough, 0 to 1. Default 0.02. */
   readonly relativeError?: number;
   readonly seed?: string;
+  /** Names the table among those of one run; its draws are keyed by seed and name. Default: the empty text. */
+  readonly tableKey?: string;
   /** Bound on exact work in counted units. Default 6e7, about two seconds. */
   readonly effort?: number;
   /** Significance level that sentences compare with, in (0, 1). Default 0.05. */
