@@ -61,7 +61,7 @@ export const findingsOf = ({ read, live, prepared, ...found }: Answer): Omit<Fin
   read,
   plan: prepared.plan,
   named: prepared.named,
-  degreesOfFreedom: degreesOfFreedomOf(prepared.statistic, live),
+  degreesOfFreedom: degreesOfFreedomOf(prepared.statistic, live, prepared.bound),
 });
 
 /** The p-values alone, by the same steps and with the same digits. Arguments and problems as for `analyse`. */

@@ -9,7 +9,7 @@ import type { LiveTable } from '../table/live-table.js';
 import type { Table } from '../table/table.js';
 import type { Plan, PlanOptions } from './plan.js';
 import { scoresOf } from './scores.js';
-import { unused } from './settings.js';
+import { oneOf, unused } from './settings.js';
 
 /** A built-in one by name, or the user's own. @throws Problem (usage). */
 export function chooseStatistic(wish: string | OwnStatistic | undefined): Statistic {
@@ -18,27 +18,31 @@ export function chooseStatistic(wish: string | OwnStatistic | undefined): Statis
 }
 
 const readBy = {
-  groups: 'roles',
-  event: 'roles',
-  reference: 'roles',
-  rowScores: 'scores',
-  columnScores: 'scores',
-  lambda: 'lambda',
-} as const satisfies Partial<Record<keyof PlanOptions, Taken>>;
+  groups: ['roles', 'groups'],
+  event: ['roles'],
+  reference: ['roles'],
+  rowScores: ['scores', 'response-scores'],
+  columnScores: ['scores', 'response-scores'],
+  lambda: ['lambda'],
+} as const satisfies Partial<Record<keyof PlanOptions, readonly Taken[]>>;
 
-const reasons: Readonly<Record<Taken, string>> = {
-  roles: 'which treats all rows and all columns alike',
-  scores: 'which knows no order of rows and columns',
+const reasons = {
+  groups: 'which treats all rows and all columns alike',
+  event: 'which treats all rows and all columns alike',
+  reference: 'which treats all rows and all columns alike',
+  rowScores: 'which knows no order of rows and columns',
+  columnScores: 'which knows no order of rows and columns',
   lambda: 'which has no exponent to choose',
-};
+} as const satisfies Record<keyof typeof readBy, string>;
 
 /** @throws Problem (usage) `option-without-effect`. */
 export function refuseUnread(statistic: Statistic, options: PlanOptions): void {
-  for (const [name, kind] of Object.entries(readBy) as [keyof typeof readBy, Taken][]) {
-    if (options[name] === undefined || statistic.takes?.includes(kind)) continue;
-    const readers = statistics.filter(({ takes }) => takes?.includes(kind)).map((one) => one.name);
+  for (const [name, kinds] of Object.entries(readBy) as [keyof typeof readBy, readonly Taken[]][]) {
+    const reads = ({ takes }: Statistic): boolean => kinds.some((kind) => takes?.includes(kind));
+    if (options[name] === undefined || reads(statistic)) continue;
+    const readers = statistics.filter(reads).map((one) => one.name);
     const option = `--${name.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;
-    throw unused(option, `with ${statistic.name}, ${reasons[kind]}`, `leave it out, or use ${readers.join(' or ')}`);
+    throw unused(option, `with ${statistic.name}, ${reasons[name]}`, `leave it out, or use ${readers.join(' or ')}`);
   }
 }
 
@@ -57,6 +61,7 @@ export function choicesOf(
     const lambda = lambdaOf(options.lambda);
     return { choices: { lambda }, echo: { lambda: rationalText(lambda) } };
   }
+  if (statistic.takes?.includes('response-scores')) return responsesOf(table, live, statistic, options);
   if (!statistic.takes?.includes('scores')) return { choices: {}, echo: {} };
   const rows = scoresOf(options.rowScores, table.rowTotals, live.rowIndex, '--row-scores');
   const columns = scoresOf(options.columnScores, table.columnTotals, live.columnIndex, '--column-scores');
@@ -64,6 +69,30 @@ export function choicesOf(
     choices: { rowScores: rows.exact, columnScores: columns.exact },
     echo: { rowScores: [...rows.asNumbers], columnScores: [...columns.asNumbers] },
   };
+}
+
+/** Groups are rows unless told; the scores are those of the other side. */
+function responsesOf(
+  table: Table,
+  live: LiveTable,
+  { name, standardResponseScores }: Statistic,
+  options: PlanOptions,
+): { choices: Choices; echo: Partial<Plan> } {
+  const groups = oneOf(options.groups, 'rows', ['rows', 'columns'] as const, '--groups');
+  const [own, other] =
+    groups === 'rows' ? (['rowScores', 'columnScores'] as const) : (['columnScores', 'rowScores'] as const);
+  const flags = { rowScores: '--row-scores', columnScores: '--column-scores' } as const;
+  if (options[own] !== undefined) {
+    throw unused(
+      flags[own],
+      `with ${name}, whose groups are the ${groups}`,
+      `give ${flags[other]} for the responses, or say which side the groups are with --groups`,
+    );
+  }
+  const [totals, index] = groups === 'rows' ? [table.columnTotals, live.columnIndex] : [table.rowTotals, live.rowIndex];
+  const wish = options[other] ?? (standardResponseScores === 'midranks' ? 'midranks' : undefined);
+  const { exact, asNumbers } = scoresOf(wish, totals, index, flags[other]);
+  return { choices: { groups, responseScores: exact }, echo: { groups, [other]: [...asNumbers] } };
 }
 
 /** Denominators and sizes beyond these say nothing more about a table and would only make ties slow to decide. */

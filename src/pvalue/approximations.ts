@@ -16,9 +16,13 @@ export interface Approximation {
   readonly rescaled?: true;
 }
 
-/** (rows - 1)(columns - 1), for statistics with a chi-square limit. */
-export const degreesOfFreedomOf = (statistic: Statistic, live: LiveTable): number | undefined =>
-  statistic.limit === 'chi-square' ? (live.rows - 1) * (live.columns - 1) : undefined;
+/** (rows - 1)(columns - 1) unless the statistic has its own, for statistics with a chi-square limit. */
+export const degreesOfFreedomOf = (
+  statistic: Statistic,
+  live: LiveTable,
+  bound: BoundStatistic | null,
+): number | undefined =>
+  statistic.limit === 'chi-square' ? (bound?.degreesOfFreedom ?? (live.rows - 1) * (live.columns - 1)) : undefined;
 
 /** `probability` has no limiting law of its own; Pearson's statistic stands in, and the entry says so. */
 export function approximationsOf(
@@ -31,7 +35,7 @@ export function approximationsOf(
   const degreesOfFreedom = (live.rows - 1) * (live.columns - 1);
   switch (statistic.limit) {
     case 'chi-square':
-      return [{ name: statistic.name, value, degreesOfFreedom }];
+      return [{ name: statistic.name, value, degreesOfFreedom: bound?.degreesOfFreedom ?? degreesOfFreedom }];
     case 'normal':
       return bound?.standardised?.map((form) => ({ ...form, rescaled: true })) ?? [{ name: statistic.name, value }];
     case 'none': {

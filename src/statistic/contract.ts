@@ -38,10 +38,13 @@ export interface Choices {
   readonly rowScores?: readonly Rational[];
   readonly columnScores?: readonly Rational[];
   readonly lambda?: Rational;
+  /** For statistics of scored responses: the side of the groups, and a score for each live line of the other side. */
+  readonly groups?: Side;
+  readonly responseScores?: readonly Rational[];
 }
 
 /** Options that only some statistics take. */
-export type Taken = 'roles' | 'scores' | 'lambda';
+export type Taken = 'roles' | 'scores' | 'lambda' | 'groups' | 'response-scores';
 
 /**
  * S = sum u_i v_j n_ij over whole scores, of which a signed statistic is an increasing linear function. Every S, and
@@ -93,6 +96,8 @@ export interface BoundStatistic {
   readonly linear?: LinearForm;
   /** Signed statistics: forms with a normal limit, the usual one first. Left out: the value itself is one. */
   readonly standardised?: readonly StandardisedForm[];
+  /** Upper statistics with a chi-square limit on other degrees of freedom than (rows - 1)(columns - 1). */
+  readonly degreesOfFreedom?: number;
   /** Signed 2x2 statistics: the cell (first group, event), with which T strictly rises. Row-major index. */
   readonly corner?: number;
 }
@@ -112,6 +117,8 @@ export interface Statistic {
   readonly limit: 'chi-square' | 'normal' | 'none';
   /** Not one of ours: known by its values alone. */
   readonly own?: true;
+  /** Scores of the responses where none are declared, for statistics that take response scores. */
+  readonly standardResponseScores?: 'midranks' | 'places';
   /** Options that it reads. */
   readonly takes?: readonly Taken[];
   /** Named forms with a normal limit beside the statistic itself, with their words. */

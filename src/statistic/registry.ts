@@ -3,6 +3,8 @@ import { nameHint } from '../problem/suggest.js';
 import { usageProblem } from '../problem/problem.js';
 import type { Statistic } from './contract.js';
 import { freemanTukey } from './freeman-tukey.js';
+import { isotonicTrend } from './isotonic-trend.js';
+import { kruskalWallis } from './kruskal-wallis.js';
 import { likelihoodRatio } from './likelihood-ratio.js';
 import { maxResidual } from './max-residual.js';
 import { pearson } from './pearson.js';
@@ -22,6 +24,8 @@ export const statistics: readonly Statistic[] = [
   wald,
   score,
   trend,
+  isotonicTrend,
+  kruskalWallis,
 ];
 
 export const statisticNames: readonly string[] = statistics.map((statistic) => statistic.name);
