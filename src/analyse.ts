@@ -20,6 +20,7 @@ import { conditionalPValues, orderingsNeeded, questionsOf } from './pvalue/p-val
 import { buildResult, type Findings } from './result/build-result.js';
 import { asymptoticNotes, emptyLineNotes, onlyOneTable, statisticNotes, unsettledNotes } from './result/notes.js';
 import type { Note, Result } from './result/result.js';
+import { orderedAnswers } from './ordered-answers.js';
 import { sampledPValues, type Surroundings } from './sampled-answer.js';
 import { checkExpectations } from './table/expectation-check.js';
 import { liveTable, type LiveTable } from './table/live-table.js';
@@ -52,7 +53,8 @@ export async function analyse(
   surroundings: Surroundings = {},
 ): Promise<Result> {
   const found = await answer(data, options, surroundings);
-  return buildResult({ ...findingsOf(found), expectations: checkExpectations(found.live) });
+  const byOrder = await orderedAnswers(found, options, (wishes) => answer(found.read, wishes, surroundings));
+  return buildResult({ ...findingsOf(found), expectations: checkExpectations(found.live), byOrder });
 }
 
 /** What a result takes over from the answer as it is. */

@@ -33,6 +33,7 @@ const shuffled = <T>(list: readonly T[]): fc.Arbitrary<T[]> =>
 
 for (const { name: statistic, shape, sided, takes } of statistics) {
   const ordered = takes?.includes('scores') === true;
+  const scoresGroups = takes?.includes('response-scores') === true;
   const table = shape === '2x2' ? twoByTwoTable : smallTable;
   const runs = { numRuns: 150, seed: 11 };
 
@@ -40,7 +41,7 @@ for (const { name: statistic, shape, sided, takes } of statistics) {
     it('p is unchanged by transposing, with the groups carried along', async () => {
       await fc.assert(
         fc.asyncProperty(table, async (counts) => {
-          const groups = shape === '2x2' ? ({ groups: 'columns' } as const) : {};
+          const groups = shape === '2x2' || scoresGroups ? ({ groups: 'columns' } as const) : {};
           expectSame(await exact(transpose(counts), { statistic, ...groups }), await exact(counts, { statistic }));
         }),
         runs,
@@ -49,6 +50,9 @@ for (const { name: statistic, shape, sided, takes } of statistics) {
 
     if (ordered) {
       ordersMatter(statistic);
+    } else if (scoresGroups) {
+      if (sided === 'signed') fallsWhereItRose(statistic);
+      else groupsChangePlaces(statistic);
     } else if (shape === 'any') {
       it('p is unchanged when rows and columns change places among themselves', async () => {
         const cases = table.chain((counts) =>
@@ -86,13 +90,16 @@ for (const { name: statistic, shape, sided, takes } of statistics) {
             0,
             wider[0]!.map(() => 0),
           );
-          const scores = ordered
-            ? {
-                rowScores: counts.map((_, i) => i).toSpliced(row % (wider.length + 1), 0, 7),
-                columnScores: counts[0]!.map((_, j) => j).toSpliced(column % (counts[0]!.length + 1), 0, -3),
-              }
-            : {};
-          expectSame(await exact(larger, { statistic, ...scores }), await exact(counts, { statistic }));
+          // Scores are assigned before anything is left out.
+          const rowScores = counts.map((_, i) => i).toSpliced(row % (wider.length + 1), 0, 7);
+          const columnScores = counts[0]!.map((_, j) => j).toSpliced(column % (counts[0]!.length + 1), 0, -3);
+          const plain = { columnScores: counts[0]!.map((_, j) => j) };
+          const [scores, before] = ordered
+            ? [{ rowScores, columnScores }, {}]
+            : scoresGroups
+              ? [{ columnScores }, plain]
+              : [{}, {}];
+          expectSame(await exact(larger, { statistic, ...scores }), await exact(counts, { statistic, ...before }));
         }),
         runs,
       );
@@ -100,7 +107,9 @@ for (const { name: statistic, shape, sided, takes } of statistics) {
 
     it('a cut sums to 1, and the observed table counts in its own tail', async () => {
       const names: OrderingName[] =
-        sided === 'upper' ? ['upper', 'lower'] : ['upper', 'lower', 'distance', 'probability'];
+        sided === 'upper'
+          ? ['upper', 'lower']
+          : ['upper', 'lower', 'distance', ...(scoresGroups ? [] : (['probability'] as const))];
       fc.assert(
         fc.property(table, (counts) => {
           const live = liveFrom(counts);
@@ -120,6 +129,41 @@ for (const { name: statistic, shape, sided, takes } of statistics) {
         runs,
       );
     });
+  });
+}
+
+/** The groups, or the responses, in reverse order: a rise becomes a fall. */
+function fallsWhereItRose(statistic: string): void {
+  it('the order of groups, or of responses, reversed exchanges the tails', async () => {
+    await fc.assert(
+      fc.asyncProperty(smallTable, async (counts) => {
+        const [both, upper, lower] = await exact(counts, { statistic });
+        for (const other of [counts.toReversed(), counts.map((row) => row.toReversed())]) {
+          expectSame(await exact(other, { statistic }), [both!, lower!, upper!]);
+        }
+      }),
+      { numRuns: 150, seed: 14 },
+    );
+  });
+}
+
+function groupsChangePlaces(statistic: string): void {
+  it('p is unchanged when groups change places, and when the responses are reversed', async () => {
+    const cases = smallTable.chain((counts) => shuffled(counts).map((other) => [counts, other] as const));
+    await fc.assert(
+      fc.asyncProperty(cases, async ([counts, other]) => {
+        const ours = await exact(counts, { statistic });
+        expectSame(await exact(other, { statistic }), ours);
+        expectSame(
+          await exact(
+            counts.map((row) => row.toReversed()),
+            { statistic },
+          ),
+          ours,
+        );
+      }),
+      { numRuns: 150, seed: 15 },
+    );
   });
 }
 

@@ -16,6 +16,9 @@ export function orderingFor(live: LiveTable, bound: BoundStatistic, name: Orderi
       const direction = name === 'upper' ? 1 : -1;
       if (sum !== undefined) return { ...bySum(live, sum, direction, name), ...byLine };
       if (corner !== undefined) return byCorner(live, corner, direction, name);
+      if (name === 'lower' && bound.placeLower !== undefined) {
+        return { name, place: (counts) => bound.placeLower!(counts), arbitrary: true };
+      }
       if (bound.place !== undefined) return byPlace(bound, direction, name);
       break;
     }

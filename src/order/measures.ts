@@ -15,7 +15,13 @@ export interface OrdinalMeasure {
 /** In this order: gamma, tau-b, tau-c, Somers' d of columns given rows and of rows given columns. O(cells). */
 export function ordinalMeasures(table: Table): OrdinalMeasure[] {
   const pairs = concordance(table);
-  return [gamma(table, pairs), tauB(table, pairs), tauC(table, pairs), somersD(table, pairs, 'columns'), somersD(table, pairs, 'rows')];
+  return [
+    gamma(table, pairs),
+    tauB(table, pairs),
+    tauC(table, pairs),
+    somersD(table, pairs, 'columns'),
+    somersD(table, pairs, 'rows'),
+  ];
 }
 
 /** The measures as effects. @param quantile of the standard normal law, at (1 + confidence) / 2. */
@@ -24,7 +30,10 @@ export const ordinalEffects = (table: Table, confidence: number, quantile: numbe
     name,
     estimate,
     ...(estimate === null ? { reason: 'one-level-only' as const } : {}),
-    intervals: estimate === null || standardError === null ? [] : [aroundEstimate(estimate, standardError, confidence, quantile)],
+    intervals:
+      estimate === null || standardError === null
+        ? []
+        : [aroundEstimate(estimate, standardError, confidence, quantile)],
   }));
 
 function aroundEstimate(estimate: number, error: number, confidence: number, quantile: number): Interval {
@@ -91,7 +100,9 @@ function meanOf(table: Table, f: (row: number, column: number, cell: number) => 
 /** 2 m (C - D) / (n^2 (m - 1)), m the smaller number of levels that hold units (Stuart 1953). */
 function tauC(table: Table, { concordant, discordant, balance }: Concordance): OrdinalMeasure {
   const { total } = table;
-  const levels = Math.min(...[table.rowTotals, table.columnTotals].map((totals) => totals.filter((units) => units > 0).length));
+  const levels = Math.min(
+    ...[table.rowTotals, table.columnTotals].map((totals) => totals.filter((units) => units > 0).length),
+  );
   if (levels < 2) return nothing('tau-c');
   const scale = levels / (levels - 1) / total;
   const estimate = (2 * scale * (concordant - discordant)) / total;
@@ -101,7 +112,11 @@ function tauC(table: Table, { concordant, discordant, balance }: Concordance): O
 }
 
 /** 2 (C - D) / w, w twice the pairs that differ on the other side: of columns given rows, or the reverse. */
-function somersD(table: Table, { concordant, discordant, balance }: Concordance, of: 'rows' | 'columns'): OrdinalMeasure {
+function somersD(
+  table: Table,
+  { concordant, discordant, balance }: Concordance,
+  of: 'rows' | 'columns',
+): OrdinalMeasure {
   const name = `somers-d-${of}` as const;
   const { total } = table;
   const given = of === 'columns' ? table.rowTotals : table.columnTotals;

@@ -39,6 +39,8 @@ const reasons = {
 export function refuseUnread(statistic: Statistic, options: PlanOptions): void {
   for (const [name, kinds] of Object.entries(readBy) as [keyof typeof readBy, readonly Taken[]][]) {
     const reads = ({ takes }: Statistic): boolean => kinds.some((kind) => takes?.includes(kind));
+    // Declared scores of ordered sides are read by the questions that use the order.
+    if (options.ordered !== undefined && (name === 'rowScores' || name === 'columnScores')) continue;
     if (options[name] === undefined || reads(statistic)) continue;
     const readers = statistics.filter(reads).map((one) => one.name);
     const option = `--${name.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;

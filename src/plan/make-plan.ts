@@ -7,6 +7,7 @@ import type { BoundStatistic, Statistic } from '../statistic/contract.js';
 import { hasOneTableOnly, type LiveTable } from '../table/live-table.js';
 import type { Table } from '../table/table.js';
 import { chooseStatistic, choicesOf, refuseUnread } from './choices.js';
+import { orderEcho } from './order-echo.js';
 import { freshSeed } from './fresh-seed.js';
 import { methods, tails, twoSidedRules, type Plan, type PlanOptions, type Tail, type TwoSidedRule } from './plan.js';
 import { noRoles, rolesOf, type NamedRoles } from './roles.js';
@@ -66,6 +67,7 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     event: named?.eventLabel ?? null,
     reference: named?.referenceLabel ?? null,
     ...echo,
+    ...orderEcho(table, live, options, echo),
     fixed: 'both',
     ...(sampled ? drawing : { draws: null }),
     seed: sampled ? (options.seed ?? freshSeed()) : null,

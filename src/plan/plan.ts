@@ -32,6 +32,8 @@ export interface PlanOptions {
   readonly columnScores?: ScoreWish;
   /** For power-divergence: above -1, a decimal or a fraction such as 2/3 (the default), read as the rational it is. */
   readonly lambda?: string | number;
+  /** Sides whose lines stand in order: adds the questions that use it, and measures of association for ordered sides. */
+  readonly ordered?: 'rows' | 'columns' | 'both';
   readonly method?: Method;
   /** Number of sampled tables, 1 to 1e12, or (the default) until p is settled against alpha. */
   readonly draws?: number | 'auto';
@@ -73,6 +75,7 @@ export interface Plan {
   readonly columnScores?: number[];
   /** In lowest terms, such as "2/3"; for power-divergence. */
   readonly lambda?: string;
+  readonly ordered?: 'rows' | 'columns' | 'both';
   readonly fixed: 'both';
   readonly draws: number | 'auto' | null;
   /** These three for draws `auto` only. */

@@ -13,6 +13,7 @@ import { digits, percentWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
 import { cautionsFor } from './cautions.js';
 import { againCommand, againInWords, againSentences } from './run-again.js';
+import { orderSection } from './sections/order.js';
 import { methodSentences, missingSentences, sourceWords } from './setting.js';
 
 export interface Sentence {
@@ -64,6 +65,7 @@ const sectionsOf = (result: Result): Section[] => [
   { heading: 'The table', blocks: [{ kind: 'table' }] },
   { heading: 'The answer', blocks: answer(result) },
   { heading: 'Other readings of the same table', blocks: otherReadings(result) },
+  orderSection(result),
   { heading: 'Would an approximation do?', blocks: footing(result) },
   { heading: 'Before you use it', blocks: cautionsFor(result).map(({ text, tone }) => sentence(text, tone)) },
   { heading: 'To run it again', blocks: again(result) },

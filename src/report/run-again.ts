@@ -28,6 +28,7 @@ export function againInWords({ input, plan }: Result): string {
     ...(plan.rowScores === undefined ? [] : [`row scores ${plan.rowScores.join()}`]),
     ...(plan.columnScores === undefined ? [] : [`column scores ${plan.columnScores.join()}`]),
     ...(plan.lambda === undefined ? [] : [`lambda ${plan.lambda}`]),
+    ...(plan.ordered === undefined ? [] : [`ordered ${plan.ordered}`]),
     `method ${plan.method}`,
   ];
   const { rowsFrom, columnsFrom } = input.source;
@@ -93,6 +94,7 @@ const planOptions = ({ plan }: Result): Option[] => [
   ...optional('reference', plan.reference),
   ...optional('row-scores', plan.rowScores?.join()),
   ...optional('column-scores', plan.columnScores?.join()),
+  ...optional('ordered', plan.ordered),
   ...optional('lambda', plan.lambda),
   ...optional('method', plan.method),
   ...optional('draws', plan.draws),

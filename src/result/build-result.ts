@@ -1,5 +1,6 @@
 // Gathers what a run found into the one reported shape, in the order of its fields, and gives it its words.
 import type { ReadTable } from '../input/read-table.js';
+import type { Effect } from '../effect/contract.js';
 import type { NamedRoles } from '../plan/roles.js';
 import type { Plan } from '../plan/plan.js';
 import type { PValueEntry } from '../pvalue/contract.js';
@@ -22,21 +23,19 @@ export interface Findings {
   readonly expectations: ExpectationCheck;
   /** Tables with these margins, when every one was counted. */
   readonly tables: number | undefined;
+  readonly byOrder?: { readonly order: NonNullable<Result['order']>; readonly effects: readonly Effect[] } | undefined;
   readonly notes: readonly Note[];
 }
 
 export function buildResult(found: Findings): Result {
-  const { plan, read, named, value, degreesOfFreedom } = found;
+  const { plan, read, named } = found;
   const before: ResultBeforeWords = {
     schema: 'keepsum/result/1',
     tool: { name: 'keepsum', version },
     input: inputEcho(read),
     plan,
     statistic: {
-      name: plan.statistic,
-      value: value === null ? null : extended(value),
-      ...(value === null ? { reason: 'empty-group' as const } : {}),
-      ...(degreesOfFreedom === undefined ? {} : { degreesOfFreedom }),
+      ...statisticFound(found),
       ...(named === null ? {} : groupsCompared(read.table, named)),
     },
     pValues: [...found.pValues],
@@ -44,11 +43,29 @@ export function buildResult(found: Findings): Result {
       ...found.expectations,
       ...(found.tables === undefined ? {} : { tables: found.tables }),
     },
+    ...(found.byOrder === undefined ? {} : orderParts(found.byOrder)),
     notes: [...found.notes],
   };
   const { notes, ...parts } = before;
   return { ...parts, sentence: sentenceFor(before), methods: methodsFor(before), notes };
 }
+
+/** The statistic with its value. */
+export const statisticFound = ({
+  plan,
+  value,
+  degreesOfFreedom,
+}: Pick<Findings, 'plan' | 'value' | 'degreesOfFreedom'>): Result['statistic'] => ({
+  name: plan.statistic,
+  value: value === null ? null : extended(value),
+  ...(value === null ? { reason: 'empty-group' as const } : {}),
+  ...(degreesOfFreedom === undefined ? {} : { degreesOfFreedom }),
+});
+
+const orderParts = ({ order, effects }: NonNullable<Findings['byOrder']>): Pick<Result, 'order' | 'effects'> => ({
+  order,
+  effects: effects.map((effect) => ({ ...effect, intervals: [...effect.intervals] })),
+});
 
 function inputEcho({ table, source, sha256, missing }: ReadTable): InputEcho {
   return {

@@ -3,6 +3,7 @@
 import { z } from 'zod';
 import { effect } from './declared/effect.js';
 import { input } from './declared/input.js';
+import { order } from './declared/order.js';
 import { pValue } from './declared/p-value.js';
 import { count, extendedNumber, probability } from './declared/pieces.js';
 import { plan } from './declared/plan.js';
@@ -38,6 +39,7 @@ export const resultDeclaration = z.strictObject({
   pValues: z.array(pValue).min(1),
   diagnostics,
   effects: z.array(effect).optional(),
+  order: order.optional(),
   sentence: z.string(),
   methods: z.string(),
   notes: z.array(z.strictObject({ code: z.string(), text: z.string() })),

@@ -88,6 +88,8 @@ export interface BoundStatistic {
   readonly sum?: CellSum;
   /** Statistics that are no exact sum over cells: exact sign of T(table) - T(observed). */
   place?(counts: ArrayLike<number>): Place;
+  /** Signed statistics whose fall is not their rise turned round: exact sign of fall(table) - fall(observed). */
+  placeLower?(counts: ArrayLike<number>): Place;
   /** Upper statistics that are a largest over cells. */
   readonly limits?: CellLimits;
   /** Signed statistics: exact sign of |T(table) - centre| - |T(observed) - centre|. */

@@ -1,5 +1,6 @@
 // The plan as it was carried out: every choice, its reason, and what decides every digit.
 import { z } from 'zod';
+import { orderedSides } from '../../order/questions.js';
 import { count, digest, level } from './pieces.js';
 
 const forecast = z.strictObject({
@@ -32,6 +33,8 @@ export const plan = z.strictObject({
     .string()
     .regex(/^-?\d+(\/\d+)?$/)
     .optional(),
+  /** The sides whose lines were declared to be in order. */
+  ordered: z.enum(orderedSides).optional(),
   fixed: z.enum(['both']),
   /** `auto`: until p is settled against alpha, by the rule that the error of the p-value names. */
   draws: z.union([count, z.literal('auto')]).nullable(),

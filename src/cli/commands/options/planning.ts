@@ -3,6 +3,7 @@ import { anyText, betweenZeroAndOne, oneOf, wholeNumber, type CheckValue } from 
 import { valued } from '../../arguments/option.js';
 import { standardEffort } from '../../../null/forecast.js';
 import { standardMostDraws, standardRelativeError } from '../../../plan/draws.js';
+import { orderedSides } from '../../../order/questions.js';
 import { methods, tails, twoSidedRules } from '../../../plan/plan.js';
 import { statisticNamed, statisticNames } from '../../../statistic/registry.js';
 import { isModulePath } from '../module-path.js';
@@ -34,6 +35,12 @@ export const planning = {
     'for trend, one for each row: 0,1,2.5 or the word midranks (1,2,3 and so on)',
   ),
   columnScores: valued('The test', 'SCORES', anyText, 'the same of the columns'),
+  ordered: valued(
+    'The test',
+    'SIDES',
+    oneOf(orderedSides),
+    `lines that stand in order: ${either(orderedSides)}; adds the tests that use it`,
+  ),
   lambda: valued('The test', 'NUMBER', anyText, 'for power-divergence, its exponent: a decimal or a fraction (2/3)'),
   method: valued(
     'How p is found',
