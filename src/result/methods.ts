@@ -55,7 +55,7 @@ function methodSentence(result: ResultBeforeWords, p: PValue): string {
   const name = `The ${pName(p)}`;
   if (p.method === 'exact') {
     const isTwoByTwo = result.input.rowLabels.length === 2 && result.input.columnLabels.length === 2;
-    const linear = result.plan.rowScores !== undefined;
+    const linear = result.plan.forecast.engine === 'linear';
     const source = isTwoByTwo ? 'Fisher 1935' : linear ? 'Pagano & Tritchler 1983' : 'Freeman & Halton 1951';
     return `${name} is exact: it adds up the probabilities, given both margins, of all tables at least as extreme as the observed one (${source}).`;
   }

@@ -28,7 +28,7 @@ const sentences = (order: Order): string[] => [
 
 const meaning: Readonly<Record<Asks, string>> = {
   'any-departure': 'Are rows and columns related in any way, the order left out?',
-  'rise-together': 'Do they rise or fall together, by the declared scores?',
+  'rise-together': 'Do they rise or fall together, by their scores?',
   'rise-of-any-shape': 'Do the responses rise, or fall, with the groups in their listed order, in steps of any size?',
   'groups-on-a-scale': 'Do the groups lie alike on the ordered scale?',
 };
