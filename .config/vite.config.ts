@@ -1,11 +1,12 @@
 // Builds three entries that share chunks: the command (main), the library (index) and what its threads run.
-// Everything a run needs at once is bundled, because loading loose files is what makes a Node command slow to start;
-// what only some runs need (dynamic imports) becomes chunks of its own.
+// Everything a run needs at once is bundled into few files, because loading loose ones is what makes a Node command slow to
+// start; what only some runs need (dynamic imports) becomes chunks of its own.
 import { builtinModules } from 'node:module';
-import { defineConfig } from 'vite';
+import { defineConfig, type Plugin } from 'vite';
 
 export default defineConfig({
   ssr: { noExternal: true },
+  plugins: [loadChildProcessWhenUsed()],
   build: {
     ssr: true,
     target: 'node20',
@@ -19,7 +20,45 @@ export default defineConfig({
       input: { main: 'src/cli/main.ts', index: 'src/index.ts', 'sampling-worker': 'src/sampling-worker.ts' },
       // piscina starts threads from files of its own, so it stays a package.
       external: [...builtinModules, /^node:/, 'piscina'],
-      output: { format: 'es', entryFileNames: '[name].js', chunkFileNames: 'chunk-[name].js' },
+      output: {
+        format: 'es',
+        entryFileNames: '[name].js',
+        chunkFileNames: 'chunk-[name].js',
+        // Each group takes along what its modules import: what every command needs, what threads draw with, the rest of
+        // `keepsum test`.
+        codeSplitting: {
+          groups: [
+            {
+              name: 'common',
+              test: /src\/(problem\/|result\/(version|label-words)|cli\/(arguments\/(option|scan)|streams\/write-out))/,
+              priority: 3,
+            },
+            {
+              name: 'drawing',
+              test: /src\/(table\/table|null\/ordering|null\/sampled\/block-source|plan\/make-plan)\.ts$/,
+              priority: 2,
+            },
+            { name: 'test', test: /src\/cli\/commands\/test\.ts$/, priority: 1 },
+          ],
+        },
+      },
     },
   },
 });
+
+/** commander loads node:child_process at once, for subcommands in files of their own; none of ours is, and it takes as long as all else. */
+function loadChildProcessWhenUsed(): Plugin {
+  const line = "const childProcess = require('node:child_process');";
+  return {
+    name: 'load-child-process-when-used',
+    enforce: 'pre',
+    transform(code, id) {
+      if (!id.endsWith('commander/lib/command.js')) return null;
+      if (!code.includes(line)) this.error(`commander no longer says: ${line}`);
+      return code.replace(
+        line,
+        "const childProcess = { spawn: (...words) => require('node:child_process').spawn(...words) };",
+      );
+    },
+  };
+}
