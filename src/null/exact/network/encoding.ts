@@ -85,15 +85,18 @@ const valueBits = 51;
 function encodeKeyed(table: OrientedTable, rule: ExponentRule): Encoding | null {
   const largestCount = Math.min(table.rowTotals.at(-1)!, Math.max(...table.columnTotals));
   if (largestCount > largestKeyedCount) return null;
-  const primes = primesUpTo(largestCount).map((prime) => {
+  const primes: { prime: number; exponents: Float64Array; step: number; bound: number }[] = [];
+  let radixProduct = 1;
+  for (const prime of primesUpTo(largestCount)) {
     const exponents = rule.exponents(prime, largestCount);
     const reach = (totals: readonly number[]): number =>
       totals.reduce((sum, total) => sum + rule.bound(prime, total), 0);
     const bound = Math.min(reach(table.rowTotals), reach(table.columnTotals));
-    return { prime, exponents, step: commonStep(exponents), bound };
-  });
-  const radixProduct = primes.reduce((product, { bound, step }) => product * (Math.floor(bound / step) + 1), 1);
-  if (radixProduct >= 2 ** 53) return null;
+    const step = commonStep(exponents);
+    radixProduct *= Math.floor(bound / step) + 1;
+    if (radixProduct >= 2 ** 53) return null;
+    primes.push({ prime, exponents, step, bound });
+  }
 
   const exponentSum = primes.reduce((sum, { bound }) => sum + bound, 0);
   const logBound = primes.reduce((sum, { bound, prime }) => sum + bound * Math.log(prime), 1);

@@ -44,6 +44,7 @@ function extend(network: Network, from: Level, to: Level, done: readonly number[
   const rest = table.columnTotals.map((_, j) => j).filter((j) => !done.includes(j));
   const allDone = network.weights.completions(done);
   const observed = encoding.observedValue;
+  const undecidedOnly = skipsHighValues(network);
   // Lists shared by all arrangements need a bound that holds for each.
   const mostAfter = allAlike && farUp ? bounds.most(rest, table.rowTotals) : Infinity;
   return visitNodes(network, done, rest, {
@@ -53,14 +54,21 @@ function extend(network: Network, from: Level, to: Level, done: readonly number[
     },
     open(sums, left, _, leastAfter) {
       const low = observed - margin - (farUp && !allAlike ? bounds.most(rest, left) : mostAfter);
-      transitions.collect(from, column, sums);
-      const settled = gather(from, transitions, side, low, observed + margin - leastAfter, list);
+      const high = observed + margin - leastAfter;
+      transitions.collect(from, column, sums, undecidedOnly ? high : Infinity);
+      const settled = gather(from, transitions, side, low, high, list);
       list.sortAndMerge();
       if (list.length > 0 || settled > 0) to.append(sums, space.numberOf(sums), list, settled);
       if (to.length > entryLimit) throw new OutOfReach(entryLimit);
     },
   });
 }
+
+/**
+ * Whether values that are certainly above the observed one may be passed over: they may not where the high side is added
+ * up, nor where a node can hold weight that is settled on the low side.
+ */
+export const skipsHighValues = ({ side, farUp }: Network): boolean => side === 'low' && !farUp;
 
 /** Fills the list with the undecided entries; returns the weight that is settled on the summed side. */
 export function gather(

@@ -9,10 +9,15 @@ import { SourceRanges } from './source-ranges.js';
 export type SummedSide = 'low' | 'high';
 
 export class Level {
+  nodes = 0;
   /** Entries of node p: starts[p] to starts[p + 1]. */
-  readonly starts: number[] = [0];
+  starts = new Int32Array(256);
   /** Weight at node p known to end on the summed side whatever follows; kept out of the list. */
-  readonly settled: number[] = [];
+  settled = new Float64Array(256);
+  /** Smallest value at node p, Infinity where the list is empty. */
+  lows = new Float64Array(256);
+  /** Smallest value at any node. */
+  least = Infinity;
   values: Float64Array;
   weights: Float64Array;
   keys: Float64Array;
@@ -42,13 +47,10 @@ export class Level {
     level.weights[0] = 1;
     level.sums[0] = side === 'high' ? 1 : 0;
     level.length = 1;
-    level.starts.push(1);
-    level.settled.push(0);
+    level.starts[1] = 1;
+    level.nodes = 1;
+    level.least = 0;
     return level;
-  }
-
-  get nodes(): number {
-    return this.settled.length;
   }
 
   append(sums: Float64Array, number: number, list: SortedList, settled: number): void {
@@ -62,11 +64,24 @@ export class Level {
     if (this.keyed) this.keys.set(list.keys.subarray(0, length), from);
     runningSums(list.weights, length, this.side, 0, this.sums, from);
     this.length += length;
-    this.starts.push(this.length);
-    this.settled.push(settled);
+    const node = this.nodes++;
+    this.starts[node + 1] = this.length;
+    this.settled[node] = settled;
+    const low = length > 0 ? list.values[0]! : Infinity;
+    this.lows[node] = low;
+    if (low < this.least) this.least = low;
   }
 
   private makeRoom(more: number): void {
+    if (this.nodes + 2 > this.starts.length) {
+      const { starts, settled, lows } = this;
+      this.starts = new Int32Array(4 * starts.length);
+      this.starts.set(starts);
+      this.settled = new Float64Array(4 * starts.length);
+      this.settled.set(settled);
+      this.lows = new Float64Array(4 * starts.length);
+      this.lows.set(lows);
+    }
     if (this.length + more <= this.values.length) return;
     const size = 4 * (this.length + more);
     const grown = (old: Float64Array): Float64Array => {

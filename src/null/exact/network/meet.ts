@@ -1,7 +1,7 @@
 // Where the halves meet. At every node the second half's list is completed, sorted and laid out for look-ups, and the first
 // half's entries are made one after the other and looked up. Neither whole half is ever held: memory is that of the lists
 // one column short of the meeting.
-import { gather, type Half } from './half.js';
+import { gather, skipsHighValues, type Half } from './half.js';
 import { MeetingList } from './meeting-list.js';
 import type { NearTies } from './near-ties.js';
 import type { Network } from './network.js';
@@ -18,6 +18,7 @@ export function meet(network: Network, first: Half, second: Half, ties: NearTies
   const secondLevel = second.levels.at(-1)!;
   const allFirst = weights.completions(first.columns);
   const allSecond = weights.completions(second.columns);
+  const undecidedOnly = skipsHighValues(network);
   const meeting = new MeetingList();
   const stream = new Stream(network, first, second, ties, tally, meeting);
 
@@ -35,14 +36,14 @@ export function meet(network: Network, first: Half, second: Half, ties: NearTies
         return;
       }
       const ways = space.arrangementsOf(sums);
-      transitions.collect(secondLevel, lastSecond, left);
+      transitions.collect(secondLevel, lastSecond, left, undecidedOnly ? observed + margin - leastFirst : Infinity);
       const low = observed - margin;
       const high = observed + margin;
       const settled = gather(secondLevel, transitions, side, low - mostFirst, high - leastFirst, list);
       tally.work += list.length + transitions.length;
       list.sortAndMerge();
       meeting.take(list, side, settled);
-      transitions.collect(firstLevel, lastFirst, sums);
+      transitions.collect(firstLevel, lastFirst, sums, undecidedOnly ? observed + margin - leastSecond : Infinity);
       tally.work += transitions.length;
       const whole = stream.run(transitions, sums, left, ways, low - mostSecond, high - leastSecond);
       tally.summed.add(whole * ways * allSecond.mantissa(left), allSecond.exponent(left));

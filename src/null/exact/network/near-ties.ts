@@ -43,6 +43,8 @@ export class NearTies {
   private readonly cellKey: ((count: number) => bigint) | null;
   private readonly verdicts = new Map<bigint, Place>();
   private remembered = new Map<string, PartialClass[]>();
+  /** Working space by depth. */
+  private readonly transitions: Transitions[] = [];
 
   constructor(
     private readonly network: Network,
@@ -109,8 +111,8 @@ export class NearTies {
     const { network } = this;
     const column = half.columns[depth - 1]!;
     const from = half.levels[depth - 1]!;
-    const transitions = new Transitions(network.space);
-    transitions.collect(from, network.columns[column]!, sums);
+    const transitions = (this.transitions[depth] ??= new Transitions(network.space));
+    transitions.collect(from, network.columns[column]!, sums, value);
     const found: PartialClass[] = [];
     const byKey = new Map<bigint, PartialClass>();
     for (let t = 0; t < transitions.length; t++) {

@@ -16,6 +16,10 @@ export interface ColumnTerms {
 export interface Sources {
   readonly index: NodeIndex;
   readonly ranges: SourceRanges;
+  /** Smallest value by place. */
+  readonly lows: Float64Array;
+  /** The smallest of them. */
+  readonly least: number;
 }
 
 export class Transitions {
@@ -35,8 +39,9 @@ export class Transitions {
   private readonly partPlaces: Float64Array;
   private readonly most: Float64Array;
   private readonly roomAfter: Float64Array;
+  private mostValue = Infinity;
   private sought = -1;
-  private found: number[] = [];
+  private found: readonly number[] = [];
 
   constructor(private readonly space: NodeSpace) {
     const slots = (): Float64Array => new Float64Array(space.rows + 1);
@@ -54,12 +59,14 @@ export class Transitions {
   /**
    * Finds the sources, among those of the level, from which the column leads to the node with these row sums. Neighbouring
    * interchangeable rows with equal sums take their counts in rising order only, weighted by the ways to arrange them.
+   * Left out are transitions that can only lead to values above `mostValue`.
    */
-  collect(from: Sources, column: ColumnTerms, sums: ArrayLike<number>): void {
+  collect(from: Sources, column: ColumnTerms, sums: ArrayLike<number>, mostValue: number): void {
     const { counts, amounts, partValues, partWeights, partKeys, partNumbers, partPlaces, roomAfter, most } = this;
     const { rows, codes, blockOf } = this.space;
     for (let i = rows - 1; i >= 0; i--) roomAfter[i] = roomAfter[i + 1]! + sums[i]!;
     this.length = 0;
+    this.mostValue = mostValue;
     amounts[0] = column.total;
     partWeights[0] = 1;
     this.begin(0, 0, from.ranges, sums);
@@ -105,9 +112,9 @@ export class Transitions {
   }
 
   /** The column's counts for transition t of a collection with the same arguments. */
-  countsAt(t: number, from: Sources, column: ColumnTerms, sums: ArrayLike<number>): number[] {
+  countsAt(t: number, from: Sources, column: ColumnTerms, sums: ArrayLike<number>): readonly number[] {
     this.sought = t;
-    this.collect(from, column, sums);
+    this.collect(from, column, sums, this.mostValue);
     this.sought = -1;
     return this.found;
   }
@@ -151,17 +158,21 @@ export class Transitions {
     const weight = this.partWeights[row]!;
     const key = this.partKeys[row]!;
     const number = this.partNumbers[row]!;
-    const { index } = from;
+    const { index, lows } = from;
     const { plain } = index;
+    const { mostValue } = this;
+    const mostAdded = mostValue - from.least;
     const joins = row > 0 && blockOf[row] !== row && sum === sums[row - 1];
     const lastJoins = blockOf[row + 1] !== row + 1 && lastSum === sum;
     let at = this.length;
     for (let n = least; n <= most; n++) {
       const rest = amount - n;
       if (lastJoins && rest < n) break;
+      const added = value + columnValues[n]! + lastValues[rest]!;
+      if (added > mostAdded) continue;
       const node = number + code[sum - n]! + lastCode[lastSum - rest]!;
       const source = plain !== null ? plain[node]! : index.get(node);
-      if (source < 0) continue;
+      if (source < 0 || added + lows[source]! > mostValue) continue;
       let ways = 1;
       if (joins || lastJoins) {
         counts[row] = n;
@@ -169,7 +180,7 @@ export class Transitions {
         if (lastJoins) ways *= this.arrangements(row + 1, rest, sums);
       }
       sources[at] = source;
-      values[at] = value + columnValues[n]! + lastValues[rest]!;
+      values[at] = added;
       weights[at] = weight * columnWeights[n]! * lastWeights[rest]! * ways;
       if (columnKeys !== null) keys[at] = key + columnKeys[n]! + lastKeys![rest]!;
       if (at === this.sought) this.found = [...Array.from(counts.subarray(0, row)), n, rest];
