@@ -10,6 +10,7 @@
 import type { ReadTable } from './input/read-table.js';
 import type { ExactAnswer } from './null/exact/exact-answer.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
+import type { ExactEngine } from './null/forecast.js';
 import { orderingFor } from './null/ordering.js';
 import { OutOfReach } from './null/exact/network/network.js';
 import { makePlan, planWithoutExact, type Prepared } from './plan/make-plan.js';
@@ -30,12 +31,17 @@ import { makeTable, type TableParts } from './table/table.js';
 export interface Answer {
   readonly read: ReadTable;
   readonly live: LiveTable;
-  readonly prepared: Prepared;
+  readonly prepared: Pick<Prepared, 'plan' | 'named'>;
   /** null where the margins leave the statistic undefined. */
   readonly value: number | null;
+  readonly undefinedBecause?: Findings['undefinedBecause'];
+  readonly degreesOfFreedom: number | undefined;
   readonly pValues: readonly PValueEntry[];
   /** Tables with these margins, when every one was counted. */
   readonly tables: number | undefined;
+  /** Pairs have theirs off the diagonal; default: those of independence. */
+  readonly expectations?: Findings['expectations'];
+  readonly effects?: Findings['effects'];
   readonly notes: readonly Note[];
 }
 
@@ -53,17 +59,19 @@ export async function analyse(
   surroundings: Surroundings = {},
 ): Promise<Result> {
   const found = await answer(data, options, surroundings);
-  const byOrder = await orderedAnswers(found, options, (wishes) => answer(found.read, wishes, surroundings));
-  return buildResult({ ...findingsOf(found), expectations: checkExpectations(found.live), byOrder });
+  const byOrder = found.prepared.plan.paired
+    ? undefined
+    : await orderedAnswers(found, options, (wishes) => answer(found.read, wishes, surroundings));
+  return buildResult({ ...findingsOf(found), byOrder });
 }
 
 /** What a result takes over from the answer as it is. */
-export const findingsOf = ({ read, live, prepared, ...found }: Answer): Omit<Findings, 'expectations'> => ({
+export const findingsOf = ({ read, live, prepared, expectations, ...found }: Answer): Findings => ({
   ...found,
   read,
   plan: prepared.plan,
   named: prepared.named,
-  degreesOfFreedom: degreesOfFreedomOf(prepared.statistic, live, prepared.bound),
+  expectations: expectations ?? checkExpectations(live),
 });
 
 /** The p-values alone, by the same steps and with the same digits. Arguments and problems as for `analyse`. */
@@ -72,7 +80,10 @@ export async function answer(
   options: PlanOptions = {},
   surroundings: Surroundings = {},
 ): Promise<Answer> {
-  const read = 'table' in data ? data : fromProgram(data);
+  const given = 'table' in data ? data : fromProgram(data);
+  const pairs = options.paired ? await import('./analyse-pairs.js') : null;
+  const read = pairs === null ? given : pairs.squareTable(given);
+  if (pairs !== null && !pairs.isAgreement(options.statistic)) return pairs.answerPairs(read, options, surroundings);
   const live = liveTable(read.table);
   const prepared = makePlan(read.table, live, options);
   try {
@@ -104,11 +115,13 @@ async function carryOut(
     live,
     prepared,
     value,
+    degreesOfFreedom: degreesOfFreedomOf(statistic, live, bound),
     pValues: found,
     tables,
+    ...(plan.paired ? await (await import('./analyse-pairs.js')).agreementFindings(read.table, plan) : {}),
     notes: [
       ...read.notes,
-      ...emptyLineNotes(read.table),
+      ...(plan.paired ? [] : emptyLineNotes(read.table)),
       ...(bound === null ? [onlyOneTable] : asymptoticNotes(found[0]!, asymptotic[0], statistic)),
       ...statisticNotes(statistic, bound),
       ...(await unsettledNotes(found[0]!, plan)),
@@ -124,7 +137,7 @@ async function carryOut(
     if (bound === null) return fromAnswer(onlyTable(live, names));
     const orderings = names.map((name) => orderingFor(live, bound, name));
     if (plan.method === 'exact') {
-      return fromAnswer(exactCuts(live, orderings, plan.forecast.engine, plan.statistic));
+      return fromAnswer(exactCuts(live, orderings, plan.forecast.engine as ExactEngine, plan.statistic));
     }
     const recipe = statistic.own ? null : { parts: partsOf(read), options };
     return { found: await sampledPValues(questions, live, orderings, plan, recipe, surroundings) };

@@ -9,6 +9,7 @@ export const effectReasons = [
   'zero-variance',
   'only-one-table',
   'one-level-only',
+  'no-discordant-pairs',
 ] as const;
 export type EffectReason = (typeof effectReasons)[number];
 

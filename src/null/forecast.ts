@@ -8,9 +8,12 @@ import { forecastNetwork } from './exact/network/forecast.js';
 
 export type ExactEngine = 'two-by-two' | 'enumeration' | 'linear' | 'network' | 'within-limits';
 
-export interface Forecast {
+/** Engines of tests of pairs: one walk, two halves joined, the law of the differences of the margins. */
+export type PairsEngine = 'coin-walk' | 'coin-halves' | 'coin-differences';
+
+export interface Forecast<Engine = ExactEngine> {
   /** The engine that would do the exact work. */
-  readonly engine: ExactEngine;
+  readonly engine: Engine;
   readonly workUnits: number;
   readonly tables: number;
   readonly tablesAreCounted: boolean;

@@ -21,9 +21,7 @@ export interface HomogeneityForm {
 export function homogeneityForm(levels: number, pairs: readonly DiscordantPair[]): HomogeneityForm {
   const sets = joinedSets(levels, pairs);
   const kept = sets.flatMap((set) => set.slice(1));
-  const { matrix, denominator } = scaledInverse(
-    kept.map((i) => kept.map((j) => covariance(pairs, i, j))),
-  );
+  const { matrix, denominator } = scaledInverse(kept.map((i) => kept.map((j) => covariance(pairs, i, j))));
   const reach = kept.map((i) => covariance(pairs, i, i));
   const bound = matrix.reduce(
     (sum, row, a) => sum + row.reduce((line, x, b) => line + magnitude(x) * reach[a]! * reach[b]!, 0n),
@@ -121,6 +119,8 @@ function scaledInverse(matrix: readonly (readonly bigint[])[]): { matrix: bigint
     }
   }
   const inverse = rows.map((row) => row.slice(size));
-  const denominator = inverse.flat().reduce((all, x) => (all / greatestCommonDivisor(all, x.denominator)) * x.denominator, 1n);
+  const denominator = inverse
+    .flat()
+    .reduce((all, x) => (all / greatestCommonDivisor(all, x.denominator)) * x.denominator, 1n);
   return { matrix: inverse.map((row) => row.map((x) => x.numerator * (denominator / x.denominator))), denominator };
 }

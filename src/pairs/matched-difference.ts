@@ -32,7 +32,10 @@ export function matchedDifference(level: OneLevel, event: string, confidence: nu
     intervals: [
       named('tango', tango(there, back, n, z), 'score'),
       named('newcombe', newcombe(level, n, z)),
-      named('wald', wald(there, back, n, z)),
+      // Wald's has no width where no pair changed.
+      there + back === 0
+        ? { method: 'wald', confidence, lower: null, upper: null, reason: 'zero-variance' }
+        : named('wald', wald(there, back, n, z)),
     ],
   };
 }

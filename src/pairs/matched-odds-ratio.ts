@@ -37,8 +37,7 @@ async function midLimits(hits: number, trials: number, confidence: number): Prom
   const { default: cephes } = await import('cephes');
   await cephes.compiled;
   /** P(X >= k) for X binomial (trials, q), 0 < q < 1. */
-  const atLeast = (k: number, q: number): number =>
-    k <= 0 ? 1 : k > trials ? 0 : cephes.incbet(k, trials - k + 1, q);
+  const atLeast = (k: number, q: number): number => (k <= 0 ? 1 : k > trials ? 0 : cephes.incbet(k, trials - k + 1, q));
   const risk = (1 - confidence) / 2;
   const midUpper = (q: number): number => (atLeast(hits, q) + atLeast(hits + 1, q)) / 2;
   return [

@@ -45,7 +45,12 @@ export function unconditionalMcNemar(there: number, back: number, pairs: number,
   let previous = look(0);
   for (let k = 1; k <= pieces; k++) {
     const next = look((k / pieces) * (Math.PI / 2));
-    open.push({ from: ((k - 1) / pieces) * (Math.PI / 2), to: (k / pieces) * (Math.PI / 2), first: previous, last: next });
+    open.push({
+      from: ((k - 1) / pieces) * (Math.PI / 2),
+      to: (k / pieces) * (Math.PI / 2),
+      first: previous,
+      last: next,
+    });
     previous = next;
   }
   const boundOf = ({ from, to, first, last }: Piece): number => {
@@ -56,7 +61,12 @@ export function unconditionalMcNemar(there: number, back: number, pairs: number,
     const goal = best * (1 + closeEnough);
     open = open.filter((piece) => boundOf(piece) > goal);
     if (open.length === 0) return bracket(best, goal, at);
-    if (law.terms > mostTerms) return bracket(best, open.reduce((top, piece) => Math.max(top, boundOf(piece)), goal), at);
+    if (law.terms > mostTerms)
+      return bracket(
+        best,
+        open.reduce((top, piece) => Math.max(top, boundOf(piece)), goal),
+        at,
+      );
     open = open.flatMap(({ from, to, first, last }) => {
       const middle = (from + to) / 2;
       const between = look(middle);

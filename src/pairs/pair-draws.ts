@@ -1,5 +1,6 @@
 // Random tables with every n_ij + n_ji held: each changed pair is turned round or not by a fair coin. Blocks of draws are functions of
 // seed, table and number alone, and are counted for both statistics at once.
+import type { OrderingName } from '../null/contract.js';
 import type { BlockSource } from '../null/sampled/block-source.js';
 import { blockSize } from '../null/sampled/limits.js';
 import { drawsInBlock, type Sampling, type Tally } from '../null/sampled/sample-cuts.js';
@@ -55,7 +56,17 @@ export interface PairDraws extends BlockSource {
   drawSplits(stream: UniformSource): readonly number[];
 }
 
-/** Tallies of Bowker's statistic first, Stuart's second. */
+/** Which tally answers a statistic on an ordering: Bowker's, which for two levels is McNemar's distance; Stuart's; and for two levels
+ *  one way and the other. */
+export const tallyFor = (statistic: string, ordering: OrderingName): number =>
+  statistic === 'marginal-homogeneity'
+    ? 1
+    : statistic === 'mcnemar' && ordering === 'upper'
+      ? 2
+      : ordering === 'lower'
+        ? 3
+        : 0;
+
 export function pairDraws(pairs: readonly DiscordantPair[], form: HomogeneityForm, sampling: Sampling): PairDraws {
   const coins = pairs.map(({ there, back }) => new CoinCounts(there + back));
   const placeBowker = bowkerPlace(pairs);
@@ -76,14 +87,16 @@ export function pairDraws(pairs: readonly DiscordantPair[], form: HomogeneityFor
   };
   const countBlock = (block: number): Tally[] => {
     const stream = blockStream(sampling.seed, sampling.tableKey, block);
-    const counted = [
-      [0, 0, 0],
-      [0, 0, 0],
-    ] as [[number, number, number], [number, number, number]];
+    const counted = Array.from({ length: form.levels === 2 ? 4 : 2 }, (): [number, number, number] => [0, 0, 0]);
+    const seen = pairs[0]?.there ?? 0;
     for (let left = drawsInBlock(sampling.draws, block); left > 0; left--) {
       draw(stream);
-      counted[0][placeBowker(splits) + 1]!++;
-      counted[1][placeStuart() + 1]!++;
+      counted[0]![placeBowker(splits) + 1]!++;
+      counted[1]![placeStuart() + 1]!++;
+      if (form.levels > 2) continue;
+      const way = Math.sign((splits[0] ?? 0) - seen);
+      counted[2]![way + 1]!++;
+      counted[3]![1 - way]!++;
     }
     return counted;
   };

@@ -46,7 +46,10 @@ function oneSided(d: number, of: number, pairs: number, ties: boolean): Float64A
       tail.set(2 ** -m);
     } else {
       // One more coin: P(X >= x) gains half of P(X = x - 1).
-      const before = new DoubleDouble(point.high, point.low).multiply(x).divide(m - x).multiply(0.5);
+      const before = new DoubleDouble(point.high, point.low)
+        .multiply(x)
+        .divide(m - x)
+        .multiply(0.5);
       tail.addPair(before.high, before.low);
       point.multiply(m).divide(2 * (m - x));
     }

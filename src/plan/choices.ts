@@ -1,6 +1,8 @@
 // Which statistic, and the settings that only some statistics read; an option without effect is refused, not ignored.
 import { fractionRational, rationalText, type Rational } from '../numeric/rational.js';
 import { usageProblem } from '../problem/problem.js';
+import { kappaStatistic } from '../statistic/kappa.js';
+import { pairedNames } from '../statistic/paired.js';
 import { standardLambda } from '../statistic/power-divergence.js';
 import { statisticNamed, statisticNames, statistics } from '../statistic/registry.js';
 import { ownStatistic, type OwnStatistic } from '../statistic/own.js';
@@ -11,8 +13,20 @@ import type { Plan, PlanOptions } from './plan.js';
 import { scoresOf } from './scores.js';
 import { oneOf, unused } from './settings.js';
 
-/** A built-in one by name, or the user's own. @throws Problem (usage). */
-export function chooseStatistic(wish: string | OwnStatistic | undefined): Statistic {
+/**
+ * A built-in one by name, or the user's own.
+ * @param levels of a square table of pairs, for statistics of agreement. @throws Problem (usage).
+ */
+export function chooseStatistic(wish: string | OwnStatistic | undefined, levels?: number): Statistic {
+  if (typeof wish === 'string' && pairedNames.includes(wish)) {
+    if (levels !== undefined) return kappaStatistic(wish, levels);
+    throw usageProblem({
+      code: 'needs-pairs',
+      message: `${wish} is a statistic of pairs: rows and columns must be two answers of the same units`,
+      place: '--statistic',
+      hint: 'add --paired if they are',
+    });
+  }
   if (wish === undefined || typeof wish === 'string') return statisticNamed(wish ?? 'pearson');
   return ownStatistic(wish, statisticNames);
 }

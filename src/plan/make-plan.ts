@@ -28,7 +28,7 @@ export interface Prepared {
 
 /** @throws Problem: usage for wishes that make no sense together, effort for exact work over the bound. */
 export function makePlan(table: Table, live: LiveTable, options: PlanOptions): Prepared {
-  const statistic = chooseStatistic(options.statistic);
+  const statistic = chooseStatistic(options.statistic, options.paired ? table.rowLabels.length : undefined);
   refuseUnread(statistic, options);
   const { tail, rule } = tailOf(statistic, options);
   const named = statistic.shape === '2x2' ? rolesOf(table, live, statistic, options) : null;
@@ -49,14 +49,16 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     });
   }
   // A sum of scores has a value whatever the margins allow.
-  const valueOfOnlyTable = statistic.takes?.includes('scores')
-    ? statistic.bind(live, noRoles, choices).value(live.counts)
-    : named === null || named.referenceLabel !== null
-      ? 0
-      : null;
+  const valueOfOnlyTable =
+    statistic.takes?.includes('scores') || options.paired
+      ? definedOrNull(statistic.bind(live, noRoles, choices).value(live.counts))
+      : named === null || named.referenceLabel !== null
+        ? 0
+        : null;
   const sampled = method === 'sample';
   const plan: Plan = Object.freeze({
     statistic: statistic.name,
+    ...(options.paired ? { paired: true as const } : {}),
     tail,
     twoSidedRule: rule,
     method,
@@ -102,14 +104,20 @@ export function planWithoutExact(table: Table, live: LiveTable, options: PlanOpt
   return { ...prepared, plan };
 }
 
+const definedOrNull = (value: number): number | null => (Number.isNaN(value) ? null : value);
+
 function tailOf(statistic: Statistic, options: PlanOptions): { tail: Tail; rule: TwoSidedRule | null } {
   const tail = oneOf(options.tail, statistic.sided === 'signed' ? 'both' : 'upper', tails, '--tail');
   if (statistic.sided === 'upper' && tail === 'both') {
     throw usageProblem({
       code: 'tail-of-upper-statistic',
-      message: `${statistic.name} grows with any departure from independence, so it has no two-sided p`,
+      message: options.paired
+        ? `${statistic.name} is tested for more agreement than by chance, in its upper tail`
+        : `${statistic.name} grows with any departure from independence, so it has no two-sided p`,
       place: '--tail both',
-      hint: 'use --tail upper (the default): it already takes departures in every direction together',
+      hint: options.paired
+        ? 'use --tail upper (the default), or --tail lower for less agreement than by chance'
+        : 'use --tail upper (the default): it already takes departures in every direction together',
     });
   }
   if (tail !== 'both') {

@@ -1,6 +1,6 @@
 // The plan: everything a run will do, checked and frozen before work starts, echoed whole in the result.
 import type { OrderingName } from '../null/contract.js';
-import type { Forecast } from '../null/forecast.js';
+import type { ExactEngine, Forecast, PairsEngine } from '../null/forecast.js';
 import type { OwnStatistic } from '../statistic/own.js';
 import type { ScoreWish } from './scores.js';
 
@@ -20,6 +20,8 @@ export interface PlanOptions {
   readonly statistic?: string | OwnStatistic;
   /** SHA-256 of the module that a statistic of your own came from, 64 hexadecimal digits; kept in the plan. */
   readonly statisticDigest?: string;
+  /** Rows and columns are two answers of the same units, with the same levels: tests of change, and of agreement. */
+  readonly paired?: boolean;
   readonly tail?: Tail;
   readonly twoSidedRule?: TwoSidedRule;
   readonly groups?: 'rows' | 'columns';
@@ -58,6 +60,8 @@ export interface PlanOptions {
 
 export interface Plan {
   readonly statistic: string;
+  /** Rows and columns are two answers of the same units. */
+  readonly paired?: true;
   /** SHA-256 of the module of a statistic of the user's own. */
   readonly statisticDigest?: string;
   readonly tail: Tail;
@@ -66,7 +70,7 @@ export interface Plan {
   /** Asked for, before `auto` was settled. */
   readonly methodAsked: Method;
   readonly methodReason: string;
-  readonly forecast: Forecast;
+  readonly forecast: Forecast<ExactEngine | PairsEngine>;
   readonly groups: 'rows' | 'columns' | null;
   readonly event: string | null;
   readonly reference: string | null;
@@ -76,7 +80,7 @@ export interface Plan {
   /** In lowest terms, such as "2/3"; for power-divergence. */
   readonly lambda?: string;
   readonly ordered?: 'rows' | 'columns' | 'both';
-  readonly fixed: 'both';
+  readonly fixed: 'both' | 'pairs';
   readonly draws: number | 'auto' | null;
   /** These three for draws `auto` only. */
   readonly mostDraws?: number;

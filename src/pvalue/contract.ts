@@ -34,6 +34,12 @@ export interface SequentialError {
   tails?: { upper: number; lower: number };
 }
 
+/** p is a proved upper bound of a maximum over unknown proportions. */
+export interface MaximumError {
+  kind: 'nuisance-maximum';
+  relative: number;
+}
+
 export interface ApproximationError {
   kind: 'approximation';
 }
@@ -42,7 +48,7 @@ export interface PValueEntry {
   tail: Tail;
   rule?: TwoSidedRule;
   orderedBy: string;
-  method: 'exact' | 'sample' | 'asymptotic';
+  method: 'exact' | 'sample' | 'asymptotic' | 'unconditional';
   statistic: string;
   p: number | null;
   log10P: number | null;
@@ -54,8 +60,10 @@ export interface PValueEntry {
   degreesOfFreedom?: number;
   /** Asymptotic entries of a statistic that is not on the scale of its limiting law: the value on that scale. */
   value?: number;
+  /** Where an unconditional p is largest, and the proved bound of it. */
+  nuisance?: { value: number; second?: number; certifiedUpper: number };
   guaranteed: boolean;
-  errors: (RoundingError | SamplingError | SequentialError | ApproximationError)[];
+  errors: (RoundingError | SamplingError | SequentialError | MaximumError | ApproximationError)[];
 }
 
 /** What a p-value is asked for: a tail, and for two tails a rule. */

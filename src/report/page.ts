@@ -12,6 +12,7 @@ import { quoted, shown } from '../result/label-words.js';
 import { digits, percentWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
 import { cautionsFor } from './cautions.js';
+import { pairsQuestion, pairsSection } from './sections/pairs.js';
 import { againCommand, againInWords, againSentences } from './run-again.js';
 import { orderSection } from './sections/order.js';
 import { methodSentences, missingSentences, sourceWords } from './setting.js';
@@ -55,7 +56,7 @@ export interface Page {
 
 export function pageFor(result: Result): Page {
   return {
-    title: questionOf(result),
+    title: pairsQuestion(result) ?? questionOf(result),
     sections: sectionsOf(result).filter((section) => section.blocks.length > 0),
   };
 }
@@ -66,6 +67,7 @@ const sectionsOf = (result: Result): Section[] => [
   { heading: 'The answer', blocks: answer(result) },
   { heading: 'Other readings of the same table', blocks: otherReadings(result) },
   orderSection(result),
+  pairsSection(result),
   { heading: 'Would an approximation do?', blocks: footing(result) },
   { heading: 'Before you use it', blocks: cautionsFor(result).map(({ text, tone }) => sentence(text, tone)) },
   { heading: 'To run it again', blocks: again(result) },
@@ -105,9 +107,13 @@ function otherReadings(result: Result): Block[] {
 function footing(result: Result): Block[] {
   if (isOneTableOnly(result)) return [];
   const { smallestExpected, shareBelowFive, cochranSentence } = result.diagnostics;
-  const share = shareBelowFive === 0 ? 'no cell expects' : `${percentWords(shareBelowFive)} of the cells expect`;
+  const where = result.plan.fixed === 'pairs' ? ' off the diagonal' : '';
+  const share =
+    shareBelowFive === 0 ? `no cell${where} expects` : `${percentWords(shareBelowFive)} of the cells${where} expect`;
   return [
-    plain(`The smallest expected count is ${digits(smallestExpected, 3)}; ${share} fewer than 5.`),
+    plain(
+      `The smallest expected count${where} is ${smallestExpected === 0 ? '0' : digits(smallestExpected, 3)}; ${share} fewer than 5.`,
+    ),
     plain(cochranSentence),
   ];
 }

@@ -19,6 +19,7 @@ export function againCommand(result: Result): readonly string[] | undefined {
 /** The same in a sentence. */
 export function againInWords({ input, plan }: Result): string {
   const said = [
+    ...(plan.paired ? ['pairs'] : []),
     `statistic ${plan.statistic}`,
     `tail ${plan.tail}`,
     ...(plan.twoSidedRule === null ? [] : [`two-sided rule ${plan.twoSidedRule}`]),
@@ -45,16 +46,18 @@ interface TableParts {
   readonly options: readonly Option[];
 }
 
-function tableParts({ input, notes }: Result): TableParts | undefined {
+function tableParts({ input, notes, plan }: Result): TableParts | undefined {
   const { source } = input;
   switch (source.form) {
     case 'library':
       return undefined;
     case 'inline': {
       const labels = input.columnLabels;
-      const hasNames = labels.some((label, j) => label !== `column ${j + 1}`);
+      // Pairs: the labels of the rows are those of the columns, and levels without any are numbered.
+      const hasNames = !plan.paired && labels.some((label, j) => label !== `column ${j + 1}`);
+      const bare = plan.paired && labels.every((label, j) => label === `level ${j + 1}`);
       return {
-        operands: input.counts.map((row, i) => rowOperand(input.rowLabels[i]!, i, row)),
+        operands: input.counts.map((row, i) => (bare ? row.join(',') : rowOperand(input.rowLabels[i]!, i, row))),
         options: hasNames ? [['column-labels', labels.map(csvLabel).join(',')]] : [],
       };
     }
@@ -86,6 +89,7 @@ const optional = (name: string, value: string | number | null | undefined): Opti
   value === null || value === undefined ? [] : [[name, String(value)]];
 
 const planOptions = ({ plan }: Result): Option[] => [
+  ...(plan.paired ? [['paired', null] as const] : []),
   ...optional('statistic', plan.statistic),
   ...optional('tail', plan.tail),
   ...optional('two-sided-rule', plan.twoSidedRule),

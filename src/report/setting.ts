@@ -2,6 +2,7 @@
 // which method was picked and why.
 import { quoted } from '../result/label-words.js';
 import { countWords } from '../result/number-words.js';
+import { coinSentence } from './sections/pairs.js';
 import type { InputSource, Result } from '../result/result.js';
 
 /** How the table was read, as the end of a sentence that names it. */
@@ -70,7 +71,10 @@ export function methodSentences({ plan }: Result): string[] {
     ...(plan.statisticDigest === undefined
       ? []
       : [`The module of the statistic has the SHA-256 ${plan.statisticDigest}.`]),
-    ...(plan.method === 'asymptotic' ? [] : ['Chance deals the counts anew with every row and column total held.']),
+    ...(plan.fixed === 'pairs' && plan.method !== 'asymptotic' ? [coinSentence] : []),
+    ...(plan.method === 'asymptotic' || plan.fixed === 'pairs'
+      ? []
+      : ['Chance deals the counts anew with every row and column total held.']),
     `Method: ${plan.method}, ${picked}${plan.methodReason.replace(/\.$/, '')}.`,
   ];
 }

@@ -1,4 +1,5 @@
 // Gathers what a run found into the one reported shape, in the order of its fields, and gives it its words.
+import type { Effect } from '../effect/contract.js';
 import type { ReadTable } from '../input/read-table.js';
 import type { Effect } from '../effect/contract.js';
 import type { NamedRoles } from '../plan/roles.js';
@@ -18,12 +19,15 @@ export interface Findings {
   readonly named: NamedRoles | null;
   /** null where the margins leave the statistic undefined. */
   readonly value: number | null;
+  /** Why it is undefined; default: a group is empty. */
+  readonly undefinedBecause?: NonNullable<Result['statistic']['reason']> | undefined;
   readonly degreesOfFreedom: number | undefined;
   readonly pValues: readonly PValueEntry[];
   readonly expectations: ExpectationCheck;
   /** Tables with these margins, when every one was counted. */
   readonly tables: number | undefined;
   readonly byOrder?: { readonly order: NonNullable<Result['order']>; readonly effects: readonly Effect[] } | undefined;
+  readonly effects?: readonly Effect[] | undefined;
   readonly notes: readonly Note[];
 }
 
@@ -44,6 +48,7 @@ export function buildResult(found: Findings): Result {
       ...(found.tables === undefined ? {} : { tables: found.tables }),
     },
     ...(found.byOrder === undefined ? {} : orderParts(found.byOrder)),
+    ...(found.effects === undefined ? {} : { effects: effectsFound(found.effects) }),
     notes: [...found.notes],
   };
   const { notes, ...parts } = before;
@@ -55,17 +60,21 @@ export const statisticFound = ({
   plan,
   value,
   degreesOfFreedom,
-}: Pick<Findings, 'plan' | 'value' | 'degreesOfFreedom'>): Result['statistic'] => ({
+  undefinedBecause = 'empty-group',
+}: Pick<Findings, 'plan' | 'value' | 'degreesOfFreedom' | 'undefinedBecause'>): Result['statistic'] => ({
   name: plan.statistic,
   value: value === null ? null : extended(value),
-  ...(value === null ? { reason: 'empty-group' as const } : {}),
+  ...(value === null ? { reason: undefinedBecause } : {}),
   ...(degreesOfFreedom === undefined ? {} : { degreesOfFreedom }),
 });
 
 const orderParts = ({ order, effects }: NonNullable<Findings['byOrder']>): Pick<Result, 'order' | 'effects'> => ({
   order,
-  effects: effects.map((effect) => ({ ...effect, intervals: [...effect.intervals] })),
+  effects: effectsFound(effects),
 });
+
+const effectsFound = (effects: readonly Effect[]): NonNullable<Result['effects']> =>
+  effects.map((effect) => ({ ...effect, intervals: [...effect.intervals] }));
 
 function inputEcho({ table, source, sha256, missing }: ReadTable): InputEcho {
   return {

@@ -9,7 +9,8 @@ import { count, extendedNumber, probability } from './declared/pieces.js';
 import { plan } from './declared/plan.js';
 
 const diagnostics = z.strictObject({
-  smallestExpected: z.number().positive(),
+  /** 0 only for pairs of which none changed. */
+  smallestExpected: z.number().min(0),
   /** Share of cells with an expected count below 5. */
   shareBelowFive: probability,
   /** Cochran (1954): does the chi-square approximation deserve trust here? */
@@ -30,7 +31,7 @@ export const resultDeclaration = z.strictObject({
     name: z.string(),
     /** null beside a reason when these margins leave it undefined. */
     value: extendedNumber.nullable(),
-    reason: z.enum(['empty-group']).optional(),
+    reason: z.enum(['empty-group', 'one-level-only']).optional(),
     degreesOfFreedom: count.optional(),
     /** 2x2 statistics: the two proportions compared, first minus second. */
     groups: z.tuple([group, group]).optional(),

@@ -1,5 +1,6 @@
 // The words that the sentence, the methods paragraph and every report share: how a p-value, its method and its error
 // are named. Statistics bring their own words from the registry.
+import { pairedForms, pairedStatistics } from '../statistic/paired.js';
 import { statistics } from '../statistic/registry.js';
 import { quoted } from './label-words.js';
 import { countWords, digits, levelWords, probabilityWords, roundedTo, tinyWords } from './number-words.js';
@@ -15,7 +16,9 @@ export const statisticWords = (name: string): string => known(name)?.words ?? `t
 
 /** A statistic of the registry, or one of the named forms of it. */
 const known = (name: string): { readonly words: string; readonly source: string } | undefined =>
-  [...statistics, ...statistics.flatMap(({ forms = [] }) => forms)].find((one) => one.name === name);
+  [...statistics, ...statistics.flatMap(({ forms = [] }) => forms), ...pairedStatistics, ...pairedForms].find(
+    (one) => one.name === name,
+  );
 
 /** The same without the explanation behind it, for the second mention. */
 export const shortStatisticWords = (name: string): string => statisticWords(name).split(/ \(|, /)[0]!;
@@ -27,6 +30,10 @@ export function citedStatistic(name: string): string {
   if (source === undefined) return words;
   return words.endsWith(')') ? `${words.slice(0, -1)}; ${source})` : `${words} (${source})`;
 }
+
+/** Change or agreement, for the statistics of pairs; undefined for the others. */
+export const isAbout = (name: string): 'change' | 'agreement' | undefined =>
+  pairedStatistics.find((one) => one.name === name)?.about;
 
 export type SequentialError = Extract<PValueError, { kind: 'sequential' }>;
 
@@ -43,7 +50,7 @@ const tailWords = { upper: 'upper-tailed', lower: 'lower-tailed', both: 'two-tai
 
 /** Which p: "two-tailed permutation p (rule: distance)". */
 export function pName(p: PValue): string {
-  const kind = p.method === 'asymptotic' ? 'p' : 'permutation p';
+  const kind = p.method === 'asymptotic' ? 'p' : p.method === 'unconditional' ? 'unconditional p' : 'permutation p';
   return `${tailWords[p.tail]} ${kind}${p.rule === undefined ? '' : ` (rule: ${p.rule})`}`;
 }
 
@@ -102,6 +109,12 @@ export const degreesWords = (degrees: number): string => `${degrees} degree${deg
 /** What the tail means for two groups: which of them has the greater share of events. */
 export function directionWords(result: ResultBeforeWords, p: PValue): string | undefined {
   const { groups, event } = result.statistic;
+  if (p.statistic === 'mcnemar' && p.tail !== 'both') {
+    const [first, second] = result.input.rowLabels.map(quoted) as [string, string];
+    return p.tail === 'upper'
+      ? `more from ${first} to ${second} than back`
+      : `more from ${second} to ${first} than back`;
+  }
   if (groups === undefined || event === undefined || p.tail === 'both' || p.statistic !== result.statistic.name) {
     return undefined;
   }
@@ -120,9 +133,14 @@ export function pSentence(result: ResultBeforeWords, p: PValue): string {
 function shortFoundWords(p: PValue): string {
   if (p.method === 'exact') return ', exact';
   if (p.method === 'sample') return `${errorAside(p)}, from the same draws`;
+  if (p.method === 'unconditional') return unconditionalWords(p);
   const degrees = p.degreesOfFreedom === undefined ? '' : ` on ${degreesWords(p.degreesOfFreedom)}`;
   return ` by the ${approximationName(p)} approximation${degrees}; its error is unknown`;
 }
+
+/** Which maximum it is. */
+const unconditionalWords = ({ nuisance }: PValue): string =>
+  nuisance === undefined ? '' : `, the largest over the unknown proportion, reached near ${digits(nuisance.value, 3)}`;
 
 /** What the error of a p-value is, one sentence for each kind of error it carries. */
 export const errorSentences = (p: PValue): string[] => p.errors.map((error) => errorSentence(p, error));
@@ -137,6 +155,8 @@ function errorSentence(p: PValue, error: PValueError): string {
       return samplingSentence(p, error);
     case 'sequential':
       return sequentialSentence(error);
+    case 'nuisance-maximum':
+      return `It is a proved upper bound of a maximum, at most ${error.relative.toExponential(1)} of its value too large.`;
     case 'approximation':
       return 'It rests on an approximation for large counts; its error here is not known.';
   }

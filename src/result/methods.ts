@@ -3,6 +3,7 @@
 import {
   approximationName,
   citedStatistic,
+  isAbout,
   isOneTableOnly,
   pName,
   drawingErrorOf,
@@ -13,19 +14,24 @@ import {
 } from './describe.js';
 import { quoted } from './label-words.js';
 import { countWords, levelWords } from './number-words.js';
+import { agreementInterval, agreementOpening, changeMethods } from './pairs-methods.js';
+import { isAboutChange } from './pairs-sentence.js';
 import type { PValue } from './result.js';
 
 /** A paragraph that lets a reader judge and repeat the analysis. Labels in it are quoted and show no control characters. */
 export function methodsFor(result: ResultBeforeWords): string {
   const headline = result.pValues[0]!;
+  if (isAboutChange(result)) return changeMethods(result);
+  const agreement = isAbout(result.statistic.name) === 'agreement';
   return [
-    testSentence(result),
+    agreement ? agreementOpening(result) : testSentence(result),
     rolesSentence(result),
     settingsSentence(result),
     methodSentence(result, headline),
     ...(isOneTableOnly(result)
       ? ['The margins allow one table only, so p is 1.']
       : [ruleSentence(headline), tiesSentence(headline), besideSentence(result, headline)]),
+    agreement ? agreementInterval(result) : undefined,
     `Computed with ${result.tool.name} ${result.tool.version}.`,
   ]
     .filter((sentence) => sentence !== undefined)

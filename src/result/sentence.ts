@@ -15,6 +15,7 @@ import {
 } from './describe.js';
 import { quoted } from './label-words.js';
 import { countWords, percentWords, pointsWords, statisticValueWords } from './number-words.js';
+import { changeSentence, isAboutChange } from './pairs-sentence.js';
 import type { PValue, Result } from './result.js';
 
 type Group = NonNullable<Result['statistic']['groups']>[number];
@@ -22,6 +23,7 @@ type Group = NonNullable<Result['statistic']['groups']>[number];
 /** The sentence for a report; labels in it are quoted and show no control characters. */
 export function sentenceFor(result: ResultBeforeWords): string {
   const headline = result.pValues[0]!;
+  if (isAboutChange(result)) return changeSentence(result);
   if (isOneTableOnly(result)) return oneTableSentence(result, headline);
   const { groups, event } = result.statistic;
   const seen =

@@ -36,14 +36,12 @@ export function kappaMoments(live: LiveTable, agreement: Agreement, counts: Arra
   const columnShare = (j: number): number => live.columnTotals[j]! / total;
   const ofRow = new Float64Array(rows);
   const ofColumn = new Float64Array(columns);
-  let seen = 0;
   let expected = 0;
   for (let i = 0; i < rows; i++) {
     for (let j = 0; j < columns; j++) {
       const w = weight(i, j);
       ofRow[i]! += w * columnShare(j);
       ofColumn[j]! += w * rowShare(i);
-      seen += (w * counts[i * columns + j]!) / total;
       expected += w * rowShare(i) * columnShare(j);
     }
   }

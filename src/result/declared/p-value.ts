@@ -40,6 +40,17 @@ const sequentialError = z.strictObject({
   tails: z.strictObject({ upper: count, lower: count }).optional(),
 });
 
+/** p is a proved upper bound of a maximum over unknown proportions, and lies at most this far above it. */
+const maximumError = z.strictObject({ kind: z.literal('nuisance-maximum'), relative: z.number().min(0) });
+
+export const nuisance = z.strictObject({
+  /** The proportion common to both groups; with the total alone fixed, that of the first row; for pairs, that of a change. */
+  value: probability,
+  /** With the total alone fixed: the proportion of the first column. */
+  second: probability.optional(),
+  certifiedUpper: probability,
+});
+
 const approximationError = z.strictObject({ kind: z.literal('approximation') });
 
 export const pValue = z.strictObject({
@@ -47,7 +58,7 @@ export const pValue = z.strictObject({
   rule: z.enum(['distance', 'probability', 'doubled']).optional(),
   /** What makes a table "as extreme" as the observed one. */
   orderedBy: z.string(),
-  method: z.enum(['exact', 'sample', 'asymptotic']),
+  method: z.enum(['exact', 'sample', 'asymptotic', 'unconditional']),
   statistic: z.string(),
   /** The guaranteed p; null beside a reason when it is below the smallest double. */
   p: probability.nullable(),
@@ -61,7 +72,11 @@ export const pValue = z.strictObject({
   degreesOfFreedom: count.optional(),
   /** Asymptotic entries of a statistic that is not on the scale of its limiting law: the value on that scale. */
   value: z.number().optional(),
+  /** Unconditional entries: the unknown proportions at which p is largest, and the proved bound of that maximum. */
+  nuisance: nuisance.optional(),
   /** True when rejecting at p <= a errs at most with probability a under the null. */
   guaranteed: z.boolean(),
-  errors: z.array(z.discriminatedUnion('kind', [roundingError, samplingError, sequentialError, approximationError])),
+  errors: z.array(
+    z.discriminatedUnion('kind', [roundingError, samplingError, sequentialError, maximumError, approximationError]),
+  ),
 });

@@ -5,7 +5,16 @@ import { count, digest, level } from './pieces.js';
 
 const forecast = z.strictObject({
   /** The exact engine that would answer. */
-  engine: z.enum(['two-by-two', 'enumeration', 'linear', 'network', 'within-limits']),
+  engine: z.enum([
+    'two-by-two',
+    'enumeration',
+    'linear',
+    'network',
+    'within-limits',
+    'coin-walk',
+    'coin-halves',
+    'coin-differences',
+  ]),
   workUnits: z.number().min(0),
   tables: z.number().min(0),
   tablesAreCounted: z.boolean(),
@@ -14,6 +23,8 @@ const forecast = z.strictObject({
 
 export const plan = z.strictObject({
   statistic: z.string(),
+  /** Rows and columns are two answers of the same units. */
+  paired: z.literal(true).optional(),
   /** SHA-256 of the module of a statistic of the user's own. */
   statisticDigest: digest.optional(),
   tail: z.enum(['upper', 'lower', 'both']),
@@ -35,7 +46,7 @@ export const plan = z.strictObject({
     .optional(),
   /** The sides whose lines were declared to be in order. */
   ordered: z.enum(orderedSides).optional(),
-  fixed: z.enum(['both']),
+  fixed: z.enum(['both', 'pairs']),
   /** `auto`: until p is settled against alpha, by the rule that the error of the p-value names. */
   draws: z.union([count, z.literal('auto')]).nullable(),
   mostDraws: count.optional(),

@@ -1,10 +1,11 @@
 // Options that become the plan: names as in PlanOptions, so that they pass through unchanged.
 import { anyText, betweenZeroAndOne, oneOf, wholeNumber, type CheckValue } from '../../arguments/check-value.js';
-import { valued } from '../../arguments/option.js';
+import { toggle, valued } from '../../arguments/option.js';
 import { standardEffort } from '../../../null/forecast.js';
 import { standardMostDraws, standardRelativeError } from '../../../plan/draws.js';
 import { orderedSides } from '../../../order/questions.js';
 import { methods, tails, twoSidedRules } from '../../../plan/plan.js';
+import { pairedNames } from '../../../statistic/paired.js';
 import { statisticNamed, statisticNames } from '../../../statistic/registry.js';
 import { isModulePath } from '../module-path.js';
 import { either } from './words.js';
@@ -20,8 +21,12 @@ export const planning = {
   statistic: valued(
     'The test',
     'NAME',
-    (text) => (isModulePath(text) ? text : statisticNamed(text).name),
+    (text) => (isModulePath(text) || pairedNames.includes(text) ? text : statisticNamed(text).name),
     `${either(statisticNames)} (pearson), or one of your own: ./mine.mjs`,
+  ),
+  paired: toggle(
+    'The test',
+    `rows and columns are two answers of the same units, with the same levels; its statistics: ${either(pairedNames)} (mcnemar; more than two levels: bowker)`,
   ),
   tail: valued('The test', 'TAIL', oneOf(tails), `${either(tails)} (upper; for wald, score and trend both)`),
   twoSidedRule: valued('The test', 'RULE', oneOf(twoSidedRules), `for both tails: ${either(twoSidedRules)} (distance)`),
