@@ -31,6 +31,7 @@ import type { Table } from './table/table.js';
 import type { Surroundings } from './sampled-answer.js';
 import { sampledPairs } from './sampled-pairs.js';
 
+export { refuseUnreadByPairs } from './plan/pairs-plan.js';
 export { squareTable } from './pairs/square-table.js';
 export { isAgreement } from './statistic/paired.js';
 

@@ -82,6 +82,7 @@ export async function answer(
 ): Promise<Answer> {
   const given = 'table' in data ? data : fromProgram(data);
   const pairs = options.paired ? await import('./analyse-pairs.js') : null;
+  pairs?.refuseUnreadByPairs(options);
   const read = pairs === null ? given : pairs.squareTable(given);
   if (pairs !== null && !pairs.isAgreement(options.statistic)) return pairs.answerPairs(read, options, surroundings);
   const live = liveTable(read.table);

@@ -45,14 +45,19 @@ export function pairedStatisticOf(options: PlanOptions, levels: number): PairedS
   return found;
 }
 
-const unread = ['groups', 'event', 'reference', 'rowScores', 'columnScores', 'lambda'] as const;
+const unread = ['groups', 'event', 'reference', 'rowScores', 'columnScores', 'lambda', 'ordered'] as const;
 
-export function planPairs(options: PlanOptions, statistic: PairedStatistic, work: PairsWork): Plan {
+/** Wishes that no analysis of pairs reads. @throws Problem (usage) `option-without-effect`. */
+export function refuseUnreadByPairs(options: PlanOptions): void {
   for (const name of unread) {
     if (options[name] === undefined) continue;
     const option = `--${name.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;
     throw unused(option, 'with --paired', 'leave it out');
   }
+}
+
+/** @throws Problem: usage for wishes that make no sense together, effort for exact work over the bound. */
+export function planPairs(options: PlanOptions, statistic: PairedStatistic, work: PairsWork): Plan {
   if (options.seed === '') {
     throw usageProblem({
       code: 'empty-seed',

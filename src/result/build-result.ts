@@ -1,5 +1,4 @@
 // Gathers what a run found into the one reported shape, in the order of its fields, and gives it its words.
-import type { Effect } from '../effect/contract.js';
 import type { ReadTable } from '../input/read-table.js';
 import type { Effect } from '../effect/contract.js';
 import type { NamedRoles } from '../plan/roles.js';
