@@ -16,6 +16,10 @@ export { analyse } from './analyse.js';
 export type { PValue, Result } from './result/result.js';
 export { resultJsonSchema } from './result/schema.js';
 
+// a planned study -> its power
+export { planPower, type PowerWishes } from './plan-power.js';
+export { powerJsonSchema, type PowerResult } from './result/power-declaration.js';
+
 // random tables with given margins
 export { drawTables, type DrawOptions } from './draw-tables.js';
 

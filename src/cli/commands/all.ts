@@ -23,6 +23,12 @@ export const commands: readonly CommandEntry[] = [
     load: async () => (await import('./draw.js')).drawCommand,
   },
   {
+    name: 'power',
+    operands: 'P P ...',
+    summary: 'how likely is a planned study to find a difference?',
+    load: async () => (await import('./power.js')).powerCommand,
+  },
+  {
     name: 'schema',
     operands: 'result',
     summary: 'the JSON Schema of what --format json prints',

@@ -4,7 +4,7 @@ import { nameHint } from '../../problem/suggest.js';
 import { destinationFor, sharedOptions } from './shared-options.js';
 import { command } from './command-file.js';
 
-const schemaNames = ['result'] as const;
+const schemaNames = ['result', 'power'] as const;
 
 export const schemaCommand = command({
   name: 'schema',
@@ -13,15 +13,23 @@ export const schemaCommand = command({
   examples: [{ line: 'keepsum schema result', words: 'on the screen, or on to another program' }],
   options: sharedOptions,
   async run(operands, values, shell) {
-    checkName(operands);
+    const name = checkName(operands);
     const destination = await destinationFor(values.output, shell);
-    const { resultJsonSchema } = await import('../../result/schema.js');
-    await destination.write(`${JSON.stringify(resultJsonSchema(), null, 2)}\n`);
+    await destination.write(`${JSON.stringify(await schemaNamed(name), null, 2)}\n`);
     return 0;
   },
 });
 
-function checkName(operands: readonly string[]): void {
+async function schemaNamed(name: (typeof schemaNames)[number]): Promise<object> {
+  switch (name) {
+    case 'result':
+      return (await import('../../result/schema.js')).resultJsonSchema();
+    case 'power':
+      return (await import('../../result/power-declaration.js')).powerJsonSchema();
+  }
+}
+
+function checkName(operands: readonly string[]): (typeof schemaNames)[number] {
   const [name, ...more] = operands;
   if (name === undefined || more.length > 0) {
     throw usageProblem({
@@ -30,11 +38,13 @@ function checkName(operands: readonly string[]): void {
       hint: `write keepsum schema ${schemaNames[0]}`,
     });
   }
-  if (!(schemaNames as readonly string[]).includes(name)) {
+  const found = schemaNames.find((each) => each === name);
+  if (found === undefined) {
     throw usageProblem({
       code: 'unknown-schema',
       message: `there is no schema named "${name}"`,
       hint: nameHint(name, schemaNames),
     });
   }
+  return found;
 }
