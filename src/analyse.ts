@@ -4,9 +4,11 @@
 //   3. How far the table lies from independence.          statistic
 //   4. How much of what chance alone does lies as far.    null -> cut
 //   5. What that says, with its error.                    pvalue
-//   6. How far the usual approximation could be trusted.  table
+//   6. Which cells it comes from.                         cell
+//   7. How far the usual approximation could be trusted.  table
 // Steps 1 to 5 are `answer`, which is all that a compact line of a batch takes; what stands around the p-values is added by
 // `analyse` alone.
+import { inquireCells, type CellInquiry } from './cell/which-cells.js';
 import type { ReadTable } from './input/read-table.js';
 import type { ExactAnswer } from './null/exact/exact-answer.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
@@ -43,6 +45,8 @@ export interface Answer {
   readonly expectations?: Findings['expectations'];
   readonly effects?: Findings['effects'];
   readonly notes: readonly Note[];
+  /** What was settled about the cells, its draws made; left out where they are not wanted. */
+  readonly cells?: CellInquiry | undefined;
 }
 
 /**
@@ -58,16 +62,21 @@ export async function analyse(
   options: PlanOptions = {},
   surroundings: Surroundings = {},
 ): Promise<Result> {
-  const found = await answer(data, options, surroundings);
-  const byOrder = found.prepared.plan.paired
+  const found = await find(data, options, surroundings, true);
+  const { cells, prepared } = found;
+  const byOrder = prepared.plan.paired
     ? undefined
     : await orderedAnswers(found, options, (wishes) => answer(found.read, wishes, surroundings));
-  return buildResult({ ...findingsOf(found), byOrder });
+  const findings = { ...findingsOf(found), byOrder };
+  if (cells === undefined) return buildResult(findings);
+  const plan = Object.freeze({ ...prepared.plan, cells: cells.echo });
+  return buildResult({ ...findings, plan, cells: await cells.entries() });
 }
 
 /** What a result takes over from the answer as it is. */
 export const findingsOf = ({ read, live, prepared, expectations, ...found }: Answer): Findings => ({
   ...found,
+  cells: undefined,
   read,
   plan: prepared.plan,
   named: prepared.named,
@@ -75,10 +84,17 @@ export const findingsOf = ({ read, live, prepared, expectations, ...found }: Ans
 });
 
 /** The p-values alone, by the same steps and with the same digits. Arguments and problems as for `analyse`. */
-export async function answer(
+export const answer = (
   data: TableParts | ReadTable,
   options: PlanOptions = {},
   surroundings: Surroundings = {},
+): Promise<Answer> => find(data, options, surroundings, false);
+
+async function find(
+  data: TableParts | ReadTable,
+  options: PlanOptions,
+  surroundings: Surroundings,
+  withCells: boolean,
 ): Promise<Answer> {
   const given = 'table' in data ? data : fromProgram(data);
   const pairs = options.paired ? await import('./analyse-pairs.js') : null;
@@ -88,10 +104,11 @@ export async function answer(
   const live = liveTable(read.table);
   const prepared = makePlan(read.table, live, options);
   try {
-    return await carryOut(read, live, prepared, options, surroundings);
+    return await carryOut(read, live, prepared, options, surroundings, withCells);
   } catch (thrown) {
     if (!(thrown instanceof OutOfReach)) throw thrown;
-    return carryOut(read, live, planWithoutExact(read.table, live, options, prepared.plan), options, surroundings);
+    const second = planWithoutExact(read.table, live, options, prepared.plan);
+    return carryOut(read, live, second, options, surroundings, withCells);
   }
 }
 
@@ -101,6 +118,7 @@ async function carryOut(
   prepared: Prepared,
   options: PlanOptions,
   surroundings: Surroundings,
+  withCells: boolean,
 ): Promise<Answer> {
   const { plan, statistic, bound, valueOfOnlyTable } = prepared;
   const questions = questionsOf(plan);
@@ -108,6 +126,7 @@ async function carryOut(
 
   const approximations = bound === null ? [] : approximationsOf(statistic, live, bound, value);
   const asymptotic = asymptoticBeside(questions[0]!, approximations);
+  const cells = withCells && !plan.paired ? (inquireCells(read.table, live, plan, options) ?? undefined) : undefined;
   const { found, tables } = await askNull();
   if (plan.method !== 'asymptotic') found.push(...asymptotic);
 
@@ -120,6 +139,7 @@ async function carryOut(
     pValues: found,
     tables,
     ...(plan.paired ? await (await import('./analyse-pairs.js')).agreementFindings(read.table, plan) : {}),
+    cells,
     notes: [
       ...read.notes,
       ...(plan.paired ? [] : emptyLineNotes(read.table)),
@@ -141,7 +161,7 @@ async function carryOut(
       return fromAnswer(exactCuts(live, orderings, plan.forecast.engine as ExactEngine, plan.statistic));
     }
     const recipe = statistic.own ? null : { parts: partsOf(read), options };
-    return { found: await sampledPValues(questions, live, orderings, plan, recipe, surroundings) };
+    return { found: await sampledPValues(questions, live, orderings, plan, recipe, surroundings, cells?.listener) };
   }
 
   async function fromAnswer({ cuts, point, tables }: ExactAnswer): Promise<{ found: PValueEntry[]; tables?: number }> {

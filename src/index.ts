@@ -2,7 +2,7 @@
 
 // input -> Table
 export { makeTable, type Table, type TableParts } from './table/table.js';
-export { readCrossTable, readInline, readRecords } from './input/index.js';
+export { changeLevels, readCrossTable, readInline, readRecords } from './input/index.js';
 export type { ReadTable } from './input/read-table.js';
 
 // plan

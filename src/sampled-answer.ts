@@ -1,6 +1,7 @@
 // From blocks of draws to p-values: all of a fixed number, or block after block until the verdict is settled. On one thread
 // while the work is short, on several once it is long; the digits are the same.
 import { availableParallelism } from 'node:os';
+import type { CellInquiry } from './cell/which-cells.js';
 import type { Ordering, OrderingName, SampledCut } from './null/contract.js';
 import {
   blockMilliseconds,
@@ -9,6 +10,7 @@ import {
   type Block,
   type BlockSource,
 } from './null/sampled/block-source.js';
+import { rankCounts, type RankTable } from './null/sampled/ranked-sampler.js';
 import { blocksFor, type Sampling } from './null/sampled/sample-cuts.js';
 import type { Plan } from './plan/plan.js';
 import type { PValueEntry, Question } from './pvalue/contract.js';
@@ -37,15 +39,17 @@ export async function sampledPValues(
   plan: Plan,
   recipe: Pick<SamplingRecipe, 'parts' | 'options'> | null,
   surroundings: Surroundings,
+  cells?: CellInquiry['listener'],
 ): Promise<PValueEntry[]> {
   const most = plan.draws === 'auto' ? plan.mostDraws! : plan.draws!;
   const sampling: Sampling = { seed: plan.seed!, tableKey: plan.tableKey, draws: most };
   const names = orderings.map(({ name }) => name);
   const counted = new Counted(names);
-  const sources = sourcesFor(live, orderings, sampling, recipe, surroundings, plan.draws === 'auto');
+  const sources = sourcesFor(live, orderings, sampling, recipe, surroundings, plan.draws === 'auto', cells?.table);
   const follower = plan.draws === 'auto' ? followQuestions(questions, plan) : null;
   for await (const block of inTurn(sources, sampling)) {
     counted.add(block);
+    cells?.follower.add(rankCounts(block.tallies, names.length), block.draws);
     surroundings.onProgress?.(counted.draws, most);
     if (follower?.settles((name) => atLeast(block, names.indexOf(name)), block.draws)) break;
   }
@@ -67,7 +71,7 @@ class Counted {
 
   add({ tallies, draws }: Block): void {
     this.draws += draws;
-    tallies.forEach((tally, o) => tally.forEach((count, side) => (this.sums[o]![side]! += count)));
+    this.sums.forEach((sums, o) => tallies[o]!.forEach((count, side) => (sums[side]! += count)));
   }
 
   cuts(): SampledCut[] {
@@ -92,6 +96,7 @@ function sourcesFor(
   recipe: Pick<SamplingRecipe, 'parts' | 'options'> | null,
   surroundings: Surroundings,
   mayEndEarly: boolean,
+  ranks?: RankTable,
 ): Stretch[] {
   const blocks = blocksFor(sampling.draws);
   const each = blockMilliseconds(live);
@@ -99,17 +104,22 @@ function sourcesFor(
   const local = (begin: number, end: number): Stretch => ({
     begin,
     end,
-    open: () => Promise.resolve(localSource(live, orderings, sampling)),
+    open: () => Promise.resolve(localSource(live, orderings, sampling, ranks)),
   });
   if (recipe === null || threads < 2 || !canUseThreads || blocks * each < longMilliseconds) return [local(0, blocks)];
   const first = mayEndEarly ? Math.min(blocks, Math.ceil(shortMilliseconds / each)) : 0;
-  const whole: SamplingRecipe = { ...recipe, orderings: orderings.map(({ name }) => name), sampling };
+  const whole: SamplingRecipe = {
+    ...recipe,
+    orderings: orderings.map(({ name }) => name),
+    sampling,
+    ranked: ranks !== undefined,
+  };
   return [
     local(0, first),
     {
       begin: first,
       end: blocks,
-      open: async () => (await threadedSource(whole, live, threads)) ?? localSource(live, orderings, sampling),
+      open: async () => (await threadedSource(whole, live, threads)) ?? localSource(live, orderings, sampling, ranks),
     },
   ];
 }

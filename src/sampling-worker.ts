@@ -1,5 +1,6 @@
 // What runs on a worker thread: prepares a sampler from a recipe, once, and counts the blocks it is asked for. Only the
 // built file is ever loaded by a thread.
+import { ranksFor } from './cell/which-cells.js';
 import type { OrderingName } from './null/contract.js';
 import { orderingFor } from './null/ordering.js';
 import { localSource, type BlockSource } from './null/sampled/block-source.js';
@@ -15,6 +16,8 @@ export interface SamplingRecipe {
   readonly options: PlanOptions;
   readonly orderings: readonly OrderingName[];
   readonly sampling: Sampling;
+  /** Whether the smallest p of the cells is judged too. */
+  readonly ranked?: boolean;
 }
 
 export interface CountTask {
@@ -32,7 +35,7 @@ export default function countBlocks({ recipe, first, end }: CountTask): Promise<
   return prepared.source.tallies(first, end);
 }
 
-function sourceOf({ parts, options, orderings, sampling }: SamplingRecipe): BlockSource {
+function sourceOf({ parts, options, orderings, sampling, ranked }: SamplingRecipe): BlockSource {
   const table = makeTable(parts);
   const live = liveTable(table);
   const { bound } = makePlan(table, live, options);
@@ -41,5 +44,6 @@ function sourceOf({ parts, options, orderings, sampling }: SamplingRecipe): Bloc
     live,
     orderings.map((ordering) => orderingFor(live, bound, ordering)),
     sampling,
+    ranked ? ranksFor(live) : undefined,
   );
 }

@@ -12,4 +12,5 @@ export type { MissingRule } from './record-tally.js';
 export { delimiterText, detectDelimiter } from './delimiter.js';
 export { isMissingText, parseCount } from './count-text.js';
 export { parseLabelList } from './label-list.js';
+export { changeLevels, planLevels, regroup, type LevelWishes } from './level-changes.js';
 export { orderLevels } from './level-order.js';

@@ -1,4 +1,5 @@
 // What every input form hands on: the same Table, and how it was read.
+import type { LevelRecord } from './level-changes.js';
 import type { Table } from '../table/table.js';
 
 export type Delimiter = 'comma' | 'semicolon' | 'tab' | 'pipe';
@@ -39,4 +40,6 @@ export interface ReadTable {
   /** Records only. */
   readonly missing: MissingFacts | null;
   readonly notes: readonly InputNote[];
+  /** Levels merged, kept or dropped; left out where none were. */
+  readonly levels?: LevelRecord;
 }

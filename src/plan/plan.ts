@@ -36,6 +36,8 @@ export interface PlanOptions {
   readonly lambda?: string | number;
   /** Sides whose lines stand in order: adds the questions that use it, and measures of association for ordered sides. */
   readonly ordered?: 'rows' | 'columns' | 'both';
+  /** Cells: true goes up to the bound of `effort` and draws where that is not enough, false leaves them out; default: what is cheap. */
+  readonly cells?: boolean;
   readonly method?: Method;
   /** Number of sampled tables, 1 to 1e12, or (the default) until p is settled against alpha. */
   readonly draws?: number | 'auto';
@@ -56,6 +58,20 @@ export interface PlanOptions {
   readonly confidence?: number;
   /** Level of the interval of a sampled p, in (0, 1). Default 0.99. */
   readonly samplingConfidence?: number;
+}
+
+/** What was settled about the cells. */
+export interface CellsEcho {
+  /** The statistic that contributions add up to. */
+  readonly contributionsTo: string;
+  /** Asked for, however long. */
+  readonly asked?: true;
+  /** How the p of the cells is adjusted over all of them. */
+  readonly adjustment: 'exact' | 'sample' | 'none';
+  readonly reason: string;
+  /** Where tables are drawn for the cells alone. */
+  readonly draws?: number;
+  readonly seed?: string;
 }
 
 export interface Plan {
@@ -94,6 +110,7 @@ export interface Plan {
   readonly alpha: number;
   readonly confidence: number;
   readonly samplingConfidence: number;
+  readonly cells?: CellsEcho;
 }
 
 /** The ordering that a tail and rule call for; `doubled` is made from the two one-sided ones. */

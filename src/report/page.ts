@@ -8,6 +8,7 @@ import {
   tableWords,
   tiesSentence,
 } from '../result/describe.js';
+import { levelSentences } from '../result/level-words.js';
 import { quoted, shown } from '../result/label-words.js';
 import { digits, percentWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
@@ -15,6 +16,7 @@ import { cautionsFor } from './cautions.js';
 import { pairsQuestion, pairsSection } from './sections/pairs.js';
 import { againCommand, againInWords, againSentences } from './run-again.js';
 import { orderSection } from './sections/order.js';
+import { cellsBlocks } from './sections/cells.js';
 import { methodSentences, missingSentences, sourceWords } from './setting.js';
 
 export interface Sentence {
@@ -68,6 +70,7 @@ const sectionsOf = (result: Result): Section[] => [
   { heading: 'Other readings of the same table', blocks: otherReadings(result) },
   orderSection(result),
   pairsSection(result),
+  { heading: 'Which cells?', blocks: cellsBlocks(result) },
   { heading: 'Would an approximation do?', blocks: footing(result) },
   { heading: 'Before you use it', blocks: cautionsFor(result).map(({ text, tone }) => sentence(text, tone)) },
   { heading: 'To run it again', blocks: again(result) },
@@ -89,6 +92,7 @@ const plain = (text: string): Sentence => sentence(text, 'plain');
 const tested = (result: Result): Block[] => [
   plain(`A ${tableWords(result)}, ${sourceWords(result)}.`),
   ...missingSentences(result).map(plain),
+  ...levelSentences(result.input).map(plain),
   plain(`Measured by ${citedStatistic(result.statistic.name)}.`),
   ...methodSentences(result).map(plain),
 ];

@@ -31,6 +31,8 @@ export function againInWords({ input, plan }: Result): string {
     ...(plan.lambda === undefined ? [] : [`lambda ${plan.lambda}`]),
     ...(plan.ordered === undefined ? [] : [`ordered ${plan.ordered}`]),
     `method ${plan.method}`,
+    ...(plan.cells?.asked ? ['cells'] : []),
+    ...(plan.cells?.seed === undefined ? [] : [`seed ${quoted(plan.cells.seed)}`]),
   ];
   const { rowsFrom, columnsFrom } = input.source;
   const table =
@@ -64,7 +66,7 @@ function tableParts({ input, notes, plan }: Result): TableParts | undefined {
     case 'cross-table': {
       const dropped: Option[] = (source.totalsLeftOut ?? []).length > 0 ? [['drop-totals', null]] : [];
       const kept: Option[] = notes.some(({ code }) => code === 'totals-kept') ? [['keep-totals', null]] : [];
-      return { operands: ['FILE'], options: [...dropped, ...kept] };
+      return { operands: ['FILE'], options: [...dropped, ...kept, ...levelOptions(input)] };
     }
     case 'records':
       return {
@@ -74,10 +76,22 @@ function tableParts({ input, notes, plan }: Result): TableParts | undefined {
           ['columns', source.columnsFrom ?? ''],
           ...optional('count', source.countFrom),
           ...optional('missing', input.missing?.rule === 'fail' ? null : input.missing?.rule),
+          ...levelOptions(input),
         ],
       };
   }
 }
+
+/** Levels changed after reading; rows typed in are shown as they were after that. */
+const levelOptions = ({ levels }: Result['input']): Option[] =>
+  (levels?.changes ?? []).map(({ action, side, into, labels }): Option => {
+    const names = labels.map(levelLabel);
+    const list = action === 'merge' ? `${levelLabel(into ?? '')}=${names.join('+')}` : names.join(',');
+    return [action, `${side}:${list}`];
+  });
+
+const levelLabel = (label: string): string =>
+  /[",+=]|^\s|\s$/.test(label) ? `"${label.replaceAll('"', '""')}"` : label;
 
 /** A row as it is typed; without its label where that is the one given to rows that have none. */
 const rowOperand = (label: string, index: number, counts: readonly number[]): string =>
@@ -107,6 +121,8 @@ const planOptions = ({ plan }: Result): Option[] => [
   ...optional('relative-error', plan.relativeError),
   ...optional('alpha', plan.draws === 'auto' ? plan.alpha : null),
   ...optional('seed', plan.seed),
+  ...(plan.cells?.asked ? [['cells', null] as const] : []),
+  ...optional('seed', plan.cells?.seed),
   ...optional('sampling-confidence', typeof plan.draws === 'number' ? plan.samplingConfidence : null),
 ];
 

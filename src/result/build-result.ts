@@ -1,4 +1,5 @@
 // Gathers what a run found into the one reported shape, in the order of its fields, and gives it its words.
+import type { CellEntry } from '../cell/cell-entries.js';
 import type { ReadTable } from '../input/read-table.js';
 import type { Effect } from '../effect/contract.js';
 import type { NamedRoles } from '../plan/roles.js';
@@ -27,6 +28,7 @@ export interface Findings {
   readonly tables: number | undefined;
   readonly byOrder?: { readonly order: NonNullable<Result['order']>; readonly effects: readonly Effect[] } | undefined;
   readonly effects?: readonly Effect[] | undefined;
+  readonly cells?: readonly CellEntry[] | undefined;
   readonly notes: readonly Note[];
 }
 
@@ -48,6 +50,7 @@ export function buildResult(found: Findings): Result {
     },
     ...(found.byOrder === undefined ? {} : orderParts(found.byOrder)),
     ...(found.effects === undefined ? {} : { effects: effectsFound(found.effects) }),
+    ...(found.cells === undefined ? {} : { cells: [...found.cells] }),
     notes: [...found.notes],
   };
   const { notes, ...parts } = before;
@@ -75,7 +78,7 @@ const orderParts = ({ order, effects }: NonNullable<Findings['byOrder']>): Pick<
 const effectsFound = (effects: readonly Effect[]): NonNullable<Result['effects']> =>
   effects.map((effect) => ({ ...effect, intervals: [...effect.intervals] }));
 
-function inputEcho({ table, source, sha256, missing }: ReadTable): InputEcho {
+function inputEcho({ table, source, sha256, missing, levels }: ReadTable): InputEcho {
   return {
     source: {
       ...source,
@@ -91,8 +94,14 @@ function inputEcho({ table, source, sha256, missing }: ReadTable): InputEcho {
     emptyRows: table.rowLabels.filter((_, i) => table.rowTotals[i] === 0),
     emptyColumns: table.columnLabels.filter((_, j) => table.columnTotals[j] === 0),
     missing,
+    ...(levels === undefined ? {} : { levels: levelsEcho(levels) }),
   };
 }
+
+const levelsEcho = ({ changes, leftOut }: NonNullable<ReadTable['levels']>): NonNullable<InputEcho['levels']> => ({
+  changes: changes.map((change) => ({ ...change, labels: [...change.labels] })),
+  leftOut,
+});
 
 const extended = (value: number): number | 'infinity' | '-infinity' =>
   value === Infinity ? 'infinity' : value === -Infinity ? '-infinity' : value;

@@ -1,6 +1,7 @@
 // The one reported shape, declared once. Its TypeScript type and the published JSON Schema come from here.
 // A new field is added here first; reports read nothing that is not declared.
 import { z } from 'zod';
+import { cell } from './declared/cell.js';
 import { effect } from './declared/effect.js';
 import { input } from './declared/input.js';
 import { order } from './declared/order.js';
@@ -41,6 +42,7 @@ export const resultDeclaration = z.strictObject({
   diagnostics,
   effects: z.array(effect).optional(),
   order: order.optional(),
+  cells: z.array(cell).optional(),
   sentence: z.string(),
   methods: z.string(),
   notes: z.array(z.strictObject({ code: z.string(), text: z.string() })),

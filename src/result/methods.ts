@@ -12,6 +12,8 @@ import {
   tableWords,
   type ResultBeforeWords,
 } from './describe.js';
+import { cellsMethods } from './cell-words.js';
+import { levelSentences } from './level-words.js';
 import { quoted } from './label-words.js';
 import { countWords, levelWords } from './number-words.js';
 import { agreementInterval, agreementOpening, changeMethods } from './pairs-methods.js';
@@ -21,9 +23,10 @@ import type { PValue } from './result.js';
 /** A paragraph that lets a reader judge and repeat the analysis. Labels in it are quoted and show no control characters. */
 export function methodsFor(result: ResultBeforeWords): string {
   const headline = result.pValues[0]!;
-  if (isAboutChange(result)) return changeMethods(result);
+  if (isAboutChange(result)) return [...levelSentences(result.input), changeMethods(result)].join(' ');
   const agreement = isAbout(result.statistic.name) === 'agreement';
   return [
+    ...levelSentences(result.input),
     agreement ? agreementOpening(result) : testSentence(result),
     rolesSentence(result),
     settingsSentence(result),
@@ -32,6 +35,7 @@ export function methodsFor(result: ResultBeforeWords): string {
       ? ['The margins allow one table only, so p is 1.']
       : [ruleSentence(headline), tiesSentence(headline), besideSentence(result, headline)]),
     agreement ? agreementInterval(result) : undefined,
+    cellsMethods(result),
     `Computed with ${result.tool.name} ${result.tool.version}.`,
   ]
     .filter((sentence) => sentence !== undefined)

@@ -12,6 +12,8 @@ export interface OptionDeclaration<T> {
   /** Stands for the value in the help; a switch has none. */
   readonly placeholder?: string;
   readonly words: string;
+  /** May be given several times: the value is a list, and `check` gives one of one entry. */
+  readonly gathers?: true;
   /** Switches are given '' and answer true. */
   readonly check: CheckValue<T>;
 }
@@ -29,6 +31,20 @@ export const valued = <T>(
   words: string,
   short?: string,
 ): OptionDeclaration<T> => ({ stage, placeholder, check, words, ...(short === undefined ? {} : { short }) });
+
+/** Given as often as there is something to say. */
+export const repeatable = <T>(
+  stage: Stage,
+  placeholder: string,
+  check: CheckValue<T>,
+  words: string,
+): OptionDeclaration<readonly T[]> => ({
+  stage,
+  placeholder,
+  words,
+  gathers: true,
+  check: (text, flag) => [check(text, flag)],
+});
 
 export const toggle = (stage: Stage, words: string, short?: string): OptionDeclaration<true> => ({
   stage,

@@ -33,11 +33,17 @@ export function declaredCommand(name: string, declarations: Declarations): Comma
     .helpCommand(false)
     .allowExcessArguments(true)
     .configureOutput({ writeOut: () => undefined, writeErr: () => undefined });
-  for (const [key, { short, placeholder, words, stage, check }] of Object.entries(declarations)) {
+  for (const [key, { short, placeholder, words, stage, check, gathers }] of Object.entries(declarations)) {
     const flag = flagOf(key);
     const flags = `${short === undefined ? '' : `-${short}, `}${flag}${placeholder === undefined ? '' : ` <${placeholder}>`}`;
     const option = new Option(flags, words).helpGroup(stage);
-    program.addOption(placeholder === undefined ? option : option.argParser((text: string) => check(text, flag)));
+    program.addOption(
+      placeholder === undefined
+        ? option
+        : option.argParser((text: string, before: unknown) =>
+            gathers && Array.isArray(before) ? [...before, ...(check(text, flag) as unknown[])] : check(text, flag),
+          ),
+    );
   }
   return program;
 }

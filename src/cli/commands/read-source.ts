@@ -10,6 +10,14 @@ type ReadingValues = Values<typeof reading>;
 
 /** @throws Problem of the input stage, or that a file cannot be read. */
 export async function readSource(source: Source, values: ReadingValues, shell: Shell): Promise<ReadTable> {
+  const read = await readUnchanged(source, values, shell);
+  const { merge, keep, drop } = values;
+  if (merge === undefined && keep === undefined && drop === undefined) return read;
+  const { changeLevels } = await import('../../input/level-changes.js');
+  return changeLevels(read, { merge, keep, drop });
+}
+
+async function readUnchanged(source: Source, values: ReadingValues, shell: Shell): Promise<ReadTable> {
   const options = { ...values, totals: totalsRule(values) };
   if (source.form === 'inline') return readInline(source.rows, options);
   const { fileBytes, isPlainFile, pieces, whole } = await import('../streams/input-file.js');

@@ -58,7 +58,8 @@ function planOptions(values: TestValues): PlanOptions {
   const chosen: Values<typeof planning> = Object.fromEntries(
     Object.entries(values).filter(([name]) => name in planning),
   );
-  return chosen;
+  const { noCells, ...wishes } = chosen;
+  return noCells ? { ...wishes, cells: false } : wishes;
 }
 
 /** A method that was picked for the user is never a silent matter. */
@@ -69,6 +70,13 @@ async function remarkOnSampling({ plan }: Result, shell: Shell): Promise<void> {
 }
 
 function checkCombinations(values: TestValues): void {
+  if (values.cells && values.noCells) {
+    throw usageProblem({
+      code: 'cells-and-no-cells',
+      message: '--cells and --no-cells contradict each other',
+      hint: 'give one of them, or neither: what is cheap about cells is then worked out',
+    });
+  }
   if (values.rawCsv && values.format !== 'csv') {
     throw usageProblem({
       code: 'option-does-not-fit',

@@ -5,6 +5,7 @@ import type { LiveTable } from '../../table/live-table.js';
 import type { Ordering } from '../contract.js';
 import { planDraws } from './draw-plan.js';
 import { blockSize } from './limits.js';
+import { prepareRankedSampler, type RankTable } from './ranked-sampler.js';
 import { blocksFor, drawsInBlock, prepareSampler, type Sampling, type Tally } from './sample-cuts.js';
 
 export interface BlockSource {
@@ -22,9 +23,14 @@ const millisecondsAtOnce = 40;
 /** Forecast of one block's work in milliseconds of a usual machine. Feeds strides and the use of threads, never a digit. */
 export const blockMilliseconds = (live: LiveTable): number => ((planDraws(live).work + 30) * blockSize) / 1e6;
 
-/** Blocks counted on this thread, when asked. */
-export function localSource(live: LiveTable, orderings: readonly Ordering[], sampling: Sampling): BlockSource {
-  const sampler = prepareSampler(live, orderings);
+/** Blocks counted on this thread, when asked. With ranks the tallies of the orderings are followed by those of the ranks. */
+export function localSource(
+  live: LiveTable,
+  orderings: readonly Ordering[],
+  sampling: Sampling,
+  ranks?: RankTable,
+): BlockSource {
+  const sampler = ranks === undefined ? prepareSampler(live, orderings) : prepareRankedSampler(live, orderings, ranks);
   return {
     stride: strideFor(live),
     ahead: false,

@@ -27,6 +27,20 @@ const missing = z.strictObject({
   dropped: count,
 });
 
+const levels = z.strictObject({
+  /** In the order in which they were made. */
+  changes: z.array(
+    z.strictObject({
+      action: z.enum(['merge', 'keep', 'drop']),
+      side: z.enum(['rows', 'columns']),
+      into: z.string().optional(),
+      labels: z.array(z.string()).min(1),
+    }),
+  ),
+  /** Counts of the levels that were not kept. */
+  leftOut: count,
+});
+
 export const input = z.strictObject({
   source,
   sha256: digest.nullable(),
@@ -39,4 +53,6 @@ export const input = z.strictObject({
   emptyRows: z.array(z.string()),
   emptyColumns: z.array(z.string()),
   missing: missing.nullable(),
+  /** What was done to the levels before anything else; labels and counts are those after it. */
+  levels: levels.optional(),
 });

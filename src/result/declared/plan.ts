@@ -1,6 +1,7 @@
 // The plan as it was carried out: every choice, its reason, and what decides every digit.
 import { z } from 'zod';
 import { orderedSides } from '../../order/questions.js';
+import { cellsEcho } from './cell.js';
 import { count, digest, level } from './pieces.js';
 
 const forecast = z.strictObject({
@@ -60,4 +61,5 @@ export const plan = z.strictObject({
   alpha: level,
   confidence: level,
   samplingConfidence: level,
+  cells: cellsEcho.optional(),
 });

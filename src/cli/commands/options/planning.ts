@@ -90,6 +90,8 @@ export const planning = {
     betweenZeroAndOne('0.99'),
     'of the interval around a sampled p (0.99)',
   ),
+  cells: toggle('The report', 'adjust the p of every cell, however long (unasked: where that is cheap)'),
+  noCells: toggle('The report', 'nothing about single cells'),
   alpha: valued('The report', 'LEVEL', betweenZeroAndOne('0.05'), 'the level that p is compared with in words (0.05)'),
   confidence: valued('The report', 'LEVEL', betweenZeroAndOne('0.95'), 'of intervals for effects (0.95)'),
 };

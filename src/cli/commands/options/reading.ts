@@ -1,6 +1,6 @@
 // Options that say where the table is and how to read it.
 import { anyText, oneOf } from '../../arguments/check-value.js';
-import { toggle, valued } from '../../arguments/option.js';
+import { repeatable, toggle, valued } from '../../arguments/option.js';
 import { either } from './words.js';
 
 const delimiters = ['comma', 'semicolon', 'tab', 'pipe'] as const;
@@ -36,6 +36,19 @@ export const reading = {
   ),
   rowOrder: valued('Reading the table', 'LABELS', anyText, 'the rows in this order (as they appear)'),
   columnOrder: valued('Reading the table', 'LABELS', anyText, 'the columns in this order (as they appear)'),
+  merge: repeatable(
+    'Reading the table',
+    'NEW=A+B',
+    anyText,
+    'levels A and B become one, before anything else; rows: or columns: in front says which; may be repeated',
+  ),
+  keep: repeatable(
+    'Reading the table',
+    'LABELS',
+    anyText,
+    'only these levels of a side, separated by commas; likewise',
+  ),
+  drop: repeatable('Reading the table', 'LABELS', anyText, 'all but these levels of a side; likewise'),
   headerRow: valued(
     'Reading the table',
     'ANSWER',
