@@ -158,6 +158,7 @@ async function carryOut(
     if (bound === null) return fromAnswer(onlyTable(live, names));
     const orderings = names.map((name) => orderingFor(live, bound, name));
     if (plan.method === 'exact') {
+      await surroundings.beforeExact?.(plan.forecast);
       return fromAnswer(exactCuts(live, orderings, plan.forecast.engine as ExactEngine, plan.statistic));
     }
     const recipe = statistic.own ? null : { parts: partsOf(read), options };

@@ -2,7 +2,7 @@
 // while the work is short, on several once it is long; the digits are the same.
 import { availableParallelism } from 'node:os';
 import type { CellInquiry } from './cell/which-cells.js';
-import type { Ordering, OrderingName, SampledCut } from './null/contract.js';
+import type { Ordering } from './null/contract.js';
 import {
   blockMilliseconds,
   blocksInOrder,
@@ -11,7 +11,7 @@ import {
   type BlockSource,
 } from './null/sampled/block-source.js';
 import { rankCounts, type RankTable } from './null/sampled/ranked-sampler.js';
-import { blocksFor, type Sampling } from './null/sampled/sample-cuts.js';
+import { blocksFor, CutCount, type Sampling } from './null/sampled/sample-cuts.js';
 import type { Plan } from './plan/plan.js';
 import type { PValueEntry, Question } from './pvalue/contract.js';
 import { conditionalPValues } from './pvalue/p-values.js';
@@ -20,12 +20,20 @@ import type { SamplingRecipe } from './sampling-worker.js';
 import { canUseThreads, threadedSource } from './threaded-source.js';
 import type { LiveTable } from './table/live-table.js';
 
+/** What exact work is foreseen to take: units of about 30 ns, by the engine named. */
+export interface ForeseenWork {
+  readonly engine: string;
+  readonly workUnits: number;
+}
+
 /** What a run may use of the machine, and whom it tells how far it is; none of it changes a digit. */
 export interface Surroundings {
   /** Worker threads for long sampling, from 1; default: as many as the machine runs at once. */
   readonly threads?: number;
   /** Told now and then how many draws are made, and the most that will be. */
   readonly onProgress?: (draws: number, most: number) => void;
+  /** Told what exact work is foreseen to take, before it starts. */
+  readonly beforeExact?: (foreseen: ForeseenWork) => Promise<void>;
 }
 
 /** Work worth the start of threads, and what is done on one thread before they are thought of. */
@@ -44,11 +52,11 @@ export async function sampledPValues(
   const most = plan.draws === 'auto' ? plan.mostDraws! : plan.draws!;
   const sampling: Sampling = { seed: plan.seed!, tableKey: plan.tableKey, draws: most };
   const names = orderings.map(({ name }) => name);
-  const counted = new Counted(names);
+  const counted = new CutCount(names);
   const sources = sourcesFor(live, orderings, sampling, recipe, surroundings, plan.draws === 'auto', cells?.table);
   const follower = plan.draws === 'auto' ? followQuestions(questions, plan) : null;
   for await (const block of inTurn(sources, sampling)) {
-    counted.add(block);
+    counted.add(block.tallies, block.draws);
     cells?.follower.add(rankCounts(block.tallies, names.length), block.draws);
     surroundings.onProgress?.(counted.draws, most);
     if (follower?.settles((name) => atLeast(block, names.indexOf(name)), block.draws)) break;
@@ -60,27 +68,6 @@ export async function sampledPValues(
 }
 
 const atLeast = ({ tallies }: Block, ordering: number): number => tallies[ordering]![1] + tallies[ordering]![2];
-
-class Counted {
-  draws = 0;
-  private readonly sums: [number, number, number][];
-
-  constructor(private readonly names: readonly OrderingName[]) {
-    this.sums = names.map(() => [0, 0, 0]);
-  }
-
-  add({ tallies, draws }: Block): void {
-    this.draws += draws;
-    this.sums.forEach((sums, o) => tallies[o]!.forEach((count, side) => (sums[side]! += count)));
-  }
-
-  cuts(): SampledCut[] {
-    return this.names.map((ordering, o) => {
-      const [below, tied, above] = this.sums[o]!;
-      return { kind: 'sampled', ordering, below, tied, above, draws: this.draws };
-    });
-  }
-}
 
 interface Stretch {
   readonly begin: number;

@@ -2,6 +2,7 @@
 import type { Surroundings } from '../../sampled-answer.js';
 import { countWords } from '../../result/number-words.js';
 import type { Shell } from '../shell.js';
+import { settleForShortWork } from '../short-work.js';
 
 const quietMilliseconds = 500;
 const betweenMilliseconds = 100;
@@ -19,7 +20,7 @@ export async function withProgress<T>(
   shell: Shell,
   work: (surroundings: Surroundings) => Promise<T>,
 ): Promise<T> {
-  const used = threads === undefined ? {} : { threads };
+  const used = { ...(threads === undefined ? {} : { threads }), beforeExact: settleForShortWork };
   if (noProgress || quiet || !shell.stderrIsTerminal || shell.environment.TERM === 'dumb') return work(used);
   const begin = performance.now();
   let lastShown = begin + quietMilliseconds - betweenMilliseconds;

@@ -1,12 +1,11 @@
 // Where blocks of draws come from: this thread, or several. The order in which they are handed on is that of their numbers,
 // and each is a function of seed, table and number alone, so the source changes no digit.
-import { blockStream } from '../../random/stream.js';
 import type { LiveTable } from '../../table/live-table.js';
 import type { Ordering } from '../contract.js';
 import { planDraws } from './draw-plan.js';
 import { blockSize } from './limits.js';
 import { prepareRankedSampler, type RankTable } from './ranked-sampler.js';
-import { blocksFor, drawsInBlock, prepareSampler, type Sampling, type Tally } from './sample-cuts.js';
+import { blocksFor, countBlocks, drawsInBlock, prepareSampler, type Sampling, type Tally } from './sample-cuts.js';
 
 export interface BlockSource {
   /** One entry a block, from `first` to before `end`; in each, one tally for each ordering. */
@@ -34,14 +33,7 @@ export function localSource(
   return {
     stride: strideFor(live),
     ahead: false,
-    tallies(first, end) {
-      const found: Tally[][] = [];
-      for (let block = first; block < end; block++) {
-        const stream = blockStream(sampling.seed, sampling.tableKey, block);
-        found.push(sampler.countBlock(stream, drawsInBlock(sampling.draws, block)));
-      }
-      return Promise.resolve(found);
-    },
+    tallies: (first, end) => Promise.resolve(countBlocks(sampler, sampling, first, end)),
     close: () => Promise.resolve(),
   };
 }

@@ -2,7 +2,7 @@
 // be counted anywhere, in any order, and one after another until enough is known.
 import { blockStream, type UniformSource } from '../../random/stream.js';
 import type { LiveTable } from '../../table/live-table.js';
-import type { Ordering, SampledCut } from '../contract.js';
+import type { Ordering, OrderingName, SampledCut } from '../contract.js';
 import { planDraws, type Forced } from './draw-plan.js';
 import { panelFor } from './judges.js';
 import { blockSize } from './limits.js';
@@ -57,6 +57,38 @@ export const blocksFor = (draws: number): number => Math.ceil(draws / blockSize)
 export const drawsInBlock = (draws: number, block: number): number =>
   Math.max(0, Math.min(blockSize, draws - block * blockSize));
 
+/** Tallies of the blocks from `first` to before `end`, in each one tally for each ordering. */
+export function countBlocks(sampler: Sampler, sampling: Sampling, first: number, end: number): Tally[][] {
+  const found: Tally[][] = [];
+  for (let block = first; block < end; block++) {
+    const stream = blockStream(sampling.seed, sampling.tableKey, block);
+    found.push(sampler.countBlock(stream, drawsInBlock(sampling.draws, block)));
+  }
+  return found;
+}
+
+/** Adds up the tallies of blocks; what follows those of the orderings is passed over. */
+export class CutCount {
+  draws = 0;
+  private readonly sums: [below: number, tied: number, above: number][];
+
+  constructor(private readonly names: readonly OrderingName[]) {
+    this.sums = names.map(() => [0, 0, 0]);
+  }
+
+  add(tallies: readonly Tally[], draws: number): void {
+    this.draws += draws;
+    this.sums.forEach((sums, o) => tallies[o]!.forEach((count, side) => (sums[side]! += count)));
+  }
+
+  cuts(): SampledCut[] {
+    return this.names.map((ordering, o) => {
+      const [below, tied, above] = this.sums[o]!;
+      return { kind: 'sampled', ordering, below, tied, above, draws: this.draws };
+    });
+  }
+}
+
 /**
  * Counts of draws below, tied with and above the observed table, for each ordering, over the blocks from `first` to before
  * `end` (default: all). Same arguments, same counts; counts over parts add up to those over the whole.
@@ -68,18 +100,9 @@ export function sampleCuts(
   first = 0,
   end = blocksFor(sampling.draws),
 ): SampledCut[] {
-  const sampler = prepareSampler(live, orderings);
-  const sums = orderings.map(() => [0, 0, 0]);
-  let draws = 0;
-  for (let block = first; block < end; block++) {
-    const size = drawsInBlock(sampling.draws, block);
-    draws += size;
-    sampler.countBlock(blockStream(sampling.seed, sampling.tableKey, block), size).forEach((tally, o) => {
-      for (let side = 0; side < 3; side++) sums[o]![side]! += tally[side]!;
-    });
-  }
-  return orderings.map(({ name }, o) => {
-    const [below, tied, above] = sums[o] as [number, number, number];
-    return { kind: 'sampled', ordering: name, below, tied, above, draws };
-  });
+  const count = new CutCount(orderings.map(({ name }) => name));
+  countBlocks(prepareSampler(live, orderings), sampling, first, end).forEach((tallies, k) =>
+    count.add(tallies, drawsInBlock(sampling.draws, first + k)),
+  );
+  return count.cuts();
 }
