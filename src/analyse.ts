@@ -5,9 +5,11 @@
 //   4. How much of what chance alone does lies as far.    null -> cut
 //   5. What that says, with its error.                    pvalue
 //   6. Which cells it comes from.                         cell
-//   7. How far the usual approximation could be trusted.  table
+//   7. How strong it is, how fragile, what to look out for. effect
+//   8. How far the usual approximation could be trusted.  table
 // Steps 1 to 5 are `answer`, which is all that a compact line of a batch takes; what stands around the p-values is added by
 // `analyse` alone.
+import { besideThe } from './beside-the-answer.js';
 import { inquireCells, type CellInquiry } from './cell/which-cells.js';
 import type { ReadTable } from './input/read-table.js';
 import type { ExactAnswer } from './null/exact/exact-answer.js';
@@ -33,7 +35,8 @@ import { makeTable, type TableParts } from './table/table.js';
 export interface Answer {
   readonly read: ReadTable;
   readonly live: LiveTable;
-  readonly prepared: Pick<Prepared, 'plan' | 'named'>;
+  /** Whole but for pairs, whose plan knows no statistic of two margins. */
+  readonly prepared: Pick<Prepared, 'plan' | 'named'> & Partial<Prepared>;
   /** null where the margins leave the statistic undefined. */
   readonly value: number | null;
   readonly undefinedBecause?: Findings['undefinedBecause'];
@@ -67,11 +70,15 @@ export async function analyse(
   const byOrder = prepared.plan.paired
     ? undefined
     : await orderedAnswers(found, options, (wishes) => answer(found.read, wishes, surroundings));
-  const findings = { ...findingsOf(found), byOrder };
+  // What stands beside a p of pairs is part of their answer.
+  const beside = isWhole(prepared) && !prepared.plan.paired ? await besideThe(found, prepared, options) : {};
+  const findings = { ...findingsOf(found), ...beside, byOrder };
   if (cells === undefined) return buildResult(findings);
   const plan = Object.freeze({ ...prepared.plan, cells: cells.echo });
   return buildResult({ ...findings, plan, cells: await cells.entries() });
 }
+
+const isWhole = (prepared: Answer['prepared']): prepared is Prepared => prepared.statistic !== undefined;
 
 /** What a result takes over from the answer as it is. */
 export const findingsOf = ({ read, live, prepared, expectations, ...found }: Answer): Findings => ({
@@ -79,7 +86,8 @@ export const findingsOf = ({ read, live, prepared, expectations, ...found }: Ans
   cells: undefined,
   read,
   plan: prepared.plan,
-  named: prepared.named,
+  // Effects of any 2x2 table know two groups; statistics that know none do not name them.
+  named: prepared.statistic?.shape === 'any' ? null : prepared.named,
   expectations: expectations ?? checkExpectations(live),
 });
 

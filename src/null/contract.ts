@@ -2,7 +2,7 @@
 // below, level with (tied) and above the observed table.
 import type { CellLimits, CellSum, LinearForm, Place } from '../statistic/contract.js';
 
-export type OrderingName = 'upper' | 'lower' | 'distance' | 'probability';
+export type OrderingName = 'upper' | 'lower' | 'distance' | 'probability' | 'blaker';
 
 /** What "as extreme" means. `sum`, `fold`, `linear` and `limits` are shorter ways to the same answer for engines that know
  *  them; `place` is always right. */

@@ -5,6 +5,8 @@ import { probability } from '../statistic/probability.js';
 import type { LiveTable } from '../table/live-table.js';
 import type { Ordering, OrderingName } from './contract.js';
 import { placesByProbability, wholeLaw } from './exact/linear/linear-law.js';
+import { placesBySmallerTail } from './exact/linear/smaller-tail.js';
+import { placesBySmallerTail as placesByCornerTail } from './exact/smaller-tail.js';
 
 /** @throws Error when the statistic has no such ordering; plans exclude that. */
 export function orderingFor(live: LiveTable, bound: BoundStatistic, name: OrderingName): Ordering {
@@ -31,7 +33,11 @@ export function orderingFor(live: LiveTable, bound: BoundStatistic, name: Orderi
     case 'probability':
       // In a 2x2 table a signed statistic takes each value at one table only, so P(T = t) is that table's probability.
       if (corner !== undefined) return bySum(live, probability.bind(live, anyRoles).sum!, 1, name);
-      if (sum !== undefined && linear !== undefined) return byValueProbability(live, sum, linear);
+      if (sum !== undefined && linear !== undefined) return byLaw(live, sum, linear, name, placesByProbability);
+      break;
+    case 'blaker':
+      if (corner !== undefined) return { name, place: placesByCornerTail(live, corner) };
+      if (sum !== undefined && linear !== undefined) return byLaw(live, sum, linear, name, placesBySmallerTail);
   }
   throw new Error(`no ordering "${name}" for this statistic`);
 }
@@ -84,14 +90,20 @@ function byFold(live: LiveTable, cells: CellSum, linear: LinearForm, name: Order
   };
 }
 
-/** Values of a linear sum by P(S = s): every place needs the whole law, which is worked out once, when first asked for. */
-function byValueProbability(live: LiveTable, cells: CellSum, linear: LinearForm): Ordering {
+/** Values of a linear sum by their law: every place needs all of it, which is worked out once, when first asked for. */
+function byLaw(
+  live: LiveTable,
+  cells: CellSum,
+  linear: LinearForm,
+  name: OrderingName,
+  placesIn: typeof placesByProbability,
+): Ordering {
   let places: Map<number, Place> | undefined;
   return {
-    name: 'probability',
+    name,
     linear,
     place: (counts) => {
-      places ??= placesByProbability(live, linear, wholeLaw(live, linear));
+      places ??= placesIn(live, linear, wholeLaw(live, linear));
       return places.get(sumOverCells(live, counts, cells.cell))!;
     },
   };

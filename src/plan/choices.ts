@@ -49,13 +49,14 @@ const reasons = {
   lambda: 'which has no exponent to choose',
 } as const satisfies Record<keyof typeof readBy, string>;
 
-/** @throws Problem (usage) `option-without-effect`. */
-export function refuseUnread(statistic: Statistic, options: PlanOptions): void {
+/** @throws Problem (usage) `option-without-effect`. `twoByTwo`: there are two groups to compare, whatever the statistic. */
+export function refuseUnread(statistic: Statistic, options: PlanOptions, twoByTwo: boolean): void {
   for (const [name, kinds] of Object.entries(readBy) as [keyof typeof readBy, readonly Taken[]][]) {
     const reads = ({ takes }: Statistic): boolean => kinds.some((kind) => takes?.includes(kind));
     // Declared scores of ordered sides are read by the questions that use the order.
     if (options.ordered !== undefined && (name === 'rowScores' || name === 'columnScores')) continue;
     if (options[name] === undefined || reads(statistic)) continue;
+    if (twoByTwo && readBy[name].some((kind) => kind === 'roles')) continue; // its effects read them
     const readers = statistics.filter(reads).map((one) => one.name);
     const option = `--${name.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;
     throw unused(option, `with ${statistic.name}, ${reasons[name]}`, `leave it out, or use ${readers.join(' or ')}`);

@@ -3,15 +3,15 @@ import { forecastExact, standardEffort } from '../null/forecast.js';
 import { blockSize } from '../null/sampled/limits.js';
 import { effortProblem, usageProblem } from '../problem/problem.js';
 import { generatorName } from '../random/stream.js';
-import type { BoundStatistic, Statistic } from '../statistic/contract.js';
+import type { BoundStatistic, Choices, Statistic } from '../statistic/contract.js';
 import { hasOneTableOnly, type LiveTable } from '../table/live-table.js';
 import type { Table } from '../table/table.js';
 import { chooseStatistic, choicesOf, refuseUnread } from './choices.js';
 import { orderEcho } from './order-echo.js';
 import { freshSeed } from './fresh-seed.js';
 import { methods, tails, twoSidedRules, type Plan, type PlanOptions, type Tail, type TwoSidedRule } from './plan.js';
-import { noRoles, rolesOf, type NamedRoles } from './roles.js';
-import { oneOf, positive, share, unused } from './settings.js';
+import { isTwoByTwo, noRoles, rolesOf, type NamedRoles } from './roles.js';
+import { oneOf, positive, share, unused, wholeNumber } from './settings.js';
 import { drawsOf } from './draws.js';
 import { settleMethod } from './settle-method.js';
 
@@ -22,16 +22,19 @@ export interface Prepared {
   readonly bound: BoundStatistic | null;
   /** The statistic there: 0, for there is no departure to measure; null when a whole group is missing. */
   readonly valueOfOnlyTable: number | null;
-  /** null for statistics that do not compare two groups. */
+  /** null where there are no two groups to compare. */
   readonly named: NamedRoles | null;
+  /** Settings that the statistic reads, in exact form. */
+  readonly choices: Choices;
 }
 
 /** @throws Problem: usage for wishes that make no sense together, effort for exact work over the bound. */
 export function makePlan(table: Table, live: LiveTable, options: PlanOptions): Prepared {
   const statistic = chooseStatistic(options.statistic, options.paired ? table.rowLabels.length : undefined);
-  refuseUnread(statistic, options);
+  const twoByTwo = !options.paired && isTwoByTwo(table, live);
+  refuseUnread(statistic, options, twoByTwo);
   const { tail, rule } = tailOf(statistic, options);
-  const named = statistic.shape === '2x2' ? rolesOf(table, live, statistic, options) : null;
+  const named = statistic.shape === '2x2' || twoByTwo ? rolesOf(table, live, statistic, options) : null;
   const { choices, echo } = choicesOf(table, live, statistic, options);
   const bound = hasOneTableOnly(live) ? null : statistic.bind(live, named ?? noRoles, choices);
   const effort = positive(options.effort, standardEffort, '--effort');
@@ -52,10 +55,12 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
   const valueOfOnlyTable =
     statistic.takes?.includes('scores') || options.paired
       ? definedOrNull(statistic.bind(live, noRoles, choices).value(live.counts))
-      : named === null || named.referenceLabel !== null
-        ? 0
-        : null;
+      : statistic.shape === '2x2' && (named?.groups === 'columns' ? live.columns : live.rows) < 2
+        ? null
+        : 0;
   const sampled = method === 'sample';
+  const bootstrap = bootstrapOf(options, twoByTwo, live);
+  const drawsAnything = sampled || bootstrap !== undefined;
   const plan: Plan = Object.freeze({
     statistic: statistic.name,
     ...(options.paired ? { paired: true as const } : {}),
@@ -72,16 +77,17 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     ...orderEcho(table, live, options, echo),
     fixed: 'both',
     ...(sampled ? drawing : { draws: null }),
-    seed: sampled ? (options.seed ?? freshSeed()) : null,
+    ...(bootstrap === undefined ? {} : { bootstrap }),
+    seed: drawsAnything ? (options.seed ?? freshSeed()) : null,
     tableKey: options.tableKey ?? '',
-    generator: sampled ? generatorName : null,
+    generator: drawsAnything ? generatorName : null,
     blockSize: sampled ? blockSize : null,
     effort,
     alpha,
     confidence: share(options.confidence, 0.95, '--confidence'),
     samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
   });
-  return { plan, statistic, bound, valueOfOnlyTable, named };
+  return { plan, statistic, bound, valueOfOnlyTable, named, choices };
 }
 
 /**
@@ -105,6 +111,18 @@ export function planWithoutExact(table: Table, live: LiveTable, options: PlanOpt
 }
 
 const definedOrNull = (value: number): number | null => (Number.isNaN(value) ? null : value);
+
+/** @throws Problem (usage) where there is no interval to bootstrap. */
+function bootstrapOf({ bootstrap }: PlanOptions, twoByTwo: boolean, live: LiveTable): number | undefined {
+  if (bootstrap === undefined) return undefined;
+  wholeNumber(bootstrap, 100, 1e6, '--bootstrap');
+  if (!twoByTwo && !hasOneTableOnly(live)) return bootstrap;
+  throw unused(
+    '--bootstrap',
+    "with this table: it gives the interval of Cramer's V for more than two rows or columns",
+    'leave it out',
+  );
+}
 
 function tailOf(statistic: Statistic, options: PlanOptions): { tail: Tail; rule: TwoSidedRule | null } {
   const tail = oneOf(options.tail, statistic.sided === 'signed' ? 'both' : 'upper', tails, '--tail');

@@ -7,7 +7,7 @@ import type { ScoreWish } from './scores.js';
 export const tails = ['upper', 'lower', 'both'] as const;
 export type Tail = (typeof tails)[number];
 
-export const twoSidedRules = ['distance', 'probability', 'doubled'] as const;
+export const twoSidedRules = ['distance', 'probability', 'doubled', 'blaker'] as const;
 export type TwoSidedRule = (typeof twoSidedRules)[number];
 
 export const methods = ['auto', 'exact', 'sample', 'asymptotic'] as const;
@@ -56,6 +56,8 @@ export interface PlanOptions {
   readonly alpha?: number;
   /** Level of intervals for effects, in (0, 1). Default 0.95. */
   readonly confidence?: number;
+  /** Resampled tables for the interval of Cramer's V of a table larger than 2x2, 100 to 1e6. Default: no such interval. */
+  readonly bootstrap?: number;
   /** Level of the interval of a sampled p, in (0, 1). Default 0.99. */
   readonly samplingConfidence?: number;
 }
@@ -102,6 +104,8 @@ export interface Plan {
   readonly mostDraws?: number;
   readonly samplingRisk?: number;
   readonly relativeError?: number;
+  /** Resampled tables of a bootstrap interval, where one was asked for. */
+  readonly bootstrap?: number;
   readonly seed: string | null;
   readonly tableKey: string;
   readonly generator: string | null;

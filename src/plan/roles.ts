@@ -1,4 +1,5 @@
-// Which lines of a 2x2 table are the groups, which level is the event and which group comes first.
+// Which lines of a 2x2 table are the groups, which level is the event and which group comes first. Effects of any 2x2 table
+// read them, and the statistics that compare two groups.
 import { nameHint } from '../problem/suggest.js';
 import { usageProblem } from '../problem/problem.js';
 import type { Roles, Statistic } from '../statistic/contract.js';
@@ -10,15 +11,26 @@ import { oneOf } from './settings.js';
 export interface NamedRoles extends Roles {
   readonly eventLabel: string;
   readonly firstLabel: string;
-  /** null when only one group has any units. */
+  /** null when only one line is left to be a group. */
   readonly referenceLabel: string | null;
 }
 
 /** For statistics that know no groups. */
 export const noRoles: Roles = { groups: 'rows', event: 0, first: 0 };
 
+/** Two groups and two levels: the whole table, or what its empty lines leave. */
+export const isTwoByTwo = (table: Table, live: LiveTable): boolean =>
+  (table.rowLabels.length === 2 && table.columnLabels.length === 2) || (live.rows === 2 && live.columns === 2);
+
+/** In a table that is 2x2 as it stands, an empty line is a line; in a larger one it is left out. */
+function nameable(table: Table, live: LiveTable): Pick<LiveTable, 'rowIndex' | 'columnIndex'> {
+  const whole = table.rowLabels.length === 2 && table.columnLabels.length === 2;
+  return whole ? { rowIndex: [0, 1], columnIndex: [0, 1] } : live;
+}
+
 /**
- * Groups are rows unless told; the event is the first level of the other side, the first group the first listed.
+ * Groups are rows unless told; the event is the first level of the other side, the first group the first listed. The
+ * indexes are those of the live table where that is 2x2.
  * @throws Problem (usage): `not-two-by-two`, `unknown-label`, `empty-line-named`.
  */
 export function rolesOf(table: Table, live: LiveTable, statistic: Statistic, options: PlanOptions): NamedRoles {
@@ -30,11 +42,12 @@ export function rolesOf(table: Table, live: LiveTable, statistic: Statistic, opt
       hint: 'use pearson, likelihood-ratio, probability or trend for larger tables, or pick two rows and two columns',
     });
   }
+  const { rowIndex, columnIndex } = nameable(table, live);
   const groups = oneOf(options.groups, 'rows', ['rows', 'columns'] as const, '--groups');
   const [groupLabels, groupIndex, eventLabels, eventIndex] =
     groups === 'rows'
-      ? [table.rowLabels, live.rowIndex, table.columnLabels, live.columnIndex]
-      : [table.columnLabels, live.columnIndex, table.rowLabels, live.rowIndex];
+      ? [table.rowLabels, rowIndex, table.columnLabels, columnIndex]
+      : [table.columnLabels, columnIndex, table.rowLabels, rowIndex];
   const event = options.event === undefined ? 0 : lineNamed(options.event, eventLabels, eventIndex, '--event');
   const reference =
     options.reference === undefined

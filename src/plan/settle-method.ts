@@ -24,13 +24,15 @@ export function settleMethod(question: MethodQuestion): { method: ChosenMethod; 
   const more = `raise the bound with --effort ${(forecast.workUnits * 1.1).toPrecision(2)}`;
   if (asked === 'asymptotic' && statistic.limit === 'none') throw noAsymptoticForm(statistic);
   if (needsWholeLaw(question)) {
-    if (question.bound?.linear === undefined) throw noProbabilityRule(statistic);
-    if (asked === 'sample') throw ruleNeedsExact(statistic);
+    const rule = question.rule!;
+    const { bound } = question;
+    if (bound?.linear === undefined && bound?.corner === undefined) throw noLaw(statistic, rule);
+    if (asked === 'sample') throw ruleNeedsExact(statistic, rule);
     if (asked === 'auto' && !fits) {
       throw effortProblem({
         code: 'exact-over-bound',
-        message: `the rule probability needs exact work, and that is over the bound: ${tables}; ${work}`,
-        place: '--two-sided-rule probability',
+        message: `the rule ${rule} needs exact work, and that is over the bound: ${tables}; ${work}`,
+        place: `--two-sided-rule ${rule}`,
         hint: `use --two-sided-rule distance or doubled, or ${more}`,
       });
     }
@@ -50,9 +52,12 @@ export function settleMethod(question: MethodQuestion): { method: ChosenMethod; 
     : { method: 'sample', reason: `exact is out of reach: ${tables}; ${work}` };
 }
 
-/** Values compared by how probable they are: random tables do not tell, unless a value is one table (2x2). */
+/** Values compared by how probable they are, or by their tails: random tables do not tell, unless a value is one table (2x2)
+ *  and its probability is asked for. */
 const needsWholeLaw = ({ asked, bound, rule }: MethodQuestion): boolean =>
-  rule === 'probability' && bound !== null && bound.corner === undefined && asked !== 'asymptotic';
+  ((rule === 'probability' && bound?.corner === undefined) || rule === 'blaker') &&
+  bound !== null &&
+  asked !== 'asymptotic';
 
 function noAsymptoticForm({ name }: Statistic): Problem {
   return usageProblem({
@@ -63,20 +68,20 @@ function noAsymptoticForm({ name }: Statistic): Problem {
   });
 }
 
-function ruleNeedsExact({ name }: Statistic): Problem {
+function ruleNeedsExact({ name }: Statistic, rule: TwoSidedRule): Problem {
   return usageProblem({
     code: 'rule-needs-exact',
-    message: `the rule probability needs the probability of every value of ${name}, which random tables do not give`,
-    place: '--two-sided-rule probability',
+    message: `the rule ${rule} needs the probability of every value of ${name}, which random tables do not give`,
+    place: `--two-sided-rule ${rule}`,
     hint: 'use --two-sided-rule distance or doubled, or --method exact',
   });
 }
 
-function noProbabilityRule({ name, own }: Statistic): Problem {
+function noLaw({ name, own }: Statistic, rule: TwoSidedRule): Problem {
   return usageProblem({
     code: 'rule-without-law',
-    message: `the rule probability needs the law of ${name}, which is ${own ? 'not known for a statistic of your own' : 'not worked out for scores of so many digits'}`,
-    place: '--two-sided-rule probability',
+    message: `the rule ${rule} needs the law of ${name}, which is ${own ? 'not known for a statistic of your own' : 'not worked out for scores of so many digits'}`,
+    place: `--two-sided-rule ${rule}`,
     hint: `use --two-sided-rule distance or doubled${own ? '' : ', or scores of fewer digits'}`,
   });
 }

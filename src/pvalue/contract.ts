@@ -57,6 +57,7 @@ export interface PValueEntry {
   mid: number | null;
   tied: number | null;
   point?: number;
+  leastAttainable?: number;
   degreesOfFreedom?: number;
   /** Asymptotic entries of a statistic that is not on the scale of its limiting law: the value on that scale. */
   value?: number;
@@ -77,6 +78,7 @@ export interface Question {
 export function orderedBy({ tail, rule, statistic }: Question): string {
   if (tail === 'both' && rule === 'distance') return `distance of ${statistic} from its centre`;
   if (tail === 'both' && rule === 'probability') return `probability of the value of ${statistic}`;
+  if (tail === 'both' && rule === 'blaker') return `smaller tail of ${statistic}`;
   return statistic;
 }
 

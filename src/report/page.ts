@@ -1,5 +1,5 @@
 // What a report for people says, and in which order, before any format lays it out: what was tested, the table, the
-// answer with its error, other readings, the footing of the approximation, cautions, how to run it again.
+// answer with its error, how strong, how fragile, other readings, the footing of the approximation, cautions, how to run it again.
 import {
   citedStatistic,
   errorSentences,
@@ -17,6 +17,8 @@ import { pairsQuestion, pairsSection } from './sections/pairs.js';
 import { againCommand, againInWords, againSentences } from './run-again.js';
 import { orderSection } from './sections/order.js';
 import { cellsBlocks } from './sections/cells.js';
+import { fragilityBlocks } from './sections/fragility.js';
+import { strengthBlocks } from './sections/effects.js';
 import { methodSentences, missingSentences, sourceWords } from './setting.js';
 
 export interface Sentence {
@@ -67,6 +69,8 @@ const sectionsOf = (result: Result): Section[] => [
   { heading: 'What was tested', blocks: tested(result) },
   { heading: 'The table', blocks: [{ kind: 'table' }] },
   { heading: 'The answer', blocks: answer(result) },
+  { heading: 'How strong is it?', blocks: strengthBlocks(result) },
+  { heading: 'How fragile is it?', blocks: fragilityBlocks(result) },
   { heading: 'Other readings of the same table', blocks: otherReadings(result) },
   orderSection(result),
   pairsSection(result),

@@ -30,6 +30,7 @@ export function againInWords({ input, plan }: Result): string {
     ...(plan.columnScores === undefined ? [] : [`column scores ${plan.columnScores.join()}`]),
     ...(plan.lambda === undefined ? [] : [`lambda ${plan.lambda}`]),
     ...(plan.ordered === undefined ? [] : [`ordered ${plan.ordered}`]),
+    ...(plan.bootstrap === undefined ? [] : [`bootstrap ${plan.bootstrap}`]),
     `method ${plan.method}`,
     ...(plan.cells?.asked ? ['cells'] : []),
     ...(plan.cells?.seed === undefined ? [] : [`seed ${quoted(plan.cells.seed)}`]),
@@ -102,14 +103,26 @@ const csvLabel = (label: string): string => (/[",]/.test(label) ? `"${label.repl
 const optional = (name: string, value: string | number | null | undefined): Option[] =>
   value === null || value === undefined ? [] : [[name, String(value)]];
 
-const planOptions = ({ plan }: Result): Option[] => [
+/** Groups, event and reference: always where the statistic compares groups, else where they are not those taken unasked. */
+function roleOptions({ plan, statistic, input }: Result): Option[] {
+  const unasked =
+    plan.groups === 'rows' && plan.event === input.columnLabels[0] && plan.reference === input.rowLabels[1];
+  if (statistic.event === undefined && unasked) return [];
+  return [
+    ...optional('groups', plan.groups),
+    ...optional('event', plan.event),
+    ...optional('reference', plan.reference),
+  ];
+}
+
+const planOptions = (result: Result): Option[] => planOptionsOf(result.plan, roleOptions(result));
+
+const planOptionsOf = (plan: Result['plan'], roles: readonly Option[]): Option[] => [
   ...(plan.paired ? [['paired', null] as const] : []),
   ...optional('statistic', plan.statistic),
   ...optional('tail', plan.tail),
   ...optional('two-sided-rule', plan.twoSidedRule),
-  ...optional('groups', plan.groups),
-  ...optional('event', plan.event),
-  ...optional('reference', plan.reference),
+  ...roles,
   ...optional('row-scores', plan.rowScores?.join()),
   ...optional('column-scores', plan.columnScores?.join()),
   ...optional('ordered', plan.ordered),
@@ -119,10 +132,12 @@ const planOptions = ({ plan }: Result): Option[] => [
   ...optional('most-draws', plan.mostDraws),
   ...optional('sampling-risk', plan.samplingRisk),
   ...optional('relative-error', plan.relativeError),
-  ...optional('alpha', plan.draws === 'auto' ? plan.alpha : null),
+  ...optional('alpha', plan.draws === 'auto' || plan.alpha !== 0.05 ? plan.alpha : null),
+  ...optional('bootstrap', plan.bootstrap),
   ...optional('seed', plan.seed),
   ...(plan.cells?.asked ? [['cells', null] as const] : []),
-  ...optional('seed', plan.cells?.seed),
+  ...optional('seed', plan.seed === null ? plan.cells?.seed : null),
+  ...optional('confidence', plan.confidence === 0.95 ? null : plan.confidence),
   ...optional('sampling-confidence', typeof plan.draws === 'number' ? plan.samplingConfidence : null),
 ];
 

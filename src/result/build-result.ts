@@ -9,13 +9,14 @@ import type { Table } from '../table/table.js';
 import type { ExpectationCheck } from '../table/expectation-check.js';
 import type { ResultBeforeWords } from './describe.js';
 import { methodsFor } from './methods.js';
-import type { InputEcho, Note, Result } from './result.js';
+import type { Fragility, InputEcho, Note, Result } from './result.js';
 import { sentenceFor } from './sentence.js';
 import { version } from './version.js';
 
 export interface Findings {
   readonly read: ReadTable;
   readonly plan: Plan;
+  /** Roles where the statistic itself compares two groups. */
   readonly named: NamedRoles | null;
   /** null where the margins leave the statistic undefined. */
   readonly value: number | null;
@@ -29,6 +30,7 @@ export interface Findings {
   readonly byOrder?: { readonly order: NonNullable<Result['order']>; readonly effects: readonly Effect[] } | undefined;
   readonly effects?: readonly Effect[] | undefined;
   readonly cells?: readonly CellEntry[] | undefined;
+  readonly fragility?: Fragility | undefined;
   readonly notes: readonly Note[];
 }
 
@@ -48,8 +50,9 @@ export function buildResult(found: Findings): Result {
       ...found.expectations,
       ...(found.tables === undefined ? {} : { tables: found.tables }),
     },
-    ...(found.byOrder === undefined ? {} : orderParts(found.byOrder)),
-    ...(found.effects === undefined ? {} : { effects: effectsFound(found.effects) }),
+    ...effectParts(found),
+    ...(found.byOrder === undefined ? {} : { order: found.byOrder.order }),
+    ...(found.fragility === undefined ? {} : { fragility: found.fragility }),
     ...(found.cells === undefined ? {} : { cells: [...found.cells] }),
     notes: [...found.notes],
   };
@@ -70,10 +73,11 @@ export const statisticFound = ({
   ...(degreesOfFreedom === undefined ? {} : { degreesOfFreedom }),
 });
 
-const orderParts = ({ order, effects }: NonNullable<Findings['byOrder']>): Pick<Result, 'order' | 'effects'> => ({
-  order,
-  effects: effectsFound(effects),
-});
+/** Those of any table, then those that use a declared order. */
+function effectParts({ effects = [], byOrder }: Findings): Pick<Result, 'effects'> {
+  const all = [...effects, ...(byOrder?.effects ?? [])];
+  return all.length === 0 ? {} : { effects: effectsFound(all) };
+}
 
 const effectsFound = (effects: readonly Effect[]): NonNullable<Result['effects']> =>
   effects.map((effect) => ({ ...effect, intervals: [...effect.intervals] }));

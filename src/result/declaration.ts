@@ -3,6 +3,7 @@
 import { z } from 'zod';
 import { cell } from './declared/cell.js';
 import { effect } from './declared/effect.js';
+import { fragility } from './declared/fragility.js';
 import { input } from './declared/input.js';
 import { order } from './declared/order.js';
 import { pValue } from './declared/p-value.js';
@@ -43,6 +44,7 @@ export const resultDeclaration = z.strictObject({
   effects: z.array(effect).optional(),
   order: order.optional(),
   cells: z.array(cell).optional(),
+  fragility: fragility.optional(),
   sentence: z.string(),
   methods: z.string(),
   notes: z.array(z.strictObject({ code: z.string(), text: z.string() })),

@@ -15,6 +15,7 @@ import {
 import { cellsMethods } from './cell-words.js';
 import { levelSentences } from './level-words.js';
 import { quoted } from './label-words.js';
+import { shownEffects } from './shown-effects.js';
 import { countWords, levelWords } from './number-words.js';
 import { agreementInterval, agreementOpening, changeMethods } from './pairs-methods.js';
 import { isAboutChange } from './pairs-sentence.js';
@@ -36,10 +37,22 @@ export function methodsFor(result: ResultBeforeWords): string {
       : [ruleSentence(headline), tiesSentence(headline), besideSentence(result, headline)]),
     agreement ? agreementInterval(result) : undefined,
     cellsMethods(result),
+    effectsSentence(result),
     `Computed with ${result.tool.name} ${result.tool.version}.`,
   ]
     .filter((sentence) => sentence !== undefined)
     .join(' ');
+}
+
+function effectsSentence(result: ResultBeforeWords): string | undefined {
+  const said = shownEffects(result).map(({ words, source, interval, methodSource }) => {
+    const limits =
+      interval === undefined || methodSource === undefined
+        ? ''
+        : `, with a ${levelWords(interval.confidence)} interval ${methodSource}`;
+    return `${words}${source === undefined ? '' : ` (${source})`}${limits}`;
+  });
+  return said.length === 0 ? undefined : `Effects: ${said.join('; ')}.`;
 }
 
 function testSentence(result: ResultBeforeWords): string {
@@ -110,6 +123,8 @@ function ruleSentence(p: PValue): string | undefined {
       return 'Two-tailed, a table is as extreme when its statistic lies at least as far from the centre.';
     case 'probability':
       return 'Two-tailed, a table is as extreme when its statistic takes a value no more probable than the observed one (Irwin 1935).';
+    case 'blaker':
+      return 'Two-tailed, a table is as extreme when the smaller of the two tails that its statistic ends is no larger than that of the observed one (Blaker 2000).';
     case 'doubled':
       return p.method === 'sample' ? undefined : 'Two-tailed, the smaller one-tailed p is doubled, up to 1.';
     case undefined:

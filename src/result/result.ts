@@ -9,4 +9,7 @@ export type InputEcho = Result['input'];
 export type InputSource = InputEcho['source'];
 export type MissingRecords = NonNullable<InputEcho['missing']>;
 export type Diagnostics = Result['diagnostics'];
+export type Effect = NonNullable<Result['effects']>[number];
+export type EffectInterval = Effect['intervals'][number];
+export type Fragility = NonNullable<Result['fragility']>;
 export type Note = Result['notes'][number];

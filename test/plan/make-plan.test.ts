@@ -116,7 +116,7 @@ describe('a plan', () => {
       'option-without-effect',
       /leave it out/,
     ],
-    ['groups for pearson', twoByTwo, { groups: 'columns' }, 'option-without-effect', /wald or score/],
+    ['groups for pearson', larger, { groups: 'columns' }, 'option-without-effect', /wald or score/],
     ['scores for pearson', larger, { rowScores: '1,2,3' }, 'option-without-effect', /use trend/],
     ['groups for trend', larger, { statistic: 'trend', groups: 'rows' }, 'option-without-effect', /wald or score/],
     ['too few scores', larger, { statistic: 'trend', rowScores: '1,2' }, 'score-count', /--row-scores 1,2,3/],

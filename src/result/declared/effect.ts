@@ -1,7 +1,7 @@
 // Effects: how strong the association is, with the intervals that say how well that is known.
 import { z } from 'zod';
 import { effectReasons } from '../../effect/contract.js';
-import { extendedNumber, level } from './pieces.js';
+import { count, extendedNumber, level } from './pieces.js';
 
 const interval = z.strictObject({
   /** Name of the method, with its source in the methods paragraph. */
@@ -17,6 +17,10 @@ const interval = z.strictObject({
   setHasGap: z.boolean().optional(),
   /** False when coverage of the stated level is not promised. */
   guaranteed: z.boolean().optional(),
+  /** The interval runs from `lower` up to infinity and from minus infinity up to `upper` (Altman 1998). */
+  throughInfinity: z.boolean().optional(),
+  /** Resampled tables behind it. */
+  draws: count.optional(),
 });
 
 export const effect = z.strictObject({
@@ -26,5 +30,7 @@ export const effect = z.strictObject({
   groups: z.enum(['rows', 'columns']).optional(),
   event: z.string().optional(),
   direction: z.literal('first-minus-second').or(z.literal('first-over-second')).optional(),
+  /** Which side is foretold from the other; `either` for the symmetric form. */
+  predicts: z.enum(['rows', 'columns', 'either']).optional(),
   intervals: z.array(interval),
 });

@@ -55,7 +55,7 @@ const approximationError = z.strictObject({ kind: z.literal('approximation') });
 
 export const pValue = z.strictObject({
   tail: z.enum(['upper', 'lower', 'both']),
-  rule: z.enum(['distance', 'probability', 'doubled']).optional(),
+  rule: z.enum(['distance', 'probability', 'doubled', 'blaker']).optional(),
   /** What makes a table "as extreme" as the observed one. */
   orderedBy: z.string(),
   method: z.enum(['exact', 'sample', 'asymptotic', 'unconditional']),
@@ -69,6 +69,8 @@ export const pValue = z.strictObject({
   tied: probability.nullable(),
   /** Probability of the observed table itself, where the null gives it. */
   point: probability.optional(),
+  /** Of the p asked for, where found cheaply: the smallest p of any table with these margins. */
+  leastAttainable: probability.optional(),
   degreesOfFreedom: count.optional(),
   /** Asymptotic entries of a statistic that is not on the scale of its limiting law: the value on that scale. */
   value: z.number().optional(),

@@ -29,7 +29,7 @@ export const plan = z.strictObject({
   /** SHA-256 of the module of a statistic of the user's own. */
   statisticDigest: digest.optional(),
   tail: z.enum(['upper', 'lower', 'both']),
-  twoSidedRule: z.enum(['distance', 'probability', 'doubled']).nullable(),
+  twoSidedRule: z.enum(['distance', 'probability', 'doubled', 'blaker']).nullable(),
   method: z.enum(['exact', 'sample', 'asymptotic']),
   methodAsked: z.enum(['auto', 'exact', 'sample', 'asymptotic']),
   methodReason: z.string(),
@@ -53,6 +53,8 @@ export const plan = z.strictObject({
   mostDraws: count.optional(),
   samplingRisk: level.optional(),
   relativeError: z.number().min(0).lt(1).optional(),
+  /** Resampled tables of a bootstrap interval, where one was asked for. */
+  bootstrap: count.optional(),
   seed: z.string().nullable(),
   tableKey: z.string(),
   generator: z.string().nullable(),

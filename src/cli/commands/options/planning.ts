@@ -30,7 +30,7 @@ export const planning = {
   ),
   tail: valued('The test', 'TAIL', oneOf(tails), `${either(tails)} (upper; for wald, score and trend both)`),
   twoSidedRule: valued('The test', 'RULE', oneOf(twoSidedRules), `for both tails: ${either(twoSidedRules)} (distance)`),
-  groups: valued('The test', 'SIDE', oneOf(sides), `for wald and score, what is compared: ${either(sides)} (rows)`),
+  groups: valued('The test', 'SIDE', oneOf(sides), `of a 2x2 table, what is compared: ${either(sides)} (rows)`),
   event: valued('The test', 'LABEL', anyText, 'the outcome whose proportions are compared (the first)'),
   reference: valued('The test', 'LABEL', anyText, 'the group compared with (the second)'),
   rowScores: valued(
@@ -76,6 +76,12 @@ export const planning = {
     'RISK',
     betweenZeroAndOne('0.0001'),
     'with auto, probability that an interval ever errs (alpha / 500)',
+  ),
+  bootstrap: valued(
+    'How p is found',
+    'N',
+    wholeNumber(100, 1e6, '2000'),
+    "resampled tables for an interval of Cramer's V of a larger table (none)",
   ),
   seed: valued('How p is found', 'TEXT', anyText, 'makes the draws repeatable (one is made and shown)'),
   effort: valued(

@@ -12,6 +12,7 @@ import { exactTwoByTwo } from '../two-by-two.js';
 import type { DealtLaw } from './deal.js';
 import { laws, placesByProbability } from './linear-law.js';
 import { upscaleBits } from './node.js';
+import { placesBySmallerTail } from './smaller-tail.js';
 import { extremes, scoredSides, type ScoredSides } from './scored-sides.js';
 
 const unit = 2 ** -53;
@@ -81,7 +82,7 @@ function cutsOf(
 /** Whether nothing can stand there, whatever the law: beyond the largest and smallest values that the margins allow. */
 function isBeyondAll(sides: ScoredSides, form: LinearForm, name: OrderingName, place: Place): boolean {
   const { lowest, highest } = extremes(sides);
-  if (name === 'probability' || place === 0) return false;
+  if (name === 'probability' || name === 'blaker' || place === 0) return false;
   if (name === 'distance') return place === 1 && highest <= form.high && lowest >= form.low;
   return (name === 'upper') === (place === 1) ? form.observed === highest : form.observed === lowest;
 }
@@ -97,6 +98,10 @@ function placing(live: LiveTable, form: LinearForm, dealt: DealtLaw, name: Order
       return (sum) => (sum > high || sum < low ? 1 : sum < high && sum > low ? -1 : 0);
     case 'probability': {
       const places = placesByProbability(live, form, dealt);
+      return (sum) => places.get(sum)!;
+    }
+    case 'blaker': {
+      const places = placesBySmallerTail(live, form, dealt);
       return (sum) => places.get(sum)!;
     }
   }

@@ -61,7 +61,7 @@ export function placesByProbability(live: LiveTable, form: LinearForm, dealt: De
 }
 
 /** A side that reads the same from both ends makes the law of S symmetric about its mean. */
-function isSymmetric({ rows, columns }: ScoredSides): boolean {
+export function isSymmetric({ rows, columns }: ScoredSides): boolean {
   const palindrome = (lines: readonly ScoredLine[]): boolean => {
     const sorted = [...lines].sort((a, b) => a.score - b.score);
     const highest = sorted.at(-1)!.score;
