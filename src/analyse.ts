@@ -12,6 +12,7 @@
 import { besideThe } from './beside-the-answer.js';
 import { inquireCells, type CellInquiry } from './cell/which-cells.js';
 import type { ReadTable } from './input/read-table.js';
+import type { StrataParts } from './input/strata.js';
 import type { ExactAnswer } from './null/exact/exact-answer.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
 import type { ExactEngine } from './null/forecast.js';
@@ -54,18 +55,23 @@ export interface Answer {
 
 /**
  * Decides whether the rows and columns of a table of counts are associated.
- * @param data counts with optional labels, or a table that an input function has read.
+ * @param data counts with optional labels, counts by stratum, or a table that an input function has read.
  * @param options wishes; every one has a default.
  * @param surroundings what the run may use of the machine; changes no digit.
  * @returns everything found, in the published shape `keepsum/result/1`.
  * @throws Problem, of kind `data`, `usage` or `effort`, with code, place and hint.
  */
 export async function analyse(
-  data: TableParts | ReadTable,
+  data: TableParts | StrataParts | ReadTable,
   options: PlanOptions = {},
   surroundings: Surroundings = {},
 ): Promise<Result> {
-  const found = await find(data, options, surroundings, true);
+  const read = 'table' in data ? data : 'strata' in data ? await strataFromProgram(data) : fromProgram(data);
+  if (read.strata !== undefined) return (await import('./analyse-strata.js')).analyseStrata(read, options, surroundings);
+  if (read.clusters !== undefined) {
+    return (await import('./analyse-clusters.js')).analyseClusters(read, options, surroundings);
+  }
+  const found = await find(read, options, surroundings, true);
   const { cells, prepared } = found;
   const byOrder = prepared.plan.paired
     ? undefined
@@ -177,6 +183,11 @@ async function carryOut(
     const found = await conditionalPValues(questions, cuts, point, plan.samplingConfidence);
     return tables === undefined ? { found } : { found, tables };
   }
+}
+
+async function strataFromProgram(parts: StrataParts): Promise<ReadTable> {
+  const { strataFromParts } = await import('./input/strata.js');
+  return { ...strataFromParts(parts), source: { form: 'library' }, sha256: null, missing: null, notes: [] };
 }
 
 const fromProgram = (parts: TableParts): ReadTable => ({

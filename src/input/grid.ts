@@ -42,13 +42,21 @@ export interface Grid {
   readonly place: string | undefined;
 }
 
-export interface GridTable {
-  readonly table: Table;
+export interface GridCounts {
+  readonly counts: LabelledCounts;
   readonly totalsLeftOut: readonly Side[];
   readonly notes: readonly InputNote[];
 }
 
+export type GridTable = Omit<GridCounts, 'counts'> & { readonly table: Table };
+
 export function tableFromGrid(grid: Grid, options: GridOptions): GridTable {
+  const { counts, ...facts } = countsFromGrid(grid, options);
+  return { ...facts, table: placed(orderLevels(counts, options), grid.place) };
+}
+
+/** The same before the lines are put in order and the counts are checked as a whole. */
+export function countsFromGrid(grid: Grid, options: GridOptions): GridCounts {
   const rule = options.totals ?? 'refuse';
   const view: TotalsView = {
     values: grid.texts.map((row) => row.map((text) => valueOf(text, grid.origin))),
@@ -67,7 +75,7 @@ export function tableFromGrid(grid: Grid, options: GridOptions): GridTable {
   if (rule === 'keep' && anyFound) notes.push(keptTotalsNote(found, view));
   if (rule === 'drop' && !anyFound) notes.push(noTotalsNote);
   return {
-    table: placed(orderLevels(counts, options), grid.place),
+    counts,
     totalsLeftOut: [
       ...(left.rows.length > 0 ? ['row' as const] : []),
       ...(left.columns.length > 0 ? ['column' as const] : []),

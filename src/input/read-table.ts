@@ -15,6 +15,10 @@ export interface SourceFacts {
   readonly rowsFrom?: string;
   readonly columnsFrom?: string;
   readonly countFrom?: string | null;
+  /** What tells the strata apart: a column of records, or the name given to the blocks of a cross-table. */
+  readonly strataFrom?: string | null;
+  /** Records: the column that names the cluster of each. */
+  readonly clusterFrom?: string;
 }
 
 export interface MissingFacts {
@@ -23,6 +27,10 @@ export interface MissingFacts {
   readonly missingRow: number;
   readonly missingColumn: number;
   readonly missingBoth: number;
+  /** Records with row and column but no stratum; only where strata were asked for. */
+  readonly missingStratum?: number;
+  /** Records with row, column and stratum but no cluster; only where clusters were asked for. */
+  readonly missingCluster?: number;
   /** Total of the counts of the records left out. */
   readonly dropped: number;
 }
@@ -32,8 +40,26 @@ export interface InputNote {
   readonly text: string;
 }
 
+/** One stratum: counts[row][column] over all lines of the pooled table, so that levels are shared. */
+export interface StratumTable {
+  readonly label: string;
+  readonly counts: readonly (readonly number[])[];
+}
+
+/** Units that belong together and lie in one row: a litter, a plate, a household. */
+export interface Cluster {
+  readonly label: string;
+  /** Index of its row. */
+  readonly row: number;
+  /** Its counts by column. */
+  readonly counts: readonly number[];
+}
+
 export interface ReadTable {
+  /** With strata: all of them together. */
   readonly table: Table;
+  readonly strata?: readonly StratumTable[];
+  readonly clusters?: readonly Cluster[];
   readonly source: SourceFacts;
   /** SHA-256 of the bytes read, in hexadecimal; null for counts that were typed in or passed by a program. */
   readonly sha256: string | null;

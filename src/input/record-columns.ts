@@ -10,16 +10,22 @@ export interface ColumnNames {
   readonly rows: string;
   readonly columns: string;
   readonly count?: string | undefined;
+  readonly strata?: string | undefined;
+  readonly cluster?: string | undefined;
 }
 
-/** Indexes from 0; `count` is -1 where every record counts once. */
+/** Indexes from 0; `count` is -1 where every record counts once, `strata` and `cluster` where there are none. */
 export interface RecordColumns {
   readonly rows: number;
   readonly columns: number;
   readonly count: number;
+  readonly strata: number;
+  readonly cluster: number;
   readonly rowsName: string;
   readonly columnsName: string;
   readonly countName: string | null;
+  readonly strataName: string | null;
+  readonly clusterName: string | null;
 }
 
 /**
@@ -31,18 +37,32 @@ export function findColumns(header: readonly string[], names: ColumnNames, sourc
   const rows = indexOf(titles, names.rows, '--rows', sourceName);
   const columns = indexOf(titles, names.columns, '--columns', sourceName);
   const count = names.count === undefined ? -1 : indexOf(titles, names.count, '--count', sourceName);
-  if (rows === columns) throw sameColumn('--columns', '--rows', titles[rows]!);
-  if (count === rows || count === columns) {
-    throw sameColumn('--count', count === rows ? '--rows' : '--columns', titles[count]!);
+  const strata = names.strata === undefined ? -1 : indexOf(titles, names.strata, '--strata', sourceName);
+  const cluster = names.cluster === undefined ? -1 : indexOf(titles, names.cluster, '--cluster', sourceName);
+  const used: [option: string, index: number][] = [];
+  for (const [option, index] of [
+    ['--rows', rows],
+    ['--columns', columns],
+    ['--count', count],
+    ['--strata', strata],
+    ['--cluster', cluster],
+  ] as [string, number][]) {
+    const earlier = used.find(([, other]) => other === index);
+    if (earlier !== undefined && index >= 0) throw sameColumn(option, earlier[0], titles[index]!);
+    used.push([option, index]);
   }
   const nameOf = (index: number): string => (titles[index] === '' ? `column ${index + 1}` : titles[index]!);
   return {
     rows,
     columns,
     count,
+    strata,
+    cluster,
     rowsName: nameOf(rows),
     columnsName: nameOf(columns),
     countName: count < 0 ? null : nameOf(count),
+    strataName: strata < 0 ? null : nameOf(strata),
+    clusterName: cluster < 0 ? null : nameOf(cluster),
   };
 }
 

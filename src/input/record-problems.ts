@@ -27,13 +27,43 @@ export const missingValues = (
   dataProblem({
     code: 'missing-values',
     message:
-      `the value of ${named(used.rowsName)} or ${named(used.columnsName)} is missing in ${missing} of ${records} ` +
+      `the value of ${namesOf(used)} is missing in ${missing} of ${records} ` +
       `record${records === 1 ? '' : 's'} (first ${firstText.trim() === '' ? 'an empty one' : shownValue(firstText.trim())})`,
     place,
     hint: 'add --missing drop to leave such records out, or --missing level to count missing as a level of its own',
   });
 
+const namesOf = ({ rowsName, columnsName, strataName, clusterName }: RecordColumns): string => {
+  const names = [rowsName, columnsName, strataName, clusterName].filter((name) => name !== null).map(named);
+  return `${names.slice(0, -1).join(', ')} or ${names.at(-1)!}`;
+};
+
 const named = (name: string): string => shownValue(name).slice(1, -1);
+
+/** Under a rule that keeps missing values as a level: of clusters there is no such level. */
+export const missingCluster = (name: string, place: string): Problem =>
+  dataProblem({
+    code: 'missing-cluster',
+    message: `the cluster (${named(name)}) of this record is missing, so what belongs together with it is not known`,
+    place,
+    hint: 'add --missing drop to leave such records out, or give each such unit a cluster of its own in the file',
+  });
+
+export const clusterInTwoRows = (cluster: string, rowsName: string, before: string, here: string, place: string): Problem =>
+  dataProblem({
+    code: 'cluster-in-two-groups',
+    message: `cluster ${shownValue(cluster)} has ${named(rowsName)} ${shownValue(here)} here and ${shownValue(before)} before`,
+    place,
+    hint: 'a cluster is permuted whole, so all its records need the same row; check the record, or name the column of the groups with --rows',
+  });
+
+export const tooManyClusters = (name: string, most: number, place: string): Problem =>
+  dataProblem({
+    code: 'too-many-clusters',
+    message: `column ${shownValue(name)} holds more than ${most} different values`,
+    place,
+    hint: 'leave --cluster out if every unit stands for itself',
+  });
 
 export const realMissingLevel = (place: string): Problem =>
   dataProblem({

@@ -7,7 +7,16 @@ import { Levels, fresh, missing, missingLevel, mostLevels } from './levels.js';
 import type { MissingFacts } from './read-table.js';
 import type { ColumnNames, RecordColumns } from './record-columns.js';
 import { findColumns } from './record-columns.js';
-import { badCount, missingValues, raggedRecord, realMissingLevel, tooManyLevels } from './record-problems.js';
+import {
+  badCount,
+  clusterInTwoRows,
+  missingCluster,
+  missingValues,
+  raggedRecord,
+  realMissingLevel,
+  tooManyClusters,
+  tooManyLevels,
+} from './record-problems.js';
 
 export type MissingRule = MissingFacts['rule'];
 
@@ -23,6 +32,13 @@ export class RecordTally {
   readonly columns = new Levels();
   /** cells[row][column]; holes are 0. */
   readonly cells: number[][] = [];
+  readonly strata = new Levels();
+  /** The same for each stratum; none where strata were not asked for. */
+  readonly layers: number[][][] = [];
+  readonly clusters = new Levels();
+  /** For each cluster its row, and its counts by column; holes are 0. */
+  readonly clusterRows: number[] = [];
+  readonly clusterCounts: number[][] = [];
   used: RecordColumns | undefined;
   /** The first thing wrong; nothing is counted after it. */
   fault: RecordFault | undefined;
@@ -32,6 +48,8 @@ export class RecordTally {
   missingRow = 0;
   missingColumn = 0;
   missingBoth = 0;
+  missingStratum = 0;
+  missingCluster = 0;
   dropped = 0;
   private at = -1;
   private width = 0;
@@ -61,25 +79,31 @@ export class RecordTally {
     this.records++;
     const count = used.count < 0 ? 1 : this.countOf(record[used.count]!, used.count);
     if (count < 0) return;
-    if (row === missing || column === missing) {
-      this.noteMissing(row, column, record, count);
+    let stratum = used.strata < 0 ? 0 : this.strata.find(record[used.strata]!);
+    const cluster = used.cluster < 0 ? 0 : this.clusters.find(record[used.cluster]!);
+    if (row === missing || column === missing || stratum === missing || cluster === missing) {
+      this.noteMissing({ row, column, stratum, cluster }, record, count);
       if (this.rule !== 'level') return;
+      if (cluster === missing) return this.fail(used.cluster, (place) => missingCluster(used.clusterName!, place));
       if (row === missing) row = this.rows.addMissing();
       if (column === missing) column = this.columns.addMissing();
+      if (stratum === missing) stratum = this.strata.addMissing();
     }
     if (this.firstMissing !== undefined) return;
     if (row === fresh) row = this.addLevel(this.rows, rowText, used.rows);
     if (column === fresh) column = this.addLevel(this.columns, columnText, used.columns);
+    if (stratum === fresh) stratum = this.addLevel(this.strata, record[used.strata]!, used.strata);
     if (this.fault !== undefined) return;
-    const cells = (this.cells[row] ??= []);
-    cells[column] = (cells[column] ?? 0) + count;
+    add(this.cells, row, column, count);
+    if (used.strata >= 0) add((this.layers[stratum] ??= []), row, column, count);
+    if (used.cluster >= 0) this.addToCluster(cluster, row, column, count, record[used.cluster]!);
   }
 
   /** The fault to report once all is read: under `fail`, the missing values come out here. */
   closingFault(): RecordFault | undefined {
     const first = this.firstMissing;
     if (this.fault !== undefined || first === undefined || this.used === undefined) return this.fault;
-    const all = this.missingRow + this.missingColumn + this.missingBoth;
+    const all = this.missingRow + this.missingColumn + this.missingBoth + this.missingStratum + this.missingCluster;
     const { used, records } = this;
     return { ...first, problem: (place) => missingValues(used, all, records, first.text, place) };
   }
@@ -93,7 +117,8 @@ export class RecordTally {
       if (!(error instanceof Problem)) throw error;
       return this.fail(0, () => error);
     }
-    for (const field of [this.used.rows, this.used.columns, this.used.count]) {
+    const { rows, columns, count, strata, cluster } = this.used;
+    for (const field of [rows, columns, count, strata, cluster]) {
       if (header[field]?.includes('\ufffd')) this.fail(field, notUtf8);
     }
   }
@@ -118,21 +143,50 @@ export class RecordTally {
     return -1;
   }
 
-  private noteMissing(row: number, column: number, record: readonly string[], count: number): void {
-    if (row !== missing) this.missingColumn++;
-    else if (column !== missing) this.missingRow++;
-    else this.missingBoth++;
+  private noteMissing(found: Found, record: readonly string[], count: number): void {
+    const { row, column, stratum } = found;
+    if (row === missing && column === missing) this.missingBoth++;
+    else if (row === missing) this.missingRow++;
+    else if (column === missing) this.missingColumn++;
+    else if (stratum === missing) this.missingStratum++;
+    else this.missingCluster++;
     if (this.rule === 'drop') this.dropped = Math.min(this.dropped + count, Number.MAX_SAFE_INTEGER);
     if (this.rule !== 'fail' || this.firstMissing !== undefined) return;
-    const field = row === missing ? this.used!.rows : this.used!.columns;
+    const { rows, columns, strata, cluster } = this.used!;
+    const field = row === missing ? rows : column === missing ? columns : stratum === missing ? strata : cluster;
     this.firstMissing = { record: this.at, field, text: record[field]! };
+  }
+
+  /** Every record of a cluster has the row of its first one. */
+  private addToCluster(found: number, row: number, column: number, count: number, text: string): void {
+    const field = this.used!.cluster;
+    const cluster = found === fresh ? this.addCluster(text, row, field) : found;
+    if (this.fault !== undefined) return;
+    const home = this.clusterRows[cluster]!;
+    if (home !== row) {
+      const labels = [this.clusters.labels[cluster]!, this.used!.rowsName, this.rows.labels[home]!, this.rows.labels[row]!] as const;
+      return this.fail(field, (place) => clusterInTwoRows(...labels, place));
+    }
+    const counts = this.clusterCounts[cluster]!;
+    counts[column] = (counts[column] ?? 0) + count;
+  }
+
+  private addCluster(text: string, row: number, field: number): number {
+    if (text.includes('\ufffd')) this.fail(field, notUtf8);
+    if (this.clusters.labels.length === mostClusters) {
+      this.fail(field, (place) => tooManyClusters(this.used!.clusterName!, mostClusters, place));
+    }
+    this.clusterRows.push(row);
+    this.clusterCounts.push([]);
+    return this.clusters.add(text);
   }
 
   private addLevel(levels: Levels, text: string, field: number): number {
     if (text.includes('\ufffd')) this.fail(field, notUtf8);
     if (this.rule === 'level' && text.trim() === missingLevel) this.fail(field, realMissingLevel);
     if (levels.labels.length === mostLevels) {
-      const name = field === this.used!.rows ? this.used!.rowsName : this.used!.columnsName;
+      const { rows, columns, rowsName, columnsName, strataName } = this.used!;
+      const name = field === rows ? rowsName : field === columns ? columnsName : strataName!;
       this.fail(field, (place) => tooManyLevels(name, place));
     }
     return this.fault === undefined ? levels.add(text) : missing;
@@ -142,6 +196,21 @@ export class RecordTally {
   private fail(field: number, problem: (place: string) => Problem): void {
     if (this.firstMissing === undefined) this.fault ??= { record: this.at, field, problem };
   }
+}
+
+interface Found {
+  readonly row: number;
+  readonly column: number;
+  readonly stratum: number;
+  readonly cluster: number;
+}
+
+/** More clusters than this are not kept. */
+const mostClusters = 1_000_000;
+
+function add(cells: number[][], row: number, column: number, count: number): void {
+  const line = (cells[row] ??= []);
+  line[column] = (line[column] ?? 0) + count;
 }
 
 const isEmptyLine = (record: readonly string[]): boolean => record.every((field) => field.trim() === '');

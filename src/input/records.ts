@@ -13,6 +13,7 @@ import type { Delimiter, InputNote, ReadTable } from './read-table.js';
 import type { ColumnNames } from './record-columns.js';
 import { noRecords, noRecordsLeft } from './record-problems.js';
 import { RecordParser, checkedBytes, headSize } from './record-stream.js';
+import { clustersOf, strataOf } from './record-groups.js';
 import type { MissingRule } from './record-tally.js';
 import { RecordTally } from './record-tally.js';
 import { settleRecordTotals } from './record-totals.js';
@@ -57,9 +58,13 @@ export async function readRecords(chunks: AsyncIterable<Uint8Array>, options: Re
     columnLabels: columns.labels,
   };
   const settled = settleRecordTotals(whole, used.countName !== null, options.totals ?? 'refuse', sourceName);
-  const { missingRow, missingColumn, missingBoth, dropped } = tally;
+  const { missingRow, missingColumn, missingBoth, missingStratum, missingCluster, dropped } = tally;
+  const table = placed(orderLevels(settled.counts, options), sourceName);
+  const strata = strataOf(tally, whole, table, options.totals ?? 'refuse', sourceName);
   return {
-    table: placed(orderLevels(settled.counts, options), sourceName),
+    table,
+    ...(strata === undefined ? {} : { strata }),
+    ...(used.clusterName === null ? {} : { clusters: clustersOf(tally, whole, table) }),
     source: {
       form: 'records',
       delimiter,
@@ -68,9 +73,20 @@ export async function readRecords(chunks: AsyncIterable<Uint8Array>, options: Re
       rowsFrom: used.rowsName,
       columnsFrom: used.columnsName,
       countFrom: used.countName,
+      ...(used.strataName === null ? {} : { strataFrom: used.strataName }),
+      ...(used.clusterName === null ? {} : { clusterFrom: used.clusterName }),
     },
     sha256,
-    missing: { rule, records, missingRow, missingColumn, missingBoth, dropped },
+    missing: {
+      rule,
+      records,
+      missingRow,
+      missingColumn,
+      missingBoth,
+      ...(used.strataName === null ? {} : { missingStratum }),
+      ...(used.clusterName === null ? {} : { missingCluster }),
+      dropped,
+    },
     notes: [...notes, ...headerNotes(tally), ...settled.notes],
   };
 }

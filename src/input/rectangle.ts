@@ -7,6 +7,8 @@ export interface Line {
   readonly fields: readonly string[];
   /** Number of the record in the text, from 0, blank lines and comments not counted. */
   readonly record: number;
+  /** Rises where blank lines stand between this line and the one before. */
+  readonly part?: number;
 }
 
 /** @throws Problem (data): `ragged-row` */

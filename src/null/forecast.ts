@@ -10,6 +10,8 @@ export type ExactEngine = 'two-by-two' | 'enumeration' | 'linear' | 'network' | 
 
 /** Engines of tests of pairs: one walk, two halves joined, the law of the differences of the margins. */
 export type PairsEngine = 'coin-walk' | 'coin-halves' | 'coin-differences';
+/** Over strata: the laws of the strata, combined one by one. */
+export type StrataEngine = 'convolution';
 
 export interface Forecast<Engine = ExactEngine> {
   /** The engine that would do the exact work. */

@@ -5,6 +5,7 @@ import { kappaStatistic } from '../statistic/kappa.js';
 import { pairedNames } from '../statistic/paired.js';
 import { standardLambda } from '../statistic/power-divergence.js';
 import { statisticNamed, statisticNames, statistics } from '../statistic/registry.js';
+import { stratifiedNames } from '../statistic/stratified.js';
 import { ownStatistic, type OwnStatistic } from '../statistic/own.js';
 import type { Choices, Statistic, Taken } from '../statistic/contract.js';
 import type { LiveTable } from '../table/live-table.js';
@@ -27,9 +28,18 @@ export function chooseStatistic(wish: string | OwnStatistic | undefined, levels?
       hint: 'add --paired if they are',
     });
   }
+  if (typeof wish === 'string' && stratifiedNames.includes(wish)) throw needsStrata(wish);
   if (wish === undefined || typeof wish === 'string') return statisticNamed(wish ?? 'pearson');
   return ownStatistic(wish, statisticNames);
 }
+
+const needsStrata = (name: string): Error =>
+  usageProblem({
+    code: 'statistic-needs-strata',
+    message: `${name} is for strata, and this is one table`,
+    place: '--statistic',
+    hint: `use ${name === 'common-odds-ratio' ? 'score' : name === 'general-association' ? 'pearson' : 'trend'}, or name the strata with --strata`,
+  });
 
 const readBy = {
   groups: ['roles', 'groups'],

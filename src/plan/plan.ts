@@ -1,6 +1,6 @@
 // The plan: everything a run will do, checked and frozen before work starts, echoed whole in the result.
 import type { OrderingName } from '../null/contract.js';
-import type { ExactEngine, Forecast, PairsEngine } from '../null/forecast.js';
+import type { ExactEngine, Forecast, PairsEngine, StrataEngine } from '../null/forecast.js';
 import type { OwnStatistic } from '../statistic/own.js';
 import type { ScoreWish } from './scores.js';
 
@@ -29,7 +29,8 @@ export interface PlanOptions {
   readonly event?: string;
   /** Label of the second group, the one compared with (default: the second listed). */
   readonly reference?: string;
-  /** For trend: one score for each row of the table, or `midranks`. Default 1, 2, 3, ... */
+  /** For trend: one score for each row of the table, or `midranks`. Default 1, 2, 3, ... Over strata: `midranks` (within each, the
+   *  default), `pooled-midranks`, or one for each row. */
   readonly rowScores?: ScoreWish;
   readonly columnScores?: ScoreWish;
   /** For power-divergence: above -1, a decimal or a fraction such as 2/3 (the default), read as the rational it is. */
@@ -88,17 +89,21 @@ export interface Plan {
   /** Asked for, before `auto` was settled. */
   readonly methodAsked: Method;
   readonly methodReason: string;
-  readonly forecast: Forecast<ExactEngine | PairsEngine>;
+  readonly forecast: Forecast<ExactEngine | PairsEngine | StrataEngine>;
   readonly groups: 'rows' | 'columns' | null;
   readonly event: string | null;
   readonly reference: string | null;
   /** One for each row and column of the table, empty ones too; for statistics that take scores. */
   readonly rowScores?: number[];
   readonly columnScores?: number[];
+  /** Over strata, where scores are ranks: within each stratum, or of all strata together. */
+  readonly rowRanks?: 'midranks' | 'pooled-midranks';
+  readonly columnRanks?: 'midranks' | 'pooled-midranks';
   /** In lowest terms, such as "2/3"; for power-divergence. */
   readonly lambda?: string;
   readonly ordered?: 'rows' | 'columns' | 'both';
-  readonly fixed: 'both' | 'pairs';
+  /** What chance leaves as it is: both margins, those of every stratum, the clusters, or the pairs but not their direction. */
+  readonly fixed: 'both' | 'strata' | 'clusters' | 'pairs';
   readonly draws: number | 'auto' | null;
   /** These three for draws `auto` only. */
   readonly mostDraws?: number;

@@ -10,6 +10,7 @@ import {
 } from '../result/describe.js';
 import { levelSentences } from '../result/level-words.js';
 import { quoted, shown } from '../result/label-words.js';
+import { strataInWords } from '../result/strata-words.js';
 import { digits, percentWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
 import { cautionsFor } from './cautions.js';
@@ -19,7 +20,8 @@ import { orderSection } from './sections/order.js';
 import { cellsBlocks } from './sections/cells.js';
 import { fragilityBlocks } from './sections/fragility.js';
 import { strengthBlocks } from './sections/effects.js';
-import { methodSentences, missingSentences, sourceWords } from './setting.js';
+import { isOfAgreement, strataSections } from './sections/strata.js';
+import { clusterSentences, methodSentences, missingSentences, sourceWords } from './setting.js';
 
 export interface Sentence {
   readonly kind: 'sentence';
@@ -68,9 +70,11 @@ export function pageFor(result: Result): Page {
 const sectionsOf = (result: Result): Section[] => [
   { heading: 'What was tested', blocks: tested(result) },
   { heading: 'The table', blocks: [{ kind: 'table' }] },
+  ...strataSections(result).slice(0, 1),
   { heading: 'The answer', blocks: answer(result) },
-  { heading: 'How strong is it?', blocks: strengthBlocks(result) },
+  { heading: 'How strong is it?', blocks: result.strata === undefined ? strengthBlocks(result) : [] },
   { heading: 'How fragile is it?', blocks: fragilityBlocks(result) },
+  ...strataSections(result).slice(1),
   { heading: 'Other readings of the same table', blocks: otherReadings(result) },
   orderSection(result),
   pairsSection(result),
@@ -80,7 +84,12 @@ const sectionsOf = (result: Result): Section[] => [
   { heading: 'To run it again', blocks: again(result) },
 ];
 
-function questionOf({ statistic, pValues }: Result): string {
+function questionOf(result: Result): string {
+  const question = wholeQuestion(result);
+  return result.strata === undefined ? question : question.replace(/\?$/, ', stratum by stratum?');
+}
+
+function wholeQuestion({ statistic, pValues }: Result): string {
   if (statistic.groups === undefined || statistic.event === undefined) return 'Are rows and columns related?';
   const [first, second] = statistic.groups.map(({ label }) => quoted(label));
   const event = quoted(statistic.event);
@@ -94,9 +103,14 @@ const sentence = (text: string, tone: Sentence['tone']): Sentence => ({ kind: 's
 const plain = (text: string): Sentence => sentence(text, 'plain');
 
 const tested = (result: Result): Block[] => [
-  plain(`A ${tableWords(result)}, ${sourceWords(result)}.`),
+  plain(
+    result.strata === undefined
+      ? `A ${tableWords(result)}, ${sourceWords(result)}.`
+      : `${strataInWords(result)}, ${sourceWords(result)}.`,
+  ),
   ...missingSentences(result).map(plain),
   ...levelSentences(result.input).map(plain),
+  ...clusterSentences(result).map(plain),
   plain(`Measured by ${citedStatistic(result.statistic.name)}.`),
   ...methodSentences(result).map(plain),
 ];
@@ -107,7 +121,7 @@ function answer(result: Result): Block[] {
 
 function otherReadings(result: Result): Block[] {
   if (isOneTableOnly(result)) return [];
-  const [headline, ...others] = result.pValues;
+  const [headline, ...others] = result.pValues.filter(({ statistic }) => !isOfAgreement(statistic));
   const ties = tiesSentence(headline!);
   return [...(ties === undefined ? [] : [ties]), ...others.map((p) => pSentence(result, p))].map(plain);
 }

@@ -28,6 +28,8 @@ export function againInWords({ input, plan }: Result): string {
     ...(plan.reference === null ? [] : [`reference ${quoted(plan.reference)}`]),
     ...(plan.rowScores === undefined ? [] : [`row scores ${plan.rowScores.join()}`]),
     ...(plan.columnScores === undefined ? [] : [`column scores ${plan.columnScores.join()}`]),
+    ...(plan.rowRanks === undefined ? [] : [`row scores ${plan.rowRanks}`]),
+    ...(plan.columnRanks === undefined ? [] : [`column scores ${plan.columnRanks}`]),
     ...(plan.lambda === undefined ? [] : [`lambda ${plan.lambda}`]),
     ...(plan.ordered === undefined ? [] : [`ordered ${plan.ordered}`]),
     ...(plan.bootstrap === undefined ? [] : [`bootstrap ${plan.bootstrap}`]),
@@ -35,9 +37,16 @@ export function againInWords({ input, plan }: Result): string {
     ...(plan.cells?.asked ? ['cells'] : []),
     ...(plan.cells?.seed === undefined ? [] : [`seed ${quoted(plan.cells.seed)}`]),
   ];
-  const { rowsFrom, columnsFrom } = input.source;
+  const { rowsFrom, columnsFrom, strataFrom, clusterFrom } = input.source;
   const table =
-    input.source.form === 'records' ? ` (rows ${quoted(rowsFrom ?? '')}, columns ${quoted(columnsFrom ?? '')})` : '';
+    input.source.form === 'records'
+      ? ` (${[
+          `rows ${quoted(rowsFrom ?? '')}`,
+          `columns ${quoted(columnsFrom ?? '')}`,
+          ...(strataFrom === undefined || strataFrom === null ? [] : [`strata ${quoted(strataFrom)}`]),
+          ...(clusterFrom === undefined ? [] : [`clusters ${quoted(clusterFrom)}`]),
+        ].join(', ')})`
+      : '';
   return `Take the same counts${table} with ${said.join(', ')}.`;
 }
 
@@ -67,7 +76,10 @@ function tableParts({ input, notes, plan }: Result): TableParts | undefined {
     case 'cross-table': {
       const dropped: Option[] = (source.totalsLeftOut ?? []).length > 0 ? [['drop-totals', null]] : [];
       const kept: Option[] = notes.some(({ code }) => code === 'totals-kept') ? [['keep-totals', null]] : [];
-      return { operands: ['FILE'], options: [...dropped, ...kept, ...levelOptions(input)] };
+      return {
+        operands: ['FILE'],
+        options: [...dropped, ...kept, ...optional('strata', source.strataFrom), ...levelOptions(input)],
+      };
     }
     case 'records':
       return {
@@ -76,6 +88,8 @@ function tableParts({ input, notes, plan }: Result): TableParts | undefined {
           ['rows', source.rowsFrom ?? ''],
           ['columns', source.columnsFrom ?? ''],
           ...optional('count', source.countFrom),
+          ...optional('strata', source.strataFrom),
+          ...optional('cluster', source.clusterFrom),
           ...optional('missing', input.missing?.rule === 'fail' ? null : input.missing?.rule),
           ...levelOptions(input),
         ],
@@ -123,9 +137,9 @@ const planOptionsOf = (plan: Result['plan'], roles: readonly Option[]): Option[]
   ...optional('tail', plan.tail),
   ...optional('two-sided-rule', plan.twoSidedRule),
   ...roles,
-  ...optional('row-scores', plan.rowScores?.join()),
-  ...optional('column-scores', plan.columnScores?.join()),
   ...optional('ordered', plan.ordered),
+  ...optional('row-scores', plan.rowScores?.join() ?? plan.rowRanks),
+  ...optional('column-scores', plan.columnScores?.join() ?? plan.columnRanks),
   ...optional('lambda', plan.lambda),
   ...optional('method', plan.method),
   ...optional('draws', plan.draws),

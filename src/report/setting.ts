@@ -3,6 +3,7 @@
 import { quoted } from '../result/label-words.js';
 import { countWords } from '../result/number-words.js';
 import { coinSentence } from './sections/pairs.js';
+import { scoresWords } from '../result/strata-words.js';
 import type { InputSource, Result } from '../result/result.js';
 
 /** How the table was read, as the end of a sentence that names it. */
@@ -18,6 +19,7 @@ export function sourceWords({ input: { source } }: Result): string {
         ...partWords(source.headerRow, 'a header row'),
         ...partWords(source.labelColumn, 'a label column'),
         ...(source.totalsLeftOut ?? []).map((line) => `its total ${line} left out`),
+      ...(source.strataFrom === undefined ? [] : ['a block for each stratum']),
       ])}`;
     case 'records':
       return `made from records${listed([
@@ -27,6 +29,7 @@ export function sourceWords({ input: { source } }: Result): string {
         ...(source.countFrom === undefined || source.countFrom === null
           ? []
           : [`counts from ${quoted(source.countFrom)}`]),
+        ...(typeof source.strataFrom === 'string' ? [`strata from ${quoted(source.strataFrom)}`] : []),
       ])}`;
   }
 }
@@ -49,6 +52,8 @@ export function missingSentences({ input: { missing } }: Result): string[] {
     ...lackingWords('the row value', missing.missingRow),
     ...lackingWords('the column value', missing.missingColumn),
     ...lackingWords('both values', missing.missingBoth),
+    ...lackingWords('the stratum', missing.missingStratum ?? 0),
+    ...lackingWords('the cluster', missing.missingCluster ?? 0),
   ];
   if (lacking.length === 0) return [`${read}, none with a value missing.`];
   const fate =
@@ -61,20 +66,45 @@ export function missingSentences({ input: { missing } }: Result): string[] {
 const lackingWords = (what: string, records: number): string[] =>
   records === 0 ? [] : [`${what} in ${countWords(records)}`];
 
-/** What chance was taken to be, and the method with the reason for it. */
-export function methodSentences({ plan }: Result): string[] {
-  const picked = plan.methodAsked === plan.method ? '' : `picked by ${plan.methodAsked}: `;
+const chanceWords: Readonly<Record<Result['plan']['fixed'], string>> = {
+  both: 'Chance deals the counts anew with every row and column total held.',
+  strata: 'Chance deals the counts anew within each stratum, with every row and column total of it held.',
+  pairs: coinSentence,
+  clusters: 'Chance deals whole clusters to the rows anew, as many to each row as it has.',
+};
+
+function scoreSentences(result: Result): string[] {
+  const { plan, strata } = result;
+  if (strata !== undefined) return [scoresWords(result)].filter((words) => words !== undefined);
   return [
     ...(plan.rowScores === undefined ? [] : [`Row scores: ${plan.rowScores.join(', ')}.`]),
     ...(plan.columnScores === undefined ? [] : [`Column scores: ${plan.columnScores.join(', ')}.`]),
+  ];
+}
+
+/** Units that belong together, in a sentence. */
+export function clusterSentences({ clusters, input }: Result): string[] {
+  if (clusters === undefined) return [];
+  const by = clusters.from === null ? '' : ` from ${quoted(clusters.from)}`;
+  const rows = input.rowLabels.map((label, i) => `${countWords(clusters.byRow[i]!)} in ${quoted(label)}`).join(', ');
+  const sizes =
+    clusters.smallest === clusters.largest
+      ? `${countWords(clusters.smallest)} each`
+      : `${countWords(clusters.smallest)} to ${countWords(clusters.largest)} each`;
+  return [`The counts come in ${countWords(clusters.number)} clusters${by} of ${sizes}: ${rows}.`];
+}
+
+/** What chance was taken to be, and the method with the reason for it. */
+export function methodSentences(result: Result): string[] {
+  const { plan } = result;
+  const picked = plan.methodAsked === plan.method ? '' : `picked by ${plan.methodAsked}: `;
+  return [
+    ...scoreSentences(result),
     ...(plan.lambda === undefined ? [] : [`Lambda: ${plan.lambda}.`]),
     ...(plan.statisticDigest === undefined
       ? []
       : [`The module of the statistic has the SHA-256 ${plan.statisticDigest}.`]),
-    ...(plan.fixed === 'pairs' && plan.method !== 'asymptotic' ? [coinSentence] : []),
-    ...(plan.method === 'asymptotic' || plan.fixed === 'pairs'
-      ? []
-      : ['Chance deals the counts anew with every row and column total held.']),
+    ...(plan.method === 'asymptotic' ? [] : [chanceWords[plan.fixed]]),
     `Method: ${plan.method}, ${picked}${plan.methodReason.replace(/\.$/, '')}.`,
   ];
 }

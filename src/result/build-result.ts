@@ -1,7 +1,7 @@
 // Gathers what a run found into the one reported shape, in the order of its fields, and gives it its words.
 import type { CellEntry } from '../cell/cell-entries.js';
-import type { ReadTable } from '../input/read-table.js';
 import type { Effect } from '../effect/contract.js';
+import type { ReadTable } from '../input/read-table.js';
 import type { NamedRoles } from '../plan/roles.js';
 import type { Plan } from '../plan/plan.js';
 import type { PValueEntry } from '../pvalue/contract.js';
@@ -31,6 +31,8 @@ export interface Findings {
   readonly effects?: readonly Effect[] | undefined;
   readonly cells?: readonly CellEntry[] | undefined;
   readonly fragility?: Fragility | undefined;
+  readonly strata?: Result['strata'];
+  readonly clusters?: Result['clusters'];
   readonly notes: readonly Note[];
 }
 
@@ -54,6 +56,8 @@ export function buildResult(found: Findings): Result {
     ...(found.byOrder === undefined ? {} : { order: found.byOrder.order }),
     ...(found.fragility === undefined ? {} : { fragility: found.fragility }),
     ...(found.cells === undefined ? {} : { cells: [...found.cells] }),
+    ...(found.strata === undefined ? {} : { strata: found.strata }),
+    ...(found.clusters === undefined ? {} : { clusters: found.clusters }),
     notes: [...found.notes],
   };
   const { notes, ...parts } = before;

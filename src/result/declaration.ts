@@ -2,6 +2,7 @@
 // A new field is added here first; reports read nothing that is not declared.
 import { z } from 'zod';
 import { cell } from './declared/cell.js';
+import { clusters } from './declared/clusters.js';
 import { effect } from './declared/effect.js';
 import { fragility } from './declared/fragility.js';
 import { input } from './declared/input.js';
@@ -9,6 +10,7 @@ import { order } from './declared/order.js';
 import { pValue } from './declared/p-value.js';
 import { count, extendedNumber, probability } from './declared/pieces.js';
 import { plan } from './declared/plan.js';
+import { strata } from './declared/strata.js';
 
 const diagnostics = z.strictObject({
   /** 0 only for pairs of which none changed. */
@@ -45,6 +47,8 @@ export const resultDeclaration = z.strictObject({
   order: order.optional(),
   cells: z.array(cell).optional(),
   fragility: fragility.optional(),
+  strata: strata.optional(),
+  clusters: clusters.optional(),
   sentence: z.string(),
   methods: z.string(),
   notes: z.array(z.strictObject({ code: z.string(), text: z.string() })),

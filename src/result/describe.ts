@@ -2,6 +2,7 @@
 // are named. Statistics bring their own words from the registry.
 import { pairedForms, pairedStatistics } from '../statistic/paired.js';
 import { statistics } from '../statistic/registry.js';
+import { stratifiedStatistics } from '../statistic/stratified.js';
 import { quoted } from './label-words.js';
 import { countWords, digits, levelWords, probabilityWords, roundedTo, tinyWords } from './number-words.js';
 import type { PValue, PValueError, Result } from './result.js';
@@ -16,7 +17,7 @@ export const statisticWords = (name: string): string => known(name)?.words ?? `t
 
 /** A statistic of the registry, or one of the named forms of it. */
 const known = (name: string): { readonly words: string; readonly source: string } | undefined =>
-  [...statistics, ...statistics.flatMap(({ forms = [] }) => forms), ...pairedStatistics, ...pairedForms].find(
+  [...statistics, ...statistics.flatMap(({ forms = [] }) => forms), ...pairedStatistics, ...pairedForms, ...stratifiedStatistics].find(
     (one) => one.name === name,
   );
 

@@ -20,15 +20,18 @@ import { countWords, levelWords } from './number-words.js';
 import { agreementInterval, agreementOpening, changeMethods } from './pairs-methods.js';
 import { isAboutChange } from './pairs-sentence.js';
 import type { PValue } from './result.js';
+import { strataMethods } from './strata-words.js';
 
 /** A paragraph that lets a reader judge and repeat the analysis. Labels in it are quoted and show no control characters. */
 export function methodsFor(result: ResultBeforeWords): string {
+  if (result.strata !== undefined) return strataMethods(result);
   const headline = result.pValues[0]!;
   if (isAboutChange(result)) return [...levelSentences(result.input), changeMethods(result)].join(' ');
   const agreement = isAbout(result.statistic.name) === 'agreement';
   return [
     ...levelSentences(result.input),
     agreement ? agreementOpening(result) : testSentence(result),
+    clustersSentence(result),
     rolesSentence(result),
     settingsSentence(result),
     methodSentence(result, headline),
@@ -59,6 +62,12 @@ function testSentence(result: ResultBeforeWords): string {
   return `Association between the rows and the columns of a ${tableWords(result)} was tested with ${citedStatistic(result.statistic.name)}.`;
 }
 
+function clustersSentence({ clusters }: ResultBeforeWords): string | undefined {
+  if (clusters === undefined) return undefined;
+  const by = clusters.from === null ? '' : ` (${quoted(clusters.from)})`;
+  return `The units came in ${countWords(clusters.number)} clusters${by} of ${countWords(clusters.smallest)} to ${countWords(clusters.largest)}; rows were permuted over whole clusters, so that no independence within a cluster was assumed.`;
+}
+
 function rolesSentence({ plan, statistic }: ResultBeforeWords): string | undefined {
   if (statistic.groups === undefined || statistic.event === undefined) return undefined;
   const [first, second] = statistic.groups;
@@ -76,6 +85,9 @@ function settingsSentence({ plan }: ResultBeforeWords): string | undefined {
 
 function methodSentence(result: ResultBeforeWords, p: PValue): string {
   const name = `The ${pName(p)}`;
+  if (p.method === 'exact' && result.clusters !== undefined) {
+    return `${name} is exact: it adds up the probabilities of all ways to deal the clusters to the rows, as many to each as it has, that are at least as extreme as the observed one.`;
+  }
   if (p.method === 'exact') {
     const isTwoByTwo = result.input.rowLabels.length === 2 && result.input.columnLabels.length === 2;
     const linear = result.plan.forecast.engine === 'linear';
@@ -86,7 +98,8 @@ function methodSentence(result: ResultBeforeWords, p: PValue): string {
   return `${name} ${samplingWords(result, p)}`;
 }
 
-function samplingWords({ plan }: ResultBeforeWords, p: PValue): string {
+function samplingWords({ plan, clusters }: ResultBeforeWords, p: PValue): string {
+  const what = clusters === undefined ? 'random tables with both margins held' : 'random ways to deal the clusters to the rows';
   const error = samplingErrorOf(p);
   const draws = countWords(drawingErrorOf(p)?.draws ?? 0);
   const generator = plan.generator === null ? '' : `; generator ${plan.generator}`;
@@ -101,14 +114,14 @@ function samplingWords({ plan }: ResultBeforeWords, p: PValue): string {
       : `, with a ${levelWords(error.confidence)} interval for ${share} (Clopper & Pearson 1934)`;
   if (plan.draws === 'auto') {
     return (
-      `was estimated from ${draws} random tables with both margins held, drawn by dealing out labels or cell by cell ` +
+      `was estimated from ${draws} ${what}, drawn by dealing out labels or cell by cell ` +
       `(Patefield 1981), whichever costs less for these margins${generator}${seed}. Drawing went on in whole blocks until p was ` +
       `settled against ${plan.alpha}, by limits that hold at every look at once, from a mixture of beta-binomial laws (Darling & ` +
       `Robbins 1967; Robbins 1970; Howard et al. 2021); p is their upper limit plus the risk ${plan.samplingRisk ?? ''} that they ever err.`
     );
   }
   return (
-    `was estimated from m = ${draws} random tables with both margins held, drawn by dealing out labels or cell by cell ` +
+    `was estimated from m = ${draws} ${what}, drawn by dealing out labels or cell by cell ` +
     `(Patefield 1981), whichever costs less for these margins${generator}${seed}. ` +
     `With b of them ${more} it is reported as ${reported} (Phipson & Smyth 2010)${interval}.`
   );
@@ -138,8 +151,9 @@ function tiesSentence(p: PValue): string | undefined {
   return `Near ties with the observed table were settled by exact arithmetic; ties count as at least as extreme${mid}.`;
 }
 
-function besideSentence({ pValues, diagnostics }: ResultBeforeWords, headline: PValue): string | undefined {
+function besideSentence({ pValues, diagnostics, clusters }: ResultBeforeWords, headline: PValue): string | undefined {
   const beside = pValues.filter((p) => p !== headline && p.method === 'asymptotic');
+  if (clusters !== undefined) return undefined;
   if (beside.length === 0 && headline.method !== 'asymptotic') return undefined;
   const verdict = diagnostics.cochranAdvice === 'met' ? 'met' : 'not met';
   const advice = `the advice on expected counts of Cochran (1954) was ${verdict}`;

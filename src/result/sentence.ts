@@ -17,11 +17,13 @@ import { quoted } from './label-words.js';
 import { countWords, percentWords, pointsWords, statisticValueWords } from './number-words.js';
 import { changeSentence, isAboutChange } from './pairs-sentence.js';
 import type { PValue, Result } from './result.js';
+import { strataSentence } from './strata-words.js';
 
 type Group = NonNullable<Result['statistic']['groups']>[number];
 
 /** The sentence for a report; labels in it are quoted and show no control characters. */
 export function sentenceFor(result: ResultBeforeWords): string {
+  if (result.strata !== undefined) return strataSentence(result);
   const headline = result.pValues[0]!;
   if (isAboutChange(result)) return changeSentence(result);
   if (isOneTableOnly(result)) return oneTableSentence(result, headline);

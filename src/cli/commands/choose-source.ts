@@ -11,9 +11,9 @@ export type Source =
 /** Which options were given (by name) decides too: `--rows` and `--columns` mean raw records. */
 export type Given = Readonly<Record<string, unknown>>;
 
-const onlyRecords = ['rows', 'columns', 'count', 'missing'];
+const onlyRecords = ['rows', 'columns', 'count', 'cluster', 'missing'];
 const onlyCrossTables = ['rowLabels', 'columnLabels', 'headerRow', 'labelColumn'];
-const onlyFiles = ['headerRow', 'labelColumn', 'delimiter'];
+const onlyFiles = ['headerRow', 'labelColumn', 'delimiter', 'strata'];
 
 /** @returns undefined when nothing is named and no input is piped. @throws Problem (usage) */
 export function chooseSource(

@@ -13,6 +13,9 @@ const source = z.strictObject({
   rowsFrom: z.string().optional(),
   columnsFrom: z.string().optional(),
   countFrom: z.string().nullable().optional(),
+  /** What tells the strata apart; null for blocks of a file that were given no name. */
+  strataFrom: z.string().nullable().optional(),
+  clusterFrom: z.string().optional(),
 });
 
 const missing = z.strictObject({
@@ -23,6 +26,9 @@ const missing = z.strictObject({
   missingRow: count,
   missingColumn: count,
   missingBoth: count,
+  /** Records with row and column but no stratum, or no cluster; where these were asked for. */
+  missingStratum: count.optional(),
+  missingCluster: count.optional(),
   /** What the left-out records counted for. */
   dropped: count,
 });

@@ -15,6 +15,7 @@ const forecast = z.strictObject({
     'coin-walk',
     'coin-halves',
     'coin-differences',
+    'convolution',
   ]),
   workUnits: z.number().min(0),
   tables: z.number().min(0),
@@ -40,6 +41,9 @@ export const plan = z.strictObject({
   /** For statistics that take scores: one for each line of the table, empty ones too. */
   rowScores: z.array(z.number()).optional(),
   columnScores: z.array(z.number()).optional(),
+  /** Over strata, where scores are ranks: within each stratum, or of all strata together. */
+  rowRanks: z.enum(['midranks', 'pooled-midranks']).optional(),
+  columnRanks: z.enum(['midranks', 'pooled-midranks']).optional(),
   /** Exponent of the power-divergence family, in lowest terms. */
   lambda: z
     .string()
@@ -47,7 +51,8 @@ export const plan = z.strictObject({
     .optional(),
   /** The sides whose lines were declared to be in order. */
   ordered: z.enum(orderedSides).optional(),
-  fixed: z.enum(['both', 'pairs']),
+  /** What chance leaves as it is: both margins, those of every stratum, the clusters, or the pairs but not their direction. */
+  fixed: z.enum(['both', 'strata', 'clusters', 'pairs']),
   /** `auto`: until p is settled against alpha, by the rule that the error of the p-value names. */
   draws: z.union([count, z.literal('auto')]).nullable(),
   mostDraws: count.optional(),

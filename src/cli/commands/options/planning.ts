@@ -7,6 +7,7 @@ import { orderedSides } from '../../../order/questions.js';
 import { methods, tails, twoSidedRules } from '../../../plan/plan.js';
 import { pairedNames } from '../../../statistic/paired.js';
 import { statisticNamed, statisticNames } from '../../../statistic/registry.js';
+import { stratifiedNames } from '../../../statistic/stratified.js';
 import { isModulePath } from '../module-path.js';
 import { either } from './words.js';
 
@@ -21,8 +22,11 @@ export const planning = {
   statistic: valued(
     'The test',
     'NAME',
-    (text) => (isModulePath(text) || pairedNames.includes(text) ? text : statisticNamed(text).name),
-    `${either(statisticNames)} (pearson), or one of your own: ./mine.mjs`,
+    (text) =>
+      isModulePath(text) || pairedNames.includes(text) || stratifiedNames.includes(text)
+        ? text
+        : statisticNamed(text).name,
+    `${either(statisticNames)} (pearson), or one of your own: ./mine.mjs; over strata ${either(stratifiedNames)} (by their shape)`,
   ),
   paired: toggle(
     'The test',
@@ -37,7 +41,7 @@ export const planning = {
     'The test',
     'SCORES',
     anyText,
-    'for trend, one for each row: 0,1,2.5 or the word midranks (1,2,3 and so on)',
+    'for trend, one for each row: 0,1,2.5 or the word midranks (1,2,3 and so on); over strata also pooled-midranks (midranks within each)',
   ),
   columnScores: valued('The test', 'SCORES', anyText, 'the same of the columns'),
   ordered: valued(

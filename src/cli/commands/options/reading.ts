@@ -28,6 +28,18 @@ export const reading = {
     'the one that gives the column; both by header name or number',
   ),
   count: valued('Reading the table', 'COLUMN', anyText, 'the one that says how many times a record counts (once)'),
+  strata: valued(
+    'Reading the table',
+    'COLUMN',
+    anyText,
+    'hold these apart: the column that names the stratum; of a table of counts, what its blocks are',
+  ),
+  cluster: valued(
+    'Reading the table',
+    'COLUMN',
+    anyText,
+    'the column that names the cluster (litter, plate, household): clusters are permuted whole',
+  ),
   missing: valued(
     'Reading the table',
     'RULE',
