@@ -46,7 +46,8 @@ export async function analyseClusters(
   const name = statisticForClusters(options, clusterStatistics, 'pearson');
   const statistic = clusterForm(name);
   refuseUnread(statistic, options);
-  if (options.groups === 'columns') throw unused('--groups columns', 'with --cluster', 'clusters lie in rows, so the rows are the groups');
+  if (options.groups === 'columns')
+    throw unused('--groups columns', 'with --cluster', 'clusters lie in rows, so the rows are the groups');
   const named = statistic.shape === '2x2' ? rolesOf(table, units, statistic, options) : null;
   const { choices, echo } = choicesOf(table, units, statistic, options);
   const nothingVaries = hasOneTableOnly(live) || hasOneTableOnly(units);

@@ -25,6 +25,7 @@ import { chooseFamily, twoByTwos } from './strata/choose-family.js';
 import type { StrataFamily } from './strata/family.js';
 import { pointOf } from './strata/point.js';
 import { strataFound } from './strata/strata-found.js';
+import { checkExpectations } from './table/expectation-check.js';
 import { liveTable, type LiveTable } from './table/live-table.js';
 
 /**
@@ -52,7 +53,8 @@ export async function analyseStrata(
     return await carryOut(first);
   } catch (thrown) {
     if (!(thrown instanceof OutOfReach) || first.methodAsked === 'exact') throw thrown;
-    const methodReason = 'the observed tables are too improbable for the exact law over strata, which is held in doubles';
+    const methodReason =
+      'the observed tables are too improbable for the exact law over strata, which is held in doubles';
     return carryOut({ ...planFor({ ...options, method: 'sample' }), methodAsked: first.methodAsked, methodReason });
   }
 
@@ -80,7 +82,7 @@ export async function analyseStrata(
       value: family.value,
       degreesOfFreedom: family.degreesOfFreedom,
       pValues: [...found, ...beside, ...homogeneity],
-      expectations: family.expectations,
+      expectations: nothingVaries ? checkExpectations(live) : family.expectations,
       tables: undefined,
       effects: await family.effects(plan.confidence, withLaw),
       strata: facts,

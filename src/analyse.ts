@@ -67,7 +67,8 @@ export async function analyse(
   surroundings: Surroundings = {},
 ): Promise<Result> {
   const read = 'table' in data ? data : 'strata' in data ? await strataFromProgram(data) : fromProgram(data);
-  if (read.strata !== undefined) return (await import('./analyse-strata.js')).analyseStrata(read, options, surroundings);
+  if (read.strata !== undefined)
+    return (await import('./analyse-strata.js')).analyseStrata(read, options, surroundings);
   if (read.clusters !== undefined) {
     return (await import('./analyse-clusters.js')).analyseClusters(read, options, surroundings);
   }

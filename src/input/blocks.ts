@@ -25,9 +25,7 @@ export function blocksOf(lines: readonly Line[], asked: boolean, place: string):
   const headed = parts.every(([first]) => !isName(first!) && isSame(first!, parts[0]![0]!) && isHeader(first!));
   if (!named && !headed && !asked) return undefined;
   const blocks = parts.map((part, k) =>
-    isName(part[0]!)
-      ? { label: nameOf(part[0]!), lines: part.slice(1) }
-      : { label: `stratum ${k + 1}`, lines: part },
+    isName(part[0]!) ? { label: nameOf(part[0]!), lines: part.slice(1) } : { label: `stratum ${k + 1}`, lines: part },
   );
   blocks.forEach(({ label, lines: own }, k) => {
     if (blocks.findIndex((one) => one.label === label) !== k) throw sameStratum(label, place);
@@ -58,7 +56,8 @@ const nameOf = (line: Line): string => line.fields[0]!.trim();
 const isHeader = (line: Line): boolean => filled(line).every((field) => !isNumberLike(field));
 
 const isSame = (one: Line, other: Line): boolean =>
-  filled(one).length === filled(other).length && one.fields.every((field, k) => field.trim() === (other.fields[k] ?? '').trim());
+  filled(one).length === filled(other).length &&
+  one.fields.every((field, k) => field.trim() === (other.fields[k] ?? '').trim());
 
 const oneBlock = (place: string) =>
   dataProblem({

@@ -31,7 +31,9 @@ export function strataOf(
   }
   const parts = tally.strata.labels.map((label, s) => ({
     label,
-    counts: whole.rowLabels.map((_, row) => whole.columnLabels.map((__, column) => tally.layers[s]?.[row]?.[column] ?? 0)),
+    counts: whole.rowLabels.map((_, row) =>
+      whole.columnLabels.map((__, column) => tally.layers[s]?.[row]?.[column] ?? 0),
+    ),
     rowLabels: whole.rowLabels,
     columnLabels: whole.columnLabels,
   }));

@@ -49,7 +49,13 @@ export const missingCluster = (name: string, place: string): Problem =>
     hint: 'add --missing drop to leave such records out, or give each such unit a cluster of its own in the file',
   });
 
-export const clusterInTwoRows = (cluster: string, rowsName: string, before: string, here: string, place: string): Problem =>
+export const clusterInTwoRows = (
+  cluster: string,
+  rowsName: string,
+  before: string,
+  here: string,
+  place: string,
+): Problem =>
   dataProblem({
     code: 'cluster-in-two-groups',
     message: `cluster ${shownValue(cluster)} has ${named(rowsName)} ${shownValue(here)} here and ${shownValue(before)} before`,

@@ -164,7 +164,12 @@ export class RecordTally {
     if (this.fault !== undefined) return;
     const home = this.clusterRows[cluster]!;
     if (home !== row) {
-      const labels = [this.clusters.labels[cluster]!, this.used!.rowsName, this.rows.labels[home]!, this.rows.labels[row]!] as const;
+      const labels = [
+        this.clusters.labels[cluster]!,
+        this.used!.rowsName,
+        this.rows.labels[home]!,
+        this.rows.labels[row]!,
+      ] as const;
       return this.fail(field, (place) => clusterInTwoRows(...labels, place));
     }
     const counts = this.clusterCounts[cluster]!;

@@ -41,7 +41,9 @@ export function pooled(strata: readonly LabelledStratum[]): LabelledCounts {
 
 /** Tables by stratum as a program gives them, all over the same lines. */
 export interface StrataParts {
-  readonly strata: readonly (TableParts['counts'] | { readonly label: string; readonly counts: TableParts['counts'] })[];
+  readonly strata: readonly (
+    TableParts['counts'] | { readonly label: string; readonly counts: TableParts['counts'] }
+  )[];
   readonly rowLabels?: readonly string[];
   readonly columnLabels?: readonly string[];
 }
@@ -50,11 +52,18 @@ export interface StrataParts {
  * The pooled table and its strata from counts in memory.
  * @throws Problem: data (those of makeTable, with the stratum as the place; `strata-shape`), usage (`no-strata`).
  */
-export function strataFromParts({ strata, rowLabels, columnLabels }: StrataParts): { table: Table; strata: StratumTable[] } {
+export function strataFromParts({ strata, rowLabels, columnLabels }: StrataParts): {
+  table: Table;
+  strata: StratumTable[];
+} {
   const named = strata.map((one, s) => ('counts' in one ? one : { label: `stratum ${s + 1}`, counts: one }));
   const first = named[0]?.counts;
   if (first === undefined) {
-    throw usageProblem({ code: 'no-strata', message: 'there are no strata', hint: 'give one table of counts for each stratum' });
+    throw usageProblem({
+      code: 'no-strata',
+      message: 'there are no strata',
+      hint: 'give one table of counts for each stratum',
+    });
   }
   const seen = new Set<string>();
   for (const { label, counts } of named) {

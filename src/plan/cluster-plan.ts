@@ -14,7 +14,11 @@ import { oneOf, positive, share, unused } from './settings.js';
 import { settleMethod } from './settle-method.js';
 
 /** The one asked for, or the usual one. @throws Problem (usage) `statistic-not-for-clusters`. */
-export function statisticForClusters<Name extends string>(options: PlanOptions, known: readonly Name[], usual: Name): Name {
+export function statisticForClusters<Name extends string>(
+  options: PlanOptions,
+  known: readonly Name[],
+  usual: Name,
+): Name {
   const { statistic } = options;
   if (statistic === undefined) return usual;
   const found = known.find((name) => name === statistic);
@@ -46,7 +50,8 @@ export function planClusters(
       hint: 'use --tail upper (the default)',
     });
   }
-  if (tail !== 'both' && options.twoSidedRule !== undefined) throw unused('--two-sided-rule', `with --tail ${tail}`, 'leave it out');
+  if (tail !== 'both' && options.twoSidedRule !== undefined)
+    throw unused('--two-sided-rule', `with --tail ${tail}`, 'leave it out');
   const rule = tail === 'both' ? oneOf(options.twoSidedRule, 'distance', twoSidedRules, '--two-sided-rule') : null;
   if (rule !== null && rule !== 'distance' && rule !== 'doubled' && statistic.name !== 'trend') {
     throw usageProblem({

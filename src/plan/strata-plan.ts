@@ -65,11 +65,19 @@ export function refuseUnreadByStrata({ name }: StratifiedStatistic, options: Pla
   for (const [option, readers] of Object.entries(readBy)) {
     if (options[option as keyof PlanOptions] === undefined || readers.includes(name)) continue;
     const flag = `--${option.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;
-    throw unused(flag, `with ${name}`, readers.length === 0 ? 'leave it out' : `leave it out, or use ${readers.join(' or ')}`);
+    throw unused(
+      flag,
+      `with ${name}`,
+      readers.length === 0 ? 'leave it out' : `leave it out, or use ${readers.join(' or ')}`,
+    );
   }
   if (name !== 'row-means') return;
-  const [unread, flag] = options.groups === 'columns' ? (['columnScores', '--column-scores'] as const) : (['rowScores', '--row-scores'] as const);
-  if (options[unread] !== undefined) throw unused(flag, 'on the side of the groups', 'score the other side, or swap them with --groups');
+  const [unread, flag] =
+    options.groups === 'columns'
+      ? (['columnScores', '--column-scores'] as const)
+      : (['rowScores', '--row-scores'] as const);
+  if (options[unread] !== undefined)
+    throw unused(flag, 'on the side of the groups', 'score the other side, or swap them with --groups');
 }
 
 export type ChosenStrataScores = 'midranks' | 'pooled-midranks' | readonly Rational[];
@@ -105,7 +113,8 @@ export function planStrata(
       hint: 'use --tail upper (the default)',
     });
   }
-  if (tail !== 'both' && options.twoSidedRule !== undefined) throw unused('--two-sided-rule', `with --tail ${tail}`, 'leave it out');
+  if (tail !== 'both' && options.twoSidedRule !== undefined)
+    throw unused('--two-sided-rule', `with --tail ${tail}`, 'leave it out');
   const rule = tail === 'both' ? oneOf(options.twoSidedRule, 'distance', twoSidedRules, '--two-sided-rule') : null;
   if (options.seed === '') {
     throw usageProblem({
@@ -201,7 +210,9 @@ function settle(
   }
   if (asked === 'asymptotic') return { method: asked, reason: 'asked for' };
   if (asked !== 'auto') return { method: asked, reason: `asked for; ${possible ? cost : beyond}` };
-  return fits ? { method: 'exact', reason: cost } : { method: 'sample', reason: `exact is out of reach: ${possible ? cost : beyond}` };
+  return fits
+    ? { method: 'exact', reason: cost }
+    : { method: 'sample', reason: `exact is out of reach: ${possible ? cost : beyond}` };
 }
 
 const inWords = (value: number): string =>

@@ -19,7 +19,7 @@ export function sourceWords({ input: { source } }: Result): string {
         ...partWords(source.headerRow, 'a header row'),
         ...partWords(source.labelColumn, 'a label column'),
         ...(source.totalsLeftOut ?? []).map((line) => `its total ${line} left out`),
-      ...(source.strataFrom === undefined ? [] : ['a block for each stratum']),
+        ...(source.strataFrom === undefined ? [] : ['a block for each stratum']),
       ])}`;
     case 'records':
       return `made from records${listed([

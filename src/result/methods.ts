@@ -99,7 +99,8 @@ function methodSentence(result: ResultBeforeWords, p: PValue): string {
 }
 
 function samplingWords({ plan, clusters }: ResultBeforeWords, p: PValue): string {
-  const what = clusters === undefined ? 'random tables with both margins held' : 'random ways to deal the clusters to the rows';
+  const what =
+    clusters === undefined ? 'random tables with both margins held' : 'random ways to deal the clusters to the rows';
   const error = samplingErrorOf(p);
   const draws = countWords(drawingErrorOf(p)?.draws ?? 0);
   const generator = plan.generator === null ? '' : `; generator ${plan.generator}`;

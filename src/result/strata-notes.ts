@@ -93,9 +93,14 @@ function sizeOf(ratio: Strata['pooledOddsRatio']): number | undefined {
 const ratioWords = (ratio: Strata['pooledOddsRatio']): string => statisticValueWords(ratio ?? 0);
 
 function homogeneityNotes(plan: Plan, homogeneity: readonly PValueEntry[]): Note[] {
-  const against = homogeneity.filter(({ p, statistic }) => statistic !== 'breslow-day' && p !== null && p <= plan.alpha);
+  const against = homogeneity.filter(
+    ({ p, statistic }) => statistic !== 'breslow-day' && p !== null && p <= plan.alpha,
+  );
   if (against.length === 0) return [];
-  const names = against.map(({ statistic, p }) => `${statistic === 'zelen' ? 'Zelen (exact)' : 'Breslow-Day with Tarone\'s correction'} p ${probabilityWords(p!)}`);
+  const names = against.map(
+    ({ statistic, p }) =>
+      `${statistic === 'zelen' ? 'Zelen (exact)' : "Breslow-Day with Tarone's correction"} p ${probabilityWords(p!)}`,
+  );
   return [
     {
       code: 'strata-differ',

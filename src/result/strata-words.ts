@@ -54,7 +54,10 @@ function sizeWords(result: ResultBeforeWords): string {
     return `the common odds ratio of ${quoted(event)} in ${quoted(groups[0].label)} against ${quoted(groups[1].label)} is ${numberWords(common.estimate)}${limits}`;
   }
   const { value, degreesOfFreedom } = result.statistic;
-  const degrees = degreesOfFreedom === undefined ? '' : ` (${degreesOfFreedom} degree${degreesOfFreedom === 1 ? '' : 's'} of freedom)`;
+  const degrees =
+    degreesOfFreedom === undefined
+      ? ''
+      : ` (${degreesOfFreedom} degree${degreesOfFreedom === 1 ? '' : 's'} of freedom)`;
   return `${shortStatisticWords(result.statistic.name)} is ${statisticValueWords(value!)}${degrees}`;
 }
 
@@ -68,7 +71,9 @@ export function strataMethods(result: ResultBeforeWords): string {
     isOneTableOnly(result) ? 'The margins allow one set of tables only, so p is 1.' : methodWords(result, headline),
     effectsWords(result),
     besideWords(result, headline),
-    plan.method === 'asymptotic' ? undefined : 'Near ties were settled by exact arithmetic; ties count as at least as extreme.',
+    plan.method === 'asymptotic'
+      ? undefined
+      : 'Near ties were settled by exact arithmetic; ties count as at least as extreme.',
     `Computed with ${result.tool.name} ${result.tool.version}.`,
   ]
     .filter((sentence) => sentence !== undefined)
@@ -85,7 +90,10 @@ export function scoresWords({ plan }: ResultBeforeWords): string | undefined {
         : scores?.join(', ');
   const rows = words(plan.rowRanks, plan.rowScores);
   const columns = words(plan.columnRanks, plan.columnScores);
-  const parts = [rows === undefined ? [] : [`Row scores: ${rows}`], columns === undefined ? [] : [`column scores: ${columns}`]].flat();
+  const parts = [
+    rows === undefined ? [] : [`Row scores: ${rows}`],
+    columns === undefined ? [] : [`column scores: ${columns}`],
+  ].flat();
   return parts.length === 0 ? undefined : `${parts.join('; ').replace(/^c/, 'C')}.`;
 }
 
@@ -95,7 +103,8 @@ function methodWords(result: ResultBeforeWords, p: PValue): string {
   if (p.method === 'asymptotic') {
     return `${name} comes from the ${approximationName(p)} approximation to ${shortStatisticWords(p.statistic)}, which holds for large sums over strata.`;
   }
-  if (p.method === 'exact') return `${name} is exact: it is taken from the law of the statistic ${held}, the laws of the strata combined by convolution.`;
+  if (p.method === 'exact')
+    return `${name} is exact: it is taken from the law of the statistic ${held}, the laws of the strata combined by convolution.`;
   const { plan } = result;
   const error = samplingErrorOf(p);
   const drawn = `was estimated from ${countWords(drawingErrorOf(p)?.draws ?? 0)} random sets of tables ${held} (generator ${plan.generator ?? ''}, seed ${quoted(plan.seed ?? '')})`;
@@ -117,6 +126,10 @@ function effectsWords(result: ResultBeforeWords): string | undefined {
 }
 
 function besideWords(result: ResultBeforeWords, headline: PValue): string | undefined {
-  const others = [...new Set(result.pValues.filter((p) => p !== headline && p.statistic !== headline.statistic).map((p) => p.statistic))];
+  const others = [
+    ...new Set(
+      result.pValues.filter((p) => p !== headline && p.statistic !== headline.statistic).map((p) => p.statistic),
+    ),
+  ];
   return others.length === 0 ? undefined : `Beside it stand ${others.map(citedStatistic).join('; ')}.`;
 }

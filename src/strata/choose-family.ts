@@ -48,11 +48,10 @@ export function chooseFamily(
   const family = (tables: readonly Counts[]): StrataFamily => {
     const sides = { rowTotals: table.rowTotals, columnTotals: table.columnTotals };
     const layers = turned
-      ? layersOf(
-          { rowTotals: sides.columnTotals, columnTotals: sides.rowTotals },
-          tables.map(transposed),
-          { rows: columns.exact, columns: rows.exact },
-        )
+      ? layersOf({ rowTotals: sides.columnTotals, columnTotals: sides.rowTotals }, tables.map(transposed), {
+          rows: columns.exact,
+          columns: rows.exact,
+        })
       : layersOf(sides, tables, { rows: rows.exact, columns: columns.exact });
     const [height, width] = turned ? [live.columns, live.rows] : [live.rows, live.columns];
     return generalFamily(name as GeneralName, layers, height, width);

@@ -69,10 +69,7 @@ export function cornerScores(first: number, length: number): Rational[] {
 function approximations(question: Question, strata: readonly Stratum[]): PValueEntry[] {
   const { difference, variance, plain, corrected } = scoreTest(strata);
   if (!(variance > 0)) return [];
-  return [
-    form('mantel-haenszel', plain),
-    form('mantel-haenszel-corrected', corrected),
-  ];
+  return [form('mantel-haenszel', plain), form('mantel-haenszel-corrected', corrected)];
 
   function form(statistic: string, value: number): PValueEntry {
     const asked = { ...question, statistic };

@@ -5,7 +5,16 @@ import { statisticNamed } from '../../statistic/registry.js';
 import { trend } from '../../statistic/trend.js';
 import type { LiveTable } from '../../table/live-table.js';
 import type { Kinds } from './kinds.js';
-import { compare, pearsonFraction, pearsonValue, sharesOf, signOf, squareOf, type Fraction, type Units } from './unit-counts.js';
+import {
+  compare,
+  pearsonFraction,
+  pearsonValue,
+  sharesOf,
+  signOf,
+  squareOf,
+  type Fraction,
+  type Units,
+} from './unit-counts.js';
 
 /** Those that are worked out for clusters. */
 export const clusterStatistics = ['pearson', 'wald', 'score', 'trend'] as const;
@@ -24,7 +33,8 @@ export function bindToClusters(
   choices: Choices,
 ): BoundStatistic {
   const perKind = live.columnIndex.map((kind) => units.columnIndex.map((column) => kinds.counts[kind]![column]!));
-  if (name === 'trend') return trend.bind(live, roles, { ...choices, columnScores: kindScores(perKind, choices.columnScores!) });
+  if (name === 'trend')
+    return trend.bind(live, roles, { ...choices, columnScores: kindScores(perKind, choices.columnScores!) });
   const read = unitsReader(units, live, perKind);
   if (name === 'pearson') {
     const target = pearsonFraction(read(live.counts));
@@ -79,7 +89,14 @@ function kindScores(perKind: readonly (readonly number[])[], scores: readonly Ra
 /** Reuses one buffer: the units of a table are read before the next one is. */
 function unitsReader(units: LiveTable, live: LiveTable, perKind: readonly (readonly number[])[]) {
   const { rows, columns, columnTotals, total } = units;
-  const found = { rows, columns, columnTotals, total, counts: new Float64Array(rows * columns), rowTotals: new Float64Array(rows) };
+  const found = {
+    rows,
+    columns,
+    columnTotals,
+    total,
+    counts: new Float64Array(rows * columns),
+    rowTotals: new Float64Array(rows),
+  };
   return (table: ArrayLike<number>): Units => {
     found.counts.fill(0);
     found.rowTotals.fill(0);

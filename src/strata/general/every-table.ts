@@ -3,7 +3,10 @@ import { cellFactors } from '../../null/exact/cell-factors.js';
 import type { LiveTable } from '../../table/live-table.js';
 
 /** Calls `visit` with the counts (row-major, not to be kept) and weight = mantissa 2^exponent. Weights are right to cells x 2^-52. */
-export function everyTable(live: LiveTable, visit: (counts: Float64Array, mantissa: number, exponent: number) => void): void {
+export function everyTable(
+  live: LiveTable,
+  visit: (counts: Float64Array, mantissa: number, exponent: number) => void,
+): void {
   const { rows, columns } = live;
   const factors = cellFactors(live);
   const counts = new Float64Array(rows * columns);

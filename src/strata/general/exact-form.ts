@@ -54,7 +54,10 @@ export function exactForm(problem: Problem, kept: readonly number[]): ExactForm 
 export const scaleOf = (problem: Problem): bigint =>
   problem.layers.reduce(
     (all, { live }, layer) =>
-      eachCell(live).reduce((sum, [row, column]) => lcm(sum, problem.added(layer, row, column)?.[1].denominator ?? 1n), all),
+      eachCell(live).reduce(
+        (sum, [row, column]) => lcm(sum, problem.added(layer, row, column)?.[1].denominator ?? 1n),
+        all,
+      ),
     1n,
   );
 

@@ -76,7 +76,9 @@ function rangesOf(problem: Problem, { scale }: Judged, layer: number): [number, 
 
 function packingFor(problem: Problem, judged: Judged): Packing | undefined {
   const all = problem.layers.map((_, layer) => rangesOf(problem, judged, layer));
-  const lowest = Array.from({ length: problem.dimension }, (_, i) => all.reduce((sum, ranges) => sum + ranges[i]![0], 0));
+  const lowest = Array.from({ length: problem.dimension }, (_, i) =>
+    all.reduce((sum, ranges) => sum + ranges[i]![0], 0),
+  );
   const highest = lowest.map((_, i) => all.reduce((sum, ranges) => sum + ranges[i]![1], 0));
   const strides: number[] = [];
   let stride = 1;

@@ -51,7 +51,8 @@ export function judgeFor(problem: Problem): Judged {
   const value = form.rank === 0 ? 0 : form.value(observed);
   const error = errorOf(problem, weights);
   let exactly: ExactForm | undefined;
-  const compare = (x: readonly bigint[]): Place => (exactly ??= exactForm(problem, form.kept)).compare(x, observedExact);
+  const compare = (x: readonly bigint[]): Place =>
+    (exactly ??= exactForm(problem, form.kept)).compare(x, observedExact);
 
   const byForm: PlaceOf = (t, exact) => {
     const ours = form.value(t);

@@ -83,7 +83,8 @@ export function momentsOf(problem: Problem, layer: number): { mean: Float64Array
   for (const x of cells) {
     for (const y of cells) {
       const rows = (live.rowTotals[x.row]! / n) * ((x.row === y.row ? n : 0) - live.rowTotals[y.row]!);
-      const columns = (live.columnTotals[x.column]! / n) * ((x.column === y.column ? n : 0) - live.columnTotals[y.column]!);
+      const columns =
+        (live.columnTotals[x.column]! / n) * ((x.column === y.column ? n : 0) - live.columnTotals[y.column]!);
       covariance[x.index * d + y.index]! += (x.value * y.value * rows * columns) / (n - 1);
     }
   }

@@ -30,7 +30,8 @@ export function scalarLaw(problem: Problem, layer: number, scale: bigint): Scala
   // Row means of two rows: T is the sum of the scores in the first.
   const ofRows = problem.name === 'correlation' ? rowScores : rows.map((row) => whole(row === 0 ? 1n : 0n));
   const form = trend.bind(live, { groups: 'rows', event: 0, first: 0 }, { rowScores: ofRows, columnScores }).linear;
-  if (form === undefined || form.rowScores.every((x) => x === 0) || form.columnScores.every((x) => x === 0)) return undefined;
+  if (form === undefined || form.rowScores.every((x) => x === 0) || form.columnScores.every((x) => x === 0))
+    return undefined;
   const [u, v] = [wholeScores(ofRows), wholeScores(columnScores)];
   const times = (...factors: readonly Rational[]): Rational =>
     factors.reduce((x, y) => lowest(x.numerator * y.numerator, x.denominator * y.denominator), whole(scale));

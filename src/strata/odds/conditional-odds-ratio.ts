@@ -28,7 +28,8 @@ export function conditionalIntervals(law: SumLaw, observed: number, confidence: 
  */
 function limit(law: SumLaw, observed: number, beyond: 1 | -1, share: number, risk: number): number {
   // The tail rises with psi when it is the upper one.
-  const gap = (theta: number): number => Math.log(tailUnder(law, Math.exp(theta), observed, beyond, share) / risk) * beyond;
+  const gap = (theta: number): number =>
+    Math.log(tailUnder(law, Math.exp(theta), observed, beyond, share) / risk) * beyond;
   const start = law.psiFor(Math.min(law.highest - 0.25, Math.max(law.lowest + 0.25, observed)));
   let low = Math.log(start);
   let high = low;

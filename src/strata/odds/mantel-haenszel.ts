@@ -19,11 +19,11 @@ export function logOddsRatioVariance(strata: readonly Stratum[]): number {
   const terms = strata
     .filter(({ total }) => total > 0)
     .map(({ a, b, c, d, total }) => ({
-    p: (a + d) / total,
-    q: (b + c) / total,
-    r: (a * d) / total,
-    s: (b * c) / total,
-  }));
+      p: (a + d) / total,
+      q: (b + c) / total,
+      r: (a * d) / total,
+      s: (b * c) / total,
+    }));
   const add = (of: (t: (typeof terms)[number]) => number): number => terms.reduce((sum, t) => sum + of(t), 0);
   const [r, s] = [add((t) => t.r), add((t) => t.s)];
   return (
@@ -84,7 +84,9 @@ export function riskDifferenceVariance(strata: readonly Stratum[], difference: n
 export function mantelHaenszelEffects(strata: readonly Stratum[], z: number, confidence: number): Effect[] {
   const difference = riskDifference(strata);
   return [
-    ratio('mantel-haenszel-odds-ratio', 'robins-breslow-greenland', oddsRatio(strata), () => logOddsRatioVariance(strata)),
+    ratio('mantel-haenszel-odds-ratio', 'robins-breslow-greenland', oddsRatio(strata), () =>
+      logOddsRatioVariance(strata),
+    ),
     ratio('mantel-haenszel-risk-ratio', 'greenland-robins', riskRatio(strata), () => logRiskRatioVariance(strata)),
     {
       name: 'mantel-haenszel-risk-difference',

@@ -86,4 +86,3 @@ function byProbability(law: SumLaw, observed: number): Split {
   const ties = inSupport(less) && compare(less) === 0 ? [observed, less] : [observed];
   return direction > 0 ? { from: observed + 1, to: more, ties } : { from: more, to: observed - 1, ties };
 }
-

@@ -48,7 +48,13 @@ export function zelenCut(strata: readonly Stratum[], psi: number): ExactCut | nu
     const at = left - here.restLowest;
     const [most, least] = [log + here.most[at]!, log + here.least[at]!];
     const side =
-      most < -slack ? sums.above : least > slack ? sums.below : slack === 0 && most === 0 && least === 0 ? sums.tied : null;
+      most < -slack
+        ? sums.above
+        : least > slack
+          ? sums.below
+          : slack === 0 && most === 0 && least === 0
+            ? sums.tied
+            : null;
     if (side !== null) {
       side.add(mass * here.mass[at]!, 0);
       return true;
@@ -57,7 +63,8 @@ export function zelenCut(strata: readonly Stratum[], psi: number): ExactCut | nu
     for (let i = 0; i < here.logs.length; i++) {
       const k = here.lowest + i;
       const after = left - k;
-      if (rest === undefined ? after !== 0 : after < rest.restLowest || after - rest.restLowest >= rest.mass.length) continue;
+      if (rest === undefined ? after !== 0 : after < rest.restLowest || after - rest.restLowest >= rest.mass.length)
+        continue;
       corners[level] = k;
       if (!visit(level + 1, after, log + here.logs[i]!, mass * here.weights[i]!)) return false;
     }
@@ -115,14 +122,21 @@ function logRatios(stratum: Stratum): Float64Array {
   const { a, first, second, events } = stratum;
   const [lowest, highest] = [lowestCorner(stratum), highestCorner(stratum)];
   const logs = new Float64Array(highest - lowest + 1);
-  const logOf = (ratio: ScaledNumber): number =>
-    ratio.exponent === 0 ? Math.log(ratio.high) : ratio.log2 * Math.LN2;
+  const logOf = (ratio: ScaledNumber): number => (ratio.exponent === 0 ? Math.log(ratio.high) : ratio.log2 * Math.LN2);
   for (let k = a, ratio = new ScaledNumber(); k < highest; k++) {
-    ratio.times(first - k).times(events - k).over(k + 1).over(second - events + k + 1);
+    ratio
+      .times(first - k)
+      .times(events - k)
+      .over(k + 1)
+      .over(second - events + k + 1);
     logs[k + 1 - lowest] = logOf(ratio);
   }
   for (let k = a, ratio = new ScaledNumber(); k > lowest; k--) {
-    ratio.times(k).times(second - events + k).over(first - k + 1).over(events - k + 1);
+    ratio
+      .times(k)
+      .times(second - events + k)
+      .over(first - k + 1)
+      .over(events - k + 1);
     logs[k - 1 - lowest] = logOf(ratio);
   }
   return logs;

@@ -22,7 +22,10 @@ const bound = 1e-13;
 
 const names = ['upper', 'lower', 'distance', 'probability'] as const;
 
-function expectCut(ours: { below: { value: number }; tied: { value: number }; above: { value: number } }, theirs: Cut): void {
+function expectCut(
+  ours: { below: { value: number }; tied: { value: number }; above: { value: number } },
+  theirs: Cut,
+): void {
   for (const side of ['below', 'tied', 'above'] as const) {
     expect(relativeDifference(ours[side].value, toNumber(theirs[side], theirs.whole))).toBeLessThan(bound);
   }
@@ -63,7 +66,9 @@ describe('the exact test of a common odds ratio', () => {
       fc.property(strata, (tables) => {
         const ways = cornerCounts(shaped(tables));
         // Strata of one table add their corner, and no other choice.
-        const shift = tables.filter((one) => !speaks(stratumOf(one, rowsFirst))).reduce((sum, [row]) => sum + row[0], 0);
+        const shift = tables
+          .filter((one) => !speaks(stratumOf(one, rowsFirst)))
+          .reduce((sum, [row]) => sum + row[0], 0);
         const scale = [...lawOf(tables)].map(([s, own]) => [own, ways(s - shift)] as const);
         const [theirs, ours] = scale[0]!;
         for (const [x, y] of scale) expect(x * ours).toBe(y * theirs);
@@ -129,10 +134,7 @@ describe("Zelen's exact test of homogeneity", () => {
         const inside = Math.min(law.highest - 0.25, Math.max(law.lowest + 0.25, observedOf(speaking)));
         const cut = zelenCut(speaking, law.psiFor(inside))!;
         const exact = zelenOf(tables);
-        expectCut(
-          { below: cut.below, tied: cut.tied, above: cut.above },
-          exact,
-        );
+        expectCut({ below: cut.below, tied: cut.tied, above: cut.above }, exact);
       }),
       { numRuns: 1000, seed: 34 },
     );

@@ -8,9 +8,10 @@ export function cornersOf([[a, b], [c, d]]: Counts): [corner: number, ways: bigi
   const [first, second, events] = [a! + b!, c! + d!, a! + c!];
   const choose = (n: number, k: number): bigint =>
     k < 0 || k > n ? 0n : factorial(n) / (factorial(k) * factorial(n - k));
-  return Array.from({ length: events + 1 }, (_, k): [number, bigint] => [k, choose(first, k) * choose(second, events - k)]).filter(
-    ([, ways]) => ways > 0n,
-  );
+  return Array.from({ length: events + 1 }, (_, k): [number, bigint] => [
+    k,
+    choose(first, k) * choose(second, events - k),
+  ]).filter(([, ways]) => ways > 0n);
 }
 
 /** Ways to reach each sum of corners. */
@@ -19,7 +20,8 @@ export function lawOf(strata: readonly Counts[]): Map<number, bigint> {
   for (const stratum of strata) {
     const next = new Map<number, bigint>();
     for (const [sum, ways] of law) {
-      for (const [corner, own] of cornersOf(stratum)) next.set(sum + corner, (next.get(sum + corner) ?? 0n) + ways * own);
+      for (const [corner, own] of cornersOf(stratum))
+        next.set(sum + corner, (next.get(sum + corner) ?? 0n) + ways * own);
     }
     law = next;
   }
