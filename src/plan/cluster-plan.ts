@@ -40,6 +40,8 @@ export function planClusters(
   named: NamedRoles | null,
   echo: Partial<Plan>,
 ): Plan {
+  if (options.ordered !== undefined)
+    throw unused('--ordered', 'with --cluster', 'leave it out, or use --statistic trend');
   const signed = statistic.sided === 'signed';
   const tail = oneOf(options.tail, signed ? 'both' : 'upper', tails, '--tail');
   if (!signed && tail === 'both') {

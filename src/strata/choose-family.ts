@@ -1,8 +1,7 @@
 // Tables by stratum and wishes -> the family that answers them, for the strata and for the pooled table as one stratum.
 import type { PlanOptions } from '../plan/plan.js';
-import type { NamedRoles } from '../plan/roles.js';
+import type { noRoles, NamedRoles } from '../plan/roles.js';
 import { strataScoresOf, type ShownScores } from '../plan/strata-plan.js';
-import { noRoles } from '../plan/roles.js';
 import type { LiveTable } from '../table/live-table.js';
 import type { Table } from '../table/table.js';
 import type { StrataFamily } from './family.js';

@@ -95,7 +95,8 @@ async function zelenEntry(strata: readonly Stratum[], law: SumLaw, observed: num
   const cut = zelenCut(strata, law.psiFor(inside));
   if (cut === null) return undefined;
   const question = { tail: 'upper' as const, rule: null, statistic: 'zelen' };
-  // What ties is not the one observed set, so its own probability is not stated.
-  const { point: _, ...entry } = exactPValue(question, cut, cut.tied);
+  const entry = exactPValue(question, cut, cut.tied);
+  // What ties is not the one observed set of tables, so its own probability is not stated.
+  delete entry.point;
   return { ...entry, orderedBy: 'probability of the tables given every margin and the sum of the corners' };
 }
