@@ -4,7 +4,7 @@ import { nearest } from '../problem/suggest.js';
 import { usageProblem, type Problem } from '../problem/problem.js';
 import { makeTable } from '../table/table.js';
 import { readWishes, type LevelSide, type LevelWish, type LevelWishes } from './level-wishes.js';
-import type { ReadTable } from './read-table.js';
+import type { Cluster, ReadTable } from './read-table.js';
 import { shownList, shownValue } from './shown-value.js';
 
 export type { LevelWishes } from './level-wishes.js';
@@ -85,8 +85,21 @@ export function changeLevels(read: ReadTable, wishes: LevelWishes): ReadTable {
   return {
     ...read,
     table: changedTable,
+    ...(read.strata === undefined
+      ? {}
+      : { strata: read.strata.map(({ label, counts }) => ({ label, counts: regroup(counts, plan) })) }),
+    ...(read.clusters === undefined ? {} : { clusters: regroupedClusters(read.clusters, plan) }),
     levels: { changes: plan.changes, leftOut: table.total - changedTable.total },
   };
+}
+
+/** Clusters follow their rows; those in a row that is left out, or left without counts, go. */
+function regroupedClusters(clusters: readonly Cluster[], { rows, columns }: LevelPlan): Cluster[] {
+  return clusters.flatMap(({ label, row: before, counts: all }) => {
+    const row = rows.findIndex(({ from }) => from.includes(before));
+    const counts = columns.map(({ from }) => from.reduce((sum, j) => sum + all[j]!, 0));
+    return row < 0 || counts.every((n) => n === 0) ? [] : [{ label, row, counts }];
+  });
 }
 
 function changed(levels: readonly Level[], wish: LevelWish): Level[] {

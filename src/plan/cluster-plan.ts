@@ -42,6 +42,8 @@ export function planClusters(
 ): Plan {
   if (options.ordered !== undefined)
     throw unused('--ordered', 'with --cluster', 'leave it out, or use --statistic trend');
+  if (options.paired) throw unused('--paired', 'with --cluster', 'leave one of the two out');
+  if (options.cells) throw unused('--cells', 'with --cluster', 'leave it out');
   const signed = statistic.sided === 'signed';
   const tail = oneOf(options.tail, signed ? 'both' : 'upper', tails, '--tail');
   if (!signed && tail === 'both') {

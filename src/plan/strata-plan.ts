@@ -57,6 +57,8 @@ const readBy: Readonly<Record<string, readonly string[]>> = {
   columnScores: ['row-means', 'correlation'],
   lambda: [],
   ordered: [],
+  paired: [],
+  cells: [],
   statisticDigest: [],
 };
 

@@ -17,9 +17,13 @@ export const statisticWords = (name: string): string => known(name)?.words ?? `t
 
 /** A statistic of the registry, or one of the named forms of it. */
 const known = (name: string): { readonly words: string; readonly source: string } | undefined =>
-  [...statistics, ...statistics.flatMap(({ forms = [] }) => forms), ...pairedStatistics, ...pairedForms, ...stratifiedStatistics].find(
-    (one) => one.name === name,
-  );
+  [
+    ...statistics,
+    ...statistics.flatMap(({ forms = [] }) => forms),
+    ...pairedStatistics,
+    ...pairedForms,
+    ...stratifiedStatistics,
+  ].find((one) => one.name === name);
 
 /** The same without the explanation behind it, for the second mention. */
 export const shortStatisticWords = (name: string): string => statisticWords(name).split(/ \(|, /)[0]!;
