@@ -45,7 +45,7 @@ export async function analyseClusters(
   const live = liveTable(kinds.table);
   const name = statisticForClusters(options, clusterStatistics, 'pearson');
   const statistic = clusterForm(name);
-  refuseUnread(statistic, options);
+  refuseUnread(statistic, options, false);
   if (options.groups === 'columns')
     throw unused('--groups columns', 'with --cluster', 'clusters lie in rows, so the rows are the groups');
   const named = statistic.shape === '2x2' ? rolesOf(table, units, statistic, options) : null;

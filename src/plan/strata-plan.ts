@@ -131,10 +131,13 @@ export function planStrata(
   const alpha = share(options.alpha, 0.05, '--alpha');
   const drawing = drawsOf(options, asked, alpha);
   const needsLaw = rule !== null && rule !== 'distance' && rule !== 'doubled';
-  if (needsLaw && name !== 'common-odds-ratio') {
+  if (needsLaw && (name !== 'common-odds-ratio' || rule !== 'probability')) {
     throw usageProblem({
       code: 'rule-without-law',
-      message: `the rule ${rule} is worked out for common-odds-ratio only`,
+      message:
+        rule === 'probability'
+          ? 'the rule probability is worked out for common-odds-ratio only'
+          : `the rule ${rule} is not worked out over strata`,
       place: '--two-sided-rule',
       hint: 'use --two-sided-rule distance or doubled',
     });

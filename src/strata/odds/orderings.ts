@@ -21,6 +21,8 @@ export function lessExtreme(law: SumLaw, observed: number, name: OrderingName): 
       return byDistance(law, observed);
     case 'probability':
       return byProbability(law, observed);
+    case 'blaker':
+      throw new Error('plans over strata refuse this rule');
   }
 }
 
