@@ -164,7 +164,9 @@ describe('clusters of any size', () => {
       [0, 3],
     ].map((counts, k) => ({ label: `${k}`, row: k < 4 ? 0 : 1, counts }));
     const exact = (await run(list, 2, {})).pValues[0]!.p!;
-    const [error] = (await run(list, 2, { method: 'sample', draws: 10_000, seed: 'c' })).pValues[0]!.errors;
+    const drawn = await run(list, 2, { method: 'sample', draws: 10_000, seed: 'c' });
+    const [error] = drawn.pValues[0]!.errors;
+    expect(drawn.sentence).toContain('10,000 random ways to deal the clusters to the rows');
     const [low, high] = error!.kind === 'sampling' ? error!.interval : [2, 2];
     expect(exact > low && exact < high).toBe(true);
   });

@@ -73,12 +73,12 @@ export function besideP(p: PValue, value: number): string {
 }
 
 /** How the p was found, as the end of a clause: "exact", "from 100,000 random tables ...". */
-export function foundWords(p: PValue, seed: string | null): string {
+export function foundWords(p: PValue, seed: string | null, drawn = 'random tables with the same margins'): string {
   if (p.method === 'exact') return 'exact';
   if (p.method === 'sample') {
     const draws = drawingErrorOf(p)?.draws;
-    const many = draws === undefined ? 'random tables' : `${countWords(draws)} random tables`;
-    return `sampled from ${many} with the same margins${seed === null ? '' : ` (seed ${quoted(seed)})`}`;
+    const many = draws === undefined ? drawn : `${countWords(draws)} ${drawn}`;
+    return `sampled from ${many}${seed === null ? '' : ` (seed ${quoted(seed)})`}`;
   }
   return `by the ${approximationName(p)} approximation`;
 }

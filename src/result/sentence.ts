@@ -32,7 +32,9 @@ export function sentenceFor(result: ResultBeforeWords): string {
     groups === undefined || event === undefined ? `In a ${tableWords(result)}, ` : sharesSeen(result, groups, event);
   const direction = directionWords(result, headline);
   const name = `${pName(headline)}${direction === undefined ? '' : ` (${direction})`}`;
-  const found = foundWords(headline, result.plan.seed);
+  // Clusters differ in size, so that dealing them whole moves the row totals.
+  const drawn = result.clusters === undefined ? [] : ['random ways to deal the clusters to the rows'];
+  const found = foundWords(headline, result.plan.seed, ...drawn);
   const answer = `${pNumber(headline)}${errorAside(headline)}${headline.method === 'asymptotic' ? ' ' : ', '}${found}`;
   return `${seen}${valueWords(result)} and its ${name} is ${answer}.`;
 }

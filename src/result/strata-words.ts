@@ -40,7 +40,7 @@ export function strataSentence(result: ResultBeforeWords): string {
   }
   const direction = directionWords(result, headline);
   const name = `${pName(headline)}${direction === undefined ? '' : ` (${direction})`}`;
-  const found = foundWords(headline, result.plan.seed);
+  const found = foundWords(headline, result.plan.seed, 'random sets of tables with the same margins');
   const answer = `${pNumber(headline)}${errorAside(headline)}${headline.method === 'asymptotic' ? ' ' : ', '}${found}`;
   return `Over ${strataInWords(result)}, ${sizeWords(result)} and its ${name} is ${answer}.`;
 }
