@@ -26,6 +26,7 @@ import { conditionalPValues, orderingsNeeded, questionsOf } from './pvalue/p-val
 import { buildResult, type Findings } from './result/build-result.js';
 import { asymptoticNotes, emptyLineNotes, onlyOneTable, statisticNotes, unsettledNotes } from './result/notes.js';
 import type { Note, Result } from './result/result.js';
+import { lineComparisons } from './line-comparisons.js';
 import { orderedAnswers } from './ordered-answers.js';
 import { sampledPValues, type Surroundings } from './sampled-answer.js';
 import { checkExpectations } from './table/expectation-check.js';
@@ -79,7 +80,10 @@ export async function analyse(
     : await orderedAnswers(found, options, (wishes) => answer(found.read, wishes, surroundings));
   // What stands beside a p of pairs is part of their answer.
   const beside = isWhole(prepared) && !prepared.plan.paired ? await besideThe(found, prepared, options) : {};
-  const findings = { ...findingsOf(found), ...beside, byOrder };
+  const comparisons = prepared.plan.paired
+    ? undefined
+    : await lineComparisons(found, options, (lines, wishes) => answer(lines, wishes, surroundings));
+  const findings = { ...findingsOf(found), ...beside, byOrder, comparisons };
   if (cells === undefined) return buildResult(findings);
   const plan = Object.freeze({ ...prepared.plan, cells: cells.echo });
   return buildResult({ ...findings, plan, cells: await cells.entries() });

@@ -74,6 +74,8 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     event: named?.eventLabel ?? null,
     reference: named?.referenceLabel ?? null,
     ...echo,
+    ...(options.compare === undefined ? {} : { compare: options.compare }),
+    ...(options.control === undefined ? {} : { control: options.control }),
     ...orderEcho(table, live, options, echo),
     fixed: 'both',
     ...(sampled ? drawing : { draws: null }),

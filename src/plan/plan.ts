@@ -37,6 +37,10 @@ export interface PlanOptions {
   readonly lambda?: string | number;
   /** Sides whose lines stand in order: adds the questions that use it, and measures of association for ordered sides. */
   readonly ordered?: 'rows' | 'columns' | 'both';
+  /** Compares every two rows, or columns, or each with `control`, by the same statistic; adjusted over all. */
+  readonly compare?: 'rows' | 'columns';
+  /** Label of the line that the others are compared with. */
+  readonly control?: string;
   /** Cells: true goes up to the bound of `effort` and draws where that is not enough, false leaves them out; default: what is cheap. */
   readonly cells?: boolean;
   readonly method?: Method;
@@ -104,6 +108,8 @@ export interface Plan {
   readonly ordered?: 'rows' | 'columns' | 'both';
   /** What chance leaves as it is: both margins, those of every stratum, the clusters, or the pairs but not their direction. */
   readonly fixed: 'both' | 'strata' | 'clusters' | 'pairs';
+  readonly compare?: 'rows' | 'columns';
+  readonly control?: string;
   readonly draws: number | 'auto' | null;
   /** These three for draws `auto` only. */
   readonly mostDraws?: number;

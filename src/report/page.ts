@@ -16,6 +16,7 @@ import type { Result } from '../result/result.js';
 import { cautionsFor } from './cautions.js';
 import { pairsQuestion, pairsSection } from './sections/pairs.js';
 import { againCommand, againInWords, againSentences } from './run-again.js';
+import { comparisonBlocks } from './sections/comparisons.js';
 import { orderSection } from './sections/order.js';
 import { cellsBlocks } from './sections/cells.js';
 import { fragilityBlocks } from './sections/fragility.js';
@@ -79,6 +80,7 @@ const sectionsOf = (result: Result): Section[] => [
   orderSection(result),
   pairsSection(result),
   { heading: 'Which cells?', blocks: cellsBlocks(result) },
+  { heading: 'Which lines differ?', blocks: comparisonBlocks(result) },
   { heading: 'Would an approximation do?', blocks: footing(result) },
   { heading: 'Before you use it', blocks: cautionsFor(result).map(({ text, tone }) => sentence(text, tone)) },
   { heading: 'To run it again', blocks: again(result) },

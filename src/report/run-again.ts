@@ -140,6 +140,8 @@ const planOptionsOf = (plan: Result['plan'], roles: readonly Option[]): Option[]
   ...optional('ordered', plan.ordered),
   ...optional('row-scores', plan.rowScores?.join() ?? plan.rowRanks),
   ...optional('column-scores', plan.columnScores?.join() ?? plan.columnRanks),
+  ...optional('compare', plan.compare),
+  ...optional('control', plan.control),
   ...optional('lambda', plan.lambda),
   ...optional('method', plan.method),
   ...optional('draws', plan.draws),

@@ -33,6 +33,7 @@ export interface Findings {
   readonly fragility?: Fragility | undefined;
   readonly strata?: Result['strata'];
   readonly clusters?: Result['clusters'];
+  readonly comparisons?: Result['comparisons'] | undefined;
   readonly notes: readonly Note[];
 }
 
@@ -58,6 +59,7 @@ export function buildResult(found: Findings): Result {
     ...(found.cells === undefined ? {} : { cells: [...found.cells] }),
     ...(found.strata === undefined ? {} : { strata: found.strata }),
     ...(found.clusters === undefined ? {} : { clusters: found.clusters }),
+    ...(found.comparisons === undefined ? {} : { comparisons: found.comparisons }),
     notes: [...found.notes],
   };
   const { notes, ...parts } = before;

@@ -3,6 +3,7 @@
 import { z } from 'zod';
 import { cell } from './declared/cell.js';
 import { clusters } from './declared/clusters.js';
+import { comparisons } from './declared/comparisons.js';
 import { effect } from './declared/effect.js';
 import { fragility } from './declared/fragility.js';
 import { input } from './declared/input.js';
@@ -46,6 +47,7 @@ export const resultDeclaration = z.strictObject({
   effects: z.array(effect).optional(),
   order: order.optional(),
   cells: z.array(cell).optional(),
+  comparisons: comparisons.optional(),
   fragility: fragility.optional(),
   strata: strata.optional(),
   clusters: clusters.optional(),

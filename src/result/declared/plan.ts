@@ -53,6 +53,9 @@ export const plan = z.strictObject({
   ordered: z.enum(orderedSides).optional(),
   /** What chance leaves as it is: both margins, those of every stratum, the clusters, or the pairs but not their direction. */
   fixed: z.enum(['both', 'strata', 'clusters', 'pairs']),
+  /** The lines that were compared with each other, or with the one named. */
+  compare: z.enum(['rows', 'columns']).optional(),
+  control: z.string().optional(),
   /** `auto`: until p is settled against alpha, by the rule that the error of the p-value names. */
   draws: z.union([count, z.literal('auto')]).nullable(),
   mostDraws: count.optional(),

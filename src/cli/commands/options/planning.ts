@@ -50,6 +50,13 @@ export const planning = {
     oneOf(orderedSides),
     `lines that stand in order: ${either(orderedSides)}; adds the tests that use it`,
   ),
+  compare: valued(
+    'The test',
+    'SIDE',
+    oneOf(sides),
+    'which of them differ: every two rows, or columns, adjusted over all',
+  ),
+  control: valued('The test', 'LABEL', anyText, 'with --compare, each against this line only'),
   lambda: valued('The test', 'NUMBER', anyText, 'for power-divergence, its exponent: a decimal or a fraction (2/3)'),
   method: valued(
     'How p is found',
