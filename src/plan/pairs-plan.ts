@@ -45,7 +45,17 @@ export function pairedStatisticOf(options: PlanOptions, levels: number): PairedS
   return found;
 }
 
-const unread = ['groups', 'event', 'reference', 'rowScores', 'columnScores', 'lambda', 'ordered'] as const;
+const unread = [
+  'groups',
+  'event',
+  'reference',
+  'rowScores',
+  'columnScores',
+  'lambda',
+  'ordered',
+  'compare',
+  'control',
+] as const;
 
 /** Wishes that no analysis of pairs reads. @throws Problem (usage) `option-without-effect`. */
 export function refuseUnreadByPairs(options: PlanOptions): void {

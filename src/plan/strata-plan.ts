@@ -59,6 +59,8 @@ const readBy: Readonly<Record<string, readonly string[]>> = {
   ordered: [],
   paired: [],
   cells: [],
+  compare: [],
+  control: [],
   statisticDigest: [],
 };
 
