@@ -77,7 +77,9 @@ function lowerLimit(groups: TwoGroups, z: number): number {
   const p2 = second.events / second.size;
   const above = (logRatio: number): boolean => {
     const ratio = Math.exp(logRatio);
-    return p1 - ratio * p2 >= z * Math.sqrt(varianceAt(groups, ratio));
+    const excess = p1 - ratio * p2;
+    // At the ratio seen nothing is in excess, even where nothing but events leaves no variance either.
+    return excess > 0 && excess >= z * Math.sqrt(varianceAt(groups, ratio));
   };
   return Math.exp(lastWhere(above, -widest, widest));
 }
