@@ -27,6 +27,8 @@ export interface CellInquiry {
 /** What is done unasked stays below about a tenth of a second. */
 const unasked = { cells: 1000, pWork: 3e6, exactWork: 2e6, steps: 2 ** 16, pairs: 2e4 };
 const asked = { cells: Infinity, pWork: Infinity, exactWork: Infinity, steps: 2 ** 22, pairs: 1e6 };
+/** Fixed numbers of draws above this are asked for by who wants them fast. */
+const mostRankedUnasked = 1e6;
 /** Tables drawn for the cells alone, where they are asked for and p is not sampled. */
 export const drawsForCells = 100_000;
 
@@ -65,7 +67,11 @@ export function inquireCells(table: Table, live: LiveTable, plan: Plan, options:
       entries: answer((found) => Promise.resolve(exactAdjustment(live, found)), thresholds),
     };
   }
-  if (plan.method === 'sample') return fromDrawsOfRun();
+  if (plan.method === 'sample') {
+    return options.cells !== true && Number(plan.draws) > mostRankedUnasked
+      ? without('ranking every cell of so many draws would slow them by a fifth; --cells does it')
+      : fromDrawsOfRun();
+  }
   if (options.cells !== true) return without('exact work is over the bound for what is done unasked; --cells goes on');
   return fromOwnDraws(options.seed ?? freshSeed());
 
