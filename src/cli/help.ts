@@ -24,7 +24,7 @@ const statuses: readonly (readonly [string, string])[] = [
 
 /** What `keepsum --help` prints, and, without its last part, what is shown when nothing was asked. */
 export function rootHelp(width: number): string {
-  const listed = commands.map(({ name, operands, summary }) => [`${name} ${operands}`, summary] as const);
+  const listed = commands.map(({ name, operands, summary }) => [`${name} ${operands}`.trimEnd(), summary] as const);
   return screen([
     wrapped(purpose, width),
     section('Usage: keepsum COMMAND ...', listed, width),

@@ -29,6 +29,12 @@ export const commands: readonly CommandEntry[] = [
     load: async () => (await import('./power.js')).powerCommand,
   },
   {
+    name: 'selfcheck',
+    operands: '',
+    summary: 'does this copy give the known answers on this machine?',
+    load: async () => (await import('./selfcheck.js')).selfCheckCommand,
+  },
+  {
     name: 'schema',
     operands: 'result',
     summary: 'the JSON Schema of what --format json prints',

@@ -4,7 +4,7 @@ import { nameHint } from '../../problem/suggest.js';
 import { destinationFor, sharedOptions } from './shared-options.js';
 import { command } from './command-file.js';
 
-const schemaNames = ['result', 'power'] as const;
+const schemaNames = ['result', 'power', 'selfcheck'] as const;
 
 export const schemaCommand = command({
   name: 'schema',
@@ -26,6 +26,8 @@ async function schemaNamed(name: (typeof schemaNames)[number]): Promise<object> 
       return (await import('../../result/schema.js')).resultJsonSchema();
     case 'power':
       return (await import('../../result/power-declaration.js')).powerJsonSchema();
+    case 'selfcheck':
+      return (await import('../../result/self-check-declaration.js')).selfCheckJsonSchema();
   }
 }
 

@@ -1,0 +1,53 @@
+// keepsum selfcheck: the shipped reference answers, worked out on the user's own machine.
+import { usageProblem } from '../../problem/problem.js';
+import { selfCheckFormats } from '../../report/self-check.js';
+import { oneOf } from '../arguments/check-value.js';
+import { valued } from '../arguments/option.js';
+import { command } from './command-file.js';
+import { lookFor } from './look.js';
+import { reporting } from './options/reporting.js';
+import { either } from './options/words.js';
+import { destinationFor, sharedOptions } from './shared-options.js';
+
+export const selfCheckCommand = command({
+  name: 'selfcheck',
+  usage: [{ line: 'keepsum selfcheck', words: 'run every case; ends with 1 where an answer differs' }],
+  purpose: 'Works out the shipped reference answers on this machine and reports whether each agrees.',
+  examples: [
+    { line: 'keepsum selfcheck', words: 'the validation report on the screen' },
+    { line: 'keepsum selfcheck --format json', words: 'the same for a record (keepsum schema selfcheck)' },
+  ],
+  options: {
+    format: valued('The report', 'NAME', oneOf(selfCheckFormats), `${either(selfCheckFormats)} (text)`),
+    width: reporting.width,
+    color: reporting.color,
+    noColor: reporting.noColor,
+    noProgress: reporting.noProgress,
+    quiet: reporting.quiet,
+    ...sharedOptions,
+  },
+  async run(operands, values, shell) {
+    if (operands.length > 0) {
+      throw usageProblem({
+        code: 'needless-operand',
+        message: `keepsum selfcheck takes no "${operands[0]!}"`,
+        hint: 'write keepsum selfcheck; every case is run',
+      });
+    }
+    const destination = await destinationFor(values.output, shell);
+    const { selfCheck, shippedCases } = await import('../../self-check.js');
+    const { renderSelfCheck } = await import('../../report/self-check.js');
+    const { withSteps } = await import('../streams/steps.js');
+    const cases = await shippedCases();
+    const report = await withSteps(values, shell, (onProgress) => selfCheck(cases, thisMachine(), onProgress));
+    await destination.write(renderSelfCheck(report, values.format ?? 'text', await lookFor(values, shell)));
+    return report.verdict === 'agrees' ? 0 : 1;
+  },
+});
+
+const thisMachine = () => ({
+  runtime: `Node.js ${process.version}`,
+  engine: `V8 ${process.versions.v8}`,
+  system: process.platform,
+  architecture: process.arch,
+});

@@ -1,0 +1,109 @@
+// The validation report: the verdict, what it ran on, and every case; for a screen, for programs, for spreadsheets.
+import { shown } from '../result/label-words.js';
+import { countWords } from '../result/number-words.js';
+import type { CheckedAnswer, CheckedCase, SelfCheck } from '../result/self-check-declaration.js';
+import { fold } from './fold.js';
+import type { ReportSettings } from './format.js';
+import { gridLines } from './text-grid.js';
+
+export const selfCheckFormats = ['text', 'json', 'csv'] as const;
+export type SelfCheckFormat = (typeof selfCheckFormats)[number];
+
+export function renderSelfCheck(report: SelfCheck, format: SelfCheckFormat, settings: ReportSettings): string {
+  if (format === 'json') return `${JSON.stringify(report, null, 2)}\n`;
+  return format === 'csv' ? csv(report) : text(report, settings);
+}
+
+const remarks = [
+  'Agreement here says that this copy of the program computes on this machine what is known of these cases. It does not say that a test suits your data.',
+  'Where your rules ask for qualified software, keep this report with the version of the program, and run it again after every change of machine, runtime or version.',
+];
+
+function text(report: SelfCheck, { width: wide, paint }: ReportSettings): string {
+  const width = Math.max(40, Math.floor(wide));
+  const prose = Math.min(width, 96);
+  const said = (words: string): string[] => fold(shown(words), prose, { first: 2, rest: 4 });
+  const { tool, machine, cases, answersCompared, answersDiffering, casesRun } = report;
+  const isWell = report.verdict === 'agrees';
+  const verdict = isWell
+    ? `All ${countWords(answersCompared)} answers of ${countWords(casesRun)} cases agree.`
+    : `${countWords(answersDiffering)} of ${countWords(answersCompared)} answers differ: do not rely on this copy on this machine.`;
+  return [
+    ...fold('Does this copy of keepsum give the known answers here?', width).map(paint.bold),
+    '',
+    paint.bold('The verdict'),
+    ...said(verdict).map(isWell ? paint.bold : paint.warn),
+    '',
+    paint.bold('What was run'),
+    ...said(
+      `${tool.name} ${tool.version} on ${machine.runtime} (${machine.engine}), ${machine.system}, ${machine.architecture}.`,
+    ),
+    ...said(`The reference answers have the SHA-256 ${report.answersSha256}.`),
+    ...said('A difference is relative to the expected number; the limit is the largest that agrees.'),
+    ...cases.flatMap((each) => ['', ...caseLines(each, width, prose)]),
+    '',
+    paint.bold('Before you use it'),
+    ...remarks.flatMap(said),
+    '',
+  ].join('\n');
+}
+
+function caseLines(each: CheckedCase, width: number, prose: number): string[] {
+  const grid = gridLines(
+    {
+      kind: 'grid',
+      headings: ['answer', 'expected', 'obtained', 'difference', 'limit', 'verdict'],
+      rows: each.answers.map((answer) => [
+        answer.what,
+        String(answer.expected),
+        answer.obtained === null ? 'none' : String(answer.obtained),
+        smallWords(answer.difference),
+        smallWords(answer.tolerance),
+        verdictOf(answer),
+      ]),
+    },
+    Math.max(width, 40) - 2,
+  );
+  const reasons = [...new Set(each.answers.flatMap(({ reason }) => (reason === undefined ? [] : [reason])))];
+  return [
+    ...fold(shown(`${each.id}: ${each.title}`), prose),
+    ...fold(shown(`Counts: ${each.source}. Answers: ${each.origin}.`), prose, { first: 2, rest: 4 }),
+    ...grid.map((line) => `  ${line}`.trimEnd()),
+    ...reasons.flatMap((reason) => fold(shown(reason), prose, { first: 2, rest: 4 })),
+  ];
+}
+
+const verdictOf = ({ agrees }: CheckedAnswer): string => (agrees ? 'agrees' : 'DIFFERS');
+
+const smallWords = (value: number | null): string =>
+  value === null ? '' : value === 0 ? '0' : value.toExponential(1).replace('e+', 'e');
+
+const field = (words: string): string => `"${shown(words).replaceAll('"', '""')}"`;
+
+/** One row an answer. */
+function csv({ cases, tool, machine }: SelfCheck): string {
+  const header =
+    'case,title,source,origin,statistic,answer,expected,obtained,difference,limit,verdict,version,runtime,system,architecture';
+  const rows = cases.flatMap((each) =>
+    each.answers.map((answer) =>
+      [
+        field(each.id),
+        field(each.title),
+        field(each.source),
+        field(each.origin),
+        each.statistic,
+        field(answer.what),
+        answer.expected,
+        answer.obtained ?? '',
+        answer.difference ?? '',
+        answer.tolerance,
+        answer.agrees ? 'agrees' : 'differs',
+        tool.version,
+        field(machine.runtime),
+        field(machine.system),
+        machine.architecture,
+      ].join(','),
+    ),
+  );
+  return `${[header, ...rows].join('\n')}\n`;
+}
