@@ -4,7 +4,6 @@ import { countWords } from '../result/number-words.js';
 import type { CheckedAnswer, CheckedCase, SelfCheck } from '../result/self-check-declaration.js';
 import { fold } from './fold.js';
 import type { ReportSettings } from './format.js';
-import { gridLines } from './text-grid.js';
 
 export const selfCheckFormats = ['text', 'json', 'csv'] as const;
 export type SelfCheckFormat = (typeof selfCheckFormats)[number];
@@ -40,7 +39,7 @@ function text(report: SelfCheck, { width: wide, paint }: ReportSettings): string
     ),
     ...said(`The reference answers have the SHA-256 ${report.answersSha256}.`),
     ...said('A difference is relative to the expected number; the limit is the largest that agrees.'),
-    ...cases.flatMap((each) => ['', ...caseLines(each, width, prose)]),
+    ...cases.flatMap((each) => ['', ...caseLines(each, prose)]),
     '',
     paint.bold('Before you use it'),
     ...remarks.flatMap(said),
@@ -48,35 +47,21 @@ function text(report: SelfCheck, { width: wide, paint }: ReportSettings): string
   ].join('\n');
 }
 
-function caseLines(each: CheckedCase, width: number, prose: number): string[] {
-  const grid = gridLines(
-    {
-      kind: 'grid',
-      headings: ['answer', 'expected', 'obtained', 'difference', 'limit', 'verdict'],
-      rows: each.answers.map((answer) => [
-        answer.what,
-        String(answer.expected),
-        answer.obtained === null ? 'none' : String(answer.obtained),
-        smallWords(answer.difference),
-        smallWords(answer.tolerance),
-        verdictOf(answer),
-      ]),
-    },
-    Math.max(width, 40) - 2,
-  );
-  const reasons = [...new Set(each.answers.flatMap(({ reason }) => (reason === undefined ? [] : [reason])))];
+/** One item an answer, the verdict first, in the order in which it is read aloud. */
+function caseLines({ id, title, source, origin, answers }: CheckedCase, prose: number): string[] {
+  const item = ({ agrees, what, expected, obtained, difference, tolerance, reason }: CheckedAnswer): string =>
+    `${agrees ? 'agrees' : 'DIFFERS'}: ${what}, expected ${expected}, obtained ${obtained ?? 'none'}` +
+    (difference === null
+      ? ` (${reason ?? ''})`
+      : `, difference ${smallWords(difference)} (limit ${smallWords(tolerance)})`);
   return [
-    ...fold(shown(`${each.id}: ${each.title}`), prose),
-    ...fold(shown(`Counts: ${each.source}. Answers: ${each.origin}.`), prose, { first: 2, rest: 4 }),
-    ...grid.map((line) => `  ${line}`.trimEnd()),
-    ...reasons.flatMap((reason) => fold(shown(reason), prose, { first: 2, rest: 4 })),
+    ...fold(shown(`${id}: ${title}`), prose),
+    ...fold(shown(`Counts: ${source}. Answers: ${origin}.`), prose, { first: 2, rest: 4 }),
+    ...answers.flatMap((answer) => fold(shown(item(answer)), prose, { first: 2, rest: 4 })),
   ];
 }
 
-const verdictOf = ({ agrees }: CheckedAnswer): string => (agrees ? 'agrees' : 'DIFFERS');
-
-const smallWords = (value: number | null): string =>
-  value === null ? '' : value === 0 ? '0' : value.toExponential(1).replace('e+', 'e');
+const smallWords = (value: number): string => (value === 0 ? '0' : value.toExponential(1).replace('e+', 'e'));
 
 const field = (words: string): string => `"${shown(words).replaceAll('"', '""')}"`;
 

@@ -1,6 +1,6 @@
 // keepsum selfcheck: the shipped reference answers, worked out on the user's own machine.
 import { usageProblem } from '../../problem/problem.js';
-import { selfCheckFormats } from '../../report/self-check.js';
+import { renderSelfCheck, selfCheckFormats } from '../../report/self-check.js';
 import { oneOf } from '../arguments/check-value.js';
 import { valued } from '../arguments/option.js';
 import { command } from './command-file.js';
@@ -36,7 +36,6 @@ export const selfCheckCommand = command({
     }
     const destination = await destinationFor(values.output, shell);
     const { selfCheck, shippedCases } = await import('../../self-check.js');
-    const { renderSelfCheck } = await import('../../report/self-check.js');
     const { withSteps } = await import('../streams/steps.js');
     const cases = await shippedCases();
     const report = await withSteps(values, shell, (onProgress) => selfCheck(cases, thisMachine(), onProgress));
