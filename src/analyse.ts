@@ -15,16 +15,25 @@ import type { ReadTable } from './input/read-table.js';
 import type { StrataParts } from './input/strata.js';
 import type { ExactAnswer } from './null/exact/exact-answer.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
-import type { ExactEngine } from './null/forecast.js';
 import { orderingFor } from './null/ordering.js';
 import { OutOfReach } from './null/exact/network/network.js';
 import { makePlan, planWithoutExact, type Prepared } from './plan/make-plan.js';
+import type { DesignLine } from './design/panel.js';
+import { fixedSides, isTwoByTwo } from './plan/design.js';
 import type { PlanOptions } from './plan/plan.js';
-import type { PValueEntry } from './pvalue/contract.js';
+import { noRoles } from './plan/roles.js';
+import type { PValueEntry, Question } from './pvalue/contract.js';
 import { approximationsOf, asymptoticAlone, asymptoticBeside, degreesOfFreedomOf } from './pvalue/approximations.js';
 import { conditionalPValues, orderingsNeeded, questionsOf } from './pvalue/p-values.js';
 import { buildResult, type Findings } from './result/build-result.js';
-import { asymptoticNotes, emptyLineNotes, onlyOneTable, statisticNotes, unsettledNotes } from './result/notes.js';
+import {
+  asymptoticNotes,
+  designNotes,
+  emptyLineNotes,
+  onlyOneTable,
+  statisticNotes,
+  unsettledNotes,
+} from './result/notes.js';
 import type { Note, Result } from './result/result.js';
 import { lineComparisons } from './line-comparisons.js';
 import { orderedAnswers } from './ordered-answers.js';
@@ -83,13 +92,22 @@ export async function analyse(
   const comparisons = prepared.plan.paired
     ? undefined
     : await lineComparisons(found, options, (lines, wishes) => answer(lines, wishes, surroundings));
-  const findings = { ...findingsOf(found), ...beside, byOrder, comparisons };
+  const findings = { ...findingsOf(found), ...beside, byOrder, comparisons, designs: await otherDesigns(found) };
   if (cells === undefined) return buildResult(findings);
   const plan = Object.freeze({ ...prepared.plan, cells: cells.echo });
   return buildResult({ ...findings, plan, cells: await cells.entries() });
 }
 
 const isWhole = (prepared: Answer['prepared']): prepared is Prepared => prepared.statistic !== undefined;
+/** For a 2x2 table, what p would be had the study fixed something else. */
+async function otherDesigns({
+  read: { table },
+  prepared: { plan },
+  pValues,
+}: Answer): Promise<DesignLine[] | undefined> {
+  if (!isTwoByTwo(table) || !fixedSides.some((side) => side === plan.fixed)) return undefined;
+  return (await import('./design/panel.js')).designPanel(table, plan, questionsOf(plan)[0]!, pValues);
+}
 
 /** What a result takes over from the answer as it is. */
 export const findingsOf = ({ read, live, prepared, expectations, ...found }: Answer): Findings => ({
@@ -139,15 +157,19 @@ async function carryOut(
   surroundings: Surroundings,
   withCells: boolean,
 ): Promise<Answer> {
-  const { plan, statistic, bound, valueOfOnlyTable } = prepared;
+  const { plan, statistic, bound, named, valueOfOnlyTable, design, conditional, choices } = prepared;
   const questions = questionsOf(plan);
   const value = bound === null ? valueOfOnlyTable : bound.value(live.counts);
 
   const approximations = bound === null ? [] : approximationsOf(statistic, live, bound, value);
   const asymptotic = asymptoticBeside(questions[0]!, approximations);
-  const cells = withCells && !plan.paired ? (inquireCells(read.table, live, plan, options) ?? undefined) : undefined;
-  const { found, tables } = await askNull();
-  if (plan.method !== 'asymptotic') found.push(...asymptotic);
+  // Cells are judged given both margins, as the p beside that of another design is.
+  const givenMargins = { ...plan, method: conditional.method };
+  const cells =
+    withCells && !plan.paired ? (inquireCells(read.table, live, givenMargins, options) ?? undefined) : undefined;
+  const declared = await askDesign();
+  const { found: given, tables } = await askNull(design === 'conditional' ? questions : questions.slice(0, 1));
+  const found = [...declared, ...given, ...(plan.method === 'asymptotic' ? [] : asymptotic)];
 
   return {
     read,
@@ -161,31 +183,48 @@ async function carryOut(
     cells,
     notes: [
       ...read.notes,
-      ...(plan.paired ? [] : emptyLineNotes(read.table)),
-      ...(bound === null ? [onlyOneTable] : asymptoticNotes(found[0]!, asymptotic[0], statistic)),
+      ...(plan.paired || design === 'two-groups' || design === 'multinomial' ? [] : emptyLineNotes(read.table)),
+      ...designNotes(plan, read.table, design),
+      ...(bound === null && design !== 'conditional'
+        ? []
+        : bound === null
+          ? [onlyOneTable]
+          : asymptoticNotes(found[0]!, asymptotic[0], statistic)),
       ...statisticNotes(statistic, bound),
       ...(await unsettledNotes(found[0]!, plan)),
     ],
   };
 
-  async function askNull(): Promise<{ found: PValueEntry[]; tables?: number }> {
-    if (plan.method === 'asymptotic') {
-      const known = bound === null ? approximationsOf(statistic, live, null, value ?? 0) : approximations;
-      return { found: asymptoticAlone(questions, known) };
-    }
-    const names = orderingsNeeded(questions);
-    if (bound === null) return fromAnswer(onlyTable(live, names));
-    const orderings = names.map((name) => orderingFor(live, bound, name));
-    if (plan.method === 'exact') {
-      await surroundings.beforeExact?.(plan.forecast);
-      return fromAnswer(exactCuts(live, orderings, plan.forecast.engine as ExactEngine, plan.statistic));
-    }
-    const recipe = statistic.own ? null : { parts: partsOf(read), options };
-    return { found: await sampledPValues(questions, live, orderings, plan, recipe, surroundings, cells?.listener) };
+  async function askDesign(): Promise<PValueEntry[]> {
+    if (design === 'conditional') return [];
+    const { designAnswer } = await import('./design/answer.js');
+    const { table } = read;
+    const { onProgress } = surroundings;
+    const parts = { kind: design, table, live, statistic, roles: named ?? noRoles, choices, plan };
+    return designAnswer(questions, onProgress === undefined ? parts : { ...parts, onProgress });
   }
 
-  async function fromAnswer({ cuts, point, tables }: ExactAnswer): Promise<{ found: PValueEntry[]; tables?: number }> {
-    const found = await conditionalPValues(questions, cuts, point, plan.samplingConfidence);
+  async function askNull(asked: readonly Question[]): Promise<{ found: PValueEntry[]; tables?: number }> {
+    if (plan.method === 'asymptotic') {
+      const known = bound === null ? approximationsOf(statistic, live, null, value ?? 0) : approximations;
+      return { found: asymptoticAlone(asked, known) };
+    }
+    const names = orderingsNeeded(asked);
+    if (bound === null) return fromAnswer(asked, onlyTable(live, names));
+    const orderings = names.map((name) => orderingFor(live, bound, name));
+    if (conditional.method === 'exact') {
+      await surroundings.beforeExact?.(conditional.forecast);
+      return fromAnswer(asked, exactCuts(live, orderings, conditional.forecast.engine, plan.statistic));
+    }
+    const recipe = statistic.own ? null : { parts: partsOf(read), options };
+    return { found: await sampledPValues(asked, live, orderings, plan, recipe, surroundings, cells?.listener) };
+  }
+
+  async function fromAnswer(
+    asked: readonly Question[],
+    { cuts, point, tables }: ExactAnswer,
+  ): Promise<{ found: PValueEntry[]; tables?: number }> {
+    const found = await conditionalPValues(asked, cuts, point, plan.samplingConfidence);
     return tables === undefined ? { found } : { found, tables };
   }
 }

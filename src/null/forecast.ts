@@ -23,7 +23,10 @@ export interface Forecast<Engine = ExactEngine> {
   readonly seconds: number;
 }
 
-const secondsPerUnit = 3e-8;
+/** That of a plan: the last two where not both margins are fixed. */
+export type PlannedForecast = Forecast<ExactEngine | PairsEngine | StrataEngine | 'unconditional' | 'multinomial'>;
+
+export const secondsPerUnit = 3e-8;
 
 /** Default bound on exact work: about two seconds. */
 export const standardEffort = 6e7;

@@ -45,6 +45,7 @@ export function planClusters(
   if (options.paired) throw unused('--paired', 'with --cluster', 'leave one of the two out');
   if (options.cells) throw unused('--cells', 'with --cluster', 'leave it out');
   if (options.compare !== undefined) throw unused('--compare', 'with --cluster', 'leave it out');
+  if (options.fixed !== undefined) throw unused('--fixed', 'with --cluster', 'leave it out');
   const signed = statistic.sided === 'signed';
   const tail = oneOf(options.tail, signed ? 'both' : 'upper', tails, '--tail');
   if (!signed && tail === 'both') {

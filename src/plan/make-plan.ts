@@ -1,5 +1,5 @@
 // Raw wishes in, one checked and frozen plan out: every default filled, the method settled, the reason said.
-import { forecastExact, standardEffort } from '../null/forecast.js';
+import { forecastExact, standardEffort, type Forecast } from '../null/forecast.js';
 import { blockSize } from '../null/sampled/limits.js';
 import { effortProblem, usageProblem } from '../problem/problem.js';
 import { generatorName } from '../random/stream.js';
@@ -8,8 +8,18 @@ import { hasOneTableOnly, type LiveTable } from '../table/live-table.js';
 import type { Table } from '../table/table.js';
 import { chooseStatistic, choicesOf, refuseUnread } from './choices.js';
 import { orderEcho } from './order-echo.js';
+import { designOf, withDesign, type DesignKind } from './design.js';
 import { freshSeed } from './fresh-seed.js';
-import { methods, tails, twoSidedRules, type Plan, type PlanOptions, type Tail, type TwoSidedRule } from './plan.js';
+import {
+  methods,
+  tails,
+  twoSidedRules,
+  type ChosenMethod,
+  type Plan,
+  type PlanOptions,
+  type Tail,
+  type TwoSidedRule,
+} from './plan.js';
 import { isTwoByTwo, noRoles, rolesOf, type NamedRoles } from './roles.js';
 import { oneOf, positive, share, unused, wholeNumber } from './settings.js';
 import { drawsOf } from './draws.js';
@@ -24,12 +34,17 @@ export interface Prepared {
   readonly valueOfOnlyTable: number | null;
   /** null where there are no two groups to compare. */
   readonly named: NamedRoles | null;
+  /** How the headline p is found, by what the study held fixed. */
+  readonly design: DesignKind;
+  /** How the p given both margins is found, the headline or beside it. */
+  readonly conditional: { readonly method: ChosenMethod; readonly forecast: Forecast };
   /** Settings that the statistic reads, in exact form. */
   readonly choices: Choices;
 }
 
 /** @throws Problem: usage for wishes that make no sense together, effort for exact work over the bound. */
-export function makePlan(table: Table, live: LiveTable, options: PlanOptions): Prepared {
+export function makePlan(table: Table, live: LiveTable, wishes: PlanOptions): Prepared {
+  const options = withDesign(table, wishes);
   const statistic = chooseStatistic(options.statistic, options.paired ? table.rowLabels.length : undefined);
   const twoByTwo = !options.paired && isTwoByTwo(table, live);
   refuseUnread(statistic, options, twoByTwo);
@@ -40,9 +55,12 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
   const effort = positive(options.effort, standardEffort, '--effort');
   const asked = oneOf(options.method, 'auto', methods, '--method');
   const forecast = forecastExact(live, bound, statistic.name);
-  const { method, reason } = settleMethod({ asked, statistic, bound, rule, forecast, effort });
+  const design = designOf({ table, live, statistic, tail, rule, asked, effort }, options);
+  // Where both margins are not fixed, the conditional p stands beside, exact where that can be had.
+  const beside = design.kind === 'conditional' ? asked : forecast.workUnits <= effort ? 'exact' : 'auto';
+  const conditional = settleMethod({ asked: beside, statistic, bound, rule, forecast, effort });
   const alpha = share(options.alpha, 0.05, '--alpha');
-  const drawing = drawsOf(options, asked, alpha);
+  const drawing = design.kind === 'bootstrap' ? null : drawsOf(options, asked, alpha);
   if (options.seed === '') {
     throw usageProblem({
       code: 'empty-seed',
@@ -58,6 +76,7 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
       : statistic.shape === '2x2' && (named?.groups === 'columns' ? live.columns : live.rows) < 2
         ? null
         : 0;
+  const method = design.echo.method ?? conditional.method;
   const sampled = method === 'sample';
   const bootstrap = bootstrapOf(options, twoByTwo, live);
   const drawsAnything = sampled || bootstrap !== undefined;
@@ -68,7 +87,7 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     twoSidedRule: rule,
     method,
     methodAsked: asked,
-    methodReason: reason,
+    methodReason: conditional.reason,
     forecast: Object.freeze(forecast),
     groups: named?.groups ?? null,
     event: named?.eventLabel ?? null,
@@ -78,8 +97,9 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     ...(options.control === undefined ? {} : { control: options.control }),
     ...orderEcho(table, live, options, echo),
     fixed: 'both',
-    ...(sampled ? drawing : { draws: null }),
+    ...(sampled && drawing !== null ? drawing : { draws: null }),
     ...(bootstrap === undefined ? {} : { bootstrap }),
+    ...design.echo,
     seed: drawsAnything ? (options.seed ?? freshSeed()) : null,
     tableKey: options.tableKey ?? '',
     generator: drawsAnything ? generatorName : null,
@@ -89,7 +109,16 @@ export function makePlan(table: Table, live: LiveTable, options: PlanOptions): P
     confidence: share(options.confidence, 0.95, '--confidence'),
     samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
   });
-  return { plan, statistic, bound, valueOfOnlyTable, named, choices };
+  return {
+    plan,
+    statistic,
+    bound,
+    valueOfOnlyTable,
+    named,
+    design: design.kind,
+    conditional: { method: conditional.method, forecast },
+    choices,
+  };
 }
 
 /**

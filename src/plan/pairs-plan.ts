@@ -55,6 +55,9 @@ const unread = [
   'ordered',
   'compare',
   'control',
+  'fixed',
+  'outcomeOrder',
+  'nuisanceRisk',
 ] as const;
 
 /** Wishes that no analysis of pairs reads. @throws Problem (usage) `option-without-effect`. */

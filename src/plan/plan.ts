@@ -1,6 +1,7 @@
 // The plan: everything a run will do, checked and frozen before work starts, echoed whole in the result.
 import type { OrderingName } from '../null/contract.js';
-import type { ExactEngine, Forecast, PairsEngine, StrataEngine } from '../null/forecast.js';
+import type { PlannedForecast } from '../null/forecast.js';
+import type { FixedSide, OutcomeOrder } from './design.js';
 import type { OwnStatistic } from '../statistic/own.js';
 import type { ScoreWish } from './scores.js';
 
@@ -43,6 +44,12 @@ export interface PlanOptions {
   readonly control?: string;
   /** Cells: true goes up to the bound of `effort` and draws where that is not enough, false leaves them out; default: what is cheap. */
   readonly cells?: boolean;
+  /** What the study held fixed. Default: both, as far as is known. */
+  readonly fixed?: FixedSide;
+  /** With one margin of a 2x2 table fixed: what makes an outcome as extreme. Default: the statistic. */
+  readonly outcomeOrder?: OutcomeOrder;
+  /** With one margin of a 2x2 table fixed: gamma of Berger & Boos (1994), in (0, 1). Default: none. */
+  readonly nuisanceRisk?: number;
   readonly method?: Method;
   /** Number of sampled tables, 1 to 1e12, or (the default) until p is settled against alpha. */
   readonly draws?: number | 'auto';
@@ -93,7 +100,7 @@ export interface Plan {
   /** Asked for, before `auto` was settled. */
   readonly methodAsked: Method;
   readonly methodReason: string;
-  readonly forecast: Forecast<ExactEngine | PairsEngine | StrataEngine>;
+  readonly forecast: PlannedForecast;
   readonly groups: 'rows' | 'columns' | null;
   readonly event: string | null;
   readonly reference: string | null;
@@ -106,10 +113,13 @@ export interface Plan {
   /** In lowest terms, such as "2/3"; for power-divergence. */
   readonly lambda?: string;
   readonly ordered?: 'rows' | 'columns' | 'both';
-  /** What chance leaves as it is: both margins, those of every stratum, the clusters, or the pairs but not their direction. */
-  readonly fixed: 'both' | 'strata' | 'clusters' | 'pairs';
   readonly compare?: 'rows' | 'columns';
   readonly control?: string;
+  /** What the study fixed; or what chance leaves as it is: margins of every stratum, the clusters, the pairs. */
+  readonly fixed: FixedSide | 'strata' | 'clusters' | 'pairs';
+  /** These two for two groups of fixed size. */
+  readonly outcomeOrder?: OutcomeOrder;
+  readonly nuisanceRisk?: number;
   readonly draws: number | 'auto' | null;
   /** These three for draws `auto` only. */
   readonly mostDraws?: number;

@@ -61,6 +61,9 @@ const readBy: Readonly<Record<string, readonly string[]>> = {
   cells: [],
   compare: [],
   control: [],
+  fixed: [],
+  outcomeOrder: [],
+  nuisanceRisk: [],
   statisticDigest: [],
 };
 

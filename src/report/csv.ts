@@ -23,6 +23,8 @@ const levelOf = (error: ReturnType<typeof sampling>): number | undefined =>
   error?.kind === 'sampling' ? error.confidence : error?.level;
 const standardErrorOf = (error: ReturnType<typeof sampling>): number | null | undefined =>
   error?.kind === 'sampling' ? error.standardError : undefined;
+const maximum = (p: PValue): ErrorOf<'nuisance-maximum'> | undefined =>
+  p.errors.find((error) => error.kind === 'nuisance-maximum');
 const isHeadlineStatistic = (p: PValue, { statistic }: Result): boolean => p.statistic === statistic.name;
 
 /** The published columns, in order; names as in the JSON result. An empty cell says: does not apply, or not known. */
@@ -76,6 +78,18 @@ export const csvColumns: readonly Column[] = [
   { name: 'total', words: 'sum of its counts', cell: (_, { input }) => input.total },
   { name: 'seed', words: 'seed of the draws', cell: (_, { plan }) => plan.seed },
   { name: 'version', words: 'version of keepsum', cell: (_, { tool }) => tool.version },
+  { name: 'fixed', words: 'what the study held fixed', cell: (_, { plan }) => plan.fixed },
+  { name: 'nuisance', words: 'the proportion at which an unconditional p is largest', cell: (p) => p.nuisance?.value },
+  {
+    name: 'nuisanceSecond',
+    words: 'with the total fixed, that of the first column',
+    cell: (p) => p.nuisance?.second,
+  },
+  {
+    name: 'maximumError',
+    words: 'how far an unconditional p can lie above the true maximum, relative',
+    cell: (p) => maximum(p)?.relative,
+  },
 ];
 
 export const csv: Format = {

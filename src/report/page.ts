@@ -9,6 +9,7 @@ import {
   tiesSentence,
 } from '../result/describe.js';
 import { levelSentences } from '../result/level-words.js';
+import { designSentences } from '../result/design-words.js';
 import { quoted, shown } from '../result/label-words.js';
 import { strataInWords } from '../result/strata-words.js';
 import { digits, percentWords } from '../result/number-words.js';
@@ -81,6 +82,7 @@ const sectionsOf = (result: Result): Section[] => [
   pairsSection(result),
   { heading: 'Which cells?', blocks: cellsBlocks(result) },
   { heading: 'Which lines differ?', blocks: comparisonBlocks(result) },
+  { heading: 'If the study fixed something else', blocks: designSentences(result).map(plain) },
   { heading: 'Would an approximation do?', blocks: footing(result) },
   { heading: 'Before you use it', blocks: cautionsFor(result).map(({ text, tone }) => sentence(text, tone)) },
   { heading: 'To run it again', blocks: again(result) },

@@ -1,5 +1,6 @@
 // The setting of a test in sentences: where the counts came from, what was missing, what chance was taken to be, and
 // which method was picked and why.
+import { chanceSentence } from '../result/design-words.js';
 import { quoted } from '../result/label-words.js';
 import { countWords } from '../result/number-words.js';
 import { coinSentence } from './sections/pairs.js';
@@ -66,12 +67,17 @@ export function missingSentences({ input: { missing } }: Result): string[] {
 const lackingWords = (what: string, records: number): string[] =>
   records === 0 ? [] : [`${what} in ${countWords(records)}`];
 
-const chanceWords: Readonly<Record<Result['plan']['fixed'], string>> = {
-  both: 'Chance deals the counts anew with every row and column total held.',
+const chanceWords: Readonly<Record<'strata' | 'pairs' | 'clusters', string>> = {
   strata: 'Chance deals the counts anew within each stratum, with every row and column total of it held.',
   pairs: coinSentence,
   clusters: 'Chance deals whole clusters to the rows anew, as many to each row as it has.',
 };
+
+function chanceOf({ plan, pValues }: Result): string {
+  const { fixed } = plan;
+  if (fixed === 'strata' || fixed === 'pairs' || fixed === 'clusters') return chanceWords[fixed];
+  return chanceSentence(plan, pValues[0]!);
+}
 
 function scoreSentences(result: Result): string[] {
   const { plan, strata } = result;
@@ -104,7 +110,7 @@ export function methodSentences(result: Result): string[] {
     ...(plan.statisticDigest === undefined
       ? []
       : [`The module of the statistic has the SHA-256 ${plan.statisticDigest}.`]),
-    ...(plan.method === 'asymptotic' ? [] : [chanceWords[plan.fixed]]),
+    ...(plan.method === 'asymptotic' ? [] : [chanceOf(result)]),
     `Method: ${plan.method}, ${picked}${plan.methodReason.replace(/\.$/, '')}.`,
   ];
 }

@@ -2,6 +2,7 @@
 import type { CellEntry } from '../cell/cell-entries.js';
 import type { Effect } from '../effect/contract.js';
 import type { ReadTable } from '../input/read-table.js';
+import type { DesignLine } from '../design/panel.js';
 import type { NamedRoles } from '../plan/roles.js';
 import type { Plan } from '../plan/plan.js';
 import type { PValueEntry } from '../pvalue/contract.js';
@@ -34,6 +35,8 @@ export interface Findings {
   readonly strata?: Result['strata'];
   readonly clusters?: Result['clusters'];
   readonly comparisons?: Result['comparisons'] | undefined;
+  /** What p would be under other designs; for a 2x2 table. */
+  readonly designs?: readonly DesignLine[] | undefined;
   readonly notes: readonly Note[];
 }
 
@@ -49,6 +52,7 @@ export function buildResult(found: Findings): Result {
       ...(named === null ? {} : groupsCompared(read.table, named)),
     },
     pValues: [...found.pValues],
+    ...(found.designs === undefined ? {} : { designs: [...found.designs] }),
     diagnostics: {
       ...found.expectations,
       ...(found.tables === undefined ? {} : { tables: found.tables }),

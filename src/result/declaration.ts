@@ -4,6 +4,7 @@ import { z } from 'zod';
 import { cell } from './declared/cell.js';
 import { clusters } from './declared/clusters.js';
 import { comparisons } from './declared/comparisons.js';
+import { designLine } from './declared/design.js';
 import { effect } from './declared/effect.js';
 import { fragility } from './declared/fragility.js';
 import { input } from './declared/input.js';
@@ -43,6 +44,8 @@ export const resultDeclaration = z.strictObject({
     event: z.string().optional(),
   }),
   pValues: z.array(pValue).min(1),
+  /** For a 2x2 table: what p would be had the study fixed something else. */
+  designs: z.array(designLine).optional(),
   diagnostics,
   effects: z.array(effect).optional(),
   order: order.optional(),

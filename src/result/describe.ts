@@ -3,6 +3,7 @@
 import { pairedForms, pairedStatistics } from '../statistic/paired.js';
 import { statistics } from '../statistic/registry.js';
 import { stratifiedStatistics } from '../statistic/stratified.js';
+import { isBootstrap, largestWords } from './design-words.js';
 import { quoted } from './label-words.js';
 import { countWords, digits, levelWords, probabilityWords, roundedTo, tinyWords } from './number-words.js';
 import type { PValue, PValueError, Result } from './result.js';
@@ -55,8 +56,13 @@ const tailWords = { upper: 'upper-tailed', lower: 'lower-tailed', both: 'two-tai
 
 /** Which p: "two-tailed permutation p (rule: distance)". */
 export function pName(p: PValue): string {
-  const kind = p.method === 'asymptotic' ? 'p' : p.method === 'unconditional' ? 'unconditional p' : 'permutation p';
-  return `${tailWords[p.tail]} ${kind}${p.rule === undefined ? '' : ` (rule: ${p.rule})`}`;
+  return `${tailWords[p.tail]} ${kindOf(p)}${p.rule === undefined ? '' : ` (rule: ${p.rule})`}`;
+}
+
+function kindOf(p: PValue): string {
+  if (p.method === 'asymptotic') return 'p';
+  if (p.method === 'unconditional') return 'unconditional p';
+  return isBootstrap(p) ? 'parametric-bootstrap p' : 'permutation p';
 }
 
 /** The number itself, no further than its error allows. */
@@ -73,8 +79,13 @@ export function besideP(p: PValue, value: number): string {
 }
 
 /** How the p was found, as the end of a clause: "exact", "from 100,000 random tables ...". */
-export function foundWords(p: PValue, seed: string | null, drawn = 'random tables with the same margins'): string {
+export function foundWords(
+  p: PValue,
+  seed: string | null,
+  drawn = `random tables with the same ${isBootstrap(p) ? 'total' : 'margins'}`,
+): string {
   if (p.method === 'exact') return 'exact';
+  if (p.method === 'unconditional') return largestWords(p);
   if (p.method === 'sample') {
     const draws = drawingErrorOf(p)?.draws;
     const many = draws === undefined ? drawn : `${countWords(draws)} ${drawn}`;
@@ -137,15 +148,11 @@ export function pSentence(result: ResultBeforeWords, p: PValue): string {
 
 function shortFoundWords(p: PValue): string {
   if (p.method === 'exact') return ', exact';
+  if (p.method === 'unconditional') return `, ${largestWords(p)}`;
   if (p.method === 'sample') return `${errorAside(p)}, from the same draws`;
-  if (p.method === 'unconditional') return unconditionalWords(p);
   const degrees = p.degreesOfFreedom === undefined ? '' : ` on ${degreesWords(p.degreesOfFreedom)}`;
   return ` by the ${approximationName(p)} approximation${degrees}; its error is unknown`;
 }
-
-/** Which maximum it is. */
-const unconditionalWords = ({ nuisance }: PValue): string =>
-  nuisance === undefined ? '' : `, the largest over the unknown proportion, reached near ${digits(nuisance.value, 3)}`;
 
 /** What the error of a p-value is, one sentence for each kind of error it carries. */
 export const errorSentences = (p: PValue): string[] => p.errors.map((error) => errorSentence(p, error));
@@ -163,6 +170,8 @@ function errorSentence(p: PValue, error: PValueError): string {
     case 'nuisance-maximum':
       return `It is a proved upper bound of a maximum, at most ${error.relative.toExponential(1)} of its value too large.`;
     case 'approximation':
+      if (p.method === 'sample')
+        return 'It is an approximation: fitted proportions stand for the unknown ones, with an error not known here.';
       return 'It rests on an approximation for large counts; its error here is not known.';
   }
 }

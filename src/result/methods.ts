@@ -14,6 +14,7 @@ import {
 } from './describe.js';
 import { cellsMethods } from './cell-words.js';
 import { levelSentences } from './level-words.js';
+import { bootstrapWords, isBootstrap, unconditionalSentence } from './design-words.js';
 import { quoted } from './label-words.js';
 import { shownEffects } from './shown-effects.js';
 import { countWords, levelWords } from './number-words.js';
@@ -94,6 +95,7 @@ function methodSentence(result: ResultBeforeWords, p: PValue): string {
     const source = isTwoByTwo ? 'Fisher 1935' : linear ? 'Pagano & Tritchler 1983' : 'Freeman & Halton 1951';
     return `${name} is exact: it adds up the probabilities, given both margins, of all tables at least as extreme as the observed one (${source}).`;
   }
+  if (p.method === 'unconditional') return unconditionalSentence(name, p, result.plan);
   if (p.method === 'asymptotic') return `${name} comes from ${approximationWords(p)}, which holds for large counts.`;
   return `${name} ${samplingWords(result, p)}`;
 }
@@ -121,6 +123,9 @@ function samplingWords({ plan, clusters }: ResultBeforeWords, p: PValue): string
       `Robbins 1967; Robbins 1970; Howard et al. 2021); p is their upper limit plus the risk ${plan.samplingRisk ?? ''} that they ever err.`
     );
   }
+  if (isBootstrap(p)) {
+    return `was estimated from m = ${draws} ${bootstrapWords}${generator}${seed}. With b of them ${more} it is reported as ${reported}; it is an approximation${interval}.`;
+  }
   return (
     `was estimated from m = ${draws} ${what}, drawn by dealing out labels or cell by cell ` +
     `(Patefield 1981), whichever costs less for these margins${generator}${seed}. ` +
@@ -132,6 +137,7 @@ const approximationWords = (p: PValue, words: (name: string) => string = shortSt
   `the ${approximationName(p)} approximation to ${words(p.statistic)}`;
 
 function ruleSentence(p: PValue): string | undefined {
+  if (p.method === 'unconditional' && p.rule === 'probability') return undefined;
   switch (p.rule) {
     case 'distance':
       return 'Two-tailed, a table is as extreme when its statistic lies at least as far from the centre.';

@@ -1,4 +1,5 @@
 // Remarks that a reader of the result should not miss, each with a code that programs can look for.
+import type { DesignKind } from '../plan/design.js';
 import type { Plan } from '../plan/plan.js';
 import type { PValueEntry } from '../pvalue/contract.js';
 import { drawsToSettle } from '../pvalue/draws-to-settle.js';
@@ -98,6 +99,27 @@ export async function unsettledNotes(headline: PValueEntry, plan: Plan): Promise
     {
       code: 'level-inside-interval',
       text: `The interval of the sampled p holds the level ${plan.alpha}; ${more}, or an exact p.`,
+    },
+  ];
+}
+
+/** What a reader should know of the design that was declared. */
+export function designNotes({ fixed, method }: Plan, table: Table, kind: DesignKind): Note[] {
+  const isLarger = table.rowLabels.length > 2 || table.columnLabels.length > 2;
+  if ((fixed === 'rows' || fixed === 'columns') && isLarger && method !== 'asymptotic') {
+    const other = fixed === 'rows' ? 'column' : 'row';
+    return [
+      {
+        code: 'conditional-p-stays-valid',
+        text: `The study fixed the ${fixed === 'rows' ? 'row' : 'column'} totals only. The permutation p given both margins stays valid: it errs at most with probability alpha whatever the ${other} totals turn out to be, and so over all of them together.`,
+      },
+    ];
+  }
+  if (kind !== 'bootstrap') return [];
+  return [
+    {
+      code: 'parametric-bootstrap',
+      text: 'The headline p is a parametric bootstrap: the margins seen stand for the unknown proportions. It is an approximation and not guaranteed; the permutation p beside it is valid for a fixed total too.',
     },
   ];
 }

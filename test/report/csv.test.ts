@@ -18,7 +18,8 @@ describe('the csv report', () => {
     expect(render(samples.waldExact, 'csv').split('\n')[0]).toBe(
       'headline,statistic,value,tail,rule,orderedBy,method,p,log10P,reason,strict,mid,tied,point,degreesOfFreedom,' +
         'guaranteed,relativeError,atLeast,atLeastUpper,atLeastLower,draws,estimate,standardError,intervalLower,' +
-        'intervalUpper,intervalConfidence,stoppedBecause,risk,groups,event,first,second,rows,columns,total,seed,version',
+        'intervalUpper,intervalConfidence,stoppedBecause,risk,groups,event,first,second,rows,columns,total,seed,version,' +
+        'fixed,nuisance,nuisanceSecond,maximumError',
     );
     for (const column of csvColumns) expect(column.words).not.toBe('');
   });

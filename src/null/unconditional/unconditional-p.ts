@@ -29,12 +29,6 @@ export interface UnconditionalP {
   };
 }
 
-/** Counted work in units of about 30 ns. */
-export function unconditionalWork({ firstSize, secondSize }: TwoGroupsSeen): number {
-  const total = firstSize + secondSize;
-  return Math.round(3 * (firstSize + 1) * (secondSize + 1) + 2.5 * total * total + 1000);
-}
-
 /**
  * @param risk gamma of Berger & Boos (1994), 0 for the whole range of the nuisance proportion.
  * Time: O(firstSize secondSize) for the set, and about 100 x (firstSize + secondSize)^2 / 2 for the maximum.

@@ -16,6 +16,8 @@ const forecast = z.strictObject({
     'coin-halves',
     'coin-differences',
     'convolution',
+    'unconditional',
+    'multinomial',
   ]),
   workUnits: z.number().min(0),
   tables: z.number().min(0),
@@ -51,11 +53,15 @@ export const plan = z.strictObject({
     .optional(),
   /** The sides whose lines were declared to be in order. */
   ordered: z.enum(orderedSides).optional(),
-  /** What chance leaves as it is: both margins, those of every stratum, the clusters, or the pairs but not their direction. */
-  fixed: z.enum(['both', 'strata', 'clusters', 'pairs']),
   /** The lines that were compared with each other, or with the one named. */
   compare: z.enum(['rows', 'columns']).optional(),
   control: z.string().optional(),
+  /** What the study fixed; or what chance leaves as it is: margins of every stratum, the clusters, the pairs. */
+  fixed: z.enum(['both', 'rows', 'columns', 'total', 'strata', 'clusters', 'pairs']),
+  /** For two groups of fixed size: what makes an outcome as extreme as the observed one. */
+  outcomeOrder: z.enum(['statistic', 'conditional-p']).optional(),
+  /** Gamma of Berger & Boos (1994), added to p. */
+  nuisanceRisk: level.optional(),
   /** `auto`: until p is settled against alpha, by the rule that the error of the p-value names. */
   draws: z.union([count, z.literal('auto')]).nullable(),
   mostDraws: count.optional(),

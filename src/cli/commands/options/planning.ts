@@ -4,6 +4,7 @@ import { toggle, valued } from '../../arguments/option.js';
 import { standardEffort } from '../../../null/forecast.js';
 import { standardMostDraws, standardRelativeError } from '../../../plan/draws.js';
 import { orderedSides } from '../../../order/questions.js';
+import { fixedSides, outcomeOrders } from '../../../plan/design.js';
 import { methods, tails, twoSidedRules } from '../../../plan/plan.js';
 import { pairedNames } from '../../../statistic/paired.js';
 import { statisticNamed, statisticNames } from '../../../statistic/registry.js';
@@ -34,6 +35,19 @@ export const planning = {
   ),
   tail: valued('The test', 'TAIL', oneOf(tails), `${either(tails)} (upper; for wald, score and trend both)`),
   twoSidedRule: valued('The test', 'RULE', oneOf(twoSidedRules), `for both tails: ${either(twoSidedRules)} (distance)`),
+  fixed: valued('The test', 'SIDE', oneOf(fixedSides), `what the study held fixed: ${either(fixedSides)} (both)`),
+  outcomeOrder: valued(
+    'The test',
+    'ORDER',
+    oneOf(outcomeOrders),
+    `with rows or columns fixed, what makes a 2x2 outcome extreme: ${either(outcomeOrders)} (statistic)`,
+  ),
+  nuisanceRisk: valued(
+    'The test',
+    'GAMMA',
+    betweenZeroAndOne('1e-6'),
+    'likewise, look for the common proportion in an interval only, and add this to p (0)',
+  ),
   groups: valued('The test', 'SIDE', oneOf(sides), `of a 2x2 table, what is compared: ${either(sides)} (rows)`),
   event: valued('The test', 'LABEL', anyText, 'the outcome whose proportions are compared (the first)'),
   reference: valued('The test', 'LABEL', anyText, 'the group compared with (the second)'),

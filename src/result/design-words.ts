@@ -1,0 +1,116 @@
+// Words for what the study held fixed, and for p-values that rest on it.
+import { countWords, digits, probabilityWords, tinyWords } from './number-words.js';
+import type { PValue, Result } from './result.js';
+
+type Fixed = Result['plan']['fixed'];
+
+/** A p from tables drawn with fitted proportions. */
+export const isBootstrap = ({ method, errors }: PValue): boolean =>
+  method === 'sample' && errors.some(({ kind }) => kind === 'approximation');
+
+/** What chance was taken to do, in the report. */
+export function chanceSentence(plan: Result['plan'], headline: PValue): string {
+  if (headline.method !== 'unconditional' && !isBootstrap(headline)) {
+    return plan.fixed === 'both'
+      ? 'Chance deals the counts anew with every row and column total held.'
+      : `The study fixed ${fixedWords(plan.fixed)}; chance deals the counts anew with every row and column total held, which stays valid.`;
+  }
+  if (plan.fixed === 'total') {
+    return 'The study fixed the total only: chance draws a table of that total anew, rows and columns unrelated and their proportions unknown.';
+  }
+  const [line, other] = plan.fixed === 'rows' ? ['row', 'column'] : ['column', 'row'];
+  return `The study fixed the ${line} totals only: chance draws each ${line} anew at its own total, with one unknown proportion common to both; ${other} totals may come out otherwise.${riskWords(plan)}`;
+}
+
+const riskWords = ({ nuisanceRisk }: Result['plan']): string =>
+  nuisanceRisk === undefined
+    ? ''
+    : ` The proportion is looked for in an interval that misses it with probability ${nuisanceRisk} at most, which is added to p (Berger & Boos 1994).`;
+
+const shareWords = (share: number): string => (share === 0 || share === 1 ? String(share) : digits(share, 3));
+
+export function fixedWords(fixed: Fixed): string {
+  switch (fixed) {
+    case 'both':
+      return 'both margins';
+    case 'rows':
+      return 'the row totals only';
+    case 'columns':
+      return 'the column totals only';
+    case 'total':
+      return 'the total only';
+    case 'pairs':
+      return 'the number of pairs';
+    case 'strata':
+      return 'the margins of every stratum';
+    case 'clusters':
+      return 'the clusters';
+  }
+}
+
+/** "exact, the largest over the unknown proportion (found at 0.132)". */
+export const largestWords = (p: Pick<PValue, 'nuisance'>): string => `exact, ${placeWords(p.nuisance)}`;
+
+function placeWords(nuisance: PValue['nuisance']): string {
+  if (nuisance === undefined) return 'the largest over what is unknown';
+  const { value, second } = nuisance;
+  return second === undefined
+    ? `the largest over the proportion common to both groups (found at ${shareWords(value)})`
+    : `the largest over the proportions of the first row and the first column (found at ${shareWords(value)} and ${shareWords(second)})`;
+}
+
+/** The panel: what was assumed, then a line for each other design. */
+export function designSentences({ designs, plan }: Pick<Result, 'designs' | 'plan'>): string[] {
+  if (designs === undefined) return [];
+  const assumed = `Taken as fixed: ${fixedWords(plan.fixed)}${plan.fixed === 'both' ? ' (unless --fixed says what the study held fixed)' : ''}.`;
+  return [assumed, ...designs.filter((line) => !line.assumed).map((line) => lineSentence(line, plan))];
+}
+
+type DesignLine = NonNullable<Result['designs']>[number];
+
+function lineSentence(line: DesignLine, { nuisanceRisk }: Result['plan']): string {
+  const { fixed, p, log10P, reason, workUnits, orderedBy, nuisance, method } = line;
+  const start = `Had the study fixed ${fixedWords(fixed)}, `;
+  if (reason === 'over-bound') {
+    const work = workUnits === undefined ? '' : ` (forecast: ${countWords(Number(workUnits.toPrecision(2)))} units)`;
+    return `${start}p would take more work than this panel spends${work}; ask for it with --fixed ${fixed}.`;
+  }
+  const number = p === null ? tinyWords(log10P ?? 0) : probabilityWords(p);
+  const place =
+    nuisance === undefined
+      ? ''
+      : nuisance.second === undefined
+        ? `, at a common proportion of ${shareWords(nuisance.value)}${nuisanceRisk === undefined ? '' : `, the risk ${nuisanceRisk} added too`}`
+        : `, at proportions of ${shareWords(nuisance.value)} and ${shareWords(nuisance.second)}`;
+  const kind =
+    method === 'unconditional' ? 'unconditional' : method === 'sample' ? 'sampled permutation' : 'permutation';
+  return `${start}p would be ${number} (${kind}, ordered by ${orderedBy ?? 'nothing'}${place}).`;
+}
+
+/** For the methods paragraph. */
+export function unconditionalSentence(name: string, p: PValue, plan: Result['plan']): string {
+  if (plan.fixed === 'total') {
+    return (
+      `${name} is exact for a table of which only the total was fixed beforehand: the largest probability, over the unknown proportions of the first row ` +
+      `and the first column, of all tables at least as extreme as the observed one (Barnard 1947). ${boundSentence}`
+    );
+  }
+  const order =
+    plan.outcomeOrder === 'conditional-p'
+      ? `, ordered by their ${p.orderedBy} (Boschloo 1970)`
+      : ' (Barnard 1945; Suissa & Shuster 1985)';
+  const risk =
+    plan.nuisanceRisk === undefined
+      ? ''
+      : ` The proportion was looked for in a ${digits(1 - plan.nuisanceRisk, 8)} confidence interval, and ${plan.nuisanceRisk} added to p (Berger & Boos 1994).`;
+  return (
+    `${name} is exact for two groups whose sizes were fixed beforehand: the largest probability, over the unknown proportion common to both groups, ` +
+    `of all outcomes at least as extreme as the observed one${order}. ${boundSentence}${risk}`
+  );
+}
+
+const boundSentence =
+  'The maximum is bounded from above by the Bernstein coefficients of that probability on ever smaller intervals (Bernstein 1912; de Casteljau 1959), and p is that bound.';
+
+export const bootstrapWords =
+  'random tables with the same total, drawn with the proportions fitted under independence (parametric bootstrap; Davison & Hinkley 1997)';
