@@ -20,11 +20,21 @@ export async function besideThe(
   const { plan, statistic, bound, named } = prepared;
   const { table } = read;
   const effects = await effectsOf(table, live, isTwoByTwo(table, live) ? named : null, plan);
-  const { leastAttainable, fragility } = await fragilityOf(table, live, prepared, options);
+  // Rules and moved counts are those of the p given both margins.
+  const isConditional = prepared.design === 'conditional';
+  const { leastAttainable, fragility } = isConditional
+    ? await fragilityOf(table, live, prepared, options)
+    : { leastAttainable: undefined, fragility: undefined };
   const [headline, ...others] = pValues;
   const isTwoSided = headline!.tail === 'both' || (statistic.sided === 'upper' && headline!.tail === 'upper');
   const rules =
-    bound === null || named === null || live.rows !== 2 || live.columns !== 2 || !isTwoSided || statistic.own
+    !isConditional ||
+    bound === null ||
+    named === null ||
+    live.rows !== 2 ||
+    live.columns !== 2 ||
+    !isTwoSided ||
+    statistic.own
       ? []
       : await pByRule(live, statistic, bound, named, plan);
   return {
