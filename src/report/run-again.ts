@@ -33,7 +33,7 @@ export function againInWords({ input, plan }: Result): string {
     ...(plan.lambda === undefined ? [] : [`lambda ${plan.lambda}`]),
     ...(plan.ordered === undefined ? [] : [`ordered ${plan.ordered}`]),
     ...(plan.bootstrap === undefined ? [] : [`bootstrap ${plan.bootstrap}`]),
-    ...(plan.fixed === 'both' ? [] : [`fixed ${plan.fixed}`]),
+    ...(declaredFixed(plan.fixed) === null ? [] : [`fixed ${plan.fixed}`]),
     ...(plan.outcomeOrder === undefined ? [] : [`outcome order ${plan.outcomeOrder}`]),
     ...(plan.nuisanceRisk === undefined ? [] : [`nuisance risk ${plan.nuisanceRisk}`]),
     `method ${plan.method}`,
@@ -132,6 +132,10 @@ function roleOptions({ plan, statistic, input }: Result): Option[] {
   ];
 }
 
+/** Strata, clusters and pairs are declared by options of their own. */
+const declaredFixed = (fixed: Result['plan']['fixed']): string | null =>
+  fixed === 'rows' || fixed === 'columns' || fixed === 'total' ? fixed : null;
+
 const planOptions = (result: Result): Option[] => planOptionsOf(result.plan, roleOptions(result));
 
 const planOptionsOf = (plan: Result['plan'], roles: readonly Option[]): Option[] => [
@@ -146,7 +150,7 @@ const planOptionsOf = (plan: Result['plan'], roles: readonly Option[]): Option[]
   ...optional('compare', plan.compare),
   ...optional('control', plan.control),
   ...optional('lambda', plan.lambda),
-  ...optional('fixed', plan.fixed === 'both' ? null : plan.fixed),
+  ...optional('fixed', declaredFixed(plan.fixed)),
   ...optional('outcome-order', plan.outcomeOrder === 'statistic' ? null : plan.outcomeOrder),
   ...optional('nuisance-risk', plan.nuisanceRisk),
   ...optional('method', plan.method),
