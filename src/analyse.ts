@@ -58,6 +58,7 @@ export interface Answer {
   /** Pairs have theirs off the diagonal; default: those of independence. */
   readonly expectations?: Findings['expectations'];
   readonly effects?: Findings['effects'];
+  readonly quasi?: Findings['quasi'];
   readonly notes: readonly Note[];
   /** What was settled about the cells, its draws made; left out where they are not wanted. */
   readonly cells?: CellInquiry | undefined;
@@ -84,9 +85,10 @@ export async function analyse(
   }
   const found = await find(read, options, surroundings, true);
   const { cells, prepared } = found;
-  const byOrder = prepared.plan.paired
-    ? undefined
-    : await orderedAnswers(found, options, (wishes) => answer(found.read, wishes, surroundings));
+  const byOrder =
+    prepared.plan.paired || found.quasi
+      ? undefined
+      : await orderedAnswers(found, options, (wishes) => answer(found.read, wishes, surroundings));
   // What stands beside a p of pairs is part of their answer.
   const beside = isWhole(prepared) && !prepared.plan.paired ? await besideThe(found, prepared, options) : {};
   const comparisons = prepared.plan.paired
@@ -134,6 +136,7 @@ async function find(
   withCells: boolean,
 ): Promise<Answer> {
   const given = 'table' in data ? data : fromProgram(data);
+  if (given.table.impossible !== undefined) return (await import('./analyse-quasi.js')).answerQuasi(given, options);
   const pairs = options.paired ? await import('./analyse-pairs.js') : null;
   pairs?.refuseUnreadByPairs(options);
   const read = pairs === null ? given : pairs.squareTable(given);

@@ -21,6 +21,9 @@ const grouped = /^[0-9]{1,3}([,.'’_ \u00a0\u202f][0-9]{3})+$/;
 export const severalCounts = /^[0-9]+([;|\s]\s*[0-9]+)+$/;
 const missingWords = new Set(['na', 'n/a', '#n/a', 'nan', 'null']);
 
+/** A cell that cannot be: no unit could ever fall into it. */
+export const isImpossibleText = (text: string): boolean => text.trim() === '-';
+
 /** Missing values as people and programs write them: nothing but blanks, NA, N/A, NaN, null, in any case. */
 export function isMissingText(text: string): boolean {
   const trimmed = text.trim();

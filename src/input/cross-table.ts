@@ -10,10 +10,10 @@ import { delimiterText, detectDelimiter } from './delimiter.js';
 import { commentsBelowData, fileAndPlace, placeInText } from './field-place.js';
 import { decodeText } from './file-text.js';
 import type { GridOptions } from './grid.js';
-import { countsFromGrid, placed } from './grid.js';
+import { countsFromGrid, placed, type GridCounts } from './grid.js';
+import { dataProblem } from '../problem/problem.js';
 import type { LayoutOptions } from './layout.js';
 import { detectLayout } from './layout.js';
-import type { LabelledCounts } from './level-order.js';
 import { orderLevels } from './level-order.js';
 import type { Delimiter, InputNote, ReadTable, SourceFacts } from './read-table.js';
 import type { Line } from './rectangle.js';
@@ -48,11 +48,13 @@ export function readCrossTable(bytes: Uint8Array, options: CrossTableOptions): R
   const comments = commentNotes(text, separator);
   const blocks = blocksOf(lines, options.strata !== undefined, sourceName);
   if (blocks === undefined) {
-    const { facts, notes, counts } = readBlock(lines, delimiter, options, place);
-    const table = placed(orderLevels(counts, options), sourceName);
+    const { facts, notes, counts, marked } = readBlock(lines, delimiter, options, place);
+    const table = placed(marked(orderLevels(counts, options)), sourceName);
     return { table, source: { delimiter, ...facts }, sha256, missing: null, notes: [...comments, ...notes] };
   }
   const parts = blocks.map(({ label, lines: own }) => ({ label, ...readBlock(own, delimiter, options, place) }));
+  const barred = parts.find(({ marked, counts }) => marked(counts).impossible !== undefined);
+  if (barred !== undefined) throw impossibleInStrata(sourceName, barred.label);
   const strata = parts.map(({ label, counts }) => ({ label, ...counts }));
   const table = placed(orderLevels(pooled(strata), options), sourceName);
   return {
@@ -71,7 +73,7 @@ function readBlock(
   delimiter: Delimiter,
   options: CrossTableOptions,
   place: (record: number, field: number) => string,
-): { counts: LabelledCounts; facts: Omit<SourceFacts, 'delimiter'>; notes: readonly InputNote[] } {
+): Pick<GridCounts, 'counts' | 'marked' | 'notes'> & { facts: Omit<SourceFacts, 'delimiter'> } {
   const { sourceName } = options;
   const rectangle = makeRectangle(lines, place);
   const rows = rectangle.lines;
@@ -89,7 +91,7 @@ function readBlock(
   const raw = looksLikeRecords(fields, top, side, fieldPlace);
   if (raw !== undefined) throw raw;
 
-  const { counts, totalsLeftOut, notes } = countsFromGrid(
+  const { counts, marked, totalsLeftOut, notes } = countsFromGrid(
     {
       texts,
       rowLabels: layout.labelColumn ? fields.slice(top).map((row) => row[0]!) : null,
@@ -107,8 +109,16 @@ function readBlock(
     labelColumn: layout.labelColumn,
     ...(totalsLeftOut.length > 0 ? { totalsLeftOut } : {}),
   };
-  return { counts, facts, notes: [...rectangle.notes, ...layout.notes, ...notes] };
+  return { counts, marked, facts, notes: [...rectangle.notes, ...layout.notes, ...notes] };
 }
+
+const impossibleInStrata = (place: string, label: string): Error =>
+  dataProblem({
+    code: 'impossible-cells',
+    message: `the block "${label}" has cells declared impossible (-), for which strata are not worked out`,
+    place,
+    hint: 'test each block alone, or write 0 where a cell was merely empty',
+  });
 
 const onceEach = (notes: readonly InputNote[]): InputNote[] =>
   notes.filter(({ text }, index) => notes.findIndex((one) => one.text === text) === index);

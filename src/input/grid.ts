@@ -6,7 +6,7 @@ import { makeTable } from '../table/table.js';
 import type { BadCell } from './count-faults.js';
 import { badCell, countProblem, mostListed } from './count-faults.js';
 import type { CountOrigin } from './count-text.js';
-import { parseCount } from './count-text.js';
+import { isImpossibleText, parseCount } from './count-text.js';
 import { checkLabels, labelsOf } from './grid-labels.js';
 import type { LabelledCounts, OrderOptions, Side } from './level-order.js';
 import { orderLevels } from './level-order.js';
@@ -44,15 +44,17 @@ export interface Grid {
 
 export interface GridCounts {
   readonly counts: LabelledCounts;
+  /** The same lines, in whatever order, with the cells that were written `-` marked as impossible. */
+  marked(parts: LabelledCounts): TableParts;
   readonly totalsLeftOut: readonly Side[];
   readonly notes: readonly InputNote[];
 }
 
-export type GridTable = Omit<GridCounts, 'counts'> & { readonly table: Table };
+export type GridTable = Omit<GridCounts, 'counts' | 'marked'> & { readonly table: Table };
 
 export function tableFromGrid(grid: Grid, options: GridOptions): GridTable {
-  const { counts, ...facts } = countsFromGrid(grid, options);
-  return { ...facts, table: placed(orderLevels(counts, options), grid.place) };
+  const { counts, marked, ...facts } = countsFromGrid(grid, options);
+  return { ...facts, table: placed(marked(orderLevels(counts, options)), grid.place) };
 }
 
 /** The same before the lines are put in order and the counts are checked as a whole. */
@@ -76,6 +78,7 @@ export function countsFromGrid(grid: Grid, options: GridOptions): GridCounts {
   if (rule === 'drop' && !anyFound) notes.push(noTotalsNote);
   return {
     counts,
+    marked: (parts) => withImpossible(parts, grid, view),
     totalsLeftOut: [
       ...(left.rows.length > 0 ? ['row' as const] : []),
       ...(left.columns.length > 0 ? ['column' as const] : []),
@@ -84,7 +87,18 @@ export function countsFromGrid(grid: Grid, options: GridOptions): GridCounts {
   };
 }
 
+/** Cells written `-`, found again by their labels after lines were left out or put in order. */
+function withImpossible(parts: LabelledCounts, grid: Grid, view: TotalsView): TableParts {
+  if (!grid.texts.some((row) => row.some(isImpossibleText))) return parts;
+  const impossible = parts.rowLabels.map((row) => {
+    const texts = grid.texts[view.rowLabels.indexOf(row)];
+    return parts.columnLabels.map((column) => isImpossibleText(texts?.[view.columnLabels.indexOf(column)] ?? ''));
+  });
+  return impossible.flat().includes(true) ? { ...parts, impossible } : parts;
+}
+
 const valueOf = (text: string, origin: CountOrigin): number | null => {
+  if (isImpossibleText(text)) return 0;
   const count = parseCount(text, origin);
   return typeof count === 'number' ? count : null;
 };

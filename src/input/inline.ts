@@ -2,7 +2,7 @@
 import { dataProblem, usageProblem } from '../problem/problem.js';
 import type { BadCell } from './count-faults.js';
 import { badCell, countProblem } from './count-faults.js';
-import { isNumberLike, severalCounts } from './count-text.js';
+import { isImpossibleText, isNumberLike, severalCounts } from './count-text.js';
 import type { GridOptions } from './grid.js';
 import { tableFromGrid } from './grid.js';
 import type { ReadTable } from './read-table.js';
@@ -27,7 +27,9 @@ export function looksLikeRow(operand: string): boolean {
   if (pieces.length === 0) return label !== undefined && label !== '';
   const last = pieces[pieces.length - 1]!;
   if (!isNumberLike(last) && /[/\\]|\.[a-z][a-z0-9]*$/i.test(last)) return false;
-  const numbers = pieces.filter((piece) => isNumberLike(piece) || severalCounts.test(piece.trim())).length;
+  const numbers = pieces.filter(
+    (piece) => isNumberLike(piece) || isImpossibleText(piece) || severalCounts.test(piece.trim()),
+  ).length;
   return numbers * 2 >= pieces.length;
 }
 
@@ -86,7 +88,7 @@ function checkRows(
   if (ragged < 0) return;
   const bad = rows.flatMap((row, i) =>
     row
-      .map((text, j) => badCell(text, 'typed', () => cellPlace(i, j)))
+      .map((text, j) => (isImpossibleText(text) ? undefined : badCell(text, 'typed', () => cellPlace(i, j))))
       .filter((cell): cell is BadCell => cell !== undefined),
   );
   if (bad.length > 0) throw countProblem(bad, bad.length);

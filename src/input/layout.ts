@@ -5,7 +5,7 @@
 //                 text mixed: asked back.
 // What cannot be told from the text is said in a note, so that no line of names is ever counted unseen.
 import { dataProblem } from '../problem/problem.js';
-import { isMissingText, isNumberLike } from './count-text.js';
+import { isImpossibleText, isMissingText, isNumberLike } from './count-text.js';
 import type { InputNote } from './read-table.js';
 import { shownValue } from './shown-value.js';
 
@@ -22,7 +22,7 @@ export interface Layout {
   readonly notes: readonly InputNote[];
 }
 
-const isText = (cell: string): boolean => !isMissingText(cell) && !isNumberLike(cell);
+const isText = (cell: string): boolean => !isMissingText(cell) && !isNumberLike(cell) && !isImpossibleText(cell);
 const isEmpty = (cell: string | undefined): boolean => cell === undefined || cell.trim() === '';
 
 /** @param rows one or more, none of them all empty; @param place of a field, for the problem */

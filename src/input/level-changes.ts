@@ -1,7 +1,7 @@
 // Levels merged, kept or dropped before anything else is done with a table. The same plan serves one table and many that share their
 // levels (strata). What was done, and how many counts it left out, goes into the result.
 import { nearest } from '../problem/suggest.js';
-import { usageProblem, type Problem } from '../problem/problem.js';
+import { dataProblem, usageProblem, type Problem } from '../problem/problem.js';
 import { makeTable } from '../table/table.js';
 import { readWishes, type LevelSide, type LevelWish, type LevelWishes } from './level-wishes.js';
 import type { Cluster, ReadTable } from './read-table.js';
@@ -79,6 +79,7 @@ export function changeLevels(read: ReadTable, wishes: LevelWishes): ReadTable {
   const labels = (lines: readonly Level[]): string[] => lines.map(({ label }) => label);
   const changedTable = makeTable({
     counts: regroup(table.counts, plan),
+    ...(table.impossible === undefined ? {} : { impossible: impossibleAfter(table.impossible, plan) }),
     rowLabels: labels(plan.rows),
     columnLabels: labels(plan.columns),
   });
@@ -101,6 +102,23 @@ function regroupedClusters(clusters: readonly Cluster[], { rows, columns }: Leve
     return row < 0 || counts.every((n) => n === 0) ? [] : [{ label, row, counts }];
   });
 }
+
+/** @throws Problem (data) `mixed-cells` where a merged cell would be impossible in part. */
+const impossibleAfter = (impossible: readonly (readonly boolean[])[], { rows, columns }: LevelPlan): boolean[][] =>
+  rows.map((row) =>
+    columns.map((column) => {
+      const parts = row.from.flatMap((i) => column.from.map((j) => impossible[i]![j]!));
+      if (parts.includes(true) && parts.includes(false)) {
+        throw dataProblem({
+          code: 'mixed-cells',
+          message: `the cell of "${row.label}" and "${column.label}" would be impossible in part`,
+          place: '--merge',
+          hint: 'merge only levels that are impossible (-) in the same cells',
+        });
+      }
+      return parts.includes(true);
+    }),
+  );
 
 function changed(levels: readonly Level[], wish: LevelWish): Level[] {
   const isNamed = ({ label }: Level): boolean => wish.labels.includes(label);

@@ -13,6 +13,9 @@ export type PairsEngine = 'coin-walk' | 'coin-halves' | 'coin-differences';
 /** Over strata: the laws of the strata, combined one by one. */
 export type StrataEngine = 'convolution';
 
+/** A chain of tables with impossible cells. */
+export type ChainEngine = 'chain';
+
 export interface Forecast<Engine = ExactEngine> {
   /** The engine that would do the exact work. */
   readonly engine: Engine;
@@ -24,7 +27,9 @@ export interface Forecast<Engine = ExactEngine> {
 }
 
 /** That of a plan: the last two where not both margins are fixed. */
-export type PlannedForecast = Forecast<ExactEngine | PairsEngine | StrataEngine | 'unconditional' | 'multinomial'>;
+export type PlannedForecast = Forecast<
+  ExactEngine | PairsEngine | StrataEngine | ChainEngine | 'unconditional' | 'multinomial'
+>;
 
 export const secondsPerUnit = 3e-8;
 

@@ -40,6 +40,17 @@ export interface MaximumError {
   relative: number;
 }
 
+/** From a chain of tables that depend on one another. */
+export interface ChainError {
+  kind: 'chain';
+  form: 'serial';
+  chains: number;
+  tables: number;
+  atLeast: number;
+  stepsBetween: number;
+  moves: number;
+}
+
 export interface ApproximationError {
   kind: 'approximation';
 }
@@ -64,7 +75,7 @@ export interface PValueEntry {
   /** Where an unconditional p is largest, and the proved bound of it. */
   nuisance?: { value: number; second?: number; certifiedUpper: number };
   guaranteed: boolean;
-  errors: (RoundingError | SamplingError | SequentialError | MaximumError | ApproximationError)[];
+  errors: (RoundingError | SamplingError | SequentialError | MaximumError | ChainError | ApproximationError)[];
 }
 
 /** What a p-value is asked for: a tail, and for two tails a rule. */

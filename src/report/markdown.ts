@@ -54,7 +54,11 @@ function tableText(input: InputEcho): string {
     row(headings),
     ruleUnder(headings),
     ...input.counts.map((counts, i) =>
-      row([labelText(input.rowLabels[i]!), ...counts.map(countWords), bold(countWords(input.rowTotals[i]!))]),
+      row([
+        labelText(input.rowLabels[i]!),
+        ...counts.map((n, j) => (input.impossible?.[i]?.[j] ? '-' : countWords(n))),
+        bold(countWords(input.rowTotals[i]!)),
+      ]),
     ),
     row([bold('all'), ...[...input.columnTotals, input.total].map((total) => bold(countWords(total)))]),
   ].join('\n');

@@ -16,6 +16,7 @@ import { digits, percentWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
 import { cautionsFor } from './cautions.js';
 import { pairsQuestion, pairsSection } from './sections/pairs.js';
+import { quasiSection } from './sections/quasi.js';
 import { againCommand, againInWords, againSentences } from './run-again.js';
 import { comparisonBlocks } from './sections/comparisons.js';
 import { orderSection } from './sections/order.js';
@@ -83,6 +84,7 @@ const sectionsOf = (result: Result): Section[] => [
   { heading: 'Which cells?', blocks: cellsBlocks(result) },
   { heading: 'Which lines differ?', blocks: comparisonBlocks(result) },
   { heading: 'If the study fixed something else', blocks: designSentences(result).map(plain) },
+  quasiSection(result),
   { heading: 'Would an approximation do?', blocks: footing(result) },
   { heading: 'Before you use it', blocks: cautionsFor(result).map(({ text, tone }) => sentence(text, tone)) },
   { heading: 'To run it again', blocks: again(result) },

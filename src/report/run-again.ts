@@ -72,7 +72,9 @@ function tableParts({ input, notes, plan }: Result): TableParts | undefined {
       const hasNames = !plan.paired && labels.some((label, j) => label !== `column ${j + 1}`);
       const bare = plan.paired && labels.every((label, j) => label === `level ${j + 1}`);
       return {
-        operands: input.counts.map((row, i) => (bare ? row.join(',') : rowOperand(input.rowLabels[i]!, i, row))),
+        operands: input.counts
+          .map((row, i) => row.map((n, j) => (input.impossible?.[i]?.[j] ? '-' : n)))
+          .map((row, i) => (bare ? row.join(',') : rowOperand(input.rowLabels[i]!, i, row))),
         options: hasNames ? [['column-labels', labels.map(csvLabel).join(',')]] : [],
       };
     }
@@ -112,8 +114,8 @@ const levelLabel = (label: string): string =>
   /[",+=]|^\s|\s$/.test(label) ? `"${label.replaceAll('"', '""')}"` : label;
 
 /** A row as it is typed; without its label where that is the one given to rows that have none. */
-const rowOperand = (label: string, index: number, counts: readonly number[]): string =>
-  label === `row ${index + 1}` ? counts.join(',') : `${label}=${counts.join(',')}`;
+const rowOperand = (label: string, index: number, counts: readonly (number | '-')[]): string =>
+  label === `row ${index + 1}` && counts[0] !== '-' ? counts.join(',') : `${label}=${counts.join(',')}`;
 
 const csvLabel = (label: string): string => (/[",]/.test(label) ? `"${label.replaceAll('"', '""')}"` : label);
 

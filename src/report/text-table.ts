@@ -57,13 +57,21 @@ const labelWords = (label: string): string => (label.trim() === '' ? '(blank)' :
 const widest = (labels: readonly string[]): number => Math.max(...labels.map(displayWidth));
 
 function columnsOf(input: InputEcho): Column[] {
-  const column = (heading: string, counts: readonly number[]): Column => {
-    const words = counts.map(countWords);
+  const column = (
+    heading: string,
+    counts: readonly number[],
+    impossible: readonly (boolean | undefined)[] = [],
+  ): Column => {
+    const words = counts.map((n, i) => (impossible[i] ? '-' : countWords(n)));
     return { heading, counts: words, countWidth: widest(words) };
   };
   return [
     ...input.columnLabels.map((label, j) =>
-      column(labelWords(label), [...input.counts.map((row) => row[j]!), input.columnTotals[j]!]),
+      column(
+        labelWords(label),
+        [...input.counts.map((row) => row[j]!), input.columnTotals[j]!],
+        input.impossible?.map((row) => row[j]),
+      ),
     ),
     column(totalsLabel, [...input.rowTotals, input.total]),
   ];

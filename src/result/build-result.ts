@@ -37,6 +37,7 @@ export interface Findings {
   readonly comparisons?: Result['comparisons'] | undefined;
   /** What p would be under other designs; for a 2x2 table. */
   readonly designs?: readonly DesignLine[] | undefined;
+  readonly quasi?: NonNullable<Result['quasiIndependence']> | undefined;
   readonly notes: readonly Note[];
 }
 
@@ -60,6 +61,7 @@ export function buildResult(found: Findings): Result {
     ...effectParts(found),
     ...(found.byOrder === undefined ? {} : { order: found.byOrder.order }),
     ...(found.fragility === undefined ? {} : { fragility: found.fragility }),
+    ...(found.quasi === undefined ? {} : { quasiIndependence: found.quasi }),
     ...(found.cells === undefined ? {} : { cells: [...found.cells] }),
     ...(found.strata === undefined ? {} : { strata: found.strata }),
     ...(found.clusters === undefined ? {} : { clusters: found.clusters }),
@@ -102,6 +104,7 @@ function inputEcho({ table, source, sha256, missing, levels }: ReadTable): Input
     rowLabels: [...table.rowLabels],
     columnLabels: [...table.columnLabels],
     counts: table.counts.map((row) => [...row]),
+    ...(table.impossible === undefined ? {} : { impossible: table.impossible.map((row) => [...row]) }),
     total: table.total,
     rowTotals: [...table.rowTotals],
     columnTotals: [...table.columnTotals],

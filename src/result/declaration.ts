@@ -48,6 +48,17 @@ export const resultDeclaration = z.strictObject({
   designs: z.array(designLine).optional(),
   diagnostics,
   effects: z.array(effect).optional(),
+  /** Tables with impossible cells: what independence in the others expects. */
+  quasiIndependence: z
+    .strictObject({
+      /** null in impossible cells. */
+      expected: z.array(z.array(z.number().min(0).nullable())),
+      /** Parts that say nothing about each other. */
+      blocks: count,
+      /** Possible cells [row, column] that the margins hold at 0. */
+      heldAtZero: z.array(z.tuple([count, count])),
+    })
+    .optional(),
   order: order.optional(),
   cells: z.array(cell).optional(),
   comparisons: comparisons.optional(),

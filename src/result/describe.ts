@@ -86,6 +86,10 @@ export function foundWords(
 ): string {
   if (p.method === 'exact') return 'exact';
   if (p.method === 'unconditional') return largestWords(p);
+  const chain = p.errors.find((error) => error.kind === 'chain');
+  if (chain !== undefined) {
+    return `from a chain of ${countWords(chain.tables)} tables with the same margins and impossible cells${seed === null ? '' : ` (seed ${quoted(seed)})`}`;
+  }
   if (p.method === 'sample') {
     const draws = drawingErrorOf(p)?.draws;
     const many = draws === undefined ? drawn : `${countWords(draws)} ${drawn}`;
@@ -169,6 +173,12 @@ function errorSentence(p: PValue, error: PValueError): string {
       return sequentialSentence(error);
     case 'nuisance-maximum':
       return `It is a proved upper bound of a maximum, at most ${error.relative.toExponential(1)} of its value too large.`;
+    case 'chain':
+      return (
+        `Its tables form one chain and depend on one another, so no error of drawing is claimed: ${howMany({ ...error, draws: error.tables })} of ` +
+        `${countWords(error.tables)} tables, ${countWords(error.stepsBetween)} steps apart, ${error.atLeast > 1 ? 'were' : 'was'} at least as extreme; ` +
+        `(b + 1) / (m + 1) is a valid p however slowly the chain mixes (Besag & Clifford 1989).`
+      );
     case 'approximation':
       if (p.method === 'sample')
         return 'It is an approximation: fitted proportions stand for the unknown ones, with an error not known here.';

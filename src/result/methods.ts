@@ -18,6 +18,7 @@ import { bootstrapWords, isBootstrap, unconditionalSentence } from './design-wor
 import { quoted } from './label-words.js';
 import { shownEffects } from './shown-effects.js';
 import { countWords, levelWords } from './number-words.js';
+import { quasiMethod, quasiSentence } from './quasi-methods.js';
 import { agreementInterval, agreementOpening, changeMethods } from './pairs-methods.js';
 import { isAboutChange } from './pairs-sentence.js';
 import type { PValue } from './result.js';
@@ -34,11 +35,12 @@ export function methodsFor(result: ResultBeforeWords): string {
     agreement ? agreementOpening(result) : testSentence(result),
     clustersSentence(result),
     rolesSentence(result),
+    quasiSentence(result),
     settingsSentence(result),
     methodSentence(result, headline),
     ...(isOneTableOnly(result)
       ? ['The margins allow one table only, so p is 1.']
-      : [ruleSentence(headline), tiesSentence(headline), besideSentence(result, headline)]),
+      : [ruleSentence(headline), tiesSentence(result, headline), besideSentence(result, headline)]),
     agreement ? agreementInterval(result) : undefined,
     cellsMethods(result),
     effectsSentence(result),
@@ -89,6 +91,7 @@ function methodSentence(result: ResultBeforeWords, p: PValue): string {
   if (p.method === 'exact' && result.clusters !== undefined) {
     return `${name} is exact: it adds up the probabilities of all ways to deal the clusters to the rows, as many to each as it has, that are at least as extreme as the observed one.`;
   }
+  if (result.quasiIndependence !== undefined) return quasiMethod(result, name, p);
   if (p.method === 'exact') {
     const isTwoByTwo = result.input.rowLabels.length === 2 && result.input.columnLabels.length === 2;
     const linear = result.plan.forecast.engine === 'linear';
@@ -152,8 +155,9 @@ function ruleSentence(p: PValue): string | undefined {
   }
 }
 
-function tiesSentence(p: PValue): string | undefined {
+function tiesSentence({ quasiIndependence }: ResultBeforeWords, p: PValue): string | undefined {
   if (p.method === 'asymptotic') return undefined;
+  if (quasiIndependence !== undefined && p.statistic === 'pearson') return undefined;
   const mid = p.mid === null ? '' : ', a mid-p counts them by half (Lancaster 1961)';
   return `Near ties with the observed table were settled by exact arithmetic; ties count as at least as extreme${mid}.`;
 }

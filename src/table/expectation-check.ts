@@ -14,18 +14,17 @@ export interface ExpectationCheck {
  * n <= 40 with an expected count below 5.
  */
 export function checkExpectations(live: LiveTable): ExpectationCheck {
-  let smallest = Infinity;
-  let below = 0;
-  for (let i = 0; i < live.rows; i++) {
-    for (let j = 0; j < live.columns; j++) {
-      const expected = expectedCount(live, i, j);
-      smallest = Math.min(smallest, expected);
-      if (expected < 5) below++;
-    }
-  }
-  const cells = live.rows * live.columns;
-  const twoByTwo = live.rows === 2 && live.columns === 2;
-  const met = twoByTwo ? !(live.total < 20 || (live.total <= 40 && smallest < 5)) : smallest >= 1 && below <= cells / 5;
+  const expected: number[] = [];
+  for (let i = 0; i < live.rows; i++) for (let j = 0; j < live.columns; j++) expected.push(expectedCount(live, i, j));
+  return adviceFor(expected, live.rows === 2 && live.columns === 2, live.total);
+}
+
+/** The same from expected counts, at least one. `total` matters to a 2x2 table only. */
+export function adviceFor(expected: readonly number[], twoByTwo: boolean, total = 0): ExpectationCheck {
+  const smallest = expected.reduce((least, e) => Math.min(least, e), Infinity);
+  const below = expected.filter((e) => e < 5).length;
+  const cells = expected.length;
+  const met = twoByTwo ? !(total < 20 || (total <= 40 && smallest < 5)) : smallest >= 1 && below <= cells / 5;
   return {
     smallestExpected: smallest,
     shareBelowFive: below / cells,

@@ -9,10 +9,14 @@ export interface Table {
   readonly rowTotals: readonly number[];
   readonly columnTotals: readonly number[];
   readonly total: number;
+  /** impossible[row][column]: cells into which no unit could ever fall (structural zeros); left out where there are none. */
+  readonly impossible?: readonly (readonly boolean[])[];
 }
 
 export interface TableParts {
   readonly counts: readonly (readonly number[])[];
+  /** Cells into which no unit could ever fall; their counts are 0. */
+  readonly impossible?: readonly (readonly boolean[])[];
   /** Default: `row 1`, `row 2`, ... */
   readonly rowLabels?: readonly string[];
   /** Default: `column 1`, `column 2`, ... */
@@ -45,7 +49,9 @@ export function makeTable(parts: TableParts): Table {
       hint: 'check that the right columns were named, or that the file is the right one',
     });
   }
+  const impossible = impossibleCells(parts, counts);
   return Object.freeze({
+    ...(impossible === undefined ? {} : { impossible }),
     counts: Object.freeze(counts.map((row) => Object.freeze(row))),
     rowLabels: Object.freeze(rowLabels),
     columnLabels: Object.freeze(columnLabels),
@@ -53,6 +59,23 @@ export function makeTable(parts: TableParts): Table {
     columnTotals: Object.freeze(columnTotals),
     total,
   });
+}
+
+/** @throws Problem (data) `impossible-cell-counted`. */
+function impossibleCells({ impossible }: TableParts, counts: readonly (readonly number[])[]): Table['impossible'] {
+  if (impossible === undefined || !impossible.flat().includes(true)) return undefined;
+  counts.forEach((row, i) =>
+    row.forEach((count, j) => {
+      if (count === 0 || !impossible[i]?.[j]) return;
+      throw dataProblem({
+        code: 'impossible-cell-counted',
+        message: `a cell declared impossible holds ${count}`,
+        place: `row ${i + 1}, column ${j + 1}`,
+        hint: 'units were seen there, so it is not impossible; give its count alone',
+      });
+    }),
+  );
+  return Object.freeze(counts.map((row, i) => Object.freeze(row.map((_, j) => impossible[i]?.[j] ?? false))));
 }
 
 function checkShape(counts: number[][], width: number, rowLabels: string[], columnLabels: string[]): void {

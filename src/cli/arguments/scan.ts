@@ -43,8 +43,8 @@ export function scan(words: readonly string[], declarations: Declarations): Scan
   return { options, operands };
 }
 
-/** `-` is standard input and `-8,2` a row; everything else with a hyphen in front is an option. */
-const looksLikeOption = (word: string): boolean => /^-[^\d.]/.test(word);
+/** `-` is standard input, `-8,2` and `-,2` are rows; everything else with a hyphen in front is an option. */
+const looksLikeOption = (word: string): boolean => /^-[^\d.,]/.test(word);
 
 /** `--draws=5` -> --draws and 5. A letter is never joined to its value: `-output` is a slip for --output, not -o utput. */
 function splitOption(word: string): { typed: string; joined: string | undefined } {

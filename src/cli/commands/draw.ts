@@ -38,6 +38,13 @@ export const drawCommand = command({
       });
     }
     const { table } = await readSource(source, values, shell);
+    if (table.impossible !== undefined) {
+      throw usageProblem({
+        code: 'impossible-cells',
+        message: 'this table has cells declared impossible (-), and tables with such cells are not drawn',
+        hint: 'write 0 where a cell was merely empty',
+      });
+    }
     const { drawTables } = await import('../../draw-tables.js');
     const seed = values.seed ?? (await madeSeed(shell));
     const labels = labelsOf(table);

@@ -53,6 +53,8 @@ export const input = z.strictObject({
   rowLabels: z.array(z.string()),
   columnLabels: z.array(z.string()),
   counts: z.array(z.array(count)),
+  /** Cells into which no unit could ever fall, in the shape of counts; left out where there are none. */
+  impossible: z.array(z.array(z.boolean())).optional(),
   total: count,
   rowTotals: z.array(count),
   columnTotals: z.array(count),

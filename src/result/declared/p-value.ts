@@ -51,6 +51,19 @@ export const nuisance = z.strictObject({
   certifiedUpper: probability,
 });
 
+/** Tables of a chain depend on one another: p is valid, but no error of drawing is known. */
+const chainError = z.strictObject({
+  kind: z.literal('chain'),
+  form: z.literal('serial'),
+  chains: count,
+  /** Tables compared with the observed one, and those of them at least as extreme. */
+  tables: count,
+  atLeast: count,
+  stepsBetween: count,
+  /** Moves that connect all tables. */
+  moves: count,
+});
+
 const approximationError = z.strictObject({ kind: z.literal('approximation') });
 
 export const pValue = z.strictObject({
@@ -79,6 +92,13 @@ export const pValue = z.strictObject({
   /** True when rejecting at p <= a errs at most with probability a under the null. */
   guaranteed: z.boolean(),
   errors: z.array(
-    z.discriminatedUnion('kind', [roundingError, samplingError, sequentialError, maximumError, approximationError]),
+    z.discriminatedUnion('kind', [
+      roundingError,
+      samplingError,
+      sequentialError,
+      maximumError,
+      chainError,
+      approximationError,
+    ]),
   ),
 });

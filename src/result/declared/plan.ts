@@ -18,6 +18,7 @@ const forecast = z.strictObject({
     'convolution',
     'unconditional',
     'multinomial',
+    'chain',
   ]),
   workUnits: z.number().min(0),
   tables: z.number().min(0),

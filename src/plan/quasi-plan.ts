@@ -1,0 +1,123 @@
+// The plan for a table with impossible cells: few wishes make sense there, and every other one is refused.
+import { standardEffort } from '../null/forecast.js';
+import { groupedDigits } from '../numeric/digit-groups.js';
+import { dataProblem, effortProblem, usageProblem } from '../problem/problem.js';
+import { generatorName } from '../random/stream.js';
+import { quasiStatistics, type QuasiStatistic } from '../statistic/quasi.js';
+import { freshSeed } from './fresh-seed.js';
+import { methods, type ChosenMethod, type Method, type Plan, type PlanOptions } from './plan.js';
+import { oneOf, positive, share, wholeNumber } from './settings.js';
+
+/** Tables that a chain compares, unless told. */
+export const standardChainTables = 100_000;
+/** Steps of listing that `auto` tries before it takes a chain. */
+export const stepsToTry = 3e6;
+
+const read = ['statistic', 'tail', 'method', 'draws', 'seed', 'effort', 'alpha', 'confidence', 'samplingConfidence'];
+
+export interface QuasiWishes {
+  readonly statistic: QuasiStatistic;
+  readonly asked: Method;
+  readonly effort: number;
+  /** Steps of listing that may be taken. */
+  readonly steps: number;
+}
+
+/** @throws Problem (usage): `impossible-cells`, `unknown-value`. */
+export function quasiWishes(options: PlanOptions): QuasiWishes {
+  for (const [name, value] of Object.entries(options)) {
+    if (value === undefined || value === false || read.includes(name)) continue;
+    throw refused(`--${name.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`);
+  }
+  if (options.tail !== undefined && options.tail !== 'upper') throw refused(`--tail ${options.tail}`);
+  const { statistic } = options;
+  const found = quasiStatistics.find((name) => name === (statistic ?? 'pearson'));
+  if (found === undefined) throw refused('--statistic');
+  const asked = oneOf(options.method, 'auto', methods, '--method');
+  const effort = positive(options.effort, standardEffort, '--effort');
+  return { statistic: found, asked, effort, steps: asked === 'exact' ? effort : Math.min(effort, stepsToTry) };
+}
+
+const refused = (place: string): Error =>
+  usageProblem({
+    code: 'impossible-cells',
+    message: 'this table has cells declared impossible (-), for which that is not worked out',
+    place,
+    hint: 'with impossible cells: --statistic pearson or likelihood-ratio, upper tail; write 0 where a cell was merely empty',
+  });
+
+/** @param tables how many there are; undefined where they were not all listed. @param moves undefined where there are too many. */
+export function planQuasi(
+  options: PlanOptions,
+  { statistic, asked, effort, steps }: QuasiWishes,
+  tables: number | undefined,
+  moves: number | undefined,
+): Plan {
+  const listed = tables !== undefined;
+  if (asked === 'exact' && !listed) {
+    throw effortProblem({
+      code: 'exact-over-bound',
+      message: `listing the tables takes more than ${steps} steps`,
+      place: '--method exact',
+      hint: 'use --method sample, or raise the bound with --effort',
+    });
+  }
+  const method: ChosenMethod = asked !== 'auto' ? asked : listed ? 'exact' : 'sample';
+  if (method === 'sample' && moves === undefined) {
+    throw dataProblem({
+      code: 'too-many-moves',
+      message: 'more than 50,000 moves are needed to connect the tables with these impossible cells',
+      hint: 'use --method asymptotic',
+    });
+  }
+  if (method === 'sample' && options.draws === 'auto') {
+    throw usageProblem({
+      code: 'chain-of-fixed-length',
+      message: 'a chain has a fixed number of tables: no stopping rule is known to hold for it',
+      place: '--draws auto',
+      hint: `for example --draws ${standardChainTables}`,
+    });
+  }
+  if (options.seed === '') {
+    throw usageProblem({
+      code: 'empty-seed',
+      message: 'the seed is empty',
+      place: '--seed',
+      hint: 'give any text, or leave the option out and one is made and printed',
+    });
+  }
+  const sampled = method === 'sample';
+  const reason = listed
+    ? `${groupedDigits(tables)} ${tables === 1 ? 'table has' : 'tables have'} these margins`
+    : `listing all tables takes more than ${steps} steps`;
+  return Object.freeze({
+    statistic,
+    tail: 'upper',
+    twoSidedRule: null,
+    method,
+    methodAsked: asked,
+    methodReason: asked === 'auto' ? reason : `asked for; ${reason}`,
+    forecast: Object.freeze({
+      engine: sampled ? 'chain' : 'enumeration',
+      workUnits: steps,
+      tables: tables ?? 0,
+      tablesAreCounted: listed,
+      seconds: Number((steps * 3e-8).toPrecision(2)),
+    }),
+    groups: null,
+    event: null,
+    reference: null,
+    fixed: 'both',
+    draws: sampled
+      ? wholeNumber((options.draws as number | undefined) ?? standardChainTables, 1, 1e9, '--draws')
+      : null,
+    seed: sampled ? (options.seed ?? freshSeed()) : null,
+    tableKey: '',
+    generator: sampled ? generatorName : null,
+    blockSize: null,
+    effort,
+    alpha: share(options.alpha, 0.05, '--alpha'),
+    confidence: share(options.confidence, 0.95, '--confidence'),
+    samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
+  });
+}
