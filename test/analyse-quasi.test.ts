@@ -2,6 +2,7 @@
 import { describe, expect, it } from 'vitest';
 import { analyse } from '../src/analyse.js';
 import { readCrossTable } from '../src/input/cross-table.js';
+import { changeLevels } from '../src/input/level-changes.js';
 import { looksLikeRow, readInline } from '../src/input/inline.js';
 import type { PlanOptions } from '../src/plan/plan.js';
 import { render } from '../src/report/formats.js';
@@ -78,5 +79,18 @@ describe('impossible cells', () => {
     ).rejects.toMatchObject({
       code: 'impossible-cell-counted',
     });
+  });
+});
+
+describe('impossible cells elsewhere', () => {
+  it('are refused in blocks that are strata, and kept when levels are merged whole', async () => {
+    const blocks = new TextEncoder().encode('site,x,y\na,-,2\nb,4,5\n\nsite,x,y\na,1,2\nb,4,5\n');
+    expect(() => readCrossTable(blocks, { sourceName: 'f.csv', strata: 'site' })).toThrow(/impossible/);
+    const read = changeLevels(readInline(['a=-,8,3', 'b=6,-,9', 'c=4,-,7']), { merge: ['bc=b+c'] });
+    expect(read.table.impossible).toEqual([
+      [true, false, false],
+      [false, true, false],
+    ]);
+    expect(() => changeLevels(read, { merge: ['all=a+bc'] })).toThrow(/impossible in part/);
   });
 });
