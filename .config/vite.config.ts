@@ -17,7 +17,12 @@ export default defineConfig({
     // Bundled packages ask for their licences to travel with them.
     license: { fileName: 'third-party-licenses.md' },
     rolldownOptions: {
-      input: { main: 'src/cli/main.ts', index: 'src/index.ts', 'sampling-worker': 'src/sampling-worker.ts' },
+      input: {
+        main: 'src/cli/main.ts',
+        index: 'src/index.ts',
+        'sampling-worker': 'src/sampling-worker.ts',
+        'batch-worker': 'src/batch/batch-worker.ts',
+      },
       // piscina starts threads from files of its own, so it stays a package.
       external: [...builtinModules, /^node:/, 'piscina'],
       output: {

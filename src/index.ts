@@ -20,6 +20,11 @@ export { resultJsonSchema } from './result/schema.js';
 export { planPower, type PowerWishes } from './plan-power.js';
 export { powerJsonSchema, type PowerResult } from './result/power-declaration.js';
 
+// many tables
+export { analyseMany, type ManyOptions } from './batch/analyse-many.js';
+export type { BatchLine, CompactLine, ErrorLine, FullLine } from './batch/lines.js';
+export { batchLineJsonSchema, compactLineJsonSchema, errorLineJsonSchema } from './batch/schemas.js';
+
 // random tables with given margins
 export { drawTables, type DrawOptions } from './draw-tables.js';
 

@@ -1,6 +1,7 @@
 // One row per p-value, the headline first, under published columns: for spreadsheets and data frames.
 import { shown } from '../result/label-words.js';
-import type { PValue, Result } from '../result/result.js';
+import type { ResultBeforeWords } from '../result/describe.js';
+import type { PValue } from '../result/result.js';
 import type { Format } from './format.js';
 
 type Cell = string | number | boolean | null | undefined;
@@ -8,7 +9,7 @@ type Cell = string | number | boolean | null | undefined;
 interface Column {
   readonly name: string;
   readonly words: string;
-  cell(p: PValue, result: Result): Cell;
+  cell(p: PValue, result: ResultBeforeWords): Cell;
 }
 
 type ErrorOf<Kind> = Extract<PValue['errors'][number], { kind: Kind }>;
@@ -25,7 +26,7 @@ const standardErrorOf = (error: ReturnType<typeof sampling>): number | null | un
   error?.kind === 'sampling' ? error.standardError : undefined;
 const maximum = (p: PValue): ErrorOf<'nuisance-maximum'> | undefined =>
   p.errors.find((error) => error.kind === 'nuisance-maximum');
-const isHeadlineStatistic = (p: PValue, { statistic }: Result): boolean => p.statistic === statistic.name;
+const isHeadlineStatistic = (p: PValue, { statistic }: ResultBeforeWords): boolean => p.statistic === statistic.name;
 
 /** The published columns, in order; names as in the JSON result. An empty cell says: does not apply, or not known. */
 export const csvColumns: readonly Column[] = [
@@ -95,12 +96,18 @@ export const csvColumns: readonly Column[] = [
 export const csv: Format = {
   words: 'one row for each p-value, for spreadsheets',
   write(result, { rawCsv }) {
-    const rows = result.pValues.map((p) => csvColumns.map((column) => cellText(column.cell(p, result), rawCsv)));
-    return [csvColumns.map((column) => column.name), ...rows].map((row) => `${row.join(',')}\n`).join('');
+    return csvLine(csvColumns.map((column) => column.name)) + csvRows(result, rawCsv).map(csvLine).join('');
   },
 };
 
-function cellText(cell: Cell, raw: boolean): string {
+/** A row for each p-value: one cell for each of the columns. */
+export const csvRows = (result: ResultBeforeWords, raw: boolean): string[][] =>
+  result.pValues.map((p) => csvColumns.map((column) => cellText(column.cell(p, result), raw)));
+
+export const csvLine = (cells: readonly string[]): string => `${cells.join(',')}\n`;
+
+/** A cell as it stands in a row; `raw` leaves what a spreadsheet would run. */
+export function cellText(cell: Cell, raw: boolean): string {
   if (cell === null || cell === undefined) return '';
   if (typeof cell !== 'string') return String(cell);
   return csvField(raw ? cell : disarmed(cell));

@@ -42,16 +42,20 @@ export interface Findings {
 }
 
 export function buildResult(found: Findings): Result {
-  const { plan, read, named } = found;
-  const before: ResultBeforeWords = {
+  const before = beforeWords(found);
+  const { notes, ...parts } = before;
+  return { ...parts, sentence: sentenceFor(before), methods: methodsFor(before), notes };
+}
+
+/** All of a result but its sentences. */
+export function beforeWords(found: Findings): ResultBeforeWords {
+  const { plan, read } = found;
+  return {
     schema: 'keepsum/result/1',
     tool: { name: 'keepsum', version },
     input: inputEcho(read),
     plan,
-    statistic: {
-      ...statisticFound(found),
-      ...(named === null ? {} : groupsCompared(read.table, named)),
-    },
+    statistic: statisticEcho(found),
     pValues: [...found.pValues],
     ...(found.designs === undefined ? {} : { designs: [...found.designs] }),
     diagnostics: {
@@ -68,9 +72,13 @@ export function buildResult(found: Findings): Result {
     ...(found.comparisons === undefined ? {} : { comparisons: found.comparisons }),
     notes: [...found.notes],
   };
-  const { notes, ...parts } = before;
-  return { ...parts, sentence: sentenceFor(before), methods: methodsFor(before), notes };
 }
+
+/** The statistic with its value and the groups that it compares. */
+export const statisticEcho = (found: Findings): Result['statistic'] => ({
+  ...statisticFound(found),
+  ...(found.named === null ? {} : groupsCompared(found.read.table, found.named)),
+});
 
 /** The statistic with its value. */
 export const statisticFound = ({

@@ -29,6 +29,8 @@ const diagnostics = z.strictObject({
 const group = z.strictObject({ label: z.string(), events: count, size: count, proportion: probability.nullable() });
 
 export const resultDeclaration = z.strictObject({
+  /** Lines of a batch: the table's own name. */
+  key: z.string().optional(),
   schema: z.literal('keepsum/result/1'),
   tool: z.strictObject({ name: z.literal('keepsum'), version: z.string() }),
   input,

@@ -2,7 +2,16 @@
 import type { CheckValue } from './check-value.js';
 
 /** Headings of the help, in the order of the flow. */
-export const stages = ['Reading the table', 'The test', 'The tables', 'How p is found', 'The report', 'Other'] as const;
+export const stages = [
+  'Reading the tables',
+  'Reading the table',
+  'The test',
+  'The tables',
+  'How p is found',
+  'The results',
+  'The report',
+  'Other',
+] as const;
 export type Stage = (typeof stages)[number];
 
 export interface OptionDeclaration<T> {

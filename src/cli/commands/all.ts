@@ -17,6 +17,12 @@ export const commands: readonly CommandEntry[] = [
     load: async () => (await import('./test.js')).testCommand,
   },
   {
+    name: 'batch',
+    operands: 'FILE ... | -',
+    summary: 'the same for many tables, one line of results each',
+    load: async () => (await import('./batch.js')).batchCommand,
+  },
+  {
     name: 'draw',
     operands: 'ROW ... | FILE | -',
     summary: 'random tables that keep all row and column totals',
@@ -36,8 +42,8 @@ export const commands: readonly CommandEntry[] = [
   },
   {
     name: 'schema',
-    operands: 'result',
-    summary: 'the JSON Schema of what --format json prints',
+    operands: 'NAME',
+    summary: 'the JSON Schemas of what is read and printed',
     load: async () => (await import('./schema.js')).schemaCommand,
   },
 ];

@@ -4,34 +4,36 @@ import { nameHint } from '../../problem/suggest.js';
 import { destinationFor, sharedOptions } from './shared-options.js';
 import { command } from './command-file.js';
 
-const schemaNames = ['result', 'power', 'selfcheck'] as const;
+const schemas: Readonly<Record<string, () => Promise<object>>> = {
+  result: async () => (await import('../../result/schema.js')).resultJsonSchema(),
+  power: async () => (await import('../../result/power-declaration.js')).powerJsonSchema(),
+  selfcheck: async () => (await import('../../result/self-check-declaration.js')).selfCheckJsonSchema(),
+  'batch-line': async () => (await import('../../batch/schemas.js')).batchLineJsonSchema(),
+  'compact-line': async () => (await import('../../batch/schemas.js')).compactLineJsonSchema(),
+  'error-line': async () => (await import('../../batch/schemas.js')).errorLineJsonSchema(),
+};
+const schemaNames = Object.keys(schemas);
 
 export const schemaCommand = command({
   name: 'schema',
-  usage: [{ line: 'keepsum schema result', words: 'print it' }],
-  purpose: 'Prints the JSON Schema (draft 2020-12) that every JSON result satisfies.',
+  usage: [
+    { line: 'keepsum schema result', words: 'what --format json prints' },
+    { line: 'keepsum schema batch-line', words: 'a line that keepsum batch reads' },
+    { line: 'keepsum schema compact-line', words: 'a line that it writes' },
+    { line: 'keepsum schema error-line', words: 'a line that it writes for a table that cannot be used' },
+  ],
+  purpose: 'Prints the JSON Schema (draft 2020-12) that every such document satisfies.',
   examples: [{ line: 'keepsum schema result', words: 'on the screen, or on to another program' }],
   options: sharedOptions,
   async run(operands, values, shell) {
-    const name = checkName(operands);
+    const schema = schemas[nameIn(operands)]!;
     const destination = await destinationFor(values.output, shell);
-    await destination.write(`${JSON.stringify(await schemaNamed(name), null, 2)}\n`);
+    await destination.write(`${JSON.stringify(await schema(), null, 2)}\n`);
     return 0;
   },
 });
 
-async function schemaNamed(name: (typeof schemaNames)[number]): Promise<object> {
-  switch (name) {
-    case 'result':
-      return (await import('../../result/schema.js')).resultJsonSchema();
-    case 'power':
-      return (await import('../../result/power-declaration.js')).powerJsonSchema();
-    case 'selfcheck':
-      return (await import('../../result/self-check-declaration.js')).selfCheckJsonSchema();
-  }
-}
-
-function checkName(operands: readonly string[]): (typeof schemaNames)[number] {
+function nameIn(operands: readonly string[]): string {
   const [name, ...more] = operands;
   if (name === undefined || more.length > 0) {
     throw usageProblem({
@@ -40,13 +42,12 @@ function checkName(operands: readonly string[]): (typeof schemaNames)[number] {
       hint: `write keepsum schema ${schemaNames[0]}`,
     });
   }
-  const found = schemaNames.find((each) => each === name);
-  if (found === undefined) {
+  if (!schemaNames.includes(name)) {
     throw usageProblem({
       code: 'unknown-schema',
       message: `there is no schema named "${name}"`,
       hint: nameHint(name, schemaNames),
     });
   }
-  return found;
+  return name;
 }

@@ -25,6 +25,13 @@ export const isPlainFile = (path: string): Promise<boolean> =>
     () => false,
   );
 
+/** Bytes of a plain file; undefined for anything else. */
+export const plainSize = (path: string): Promise<number | undefined> =>
+  stat(path).then(
+    (facts) => (facts.isFile() ? facts.size : undefined),
+    () => undefined,
+  );
+
 /** Far beyond any table of counts, and small enough to hold. */
 const mostBytes = 64 * 2 ** 20;
 

@@ -1,0 +1,119 @@
+// One table of a batch, from a line, an object or a file that was read, to its answer - or to what is wrong with it, so that the
+// other tables go on.
+import { analyse, answer, type Answer } from '../analyse.js';
+import { notUtf8 } from '../input/file-text.js';
+import type { ReadTable } from '../input/read-table.js';
+import type { PlanOptions } from '../plan/plan.js';
+import { Problem, type ProblemParts } from '../problem/problem.js';
+import type { Result } from '../result/result.js';
+import type { Surroundings } from '../sampled-answer.js';
+import type { TableParts } from '../table/table.js';
+import { lineDeclaration } from './declaration.js';
+import { misfit, notJson } from './line-problems.js';
+
+/** How every table of a run is treated; plain data, so that it can be sent to a thread. */
+export interface BatchSettings {
+  /** Of all tables; a line's own go over them. With a seed, so that all tables share one. */
+  readonly wishes: PlanOptions & { readonly seed: string };
+  /** Whole results instead of compact lines. */
+  readonly full: boolean;
+  /** How places name the input: a file, `standard input`; for objects, nothing. */
+  readonly sourceName: string;
+}
+
+/** A table to be answered: counts from a line or a program, or a table that an input function read. */
+interface Asked {
+  readonly data: TableParts | ReadTable;
+  readonly wishes: PlanOptions;
+}
+
+interface Named {
+  readonly key: string;
+}
+
+export type Outcome = Named &
+  (
+    | { readonly kind: 'compact'; readonly answer: Answer; readonly wishes: PlanOptions }
+    | { readonly kind: 'full'; readonly result: Result }
+    | { readonly kind: 'error'; readonly error: Readonly<Required<ProblemParts>> }
+  );
+
+/** A table, or what kept it from being read, under its key; `place` is what it was read from. */
+export type TableItem = Named &
+  ({ readonly read: ReadTable; readonly place: string } | { readonly error: Required<ProblemParts> });
+
+/** @param number of the line, from 1: names the table where no key is given. */
+export function answerLine(
+  text: string,
+  number: number,
+  settings: BatchSettings,
+  surroundings: Surroundings,
+): Promise<Outcome> {
+  let value: unknown;
+  const place = `${settings.sourceName}:${number}`;
+  try {
+    value = JSON.parse(text);
+  } catch (thrown) {
+    const damaged = text.includes('\ufffd');
+    const problem = damaged ? notUtf8(place) : notJson((thrown as Error).message);
+    return Promise.resolve(refused(String(number), problem, place));
+  }
+  return answerObject(value, number, place, settings, surroundings);
+}
+
+/** An object as a line would hold it. */
+export async function answerObject(
+  value: unknown,
+  number: number,
+  place: string,
+  settings: BatchSettings,
+  surroundings: Surroundings,
+): Promise<Outcome> {
+  const line = lineDeclaration.safeParse(value);
+  if (!line.success) return refused(keyIn(value) ?? String(number), misfit(value, line.error.issues), place);
+  const { key = number, plan, ...parts } = line.data;
+  const wishes = plan === undefined ? settings.wishes : { ...settings.wishes, ...plan };
+  return settle(String(key), { data: parts as TableParts, wishes: wishes as PlanOptions }, place, settings, surroundings);
+}
+
+export async function answerItem(
+  item: TableItem,
+  settings: BatchSettings,
+  surroundings: Surroundings,
+): Promise<Outcome> {
+  if ('error' in item) return { key: item.key, kind: 'error', error: item.error };
+  return settle(item.key, { data: item.read, wishes: settings.wishes }, item.place, settings, surroundings);
+}
+
+async function settle(
+  key: string,
+  { data, wishes }: Asked,
+  place: string,
+  { full }: BatchSettings,
+  surroundings: Surroundings,
+): Promise<Outcome> {
+  const ofTable = { ...wishes, tableKey: key };
+  try {
+    if (full) return { key, kind: 'full', result: await analyse(data, ofTable, surroundings) };
+    return { key, kind: 'compact', answer: await answer(data, ofTable, surroundings), wishes };
+  } catch (thrown) {
+    if (!(thrown instanceof Problem)) throw thrown;
+    return refused(key, thrown, place);
+  }
+}
+
+export const refused = (key: string, problem: Problem, place: string): Outcome => ({
+  key,
+  kind: 'error',
+  error: errorOf(problem, place),
+});
+
+/** @param place of the table; where in it the problem lies follows. */
+export function errorOf({ code, message, hint, place: inside }: Problem, place: string): Required<ProblemParts> {
+  return { code, message, place: inside === undefined || inside === place ? place : `${place}, ${inside}`, hint };
+}
+
+function keyIn(value: unknown): string | undefined {
+  const key = typeof value === 'object' && value !== null ? (value as { key?: unknown }).key : undefined;
+  return typeof key === 'string' || Number.isSafeInteger(key) ? String(key) : undefined;
+}

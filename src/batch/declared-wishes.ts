@@ -1,0 +1,42 @@
+// What a line of a batch may say under `plan`, declared once: the options of `analyse`, by the same names. The compiler sees to it
+// that none is left out.
+import { z } from 'zod';
+import { methods, tails, twoSidedRules, type PlanOptions } from '../plan/plan.js';
+import { digest, level } from '../result/declared/pieces.js';
+import { statisticNames } from '../statistic/registry.js';
+
+const scores = z.union([z.string(), z.array(z.number())]);
+const draws = z.union([z.int().min(1).max(1e12), z.literal('auto')]);
+
+/** A statistic of the user's own and the table's key come from elsewhere than a line's plan. */
+type FromElsewhere = 'statisticDigest' | 'tableKey';
+
+const options = {
+  statistic: z.enum(statisticNames),
+  tail: z.enum(tails),
+  twoSidedRule: z.enum(twoSidedRules),
+  groups: z.enum(['rows', 'columns']),
+  event: z.string(),
+  reference: z.string(),
+  rowScores: scores,
+  columnScores: scores,
+  lambda: z.union([z.string(), z.number()]),
+  method: z.enum(methods),
+  draws,
+  mostDraws: z.int().min(1000).max(1e12),
+  samplingRisk: level,
+  relativeError: level,
+  seed: z.string().min(1),
+  effort: z.number().positive(),
+  alpha: level,
+  confidence: level,
+  samplingConfidence: level,
+} as const satisfies Record<Exclude<keyof PlanOptions, FromElsewhere>, z.ZodType>;
+
+/** Options that a line may give; each is left out where its default will do. */
+export const lineWishes = z.strictObject(options).partial();
+
+/** The same as a compact line gives them back, where a statistic may be the user's own, known by name and digest. */
+export const compactWishes = z
+  .strictObject({ ...options, statistic: z.string(), statisticDigest: digest })
+  .partial();

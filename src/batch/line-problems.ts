@@ -1,0 +1,62 @@
+// What can be wrong with a line of a batch before its counts are looked at, in words.
+import type { z } from 'zod';
+import { Problem, dataProblem } from '../problem/problem.js';
+import { nameHint } from '../problem/suggest.js';
+import { lineDeclaration } from './declaration.js';
+
+const fields = Object.keys(lineDeclaration.shape);
+const wishes = Object.keys(lineDeclaration.shape.plan.unwrap().shape);
+const example = '{"key":"a","counts":[[8,2],[1,9]]}';
+
+export const notJson = (reason: string): Problem =>
+  dataProblem({
+    code: 'not-json',
+    message: `this line is not JSON (${reason})`,
+    hint: `write one object a line, such as ${example}`,
+  });
+
+/** The first thing that the declaration finds wrong, told with its place in the line. */
+export function misfit(value: unknown, [issue]: readonly z.core.$ZodIssue[]): Problem {
+  const path = issue!.path.map(String);
+  const where = path.reduce((text, part) => (/^\d+$/.test(part) ? `${text}[${part}]` : `${text}.${part}`), '').slice(1);
+  const seen = path.reduce<unknown>((inside, part) => (inside as Record<string, unknown> | undefined)?.[part], value);
+  if (path.length === 0 && issue!.code === 'invalid_type') {
+    return dataProblem({
+      code: 'not-a-table',
+      message: `${short(value)} is not an object with counts`,
+      hint: `write one object a line, such as ${example}`,
+    });
+  }
+  if (issue!.code === 'unrecognized_keys') {
+    const name = issue!.keys[0]!;
+    return dataProblem({
+      code: 'unknown-field',
+      message: `there is no field ${short(name)}${path.length === 0 ? '' : ` in ${where}`}`,
+      hint: nameHint(name, path.length === 0 ? fields : wishes) || 'keepsum schema batch-line lists the fields',
+    });
+  }
+  if (issue!.code === 'invalid_value' && typeof seen === 'string') {
+    return dataProblem({
+      code: 'unknown-value',
+      message: `${short(seen)} is not a value of ${where}`,
+      hint: nameHint(seen, issue!.values.map(String)),
+    });
+  }
+  if (seen === undefined) {
+    return dataProblem({ code: 'missing-field', message: `${where} is missing`, hint: `for example ${example}` });
+  }
+  const negative = path[0] === 'counts' && typeof seen === 'number' && seen < 0;
+  return dataProblem({
+    code: negative ? 'negative-count' : path[0] === 'counts' ? 'not-a-count' : 'bad-field',
+    message: `${where} is ${short(seen)}`,
+    hint:
+      path[0] === 'counts'
+        ? `counts are rows of whole numbers from 0 to 2^53 - 1, as in ${example}`
+        : 'keepsum schema batch-line says what can stand there',
+  });
+}
+
+const short = (value: unknown): string => {
+  const text = JSON.stringify(value) ?? String(value);
+  return text.length > 60 ? `${text.slice(0, 57)}...` : text;
+};

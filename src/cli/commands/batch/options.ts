@@ -1,0 +1,44 @@
+// The options of `keepsum batch`, in the order of its help.
+import { anyText, oneOf } from '../../arguments/check-value.js';
+import { toggle, valued } from '../../arguments/option.js';
+import { planning } from '../options/planning.js';
+import { reading } from '../options/reading.js';
+import { reporting } from '../options/reporting.js';
+import { debugOption, helpOption } from '../shared-options.js';
+import { either } from '../options/words.js';
+
+const formats = ['ndjson', 'csv'] as const;
+
+const { rowLabels: _rowLabels, columnLabels: _columnLabels, ...readingMany } = reading;
+
+export const readingTables = {
+  by: valued(
+    'Reading the tables',
+    'COLUMNS',
+    anyText,
+    'one long file of records: the columns whose values tell its tables apart, separated by commas',
+  ),
+  ...readingMany,
+};
+
+export const batchOptions = {
+  ...readingTables,
+  ...planning,
+  format: valued('The results', 'NAME', oneOf(formats), `${either(formats)} (ndjson)`),
+  full: toggle('The results', 'whole results, one a line, instead of compact lines'),
+  output: valued(
+    'The results',
+    'FILE',
+    anyText,
+    'write to FILE, which takes its name when it is whole; until then FILE.partial holds what is finished',
+    'o',
+  ),
+  resume: toggle('The results', 'go on with a run that ended before its --output was whole'),
+  allowErrors: toggle('The results', 'status 0 although some tables could not be used; their lines say why'),
+  rawCsv: reporting.rawCsv,
+  threads: reporting.threads,
+  noProgress: reporting.noProgress,
+  quiet: reporting.quiet,
+  debug: debugOption,
+  help: helpOption,
+};
