@@ -53,10 +53,8 @@ export function answerLine(
   const place = `${settings.sourceName}:${number}`;
   try {
     value = JSON.parse(text);
-  } catch (thrown) {
-    const damaged = text.includes('\ufffd');
-    const problem = damaged ? notUtf8(place) : notJson((thrown as Error).message);
-    return Promise.resolve(refused(String(number), problem, place));
+  } catch {
+    return Promise.resolve(refused(String(number), text.includes('\ufffd') ? notUtf8(place) : notJson(), place));
   }
   return answerObject(value, number, place, settings, surroundings);
 }
@@ -73,7 +71,13 @@ export async function answerObject(
   if (!line.success) return refused(keyIn(value) ?? String(number), misfit(value, line.error.issues), place);
   const { key = number, plan, ...parts } = line.data;
   const wishes = plan === undefined ? settings.wishes : { ...settings.wishes, ...plan };
-  return settle(String(key), { data: parts as TableParts, wishes: wishes as PlanOptions }, place, settings, surroundings);
+  return settle(
+    String(key),
+    { data: parts as TableParts, wishes: wishes as PlanOptions },
+    place,
+    settings,
+    surroundings,
+  );
 }
 
 export async function answerItem(

@@ -1,6 +1,13 @@
 // Tables of a batch on their way: some of them in a row, answered together, here or on a thread.
 import type { Surroundings } from '../sampled-answer.js';
-import { answerItem, answerLine, answerObject, type BatchSettings, type Outcome, type TableItem } from './answer-table.js';
+import {
+  answerItem,
+  answerLine,
+  answerObject,
+  type BatchSettings,
+  type Outcome,
+  type TableItem,
+} from './answer-table.js';
 import { csvText, lineOf, ndjsonText, type OutputLine } from './write-lines.js';
 
 /** Units in a row: lines as text (blank ones too, they count), objects of a program, or tables already read. */
@@ -82,9 +89,7 @@ const perDraw = 4e-4;
 function workOf(outcome: Outcome): number {
   if (outcome.kind === 'error') return perTable;
   const { plan, pValues } =
-    outcome.kind === 'full'
-      ? outcome.result
-      : { plan: outcome.answer.prepared.plan, pValues: outcome.answer.pValues };
+    outcome.kind === 'full' ? outcome.result : { plan: outcome.answer.prepared.plan, pValues: outcome.answer.pValues };
   if (plan.method === 'exact') return perTable + plan.forecast.seconds * 1000;
   const drawn = pValues[0]!.errors.find(({ kind }) => kind === 'sampling' || kind === 'sequential');
   return perTable + (drawn !== undefined && 'draws' in drawn ? drawn.draws * perDraw : 0);

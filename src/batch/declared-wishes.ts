@@ -37,6 +37,4 @@ const options = {
 export const lineWishes = z.strictObject(options).partial();
 
 /** The same as a compact line gives them back, where a statistic may be the user's own, known by name and digest. */
-export const compactWishes = z
-  .strictObject({ ...options, statistic: z.string(), statisticDigest: digest })
-  .partial();
+export const compactWishes = z.strictObject({ ...options, statistic: z.string(), statisticDigest: digest }).partial();

@@ -27,7 +27,7 @@ export async function* answerInOrder({ source, threads, settings, style }: Batch
   const size = new ChunkSize();
   // A statistic of the user's own is a function, which no thread can be sent.
   let alone = threads < 2 || workerFile === undefined || typeof settings.wishes.statistic === 'object';
-  for (let work = 0; alone || work < shortMilliseconds; ) {
+  for (let work = 0; alone || work < shortMilliseconds;) {
     const chunk = await source.next(size.units);
     if (chunk === null) return;
     const done = await answerChunk({ ...task, chunk }, { threads });

@@ -8,10 +8,10 @@ const fields = Object.keys(lineDeclaration.shape);
 const wishes = Object.keys(lineDeclaration.shape.plan.unwrap().shape);
 const example = '{"key":"a","counts":[[8,2],[1,9]]}';
 
-export const notJson = (reason: string): Problem =>
+export const notJson = (): Problem =>
   dataProblem({
     code: 'not-json',
-    message: `this line is not JSON (${reason})`,
+    message: 'this line is not JSON',
     hint: `write one object a line, such as ${example}`,
   });
 

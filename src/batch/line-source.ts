@@ -46,14 +46,17 @@ export class LineSource implements UnitSource {
     const bytes = done ? new Uint8Array() : value;
     if (this.bytesRead === 0) this.refuse(headProblem(bytes, this.sourceName));
     this.refuse(binaryProblem(bytes, this.bytesRead, this.sourceName));
-    const text = done ? this.decoder.end() : this.decoder.write(Buffer.from(bytes.buffer, bytes.byteOffset, bytes.length));
+    const text = done
+      ? this.decoder.end()
+      : this.decoder.write(Buffer.from(bytes.buffer, bytes.byteOffset, bytes.length));
     this.lines = (this.rest + (this.bytesRead === 0 ? text.replace(/^\ufeff/, '') : text)).split('\n');
     this.bytesRead += bytes.length;
     this.at = 0;
     this.ended = done === true;
     this.rest = this.lines.at(-1)!;
     if (!this.ended || this.rest === '') this.lines.pop();
-    if (this.rest.length > longestLine) this.refuse(longLine(`${this.sourceName}:${this.number + this.lines.length + 1}`));
+    if (this.rest.length > longestLine)
+      this.refuse(longLine(`${this.sourceName}:${this.number + this.lines.length + 1}`));
   }
 
   private refuse(problem: Problem | undefined): void {

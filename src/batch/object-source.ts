@@ -11,8 +11,8 @@ export function objectSource(tables: Iterable<unknown> | AsyncIterable<unknown>)
     async next(most): Promise<Chunk | null> {
       const objects: unknown[] = [];
       while (!ended && objects.length < most) {
-        pending ??= Promise.resolve(iterator.next());
-        // The first one is waited for; further ones are taken along if they are there.
+        pending ??= Promise.resolve().then(() => iterator.next());
+        // The first one is waited for; further ones are taken along if they are there. A failure waits for its turn.
         if (objects.length > 0 && !(await isThere(pending))) break;
         const { done, value } = await pending;
         pending = undefined;
@@ -31,7 +31,7 @@ const isThere = (promise: Promise<unknown>): Promise<boolean> =>
   Promise.race([
     promise.then(
       () => true,
-      () => true,
+      () => false,
     ),
     new Promise<boolean>((resolve) => setImmediate(() => resolve(false))),
   ]);

@@ -34,11 +34,11 @@ export interface RecordColumns {
  */
 export function findColumns(header: readonly string[], names: ColumnNames, sourceName: string): RecordColumns {
   const titles = header.map((name) => name.trim());
-  const rows = indexOf(titles, names.rows, '--rows', sourceName);
-  const columns = indexOf(titles, names.columns, '--columns', sourceName);
-  const count = names.count === undefined ? -1 : indexOf(titles, names.count, '--count', sourceName);
-  const strata = names.strata === undefined ? -1 : indexOf(titles, names.strata, '--strata', sourceName);
-  const cluster = names.cluster === undefined ? -1 : indexOf(titles, names.cluster, '--cluster', sourceName);
+  const rows = columnIndex(titles, names.rows, '--rows', sourceName);
+  const columns = columnIndex(titles, names.columns, '--columns', sourceName);
+  const count = names.count === undefined ? -1 : columnIndex(titles, names.count, '--count', sourceName);
+  const strata = names.strata === undefined ? -1 : columnIndex(titles, names.strata, '--strata', sourceName);
+  const cluster = names.cluster === undefined ? -1 : columnIndex(titles, names.cluster, '--cluster', sourceName);
   const used: [option: string, index: number][] = [];
   for (const [option, index] of [
     ['--rows', rows],
@@ -66,7 +66,8 @@ export function findColumns(header: readonly string[], names: ColumnNames, sourc
   };
 }
 
-function indexOf(titles: readonly string[], wanted: string, option: string, sourceName: string): number {
+/** Index of the column that a name or number means. @throws Problem (usage): `unknown-column`, `ambiguous-column` */
+export function columnIndex(titles: readonly string[], wanted: string, option: string, sourceName: string): number {
   const name = wanted.trim();
   const at = titles.indexOf(name);
   if (at >= 0 && name !== '') {
@@ -98,7 +99,7 @@ function unknownColumn(titles: readonly string[], name: string, option: string, 
   });
 }
 
-const sameColumn = (option: string, other: string, title: string): Problem =>
+export const sameColumn = (option: string, other: string, title: string): Problem =>
   usageProblem({
     code: 'same-column',
     message: `${option} and ${other} both name the column ${shownValue(title)}`,

@@ -38,6 +38,14 @@ const namesOf = ({ rowsName, columnsName, strataName, clusterName }: RecordColum
   return `${names.slice(0, -1).join(', ')} or ${names.at(-1)!}`;
 };
 
+export const missingKey = (place: string): Problem =>
+  dataProblem({
+    code: 'missing-key',
+    message: 'a value that says which table this record belongs to is missing',
+    place,
+    hint: 'add --missing drop to leave such records out, or --missing level to make them tables of their own',
+  });
+
 const named = (name: string): string => shownValue(name).slice(1, -1);
 
 /** Under a rule that keeps missing values as a level: of clusters there is no such level. */

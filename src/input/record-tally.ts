@@ -58,8 +58,8 @@ export class RecordTally {
 
   constructor(
     private readonly names: ColumnNames,
-    private readonly rule: MissingRule,
-    private readonly sourceName: string,
+    protected readonly rule: MissingRule,
+    protected readonly sourceName: string,
   ) {}
 
   take(record: readonly string[]): void {
@@ -94,9 +94,14 @@ export class RecordTally {
     if (column === fresh) column = this.addLevel(this.columns, columnText, used.columns);
     if (stratum === fresh) stratum = this.addLevel(this.strata, record[used.strata]!, used.strata);
     if (this.fault !== undefined) return;
-    add(this.cells, row, column, count);
+    this.count(record, row, column, count);
     if (used.strata >= 0) add((this.layers[stratum] ??= []), row, column, count);
     if (used.cluster >= 0) this.addToCluster(cluster, row, column, count, record[used.cluster]!);
+  }
+
+  /** Adds to a cell; tallies of several tables look at the record to find out which. */
+  protected count(_record: readonly string[], row: number, column: number, count: number): void {
+    add(this.cells, row, column, count);
   }
 
   /** The fault to report once all is read: under `fail`, the missing values come out here. */
@@ -112,6 +117,7 @@ export class RecordTally {
     this.width = header.length;
     try {
       this.used = findColumns(header, this.names, this.sourceName);
+      this.findMore(header, this.used);
     } catch (error) {
       // Kept like any other fault: thrown from here it would pass through the parser's stream, which cannot hold it.
       if (!(error instanceof Problem)) throw error;
@@ -121,6 +127,11 @@ export class RecordTally {
     for (const field of [rows, columns, count, strata, cluster]) {
       if (header[field]?.includes('\ufffd')) this.fail(field, notUtf8);
     }
+  }
+
+  /** Further columns that a tally reads. @throws Problem (usage) */
+  protected findMore(_header: readonly string[], _used: RecordColumns): void {
+    // none here
   }
 
   /** Whether a record of another length than the header may stay: it is only longer, by empty fields. */
@@ -198,7 +209,7 @@ export class RecordTally {
   }
 
   /** Once missing values are known to end the reading, nothing else is reported. */
-  private fail(field: number, problem: (place: string) => Problem): void {
+  protected fail(field: number, problem: (place: string) => Problem): void {
     if (this.firstMissing === undefined) this.fault ??= { record: this.at, field, problem };
   }
 }

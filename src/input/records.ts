@@ -32,8 +32,7 @@ export interface RecordOptions extends ColumnNames, OrderOptions {
   readonly reread?: (() => AsyncIterable<Uint8Array>) | undefined;
 }
 
-interface Walked {
-  readonly tally: RecordTally;
+export interface Walked {
   readonly delimiter: Delimiter;
   readonly sha256: string;
   readonly notes: readonly InputNote[];
@@ -47,7 +46,8 @@ interface Walked {
 export async function readRecords(chunks: AsyncIterable<Uint8Array>, options: RecordOptions): Promise<ReadTable> {
   const { sourceName } = options;
   const rule = options.missing ?? 'fail';
-  const { tally, delimiter, sha256, notes } = await walk(chunks, options, rule);
+  const tally = new RecordTally(options, rule, sourceName);
+  const { delimiter, sha256, notes } = await walk(chunks, options, tally);
   const { used, rows, columns, records } = tally;
   if (used === undefined) throw noData(sourceName);
   if (records === 0) throw noRecords(sourceName);
@@ -92,10 +92,13 @@ export async function readRecords(chunks: AsyncIterable<Uint8Array>, options: Re
 }
 
 /** One pass over the bytes. */
-async function walk(chunks: AsyncIterable<Uint8Array>, options: RecordOptions, rule: MissingRule): Promise<Walked> {
+export async function walk(
+  chunks: AsyncIterable<Uint8Array>,
+  options: RecordOptions,
+  tally: RecordTally,
+): Promise<Walked> {
   const { sourceName } = options;
   const hash = createHash('sha256');
-  const tally = new RecordTally(options, rule, sourceName);
   let delimiter: Delimiter = options.delimiter ?? 'comma';
   let parser: RecordParser | undefined;
   let commentsAbove = 0;
@@ -122,7 +125,7 @@ async function walk(chunks: AsyncIterable<Uint8Array>, options: RecordOptions, r
   const fault = tally.closingFault();
   if (fault !== undefined) throw fault.problem(await placeOf(fault.record, fault.field, delimiter, options));
   const comments = (parser?.info.comment_lines ?? 0) - commentsAbove;
-  return { tally, delimiter, sha256: hash.digest('hex'), notes: readingNotes(tally, comments) };
+  return { delimiter, sha256: hash.digest('hex'), notes: readingNotes(tally, comments) };
 }
 
 /** `visits.csv:18:7`, by reading again; else the number of the record below the header. */

@@ -8,9 +8,13 @@ const folder = new URL('../../fixtures/demo/', import.meta.url);
 const bytesIn = (file: string): Uint8Array => readFileSync(new URL(file, folder));
 
 describe('demo data', () => {
-  it.each(readdirSync(folder))('%s begins by saying that it is invented', (file) => {
-    expect(new TextDecoder().decode(bytesIn(file))).toMatch(/^# Invented data: /);
-  });
+  // Lines of JSON have no comments; fixtures/README.md says it of them.
+  it.each(readdirSync(folder).filter((file) => !file.endsWith('.ndjson')))(
+    '%s begins by saying that it is invented',
+    (file) => {
+      expect(new TextDecoder().decode(bytesIn(file))).toMatch(/^# Invented data: /);
+    },
+  );
 
   it.each([
     ['lung-lesions.csv', 4, 4, 100, 'comma'],

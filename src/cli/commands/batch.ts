@@ -25,7 +25,8 @@ export const batchCommand = command({
     { line: 'keepsum batch FILE --by COLUMNS --rows COLUMN --columns COLUMN', words: 'one long file of records' },
     { line: 'keepsum batch FILE FILE ...', words: 'tables of counts, one a file' },
   ],
-  purpose: 'Tests many tables, one after the other or on all cores, and writes one line of JSON (or rows of CSV) for each.',
+  purpose:
+    'Tests many tables, one after the other or on all cores, and writes one line of JSON (or rows of CSV) for each.',
   examples: [
     { line: 'keepsum batch fixtures/demo/shift-checks.ndjson', words: 'one compact line a table, in their order' },
     {
@@ -82,7 +83,12 @@ const planOptions = (values: BatchValues): PlanOptions =>
   Object.fromEntries(Object.entries(values).filter(([name]) => name in planning)) as PlanOptions;
 
 /** A run that was killed after its file had taken its name. */
-async function clearedUp(path: string, { faults, tables }: Progress, values: BatchValues, shell: Shell): Promise<number> {
+async function clearedUp(
+  path: string,
+  { faults, tables }: Progress,
+  values: BatchValues,
+  shell: Shell,
+): Promise<number> {
   rmSync(journalOf(path));
   if (faults > 0 && !values.quiet) await remark(shell.stderr, faultWords(faults, tables));
   return faults > 0 && !values.allowErrors ? 1 : 0;

@@ -72,7 +72,7 @@ export class UnfinishedFile {
 
 /** A write may take less than all of it. */
 function writeAll(file: number, bytes: Uint8Array): void {
-  for (let at = 0; at < bytes.length; ) at += writeSync(file, bytes, at);
+  for (let at = 0; at < bytes.length;) at += writeSync(file, bytes, at);
 }
 
 /** Where every run begins. */

@@ -30,7 +30,7 @@ export async function openTables(from: TablesFrom, values: ReadingValues, shell:
   const size = path === null ? undefined : await plainSize(path);
   if (from.form === 'records') {
     const { readKeyedRecords } = await import('../../../input/keyed-records.js');
-    const { tables, notes } = await readKeyedRecords(bytes(), {
+    const { tables, number, notes } = await readKeyedRecords(bytes(), {
       ...values,
       by: values.by!,
       rows: values.rows!,
@@ -39,8 +39,13 @@ export async function openTables(from: TablesFrom, values: ReadingValues, shell:
       sourceName,
       ...(size === undefined ? {} : { reread: bytes }),
     });
-    const items = tables.map(({ key, read }) => ({ key, read, place: `${sourceName}, table "${key}"` }));
-    return { ...counted(items, items.length), sourceName, remarks: notes.map(({ text }) => text) };
+    const items = function* (): Generator<TableItem> {
+      for (const table of tables) {
+        const place = `${sourceName}, table "${table.key}"`;
+        yield 'read' in table ? { ...table, place } : { key: table.key, error: errorOf(table.problem, place) };
+      }
+    };
+    return { ...counted(items(), number), sourceName, remarks: notes.map(({ text }) => text) };
   }
   const source = new LineSource(bytes(), sourceName);
   const share = (): number | undefined => (size === undefined ? undefined : source.bytesRead / size);

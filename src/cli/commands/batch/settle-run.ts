@@ -15,9 +15,13 @@ export type BatchValues = Values<typeof batchOptions>;
 
 /** @throws Problem (usage) */
 export function checkCombinations({ rawCsv, format, full, resume, output }: BatchValues): void {
-  if (rawCsv && format !== 'csv') throw doesNotFit('--raw-csv is for CSV output only', 'add --format csv, or leave it out');
+  if (rawCsv && format !== 'csv')
+    throw doesNotFit('--raw-csv is for CSV output only', 'add --format csv, or leave it out');
   if (full && format === 'csv') {
-    throw doesNotFit('--full is for lines of JSON only: CSV has a row for each p-value', 'leave --full or --format csv out');
+    throw doesNotFit(
+      '--full is for lines of JSON only: CSV has a row for each p-value',
+      'leave --full or --format csv out',
+    );
   }
   if (resume && (output === undefined || output === '-')) {
     throw doesNotFit('--resume goes on with a file', 'name it with --output FILE, as in the run that did not end');
@@ -43,11 +47,7 @@ export function described(values: BatchValues, wishes: PlanOptions, from: Tables
 }
 
 /** The file that the results will stand in; undefined for streams: standard output, pipes, devices. */
-export async function outputFile(
-  { output }: BatchValues,
-  from: TablesFrom,
-  shell: Shell,
-): Promise<string | undefined> {
+export async function outputFile({ output }: BatchValues, from: TablesFrom, shell: Shell): Promise<string | undefined> {
   if (output === undefined || output === '-') return undefined;
   const there = await stat(output).catch(() => undefined);
   if (there !== undefined && !there.isFile() && !there.isDirectory()) return undefined;

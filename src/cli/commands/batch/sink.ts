@@ -3,7 +3,15 @@ import { createHash, type Hash } from 'node:crypto';
 import { existsSync, openSync, readFileSync, renameSync, rmSync, statSync, writeSync } from 'node:fs';
 import { dataProblem, usageProblem, type Problem } from '../../../problem/problem.js';
 import { version } from '../../../result/version.js';
-import { journalOf, nothingYet, partialOf, readJournal, takeUp, UnfinishedFile, type Reached } from '../../streams/unfinished-file.js';
+import {
+  journalOf,
+  nothingYet,
+  partialOf,
+  readJournal,
+  takeUp,
+  UnfinishedFile,
+  type Reached,
+} from '../../streams/unfinished-file.js';
 import { cannotTakeUp, nothingUnfinished, otherRun, unfinishedThere } from './resume-problems.js';
 
 export interface Sink {

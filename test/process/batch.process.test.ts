@@ -1,0 +1,169 @@
+// keepsum batch as it is run: forms of input and output, threads, faults, streams.
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterAll, describe, expect, it } from 'vitest';
+import { checkedLines } from '../helpers/checked-lines.js';
+import { inShell, keepsum } from './run-command.js';
+
+const folder = mkdtempSync(join(tmpdir(), 'keepsum-batch-'));
+afterAll(() => rmSync(folder, { recursive: true }));
+
+const demo = 'fixtures/demo/shift-checks.ndjson';
+const records = ['fixtures/demo/orchard-blight.csv', '--by', 'orchard,blight', '--rows', 'spray', '--columns', 'state'];
+
+/** Enough counted work that threads are started: each table is drawn from 20,000 times. */
+const many = Array.from({ length: 90 }, (_, k) =>
+  JSON.stringify({
+    key: `t${k % 80}`,
+    counts: [
+      [k, 9, 4],
+      [7, 1 + (k % 7), 3],
+      [2, 5, 30 - (k % 30)],
+    ],
+  }),
+);
+const drawn = ['batch', '-', '--method', 'sample', '--draws', '20000', '--seed', 'm'];
+
+describe('threads', () => {
+  it('1, 2 and 3 give the same bytes, and so does each line alone and in another order', async () => {
+    const input = `${many.join('\n')}\n`;
+    const one = await keepsum([...drawn, '--threads', '1'], { input });
+    expect([one.status, one.err]).toEqual([0, '']);
+    const lines = one.out.trimEnd().split('\n');
+    expect(checkedLines(one.out).map(({ key }) => key)).toEqual(many.map((line) => JSON.parse(line).key));
+    for (const threads of ['2', '3']) {
+      expect((await keepsum([...drawn, '--threads', threads], { input })).out).toBe(one.out);
+    }
+    const some = [77, 5, 41];
+    const alone = await keepsum(drawn, { input: some.map((k) => many[k]).join('\n') });
+    expect(alone.out.trimEnd().split('\n')).toEqual(some.map((k) => lines[k]));
+  });
+});
+
+describe('results', () => {
+  it('are compact lines, whole results or rows of CSV, in input order', async () => {
+    const compact = await keepsum(['batch', demo, '--seed', 'x']);
+    const full = await keepsum(['batch', demo, '--seed', 'x', '--full']);
+    const csv = await keepsum(['batch', demo, '--seed', 'x', '--format', 'csv']);
+    const keys = ['press', 'glaze', 'kiln', 'crates'];
+    for (const { out, err } of [compact, full]) {
+      expect(err).toBe('');
+      expect(checkedLines(out).map(({ key }) => key)).toEqual(keys);
+    }
+    expect(full.out).toContain('"schema":"keepsum/result/1"');
+    const [header, ...rows] = csv.out.trimEnd().split('\n');
+    expect(header).toMatch(/^key,headline,statistic,.*,error$/);
+    expect([...new Set(rows.map((row) => row.split(',')[0]))]).toEqual(keys);
+    const ps = checkedLines(compact.out).flatMap((line) =>
+      'pValues' in line ? line.pValues.map(({ p }) => String(p)) : [],
+    );
+    const at = header!.split(',').indexOf('p');
+    expect(rows.map((row) => row.split(',')[at])).toEqual(ps);
+  });
+
+  it('come from one long file of records, a table for each key', async () => {
+    const { out, status } = await keepsum(['batch', ...records, '--count', 'trees']);
+    expect(status).toBe(0);
+    const lines = checkedLines(out);
+    expect(lines.map(({ key }) => key)).toEqual(['hill,scab', 'hill,canker', 'river,scab', 'river,canker']);
+    expect(lines[3]).toMatchObject({
+      counts: [
+        [26, 0],
+        [25, 3],
+      ],
+      rowLabels: ['none', 'sulphur'],
+    });
+  });
+
+  it('come from a list of tables, a file that cannot be used among them', async () => {
+    const files = [
+      'fixtures/demo/cracked-tiles.csv',
+      'fixtures/malformed/negative.csv',
+      'fixtures/demo/orchid-forms.tsv',
+    ];
+    const { out, err, status } = await keepsum(['batch', ...files]);
+    expect(status).toBe(1);
+    expect(err).toBe('note: 1 of 3 tables could not be used; its line says why\n');
+    expect(checkedLines(out).map((line) => [line.key, 'error' in line])).toEqual(
+      files.map((file, k) => [file, k === 1]),
+    );
+  });
+});
+
+describe('a table that cannot be used', () => {
+  const input =
+    '{"key":"a","counts":[[8,2],[1,9]]}\n\n{"key":"b","counts":[[8,2],[1,-9]]}\n\xff{\n{"counts":[[1,0],[0,1]]}';
+
+  it('has a line or row that says why; status 1, or 0 with --allow-errors', async () => {
+    const bytes = Buffer.from(input, 'latin1');
+    const { out, err, status } = await keepsum(['batch', '-'], { input: bytes });
+    expect(status).toBe(1);
+    expect(err).toBe('note: 2 of 4 tables could not be used; their lines say why\n');
+    const lines = checkedLines(out);
+    expect(lines.map(({ key }) => key)).toEqual(['a', 'b', '4', '5']);
+    expect(lines[1]).toMatchObject({ error: { code: 'negative-count', place: 'standard input:3' } });
+    expect(lines[2]).toMatchObject({ error: { code: 'not-utf-8', place: 'standard input:4' } });
+    const allowed = await keepsum(['batch', '-', '--allow-errors', '--quiet', '--format', 'csv'], { input: bytes });
+    expect([allowed.status, allowed.err]).toEqual([0, '']);
+    expect(allowed.out).toMatch(/^b,,.*standard input:3: counts\[1\]\[1\] is -9 \(negative-count\)$/m);
+  });
+});
+
+describe('streams', () => {
+  const endless = `yes '{"counts":[[8,2],[1,9]]}' | keepsum batch -`;
+
+  it('each table is answered when it is there', async () => {
+    const line = '{"counts":[[8,2],[1,9]]}';
+    // The second line is sent only when the answer to the first has come.
+    const { out } = await inShell(
+      `coproc K { keepsum batch -; }; echo '${line}' >&"\${K[1]}"; read -r -t 60 first <&"\${K[0]}"; echo "\${first:0:9}"; echo '${line}' >&"\${K[1]}"; read -r -t 60 second <&"\${K[0]}"; echo "\${second:0:9}"`,
+    );
+    expect(out).toBe('{"key":"1\n{"key":"2\n');
+  });
+
+  it('a reader that has seen enough ends the run quietly with 0', async () => {
+    const { out, err } = await inShell(`${endless} | head -2; echo "\${PIPESTATUS[1]}"`);
+    expect(err).toBe('');
+    expect(out.split('\n').map((line) => line.slice(0, 9))).toEqual(['{"key":"1', '{"key":"2', '0', '']);
+  });
+
+  it('a full disk is said, with 1', async () => {
+    const { out, err } = await inShell(`${endless} > /dev/full; echo "$?"`);
+    expect(out).toBe('1\n');
+    expect(err).toMatch(/^error: standard output: .*ENOSPC.*\nhint: .*\n$/);
+  });
+
+  it('what is no text at all is refused', async () => {
+    expect(await keepsum(['batch', '-'], { input: '' })).toMatchObject({ status: 1, out: '' });
+    const zip = await keepsum(['batch', '-'], { input: Buffer.from('PK\u0003\u0004xx') });
+    expect(zip.err).toMatch(/^error: standard input: this is a spreadsheet workbook/);
+  });
+});
+
+describe('wrong usage', () => {
+  it.each([
+    [['batch', demo, '--rows', 'x', '--columns', 'y'], '--by is not given'],
+    [['batch', demo, '--resume'], '--resume goes on with a file'],
+    [['batch', demo, '--full', '--format', 'csv'], '--full is for lines of JSON only'],
+    [['batch', demo, '--raw-csv'], '--raw-csv is for CSV output only'],
+    [['batch', demo, '--drop-totals'], '--drop-totals does not go with'],
+    [['batch', demo, '--output', demo], 'is the file the counts come from'],
+    [['batch', demo, '--output', 'no/such/x'], '"no/such/x" cannot be written'],
+    [['batch', demo, '--seed='], 'the value is empty'],
+  ])('%j ends with 2 and two lines', async (words, part) => {
+    const { status, out, err } = await keepsum(words);
+    expect([status, out]).toEqual([2, '']);
+    expect(err).toContain(part);
+    expect(err.split('\n')).toHaveLength(3);
+  });
+});
+
+it('a result of --output is the one that standard output gets, and nothing is left beside it', async () => {
+  const file = join(folder, 'whole.ndjson');
+  writeFileSync(file, 'older results');
+  const { out } = await keepsum(['batch', demo, '--seed', 'x']);
+  expect(await keepsum(['batch', demo, '--seed', 'x', '--output', file])).toEqual({ status: 0, out: '', err: '' });
+  expect(readFileSync(file, 'utf8')).toBe(out);
+  expect((await inShell(`ls ${folder}`)).out).toBe('whole.ndjson\n');
+});
