@@ -13,6 +13,7 @@ type FromElsewhere = 'statisticDigest' | 'tableKey';
 
 const options = {
   statistic: z.enum(statisticNames),
+  paired: z.boolean(),
   tail: z.enum(tails),
   twoSidedRule: z.enum(twoSidedRules),
   groups: z.enum(['rows', 'columns']),
@@ -21,6 +22,8 @@ const options = {
   rowScores: scores,
   columnScores: scores,
   lambda: z.union([z.string(), z.number()]),
+  ordered: z.enum(['rows', 'columns', 'both']),
+  cells: z.boolean(),
   method: z.enum(methods),
   draws,
   mostDraws: z.int().min(1000).max(1e12),

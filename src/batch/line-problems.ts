@@ -1,6 +1,6 @@
 // What can be wrong with a line of a batch before its counts are looked at, in words.
 import type { z } from 'zod';
-import { Problem, dataProblem } from '../problem/problem.js';
+import { dataProblem, type Problem } from '../problem/problem.js';
 import { nameHint } from '../problem/suggest.js';
 import { lineDeclaration } from './declaration.js';
 

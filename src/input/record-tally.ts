@@ -117,7 +117,7 @@ export class RecordTally {
     this.width = header.length;
     try {
       this.used = findColumns(header, this.names, this.sourceName);
-      this.findMore(header, this.used);
+      this.findMore?.(header, this.used);
     } catch (error) {
       // Kept like any other fault: thrown from here it would pass through the parser's stream, which cannot hold it.
       if (!(error instanceof Problem)) throw error;
@@ -130,9 +130,7 @@ export class RecordTally {
   }
 
   /** Further columns that a tally reads. @throws Problem (usage) */
-  protected findMore(_header: readonly string[], _used: RecordColumns): void {
-    // none here
-  }
+  protected findMore?(header: readonly string[], used: RecordColumns): void;
 
   /** Whether a record of another length than the header may stay: it is only longer, by empty fields. */
   private fits(record: readonly string[]): boolean {

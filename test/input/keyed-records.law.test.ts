@@ -45,8 +45,7 @@ describe('records of many tables', () => {
           columnOrder: [...new Set(rows.map((r) => r.outcome))].join(),
         };
         for (const [k, own] of [...groups.values()].entries()) {
-          const { by: _by, ...single } = options;
-          const alone = await readRecords(piecesOf(csvOf(own)), { ...single, ...orders });
+          const alone = await readRecords(piecesOf(csvOf(own)), { ...options, ...orders });
           const found = all[k]!;
           expect('read' in found && found.read.table).toEqual(alone.table);
           const plain = [own[0]!.site, own[0]!.lesion].map((v) => (/[",]/.test(v) ? field(v) : v)).join();

@@ -14,7 +14,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { afterAll, describe, expect, it } from 'vitest';
-import { bin, keepsum } from './run-command.js';
+import { bin, keepsum, run } from './run-command.js';
 
 const folder = mkdtempSync(join(tmpdir(), 'keepsum-resume-'));
 afterAll(() => rmSync(folder, { recursive: true }));
@@ -86,10 +86,23 @@ describe('a run killed at twenty random moments', () => {
 describe('an unfinished run', () => {
   const output = join(folder, 'left.ndjson');
   const partial = `${output}.partial`;
-  const again = (...more: string[]) => keepsum(words(output, ...more));
+  const again = (...more: string[]) => keepsum(piped(...more), { input: text });
+
+  const text = readFileSync(input, 'utf8');
+  const piped = (...more: string[]): string[] => words(output, ...more).map((word) => (word === input ? '-' : word));
+
+  /** Half of the input is sent, and the rest waited for when the end comes. */
+  async function leftHalfWay(): Promise<void> {
+    const child = spawn(process.execPath, [bin, ...piped()], { stdio: ['pipe', 'ignore', 'inherit'] });
+    const ended = new Promise((resolve) => child.on('close', resolve));
+    child.stdin.write(text.slice(0, text.length / 2));
+    while (child.exitCode === null && sizeOf(partial) < 1_000_000) await sleep(10);
+    child.kill('SIGKILL');
+    await ended;
+  }
 
   it('is kept from a run that would begin anew, from other settings, other input and changed results', async () => {
-    await killed(output, 200_000, 0, []);
+    await leftHalfWay();
     const kept = readFileSync(partial);
     const refusals = async (...more: string[]): Promise<string> => {
       const { status, out, err } = await again(...more);
@@ -99,22 +112,20 @@ describe('an unfinished run', () => {
     expect(await refusals()).toContain('results of an unfinished run are kept');
     expect(await refusals('--resume', '--alpha', '0.01')).toContain('it differs in alpha');
     expect(await refusals('--resume', '--seed', 'another')).toContain('it differs in seed');
-    const lines = readFileSync(input, 'utf8');
-    writeFileSync(input, lines.replace('"k1"', '"k0"'));
-    expect((await again('--resume')).err).toContain('are not those that the unfinished run');
-    writeFileSync(input, lines);
+    const other = await keepsum(piped('--resume'), { input: text.replace('"k1"', '"k0"') });
+    expect(other.err).toContain('are not those that the unfinished run');
     writeFileSync(partial, kept.toString().replace('"k1"', '"k0"'));
     expect(await refusals('--resume')).toContain('does not hold what its run has written');
     writeFileSync(partial, kept);
   });
 
   it('goes on from the last whole line where the end is torn, and where the disk lost some of it', async () => {
-    const alone = readFileSync(join(folder, 'alone.ndjson'));
+    const alone = readFileSync(join(folder, 'alone.ndjson'), 'utf8').replaceAll(input, 'standard input');
     appendFileSync(partial, '{"key":"torn');
     appendFileSync(`${partial}.journal`, '{"units":99');
     truncateSync(partial, Math.floor(statSync(partial).size / 2));
     expect((await again('--resume', '--allow-errors')).status).toBe(0);
-    expect(readFileSync(output)).toEqual(alone);
+    expect(readFileSync(output, 'utf8')).toBe(alone);
     expect((await again('--resume')).err).toContain('no unfinished run beside it');
   });
 });
@@ -122,7 +133,7 @@ describe('an unfinished run', () => {
 it('a disk that is full keeps what is finished, and says how to go on', async () => {
   const output = join(folder, 'full.ndjson');
   const limited = `trap '' XFSZ; ulimit -f 300; exec "${process.execPath}" "${bin}" ${words(output).join(' ')}`;
-  const { err, status } = await import('./run-command.js').then(({ run }) => run('bash', ['-c', limited], {}));
+  const { err, status } = await run('bash', ['-c', limited], {});
   expect(status).toBe(1);
   expect(err).toMatch(
     /^note: what is finished is kept in .*\nerror: --output: the results could not be written .*\nhint: .*--resume\n$/,

@@ -79,8 +79,10 @@ export const batchCommand = command({
   },
 });
 
-const planOptions = (values: BatchValues): PlanOptions =>
-  Object.fromEntries(Object.entries(values).filter(([name]) => name in planning)) as PlanOptions;
+function planOptions(values: BatchValues): PlanOptions {
+  const { noCells, ...wishes } = Object.fromEntries(Object.entries(values).filter(([name]) => name in planning));
+  return noCells ? { ...wishes, cells: false } : wishes;
+}
 
 /** A run that was killed after its file had taken its name. */
 async function clearedUp(

@@ -9,8 +9,6 @@ import { either } from '../options/words.js';
 
 const formats = ['ndjson', 'csv'] as const;
 
-const { rowLabels: _rowLabels, columnLabels: _columnLabels, ...readingMany } = reading;
-
 export const readingTables = {
   by: valued(
     'Reading the tables',
@@ -18,7 +16,17 @@ export const readingTables = {
     anyText,
     'one long file of records: the columns whose values tell its tables apart, separated by commas',
   ),
-  ...readingMany,
+  rows: reading.rows,
+  columns: reading.columns,
+  count: reading.count,
+  missing: reading.missing,
+  rowOrder: reading.rowOrder,
+  columnOrder: reading.columnOrder,
+  headerRow: reading.headerRow,
+  labelColumn: reading.labelColumn,
+  delimiter: reading.delimiter,
+  dropTotals: reading.dropTotals,
+  keepTotals: reading.keepTotals,
 };
 
 export const batchOptions = {

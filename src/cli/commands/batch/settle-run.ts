@@ -33,10 +33,11 @@ const doesNotFit = (message: string, hint: string): Problem =>
 
 /** All that decides a byte of the results, but for the seed and the input itself. */
 export function described(values: BatchValues, wishes: PlanOptions, from: TablesFrom): RunDescription {
-  const { seed: _seed, statistic, ...others } = wishes;
+  const { statistic, ...others } = wishes;
   const reading = Object.fromEntries(Object.entries(values).filter(([name]) => name in readingTables));
   return {
     ...others,
+    seed: null, // kept apart, because one may have been made
     ...reading,
     statistic: typeof statistic === 'object' ? statistic.name : (statistic ?? null),
     input: from.form === 'files' ? from.paths : from.path,
