@@ -19,14 +19,14 @@ import { bin, keepsum, run } from './run-command.js';
 const folder = mkdtempSync(join(tmpdir(), 'keepsum-resume-'));
 afterAll(() => rmSync(folder, { recursive: true }));
 const input = join(folder, 'tables.ndjson');
-const tables = 6000;
+const tables = 1500;
 /** Quick exact tables, some drawn ones, some that cannot be used, and blank lines. */
 writeFileSync(
   input,
   Array.from({ length: tables }, (_, k) => {
     if (k % 97 === 0) return '';
     if (k % 41 === 0) return '{"counts":[[1,2],[3,"x"]]}';
-    const plan = k % 10 === 0 ? ',"plan":{"method":"sample","draws":3000}' : '';
+    const plan = k % 10 === 0 ? ',"plan":{"method":"sample","draws":1000}' : '';
     return `{"key":"k${k}","counts":[[${k % 13},${5 + (k % 3)},4],[2,${1 + (k % 11)},9]]${plan}}`;
   }).join('\n'),
 );
@@ -57,7 +57,7 @@ async function killed(output: string, growth: number, milliseconds: number, more
   await ended;
 }
 
-describe('a run killed at twenty random moments', () => {
+describe('a run killed at twenty random moments', { timeout: 400_000 }, () => {
   it.each([
     ['ndjson', 20],
     ['csv', 4],
@@ -96,7 +96,7 @@ describe('an unfinished run', () => {
     const child = spawn(process.execPath, [bin, ...piped()], { stdio: ['pipe', 'ignore', 'inherit'] });
     const ended = new Promise((resolve) => child.on('close', resolve));
     child.stdin.write(text.slice(0, text.length / 2));
-    while (child.exitCode === null && sizeOf(partial) < 1_000_000) await sleep(10);
+    while (child.exitCode === null && sizeOf(partial) < 200_000) await sleep(10);
     child.kill('SIGKILL');
     await ended;
   }
@@ -132,7 +132,7 @@ describe('an unfinished run', () => {
 
 it('a disk that is full keeps what is finished, and says how to go on', async () => {
   const output = join(folder, 'full.ndjson');
-  const limited = `trap '' XFSZ; ulimit -f 300; exec "${process.execPath}" "${bin}" ${words(output).join(' ')}`;
+  const limited = `trap '' XFSZ; ulimit -f 200; exec "${process.execPath}" "${bin}" ${words(output).join(' ')}`;
   const { err, status } = await run('bash', ['-c', limited], {});
   expect(status).toBe(1);
   expect(err).toMatch(
