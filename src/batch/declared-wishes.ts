@@ -29,6 +29,7 @@ const options = {
   mostDraws: z.int().min(1000).max(1e12),
   samplingRisk: level,
   relativeError: level,
+  bootstrap: z.int().min(100).max(1e6),
   seed: z.string().min(1),
   effort: z.number().positive(),
   alpha: level,

@@ -4,6 +4,7 @@ import { describe, expect, it } from 'vitest';
 import { analyse } from '../../src/analyse.js';
 import { analyseMany } from '../../src/batch/analyse-many.js';
 import type { BatchLine, CompactLine, ErrorLine, FullLine } from '../../src/batch/lines.js';
+import type { Result } from '../../src/result/result.js';
 import type { TableParts } from '../../src/table/table.js';
 import { checkedLine, isBatchLine } from '../helpers/checked-lines.js';
 import { smallTable, twoByTwoTable } from '../helpers/tables.js';
@@ -34,6 +35,14 @@ async function all(tables: Iterable<BatchLine>, full = false): Promise<Answered[
   return found;
 }
 
+/** Compact lines leave out what takes further questions to know. */
+const plain = ({ pValues }: Result): Result['pValues'] =>
+  pValues.map((p) => {
+    const kept = { ...p };
+    delete kept.leastAttainable;
+    return kept;
+  });
+
 describe('a batch', () => {
   it('gives each table what analyse gives it alone, under its key', async () => {
     await fc.assert(
@@ -43,8 +52,10 @@ describe('a batch', () => {
           expect(isBatchLine(tables[k])).toBe(true);
           const alone = await analyse(parts as TableParts, { ...settings, ...(plan as object), tableKey: String(key) });
           expect(full[k]).toEqual({ key, ...alone });
-          const { statistic, pValues, notes } = alone;
-          expect(compact[k]).toMatchObject({ key, counts: parts.counts, statistic, pValues, notes });
+          const { counts, notes, ...found } = compact[k] as CompactLine;
+          expect(counts).toEqual(parts.counts);
+          expect(found).toMatchObject({ key, statistic: alone.statistic, pValues: plain(alone) });
+          expect(alone.notes).toEqual(expect.arrayContaining(notes));
         }
       }),
       { numRuns: 40 },
@@ -57,11 +68,8 @@ describe('a batch', () => {
         for (const found of (await all(tables)) as CompactLine[]) {
           const { key, counts, plan, statistic, pValues, notes } = found;
           const again = await analyse({ counts }, { ...(plan as object), tableKey: key });
-          expect({ statistic, pValues, notes }).toEqual({
-            statistic: again.statistic,
-            pValues: again.pValues,
-            notes: again.notes,
-          });
+          expect({ statistic, pValues }).toEqual({ statistic: again.statistic, pValues: plain(again) });
+          expect(again.notes).toEqual(expect.arrayContaining(notes));
         }
       }),
       { numRuns: 30 },
