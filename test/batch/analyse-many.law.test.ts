@@ -58,7 +58,7 @@ describe('a batch', () => {
           expect(alone.notes).toEqual(expect.arrayContaining(notes));
         }
       }),
-      { numRuns: 40 },
+      { numRuns: 12 },
     );
   });
 
@@ -72,7 +72,7 @@ describe('a batch', () => {
           expect(again.notes).toEqual(expect.arrayContaining(notes));
         }
       }),
-      { numRuns: 30 },
+      { numRuns: 12 },
     );
   });
 
@@ -85,7 +85,7 @@ describe('a batch', () => {
           expect(await all(some)).toEqual(some.map((table) => before.get(table)));
         },
       ),
-      { numRuns: 30 },
+      { numRuns: 12 },
     );
   });
 });
