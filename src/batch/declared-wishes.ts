@@ -24,6 +24,8 @@ const options = {
   lambda: z.union([z.string(), z.number()]),
   ordered: z.enum(['rows', 'columns', 'both']),
   cells: z.boolean(),
+  compare: z.enum(['rows', 'columns']),
+  control: z.string(),
   method: z.enum(methods),
   draws,
   mostDraws: z.int().min(1000).max(1e12),
