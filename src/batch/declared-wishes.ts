@@ -1,6 +1,7 @@
 // What a line of a batch may say under `plan`, declared once: the options of `analyse`, by the same names. The compiler sees to it
 // that none is left out.
 import { z } from 'zod';
+import { fixedSides, outcomeOrders } from '../plan/design.js';
 import { methods, tails, twoSidedRules, type PlanOptions } from '../plan/plan.js';
 import { digest, level } from '../result/declared/pieces.js';
 import { statisticNames } from '../statistic/registry.js';
@@ -26,6 +27,9 @@ const options = {
   cells: z.boolean(),
   compare: z.enum(['rows', 'columns']),
   control: z.string(),
+  fixed: z.enum(fixedSides),
+  outcomeOrder: z.enum(outcomeOrders),
+  nuisanceRisk: level,
   method: z.enum(methods),
   draws,
   mostDraws: z.int().min(1000).max(1e12),
