@@ -1,6 +1,5 @@
 // keepsum test: one table, from where it stands to a report. Read, analyse, report, write.
 import { analyse } from '../../analyse.js';
-import { render } from '../../report/formats.js';
 import { groupedDigits } from '../../numeric/digit-groups.js';
 import type { PlanOptions } from '../../plan/plan.js';
 import { usageProblem } from '../../problem/problem.js';
@@ -11,8 +10,8 @@ import { withProgress } from '../streams/progress.js';
 import { remark } from '../streams/write-out.js';
 import { chooseSource } from './choose-source.js';
 import { command } from './command-file.js';
+import { checkDocument, documentOf } from './document.js';
 import { withOwnStatistic } from './module-path.js';
-import { lookFor } from './look.js';
 import { readSource } from './read-source.js';
 import { destinationFor } from './shared-options.js';
 import { planning } from './options/planning.js';
@@ -45,8 +44,7 @@ export const testCommand = command({
     const table = await readSource(source, values, shell);
     const wishes = await withOwnStatistic(planOptions(values));
     const result = await withProgress(values, shell, (surroundings) => analyse(table, wishes, surroundings));
-    const format = values.format ?? 'text';
-    const report = render(result, format, await lookFor(values, shell));
+    const report = await documentOf(result, values, shell);
     if (!values.quiet) await remarkOnSampling(result, shell);
     await destination.write(report);
     return 0;
@@ -70,6 +68,7 @@ async function remarkOnSampling({ plan }: Result, shell: Shell): Promise<void> {
 }
 
 function checkCombinations(values: TestValues): void {
+  checkDocument(values);
   if (values.cells && values.noCells) {
     throw usageProblem({
       code: 'cells-and-no-cells',

@@ -1,0 +1,45 @@
+// The sources of the methods used in one result: those that its methods paragraph cites, looked up in the one table of sources.
+import { asBibtex, asText, sources, type Source } from './sources/source.js';
+import type { Result } from './result.js';
+
+export type CitationForm = 'text' | 'bibtex';
+
+export interface Mention {
+  /** The last author named, with "et al." where it is said. */
+  readonly name: string;
+  readonly year: string;
+}
+
+/** Every "Author year" and "Author (year)" of a paragraph. What stands in double quotes is a label or a seed. */
+export function mentionsIn(paragraph: string): Mention[] {
+  const prose = paragraph.replace(/"[^"]*"/g, '""');
+  const pattern = /(\p{Lu}[\p{L}'-]*(?: et al\.)?) \(?((?:1[89]|20)\d\d)((?:, (?:1[89]|20)\d\d)*)\b/gu;
+  return [...prose.matchAll(pattern)].flatMap(([, name, first, more]) =>
+    [first!, ...more!.split(', ').slice(1)].map((year) => ({ name: name!, year })),
+  );
+}
+
+/** The source that is meant; undefined where the table has none. */
+export function sourceOf({ name, year }: Mention, paired: boolean): Source | undefined {
+  const meant = sources.filter((source) => {
+    if (source.year !== year) return false;
+    const { cited } = source;
+    return cited === name || cited.endsWith(` ${name}`) || cited.replace(' & ', '-') === name;
+  });
+  return meant.find(({ ofPairs }) => ofPairs === paired) ?? meant[0];
+}
+
+/** In alphabetical order, each once. */
+export function sourcesUsed({ methods, plan }: Pick<Result, 'methods' | 'plan'>): Source[] {
+  const used = new Set(mentionsIn(methods).map((mention) => sourceOf(mention, plan.paired === true)));
+  return sources.filter((source) => used.has(source));
+}
+
+/** One document: a reference a line, or BibTeX entries; the program itself comes last. */
+export function citationsOf(result: Pick<Result, 'methods' | 'plan' | 'tool'>, form: CitationForm): string {
+  const { name, version } = result.tool;
+  const used = sourcesUsed(result);
+  if (form === 'text') return `${[...used.map(asText), `${name} ${version} (software).`].join('\n')}\n`;
+  const software = `@misc{${name},\n  title = {{${name}}},\n  note = {software, version ${version}}\n}`;
+  return `${[...used.map(asBibtex), software].join('\n\n')}\n`;
+}
