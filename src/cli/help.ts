@@ -2,24 +2,19 @@
 import { Help, type Option } from 'commander';
 import { declaredCommand } from './arguments/parse.js';
 import { stages } from './arguments/option.js';
+import { fold } from '../report/fold.js';
 import { commands } from './commands/all.js';
 import type { CommandFile, Example } from './commands/command-file.js';
+import { statuses } from './statuses.js';
+import type { Topic } from './topics/topic.js';
 
 const purpose =
   'keepsum tells whether the rows and columns of a table of counts are related, with a p-value that states its own error.';
 
 const rootExamples: readonly Example[] = [
   { line: 'keepsum test 8,2 1,9', words: 'a table typed in, one word a row' },
-  { line: 'keepsum test --help', words: 'all that can be set for one table' },
-  { line: 'keepsum schema result', words: 'the shape of the JSON output' },
-];
-
-const statuses: readonly (readonly [string, string])[] = [
-  ['0', 'finished, whatever the p-value is'],
-  ['1', 'the data or a file cannot be used'],
-  ['2', 'the command line is wrong'],
-  ['3', 'exact work would exceed the stated bound'],
-  ['130', 'interrupted'],
+  { line: 'keepsum test fixtures/demo/orchid-forms.tsv', words: 'a table from a file' },
+  { line: 'keepsum batch fixtures/demo/shift-checks.ndjson', words: 'many tables' },
 ];
 
 /** What `keepsum --help` prints, and, without its last part, what is shown when nothing was asked. */
@@ -33,6 +28,7 @@ export function rootHelp(width: number): string {
       'Anywhere',
       [
         ['--help, -h', 'this, or after a command its options'],
+        ['help TOPIC', 'definitions and sources: statistics, tails, rules, designs, methods, seeds'],
         ['--version', 'the version'],
       ],
       width,
@@ -59,6 +55,25 @@ export function commandHelp(file: CommandFile, width: number): string {
 /** The first screen alone: for someone who called a command with nothing to work on. */
 export const shortHelp = (file: CommandFile, width: number): string =>
   screen([...opening(file, width), `keepsum ${file.name} --help lists the options.`]);
+
+/** What `keepsum help TOPIC` prints. */
+export const topicHelp = ({ opening: words, entries }: Topic, width: number): string =>
+  screen([
+    words === '' ? '' : wrapped(words, width),
+    ...entries.map(({ name, lines }) =>
+      [name, ...lines.flatMap((line) => fold(line, width, { first: 2, rest: 4 }))].join('\n'),
+    ),
+  ]);
+
+/** What may be asked of `keepsum help`. */
+export const topicList = (topics: readonly Topic[], width: number): string =>
+  screen([
+    section(
+      'Topics (keepsum help TOPIC)',
+      topics.map(({ name, summary }) => [name, summary] as const),
+      width,
+    ),
+  ]);
 
 const opening = (file: CommandFile, width: number): string[] => [
   wrapped(file.purpose, width),

@@ -46,4 +46,10 @@ export const commands: readonly CommandEntry[] = [
     summary: 'the JSON Schemas of what is read and printed',
     load: async () => (await import('./schema.js')).schemaCommand,
   },
+  {
+    name: 'help',
+    operands: '[TOPIC | COMMAND]',
+    summary: 'definitions and sources, or the options of a command',
+    load: async () => (await import('./help.js')).helpCommand,
+  },
 ];

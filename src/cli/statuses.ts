@@ -1,0 +1,9 @@
+// Exit statuses and what they mean, for every help screen.
+
+export const statuses: readonly (readonly [string, string])[] = [
+  ['0', 'finished, whatever the p-value is'],
+  ['1', 'the data or a file cannot be used, or a self check differs'],
+  ['2', 'the command line is wrong'],
+  ['3', 'exact work would exceed the stated bound'],
+  ['130', 'interrupted'],
+];
