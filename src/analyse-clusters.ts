@@ -85,6 +85,10 @@ export async function analyseClusters(
         smallest: sizes.reduce((least, n) => Math.min(least, n)),
         largest: sizes.reduce((most, n) => Math.max(most, n)),
         kinds: kinds.counts.length,
+        alike: kinds.counts.map((counts, kind) => ({
+          counts: [...counts],
+          byRow: kinds.table.counts.map((row) => row[kind]!),
+        })),
       },
       notes: [
         ...read.notes,

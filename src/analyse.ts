@@ -17,6 +17,7 @@ import type { ExactAnswer } from './null/exact/exact-answer.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
 import { orderingFor } from './null/ordering.js';
 import { OutOfReach } from './null/exact/network/network.js';
+import { keptWishes } from './plan/kept-wishes.js';
 import { makePlan, planWithoutExact, type Prepared } from './plan/make-plan.js';
 import type { DesignLine } from './design/panel.js';
 import { fixedSides, isTwoByTwo } from './plan/design.js';
@@ -76,6 +77,17 @@ export async function analyse(
   data: TableParts | StrataParts | ReadTable,
   options: PlanOptions = {},
   surroundings: Surroundings = {},
+): Promise<Result> {
+  const result = await analyseWhole(data, options, surroundings);
+  const { plan } = result;
+  const seed = options.seed ?? plan.seed ?? plan.cells?.seed ?? null;
+  return { ...result, plan: { ...plan, asked: keptWishes(options, plan, seed) as NonNullable<typeof plan.asked> } };
+}
+
+async function analyseWhole(
+  data: TableParts | StrataParts | ReadTable,
+  options: PlanOptions,
+  surroundings: Surroundings,
 ): Promise<Result> {
   const read = 'table' in data ? data : 'strata' in data ? await strataFromProgram(data) : fromProgram(data);
   if (read.strata !== undefined)

@@ -2,7 +2,7 @@
 import { z } from 'zod';
 import { resultDeclaration } from '../result/declaration.js';
 import { count } from '../result/declared/pieces.js';
-import { compactWishes, lineWishes } from './declared-wishes.js';
+import { compactWishes, lineWishes } from '../result/declared/wishes.js';
 
 const labels = z.array(z.string());
 const counts = z.array(z.array(count));

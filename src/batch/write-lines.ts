@@ -1,7 +1,6 @@
 // Outcomes to lines: compact or whole, as objects for a program or as text.
 import { findingsOf, type Answer } from '../analyse.js';
-import { standardEffort } from '../null/forecast.js';
-import { standardMostDraws, standardRelativeError } from '../plan/draws.js';
+import { keptWishes } from '../plan/kept-wishes.js';
 import type { PlanOptions } from '../plan/plan.js';
 import { cellText, csvColumns, csvLine, csvRows } from '../report/csv.js';
 import { beforeWords, statisticEcho, type Findings } from '../result/build-result.js';
@@ -34,7 +33,7 @@ export function ndjsonText(outcome: Outcome): string {
 /** Nothing that shownJson would have to look at. */
 const plain = /^[\x20-\x7e]*$/;
 
-function compactLine(key: string, found: Answer, wishes: PlanOptions): CompactLine {
+export function compactLine(key: string, found: Answer, wishes: PlanOptions): CompactLine {
   const { table } = found.read;
   return {
     key,
@@ -44,40 +43,13 @@ function compactLine(key: string, found: Answer, wishes: PlanOptions): CompactLi
     statistic: statisticEcho(findingsOf(found)),
     pValues: found.pValues as CompactLine['pValues'],
     notes: found.notes as CompactLine['notes'],
-    plan: differing(wishes, found),
+    plan: keptWishes(wishes, found.prepared.plan, found.prepared.plan.seed) as CompactLine['plan'],
   };
 }
 
 /** Labels of our own making. */
 const areOurs = (side: 'row' | 'column', labels: readonly string[]): boolean =>
   labels[0] === `${side} 1` && defaultLabels(side, labels.length).every((label, k) => label === labels[k]);
-
-const standard: PlanOptions = {
-  statistic: 'pearson',
-  twoSidedRule: 'distance',
-  groups: 'rows',
-  method: 'auto',
-  draws: 'auto',
-  mostDraws: standardMostDraws,
-  relativeError: standardRelativeError,
-  effort: standardEffort,
-  alpha: 0.05,
-  confidence: 0.95,
-  samplingConfidence: 0.99,
-};
-
-/** The wishes that a run again needs; the seed only where tables were drawn. */
-function differing(wishes: PlanOptions, { prepared: { plan } }: Answer): CompactLine['plan'] {
-  const kept: Record<string, unknown> = {};
-  for (const name in wishes) {
-    const wish = wishes[name as keyof PlanOptions];
-    if (name === 'seed' || name === 'tableKey' || wish === undefined) continue;
-    if (wish === standard[name as keyof PlanOptions]) continue;
-    kept[name] = typeof wish === 'object' && 'value' in wish ? plan.statistic : wish;
-  }
-  if (plan.seed !== null) kept['seed'] = plan.seed;
-  return kept;
-}
 
 /** The published columns of a batch: the key, those of one table, and what is wrong with a table that could not be used. */
 export const csvHeader = (): string => csvLine(['key', ...csvColumns.map(({ name }) => name), 'error']);

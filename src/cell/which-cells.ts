@@ -73,7 +73,7 @@ export function inquireCells(table: Table, live: LiveTable, plan: Plan, options:
       : fromDrawsOfRun();
   }
   if (options.cells !== true) return without('exact work is over the bound for what is done unasked; --cells goes on');
-  return fromOwnDraws(options.seed ?? freshSeed());
+  return fromOwnDraws(plan.seed ?? options.seed ?? freshSeed());
 
   function fromDrawsOfRun(): CellInquiry {
     const ranks = thresholds.places.length;

@@ -41,6 +41,12 @@ export const commands: readonly CommandEntry[] = [
     load: async () => (await import('./selfcheck.js')).selfCheckCommand,
   },
   {
+    name: 'replay',
+    operands: 'RESULT | -',
+    summary: 'make a saved result again and compare every digit',
+    load: async () => (await import('./replay.js')).replayCommand,
+  },
+  {
     name: 'schema',
     operands: 'NAME',
     summary: 'the JSON Schemas of what is read and printed',

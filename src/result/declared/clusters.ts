@@ -13,4 +13,6 @@ export const clusters = z.strictObject({
   largest: count,
   /** Sorts of clusters with the same counts: all that the permutation can tell apart. */
   kinds: count,
+  /** Each kind: the counts of one such cluster by column, and how many of them lie in each row. */
+  alike: z.array(z.strictObject({ counts: z.array(count), byRow: z.array(count) })),
 });

@@ -2,6 +2,7 @@
 import { z } from 'zod';
 import { orderedSides } from '../../order/questions.js';
 import { cellsEcho } from './cell.js';
+import { compactWishes } from './wishes.js';
 import { count, digest, level } from './pieces.js';
 
 const forecast = z.strictObject({
@@ -79,4 +80,6 @@ export const plan = z.strictObject({
   confidence: level,
   samplingConfidence: level,
   cells: cellsEcho.optional(),
+  /** The wishes that all of this was settled from, defaults left out: with them and the counts the result can be made again. */
+  asked: compactWishes.optional(),
 });

@@ -1,10 +1,10 @@
-// What a line of a batch may say under `plan`, declared once: the options of `analyse`, by the same names. The compiler sees to it
-// that none is left out.
+// The options of `analyse` as lines and records hold them, declared once, by the same names. The compiler sees to it that none is
+// left out.
 import { z } from 'zod';
-import { fixedSides, outcomeOrders } from '../plan/design.js';
-import { methods, tails, twoSidedRules, type PlanOptions } from '../plan/plan.js';
-import { digest, level } from '../result/declared/pieces.js';
-import { statisticNames } from '../statistic/registry.js';
+import { fixedSides, outcomeOrders } from '../../plan/design.js';
+import { methods, tails, twoSidedRules, type PlanOptions } from '../../plan/plan.js';
+import { digest, level } from './pieces.js';
+import { statisticNames } from '../../statistic/registry.js';
 
 const scores = z.union([z.string(), z.array(z.number())]);
 const draws = z.union([z.int().min(1).max(1e12), z.literal('auto')]);
