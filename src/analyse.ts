@@ -13,16 +13,20 @@ import { besideThe } from './beside-the-answer.js';
 import { inquireCells, type CellInquiry } from './cell/which-cells.js';
 import type { ReadTable } from './input/read-table.js';
 import type { StrataParts } from './input/strata.js';
+import type { BracketCut, ExactCut } from './null/contract.js';
 import type { ExactAnswer } from './null/exact/exact-answer.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
+import { Meter } from './null/exact/meter.js';
+import { OutOfReach } from './null/exact/out-of-reach.js';
+import { mostOverrun, type Forecast } from './null/forecast.js';
 import { orderingFor } from './null/ordering.js';
-import { OutOfReach } from './null/exact/network/network.js';
 import { keptWishes } from './plan/kept-wishes.js';
-import { makePlan, planWithoutExact, type Prepared } from './plan/make-plan.js';
+import { makePlan, type Prepared } from './plan/make-plan.js';
 import type { DesignLine } from './design/panel.js';
 import { fixedSides, isTwoByTwo } from './plan/design.js';
 import type { PlanOptions } from './plan/plan.js';
 import { noRoles } from './plan/roles.js';
+import { planWithoutExact } from './plan/without-exact.js';
 import type { PValueEntry, Question } from './pvalue/contract.js';
 import { approximationsOf, asymptoticAlone, asymptoticBeside, degreesOfFreedomOf } from './pvalue/approximations.js';
 import { conditionalPValues, orderingsNeeded, questionsOf } from './pvalue/p-values.js';
@@ -159,7 +163,7 @@ async function find(
     return await carryOut(read, live, prepared, options, surroundings, withCells);
   } catch (thrown) {
     if (!(thrown instanceof OutOfReach)) throw thrown;
-    const second = planWithoutExact(read.table, live, options, prepared.plan);
+    const second = planWithoutExact(read.table, live, options, prepared.plan, thrown);
     return carryOut(read, live, second, options, surroundings, withCells);
   }
 }
@@ -229,7 +233,9 @@ async function carryOut(
     const orderings = names.map((name) => orderingFor(live, bound, name));
     if (conditional.method === 'exact') {
       await surroundings.beforeExact?.(conditional.forecast);
-      return fromAnswer(asked, exactCuts(live, orderings, conditional.forecast.engine, plan.statistic));
+      const { forecast } = conditional;
+      const meter = meterFor(plan.effort, forecast, surroundings);
+      return fromAnswer(asked, exactCuts(live, orderings, forecast.engine, plan.statistic, meter));
     }
     const recipe = statistic.own ? null : { parts: partsOf(read), options };
     return { found: await sampledPValues(asked, live, orderings, plan, recipe, surroundings, cells?.listener) };
@@ -237,11 +243,18 @@ async function carryOut(
 
   async function fromAnswer(
     asked: readonly Question[],
-    { cuts, point, tables }: ExactAnswer,
+    { cuts, point, tables }: ExactAnswer<ExactCut | BracketCut>,
   ): Promise<{ found: PValueEntry[]; tables?: number }> {
     const found = await conditionalPValues(asked, cuts, point, plan.samplingConfidence);
     return tables === undefined ? { found } : { found, tables };
   }
+}
+
+/** A bracket is refined while the effort lasts; other exact work may go past it, since forecasts err. */
+function meterFor(effort: number, forecast: Forecast, { onWork }: Surroundings): Meter {
+  const most = forecast.engine === 'bracket' ? effort : mostOverrun * effort;
+  const foreseen = forecast.engine === 'bracket' ? effort : forecast.workUnits;
+  return new Meter(most, onWork === undefined ? undefined : (units) => onWork(units, foreseen));
 }
 
 async function strataFromProgram(parts: StrataParts): Promise<ReadTable> {

@@ -34,6 +34,8 @@ export interface Surroundings {
   readonly onProgress?: (draws: number, most: number) => void;
   /** Told what exact work is foreseen to take, before it starts. */
   readonly beforeExact?: (foreseen: ForeseenWork) => Promise<void>;
+  /** The same for exact work: counted units spent, and those foreseen. Called while nothing else can run. */
+  readonly onWork?: (units: number, foreseen: number) => void;
 }
 
 /** Work worth the start of threads, and what is done on one thread before they are thought of. */

@@ -51,4 +51,18 @@ export interface SampledCut {
   readonly draws: number;
 }
 
-export type Cut = ExactCut | SampledCut;
+/** Masses known to lie between two limits, rounding included. */
+export interface BracketCut {
+  readonly kind: 'bracket';
+  readonly ordering: OrderingName;
+  readonly atLeast: MassLimits;
+  /** Of the tables more extreme than the observed one; its upper limit holds tables that may be level. */
+  readonly above: MassLimits;
+}
+
+export interface MassLimits {
+  readonly lower: Mass;
+  readonly upper: Mass;
+}
+
+export type Cut = ExactCut | BracketCut | SampledCut;

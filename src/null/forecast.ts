@@ -6,7 +6,7 @@ import { forecastWithinLimits } from './exact/within-limits.js';
 import { forecastLinear } from './exact/linear/linear-forecast.js';
 import { forecastNetwork } from './exact/network/forecast.js';
 
-export type ExactEngine = 'two-by-two' | 'enumeration' | 'linear' | 'network' | 'within-limits';
+export type ExactEngine = 'two-by-two' | 'enumeration' | 'linear' | 'network' | 'bracket' | 'within-limits';
 
 /** Engines of tests of pairs: one walk, two halves joined, the law of the differences of the margins. */
 export type PairsEngine = 'coin-walk' | 'coin-halves' | 'coin-differences';
@@ -36,6 +36,9 @@ export const secondsPerUnit = 3e-8;
 /** Default bound on exact work: about two seconds. */
 export const standardEffort = 6e7;
 
+/** Exact work may go so many times past its bound, since forecasts err, before it is ended. */
+export const mostOverrun = 3;
+
 /** Memory that an exact engine may take; what would take more is out of reach. */
 export const mostMemoryBytes = 1.5e9;
 
@@ -62,6 +65,10 @@ export function forecastExact(live: LiveTable, bound?: BoundStatistic | null, st
   };
 }
 
+/** Sums over cells, but for those whose law has an engine of its own. */
+export const takesNetwork = (bound: BoundStatistic | null | undefined): boolean =>
+  bound?.sum !== undefined && bound.linear === undefined;
+
 interface Choice {
   readonly engine: ExactEngine;
   readonly workUnits: number;
@@ -85,7 +92,7 @@ function cheapest(
   if (bound?.limits !== undefined) {
     choices.push({ engine: 'within-limits', workUnits: forecastWithinLimits(live, bound.limits) });
   }
-  if (bound?.sum !== undefined && bound.linear === undefined && statistic !== undefined) {
+  if (takesNetwork(bound) && statistic !== undefined) {
     const { workUnits, memoryBytes } = forecastNetwork(live, statistic);
     const fits = memoryBytes <= mostMemoryBytes;
     choices.push({ engine: 'network', workUnits: fits ? networkStart + perNetworkUnit * workUnits : Infinity });

@@ -1,7 +1,8 @@
 // Raw wishes in, one checked and frozen plan out: every default filled, the method settled, the reason said.
-import { forecastExact, standardEffort, type Forecast } from '../null/forecast.js';
+import { expectsBracket } from '../null/exact/network/bracket-forecast.js';
+import { forecastExact, standardEffort, takesNetwork, type Forecast } from '../null/forecast.js';
 import { blockSize } from '../null/sampled/limits.js';
-import { effortProblem, usageProblem } from '../problem/problem.js';
+import { usageProblem } from '../problem/problem.js';
 import { generatorName } from '../random/stream.js';
 import type { BoundStatistic, Choices, Statistic } from '../statistic/contract.js';
 import { hasOneTableOnly, type LiveTable } from '../table/live-table.js';
@@ -58,7 +59,10 @@ export function makePlan(table: Table, live: LiveTable, wishes: PlanOptions): Pr
   const design = designOf({ table, live, statistic, tail, rule, asked, effort }, options);
   // Where both margins are not fixed, the conditional p stands beside, exact where that can be had.
   const beside = design.kind === 'conditional' ? asked : forecast.workUnits <= effort ? 'exact' : 'auto';
-  const conditional = settleMethod({ asked: beside, statistic, bound, rule, forecast, effort });
+  const bracketPays = (): boolean =>
+    design.kind === 'conditional' && takesNetwork(bound) && expectsBracket(live, statistic.name, effort);
+  const conditional = settleMethod({ asked: beside, statistic, bound, rule, forecast, effort, bracketPays });
+  const settled = Object.freeze({ ...forecast, engine: conditional.engine ?? forecast.engine });
   const alpha = share(options.alpha, 0.05, '--alpha');
   const drawing = design.kind === 'bootstrap' ? null : drawsOf(options, asked, alpha);
   if (options.seed === '') {
@@ -88,7 +92,7 @@ export function makePlan(table: Table, live: LiveTable, wishes: PlanOptions): Pr
     method,
     methodAsked: asked,
     methodReason: conditional.reason,
-    forecast: Object.freeze(forecast),
+    forecast: settled,
     groups: named?.groups ?? null,
     event: named?.eventLabel ?? null,
     reference: named?.referenceLabel ?? null,
@@ -116,29 +120,9 @@ export function makePlan(table: Table, live: LiveTable, wishes: PlanOptions): Pr
     valueOfOnlyTable,
     named,
     design: design.kind,
-    conditional: { method: conditional.method, forecast },
+    conditional: { method: conditional.method, forecast: settled },
     choices,
   };
-}
-
-/**
- * The plan where exact work turned out to need more memory than it may have, although its forecast did not say so.
- * @throws Problem (effort) when exact was asked for.
- */
-export function planWithoutExact(table: Table, live: LiveTable, options: PlanOptions, first: Plan): Prepared {
-  const { methodAsked } = first;
-  const outgrown = 'exact work outgrew its forecast: more partial sums than memory is allowed for';
-  if (methodAsked === 'exact') {
-    throw effortProblem({
-      code: 'exact-over-memory',
-      message: outgrown,
-      place: '--method exact',
-      hint: 'use --method sample',
-    });
-  }
-  const prepared = makePlan(table, live, { ...options, method: 'sample' });
-  const plan = Object.freeze({ ...prepared.plan, methodAsked, methodReason: outgrown, forecast: first.forecast });
-  return { ...prepared, plan };
 }
 
 const definedOrNull = (value: number): number | null => (Number.isNaN(value) ? null : value);

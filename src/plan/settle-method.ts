@@ -1,6 +1,6 @@
 // Exact, sampled or asymptotic: what was asked for where it can be had, else - for `auto` alone - what the forecast allows.
 import { groupedDigits } from '../numeric/digit-groups.js';
-import type { Forecast } from '../null/forecast.js';
+import type { ExactEngine, Forecast } from '../null/forecast.js';
 import { effortProblem, usageProblem, type Problem } from '../problem/problem.js';
 import type { BoundStatistic, Statistic } from '../statistic/contract.js';
 import type { ChosenMethod, Method, TwoSidedRule } from './plan.js';
@@ -13,13 +13,21 @@ export interface MethodQuestion {
   readonly forecast: Forecast;
   /** Bound on exact work, in counted units. */
   readonly effort: number;
+  /** Whether a bracket within that bound is likely to tell more than draws. */
+  readonly bracketPays: () => boolean;
+}
+
+export interface SettledMethod {
+  readonly method: ChosenMethod;
+  readonly reason: string;
+  /** The exact engine, where it is not the one of the forecast. */
+  readonly engine?: ExactEngine;
 }
 
 /** @throws Problem: usage where a method has no answer to the question, effort for exact work over the bound. */
-export function settleMethod(question: MethodQuestion): { method: ChosenMethod; reason: string } {
+export function settleMethod(question: MethodQuestion): SettledMethod {
   const { asked, statistic, forecast, effort } = question;
-  const tables = `${forecast.tablesAreCounted ? '' : 'about '}${inWords(forecast.tables)} ${forecast.tables === 1 ? 'table has' : 'tables have'} these margins`;
-  const work = `exact work is forecast at ${inWords(forecast.workUnits)} units (${timeInWords(forecast.seconds)}), the bound is ${inWords(effort)}`;
+  const { tables, work } = sizeWords(forecast, effort);
   const fits = forecast.workUnits <= effort;
   const more = `raise the bound with --effort ${(forecast.workUnits * 1.1).toPrecision(2)}`;
   if (asked === 'asymptotic' && statistic.limit === 'none') throw noAsymptoticForm(statistic);
@@ -37,6 +45,13 @@ export function settleMethod(question: MethodQuestion): { method: ChosenMethod; 
       });
     }
   }
+  if ((asked === 'exact' || asked === 'auto') && !fits && question.bracketPays()) {
+    return {
+      method: 'exact',
+      reason: `${asked === 'exact' ? 'asked for; ' : ''}${tables}; ${work}; partial sums were merged within it, for a bracket that holds p`,
+      engine: 'bracket',
+    };
+  }
   if (asked === 'exact' && !fits) {
     throw effortProblem({
       code: 'exact-over-bound',
@@ -50,6 +65,15 @@ export function settleMethod(question: MethodQuestion): { method: ChosenMethod; 
   return fits
     ? { method: 'exact', reason: `${tables}; ${work}` }
     : { method: 'sample', reason: `exact is out of reach: ${tables}; ${work}` };
+}
+
+/** How many tables there are, and what exact work would take. */
+export function sizeWords(forecast: Forecast<string>, effort: number): { tables: string; work: string } {
+  const { tables, tablesAreCounted, workUnits, seconds } = forecast;
+  return {
+    tables: `${tablesAreCounted ? '' : 'about '}${inWords(tables)} ${tables === 1 ? 'table has' : 'tables have'} these margins`,
+    work: `exact work is forecast at ${inWords(workUnits)} units (${timeInWords(seconds)}), the bound is ${inWords(effort)}`,
+  };
 }
 
 /** Values compared by how probable they are, or by their tails: random tables do not tell, unless a value is one table (2x2)
@@ -87,7 +111,7 @@ function noLaw({ name, own }: Statistic, rule: TwoSidedRule): Problem {
 }
 
 /** 1,234 in full, larger numbers to two digits. */
-const inWords = (value: number): string =>
+export const inWords = (value: number): string =>
   value < 1e7 ? groupedDigits(Math.round(value)) : value.toExponential(1).replace('e+', 'e');
 
 const timeInWords = (seconds: number): string => {

@@ -40,6 +40,13 @@ export interface MaximumError {
   relative: number;
 }
 
+/** The exact p lies between these for certain; the p reported is the upper one. */
+export interface BracketError {
+  kind: 'bracket';
+  lower: number;
+  upper: number;
+}
+
 /** From a chain of tables that depend on one another. */
 export interface ChainError {
   kind: 'chain';
@@ -75,7 +82,9 @@ export interface PValueEntry {
   /** Where an unconditional p is largest, and the proved bound of it. */
   nuisance?: { value: number; second?: number; certifiedUpper: number };
   guaranteed: boolean;
-  errors: (RoundingError | SamplingError | SequentialError | MaximumError | ChainError | ApproximationError)[];
+  errors: (
+    RoundingError | SamplingError | SequentialError | BracketError | MaximumError | ChainError | ApproximationError
+  )[];
 }
 
 /** What a p-value is asked for: a tail, and for two tails a rule. */

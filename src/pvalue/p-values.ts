@@ -1,7 +1,8 @@
 // All p-values of a run, the one asked for first: from the cuts of its null, in the order of the questions.
-import type { Cut, ExactCut, Mass, OrderingName, SampledCut } from '../null/contract.js';
+import type { BracketCut, Cut, ExactCut, Mass, OrderingName, SampledCut } from '../null/contract.js';
 import { orderingFor, type Plan } from '../plan/plan.js';
 import type { PValueEntry, Question } from './contract.js';
+import { bracketDoubled, bracketPValue } from './from-bracket.js';
 import { exactDoubled, exactPValue } from './from-exact.js';
 import { sampledDoubled, sampledPValue } from './from-sampled.js';
 
@@ -33,6 +34,11 @@ export async function conditionalPValues(
         return second === undefined
           ? exactPValue(question, first as ExactCut, point!)
           : exactDoubled(question, first as ExactCut, second as ExactCut, point!);
+      }
+      if (first!.kind === 'bracket') {
+        return second === undefined
+          ? bracketPValue(question, first as BracketCut, point!)
+          : bracketDoubled(question, first as BracketCut, second as BracketCut, point!);
       }
       return second === undefined
         ? sampledPValue(question, first as SampledCut, samplingConfidence)

@@ -20,8 +20,13 @@ const sampling = (p: PValue): ErrorOf<'sampling'> | ErrorOf<'sequential'> | unde
   p.errors.find((error) => error.kind === 'sampling' || error.kind === 'sequential');
 const sequential = (p: PValue): ErrorOf<'sequential'> | undefined =>
   p.errors.find((error) => error.kind === 'sequential');
-const levelOf = (error: ReturnType<typeof sampling>): number | undefined =>
-  error?.kind === 'sampling' ? error.confidence : error?.level;
+const bracket = (p: PValue): ErrorOf<'bracket'> | undefined => p.errors.find((error) => error.kind === 'bracket');
+/** A bracket holds p for certain. */
+function levelOf(p: PValue): number | undefined {
+  const error = sampling(p);
+  if (error === undefined) return bracket(p) === undefined ? undefined : 1;
+  return error.kind === 'sampling' ? error.confidence : error.level;
+}
 const standardErrorOf = (error: ReturnType<typeof sampling>): number | null | undefined =>
   error?.kind === 'sampling' ? error.standardError : undefined;
 const maximum = (p: PValue): ErrorOf<'nuisance-maximum'> | undefined =>
@@ -61,9 +66,17 @@ export const csvColumns: readonly Column[] = [
   { name: 'draws', words: 'draws made', cell: (p) => sampling(p)?.draws },
   { name: 'estimate', words: 'share of draws at least as extreme', cell: (p) => sampling(p)?.estimate },
   { name: 'standardError', words: 'of the estimate', cell: (p) => standardErrorOf(sampling(p)) },
-  { name: 'intervalLower', words: 'interval of the estimate', cell: (p) => sampling(p)?.interval[0] },
-  { name: 'intervalUpper', words: 'interval of the estimate', cell: (p) => sampling(p)?.interval[1] },
-  { name: 'intervalConfidence', words: 'its level', cell: (p) => levelOf(sampling(p)) },
+  {
+    name: 'intervalLower',
+    words: 'interval of the estimate, or the certified bracket of p',
+    cell: (p) => sampling(p)?.interval[0] ?? bracket(p)?.lower,
+  },
+  {
+    name: 'intervalUpper',
+    words: 'interval of the estimate, or the certified bracket of p',
+    cell: (p) => sampling(p)?.interval[1] ?? bracket(p)?.upper,
+  },
+  { name: 'intervalConfidence', words: 'its level; 1 for a bracket', cell: levelOf },
   {
     name: 'stoppedBecause',
     words: 'why drawing ended, where it went on until settled',

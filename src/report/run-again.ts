@@ -156,6 +156,8 @@ const planOptionsOf = (plan: Result['plan'], roles: readonly Option[]): Option[]
   ...optional('outcome-order', plan.outcomeOrder === 'statistic' ? null : plan.outcomeOrder),
   ...optional('nuisance-risk', plan.nuisanceRisk),
   ...optional('method', plan.method),
+  // How far a bracket is refined depends on it.
+  ...optional('effort', plan.forecast.engine === 'bracket' && plan.method === 'exact' ? plan.effort : null),
   ...optional('draws', plan.draws),
   ...optional('most-draws', plan.mostDraws),
   ...optional('sampling-risk', plan.samplingRisk),

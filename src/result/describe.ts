@@ -5,7 +5,15 @@ import { statistics } from '../statistic/registry.js';
 import { stratifiedStatistics } from '../statistic/stratified.js';
 import { isBootstrap, largestWords } from './design-words.js';
 import { quoted } from './label-words.js';
-import { countWords, digits, levelWords, probabilityWords, roundedTo, tinyWords } from './number-words.js';
+import {
+  bracketWords,
+  countWords,
+  digits,
+  levelWords,
+  probabilityWords,
+  roundedTo,
+  tinyWords,
+} from './number-words.js';
 import type { PValue, PValueError, Result } from './result.js';
 
 /** A result whose sentence and methods paragraph are still to be written. */
@@ -52,6 +60,12 @@ export const drawingErrorOf = (p: PValue): SamplingError | SequentialError | und
 export const samplingErrorOf = (p: PValue): SamplingError | undefined =>
   p.errors.find((error): error is SamplingError => error.kind === 'sampling');
 
+export type BracketError = Extract<PValueError, { kind: 'bracket' }>;
+
+/** Limits between which an exact p lies for certain. */
+export const bracketOf = (p: PValue): BracketError | undefined =>
+  p.errors.find((error): error is BracketError => error.kind === 'bracket');
+
 const tailWords = { upper: 'upper-tailed', lower: 'lower-tailed', both: 'two-tailed' } as const;
 
 /** Which p: "two-tailed permutation p (rule: distance)". */
@@ -69,13 +83,17 @@ function kindOf(p: PValue): string {
 export function pNumber(p: PValue): string {
   if (p.p === null) return p.log10P === null ? 'unknown' : tinyWords(p.log10P);
   const drawn = drawingErrorOf(p);
-  return drawn === undefined ? probabilityWords(p.p) : roundedTo(spreadOf(drawn) ?? p.p, p.p);
+  if (drawn !== undefined) return roundedTo(spreadOf(drawn) ?? p.p, p.p);
+  const bracket = bracketOf(p);
+  return bracket === undefined ? probabilityWords(p.p) : roundedTo(bracket.upper - bracket.lower, p.p);
 }
 
 /** A probability that goes with a p (strict, mid), shown to the same error. */
 export function besideP(p: PValue, value: number): string {
   const drawn = drawingErrorOf(p);
-  return drawn === undefined ? probabilityWords(value) : roundedTo(spreadOf(drawn) ?? drawn.interval[1], value);
+  if (drawn !== undefined) return roundedTo(spreadOf(drawn) ?? drawn.interval[1], value);
+  const bracket = bracketOf(p);
+  return bracket === undefined ? probabilityWords(value) : roundedTo(bracket.upper - bracket.lower, value);
 }
 
 /** How the p was found, as the end of a clause: "exact", "from 100,000 random tables ...". */
@@ -84,7 +102,7 @@ export function foundWords(
   seed: string | null,
   drawn = `random tables with the same ${isBootstrap(p) ? 'total' : 'margins'}`,
 ): string {
-  if (p.method === 'exact') return 'exact';
+  if (p.method === 'exact') return bracketOf(p) === undefined ? 'exact' : 'exact up to that bracket';
   if (p.method === 'unconditional') return largestWords(p);
   const chain = p.errors.find((error) => error.kind === 'chain');
   if (chain !== undefined) {
@@ -103,6 +121,8 @@ export const approximationName = (p: PValue): string => (p.degreesOfFreedom === 
 /** What is known of the error of a p, as an aside: empty for an exact one. */
 export function errorAside(p: PValue): string {
   const drawn = drawingErrorOf(p);
+  const bracket = bracketOf(p);
+  if (bracket !== undefined) return ` (certified bracket ${bracketWords(bracket.lower, bracket.upper)})`;
   if (drawn === undefined) return p.method === 'asymptotic' ? ' (error unknown)' : '';
   if (drawn.kind === 'sequential') return ` (${limitsWords(drawn)} at every look)`;
   const { standardError } = drawn;
@@ -151,7 +171,9 @@ export function pSentence(result: ResultBeforeWords, p: PValue): string {
 }
 
 function shortFoundWords(p: PValue): string {
-  if (p.method === 'exact') return ', exact';
+  if (p.method === 'exact') {
+    return bracketOf(p) === undefined ? ', exact' : `${errorAside(p)}, exact up to that bracket`;
+  }
   if (p.method === 'unconditional') return `, ${largestWords(p)}`;
   if (p.method === 'sample') return `${errorAside(p)}, from the same draws`;
   const degrees = p.degreesOfFreedom === undefined ? '' : ` on ${degreesWords(p.degreesOfFreedom)}`;
@@ -179,12 +201,18 @@ function errorSentence(p: PValue, error: PValueError): string {
         `${countWords(error.tables)} tables, ${countWords(error.stepsBetween)} steps apart, ${error.atLeast > 1 ? 'were' : 'was'} at least as extreme; ` +
         `(b + 1) / (m + 1) is a valid p however slowly the chain mixes (Besag & Clifford 1989).`
       );
+    case 'bracket':
+      return bracketSentence(error);
     case 'approximation':
       if (p.method === 'sample')
         return 'It is an approximation: fitted proportions stand for the unknown ones, with an error not known here.';
       return 'It rests on an approximation for large counts; its error here is not known.';
   }
 }
+
+const bracketSentence = ({ lower, upper }: BracketError): string =>
+  `Partial sums too many to keep apart were merged, once rounded down and once rounded up: the exact p lies from ` +
+  `${bracketWords(lower, upper)} for certain, and the upper limit is reported.`;
 
 function samplingSentence(p: PValue, error: SamplingError): string {
   const draws = countWords(error.draws);

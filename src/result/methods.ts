@@ -2,6 +2,7 @@
 // software - and the sources (author, year) of exactly what was used for this result.
 import {
   approximationName,
+  bracketOf,
   citedStatistic,
   isAbout,
   isOneTableOnly,
@@ -17,7 +18,7 @@ import { levelSentences } from './level-words.js';
 import { bootstrapWords, isBootstrap, unconditionalSentence } from './design-words.js';
 import { quoted } from './label-words.js';
 import { shownEffects } from './shown-effects.js';
-import { countWords, levelWords } from './number-words.js';
+import { bracketWords, countWords, levelWords } from './number-words.js';
 import { quasiMethod, quasiSentence } from './quasi-methods.js';
 import { agreementInterval, agreementOpening, changeMethods } from './pairs-methods.js';
 import { isAboutChange } from './pairs-sentence.js';
@@ -96,6 +97,14 @@ function methodSentence(result: ResultBeforeWords, p: PValue): string {
     const isTwoByTwo = result.input.rowLabels.length === 2 && result.input.columnLabels.length === 2;
     const linear = result.plan.forecast.engine === 'linear';
     const source = isTwoByTwo ? 'Fisher 1935' : linear ? 'Pagano & Tritchler 1983' : 'Freeman & Halton 1951';
+    const bracket = bracketOf(p);
+    if (bracket !== undefined) {
+      return (
+        `${name} is the upper limit of a certified bracket: the probabilities, given both margins, of all tables at least as extreme ` +
+        `as the observed one (${source}) were added up twice, with partial sums of the statistic rounded down to a grid and rounded ` +
+        `up, so that the exact value lies from ${bracketWords(bracket.lower, bracket.upper)}.`
+      );
+    }
     return `${name} is exact: it adds up the probabilities, given both margins, of all tables at least as extreme as the observed one (${source}).`;
   }
   if (p.method === 'unconditional') return unconditionalSentence(name, p, result.plan);
@@ -159,6 +168,7 @@ function tiesSentence({ quasiIndependence }: ResultBeforeWords, p: PValue): stri
   if (p.method === 'asymptotic') return undefined;
   if (quasiIndependence !== undefined && p.statistic === 'pearson') return undefined;
   const mid = p.mid === null ? '' : ', a mid-p counts them by half (Lancaster 1961)';
+  if (bracketOf(p) !== undefined) return `Ties count as at least as extreme${mid}; strict and mid-p are estimates.`;
   return `Near ties with the observed table were settled by exact arithmetic; ties count as at least as extreme${mid}.`;
 }
 

@@ -39,6 +39,23 @@ export function roundedTo(error: number, value: number): string {
 const notQuiteOne = (value: number, text: string): string =>
   value >= 0.9995 && value < 1 && Number(text) === 1 ? 'above 0.999' : text;
 
+/** Two limits with as many digits as tell them apart, rounded outwards: "0.24131 to 0.24142". */
+export function bracketWords(lower: number, upper: number): string {
+  if (lower === upper) return `${digits(lower, 12)} to ${digits(upper, 12)}`;
+  const apart = Math.ceil(-Math.log10((upper - lower) / upper));
+  const significant = Math.max(2, Math.min(15, apart + 2));
+  return `${outward(lower, significant, -1)} to ${outward(upper, significant, 1)}`;
+}
+
+/** To so many digits, never on the inner side. */
+function outward(value: number, significant: number, direction: 1 | -1): string {
+  if (value === 0 || value === 1) return String(value);
+  const rounded = Number(value.toPrecision(significant));
+  const unit = 10 ** (Math.floor(Math.log10(value)) - significant + 1);
+  const moved = direction * (rounded - value) < 0 ? rounded + direction * unit : rounded;
+  return digits(Math.max(0, Math.min(1, moved)), significant);
+}
+
 /** Power of ten of the first significant digit. */
 const firstPlace = (value: number): number => Number(value.toExponential().split('e')[1]);
 

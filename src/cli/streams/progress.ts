@@ -58,8 +58,17 @@ export async function withProgress<T>(
       const left = Math.ceil((most - draws) / (draws / seconds));
       return `drawn: ${countWords(draws)} of at most ${countWords(most)} tables, at most ${left} s left`;
     });
+  /** Shown although nothing else can run in the middle of exact work: terminals take bytes without a queue. */
+  const onWork = (units: number, foreseen: number): void =>
+    line.show((seconds) => {
+      const share = Math.floor((100 * units) / foreseen);
+      const left = Math.ceil(((foreseen - units) * seconds) / units);
+      return share < 100
+        ? `exact work: ${share}% of what was foreseen, about ${left} s left`
+        : `exact work: past what was foreseen, ${share}% of it`;
+    });
   try {
-    return await work({ ...used, onProgress });
+    return await work({ ...used, onProgress, onWork });
   } finally {
     line.erase();
   }

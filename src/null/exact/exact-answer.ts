@@ -2,8 +2,8 @@
 import { WideSum } from '../../numeric/wide-number.js';
 import type { ExactCut, Mass, OrderingName } from '../contract.js';
 
-export interface ExactAnswer {
-  readonly cuts: readonly ExactCut[];
+export interface ExactAnswer<C = ExactCut> {
+  readonly cuts: readonly C[];
   /** Probability of the observed table itself. */
   readonly point: Mass;
   /** Number of tables with these margins, where the engine met every one. */

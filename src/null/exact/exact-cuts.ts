@@ -1,33 +1,47 @@
 // Picks the exact engine for a table and hands on its answer.
 import { hasOneTableOnly, type LiveTable } from '../../table/live-table.js';
-import type { Ordering, OrderingName } from '../contract.js';
+import type { BracketCut, ExactCut, Ordering, OrderingName } from '../contract.js';
 import { exactByEnumeration } from './enumerate.js';
 import type { ExactAnswer } from './exact-answer.js';
 import { exactLinear } from './linear/exact-linear.js';
 import type { ExactEngine } from '../forecast.js';
+import { Meter } from './meter.js';
+import { bracketCut } from './network/bracket-cut.js';
 import { exactCut } from './network/exact-cut.js';
 import { pointMass } from './point-mass.js';
 import { exactWithinLimits } from './within-limits.js';
 import { exactTwoByTwo } from './two-by-two.js';
 
-/** At least two live rows and columns. `statistic` is the name of the one that the orderings came from. */
+/**
+ * At least two live rows and columns. `statistic` is the name of the one that the orderings came from.
+ * @throws OutOfReach where the work outgrows memory or the meter's bound, or a bracket would tell less than draws.
+ */
 export function exactCuts(
   live: LiveTable,
   orderings: readonly Ordering[],
   engine: ExactEngine,
   statistic: string,
-): ExactAnswer {
+  meter: Meter = new Meter(),
+): ExactAnswer<ExactCut | BracketCut> {
   switch (engine) {
     case 'two-by-two':
       return exactTwoByTwo(live, orderings);
     case 'linear':
-      return { cuts: exactLinear(live, orderings), point: pointMass(live) };
+      return { cuts: exactLinear(live, orderings, meter), point: pointMass(live) };
     case 'network':
-      return { cuts: orderings.map((ordering) => exactCut(live, ordering, statistic)), point: pointMass(live) };
+      return {
+        cuts: orderings.map((ordering) => exactCut(live, ordering, statistic, { meter })),
+        point: pointMass(live),
+      };
+    case 'bracket':
+      return {
+        cuts: orderings.map((ordering) => bracketCut(live, ordering, statistic, { meter })),
+        point: pointMass(live),
+      };
     case 'within-limits':
-      return { cuts: exactWithinLimits(live, orderings), point: pointMass(live) };
+      return { cuts: exactWithinLimits(live, orderings, meter), point: pointMass(live) };
     case 'enumeration':
-      return exactByEnumeration(live, orderings);
+      return exactByEnumeration(live, orderings, meter);
   }
 }
 

@@ -40,6 +40,13 @@ const sequentialError = z.strictObject({
   tails: z.strictObject({ upper: count, lower: count }).optional(),
 });
 
+const bracketError = z.strictObject({
+  kind: z.literal('bracket'),
+  /** Certified, rounding included: the exact p lies from lower to upper, and the p reported is upper. */
+  lower: probability,
+  upper: probability,
+});
+
 /** p is a proved upper bound of a maximum over unknown proportions, and lies at most this far above it. */
 const maximumError = z.strictObject({ kind: z.literal('nuisance-maximum'), relative: z.number().min(0) });
 
@@ -73,10 +80,11 @@ export const pValue = z.strictObject({
   orderedBy: z.string(),
   method: z.enum(['exact', 'sample', 'asymptotic', 'unconditional']),
   statistic: z.string(),
-  /** The guaranteed p; null beside a reason when it is below the smallest double. */
+  /** The guaranteed p, for a bracket its upper limit; null beside a reason when it is below the smallest double. */
   p: probability.nullable(),
   log10P: z.number().nullable(),
   reason: z.enum(['underflow']).optional(),
+  /** These three are plain estimates where p is sampled or known in a bracket only. */
   strict: probability.nullable(),
   mid: probability.nullable(),
   tied: probability.nullable(),
@@ -96,6 +104,7 @@ export const pValue = z.strictObject({
       roundingError,
       samplingError,
       sequentialError,
+      bracketError,
       maximumError,
       chainError,
       approximationError,

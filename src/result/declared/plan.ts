@@ -12,6 +12,7 @@ const forecast = z.strictObject({
     'enumeration',
     'linear',
     'network',
+    'bracket',
     'within-limits',
     'coin-walk',
     'coin-halves',

@@ -1,6 +1,8 @@
 // The law of a linear statistic by dynamic programming (after Pagano & Tritchler 1983): columns are dealt to the rows one
 // cell at a time; partial tables that leave the same row totals are one node, which carries the law of the sum so far.
 // Weights are the chances of a cell given the node, so that values are probabilities and what is dropped is known.
+import { Meter } from '../meter.js';
+import { perDenseValue, perMove, perSparseValue } from './costs.js';
 import { factorialsUpTo, HypergeometricWeights, type Scaled } from './factorials.js';
 import { NodeNumbers, Records } from './moves.js';
 import { DenseLaw, powerOfTwo, SparseLaw, type SumLaw } from './node.js';
@@ -36,7 +38,8 @@ export const codesOf = (rows: readonly ScoredLine[]): number =>
  * @param least moves and end values below this (times `upscale`) are left out; 0 keeps all.
  * @param sparse hold sums in hash maps instead of arrays over their range.
  */
-export function dealColumns(sides: ScoredSides, least: number, sparse: boolean): DealtLaw {
+export function dealColumns(sides: ScoredSides, least: number, sparse: boolean, meter: Meter = new Meter()): DealtLaw {
+  const perValue = sparse ? perSparseValue : perDenseValue;
   const { rows, columns, total } = sides;
   const kind = sparse ? SparseLaw : DenseLaw;
   const weights = new HypergeometricWeights(factorialsUpTo(total));
@@ -60,6 +63,7 @@ export function dealColumns(sides: ScoredSides, least: number, sparse: boolean):
     const moves = new Records(moveWidth);
     const weight: Scaled = { mantissa: 0, exponent: 0 };
     nodes.laws.forEach((law, from) => {
+      const before = moves.length;
       const at = from * width;
       const { data } = nodes.left;
       let drawn = -rest;
@@ -102,6 +106,7 @@ export function dealColumns(sides: ScoredSides, least: number, sparse: boolean):
         moves.data[move + 3] = weight.mantissa;
         moves.data[move + 4] = weight.exponent;
       }
+      meter.spend((moves.length - before) * (perMove + law.size * perValue));
     });
     numbers.clear(codes);
     const laws: SumLaw[] = kind.many(lowest.data.subarray(0, codes.length), highest.data);
@@ -111,6 +116,7 @@ export function dealColumns(sides: ScoredSides, least: number, sparse: boolean):
     }
     let mostWays = 0;
     laws.forEach((law, to) => {
+      meter.spend(3 * law.size * perValue);
       leftOut += law.trim(least);
       mostWays = Math.max(mostWays, ways.data[to]!);
     });

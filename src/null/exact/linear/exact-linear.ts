@@ -8,6 +8,7 @@ import { makeTable } from '../../../table/table.js';
 import type { ExactCut, Ordering, OrderingName } from '../../contract.js';
 import { orderingFor } from '../../ordering.js';
 import { cutFrom, type Masses } from '../exact-answer.js';
+import type { Meter } from '../meter.js';
 import { exactTwoByTwo } from '../two-by-two.js';
 import type { DealtLaw } from './deal.js';
 import { laws, placesByProbability } from './linear-law.js';
@@ -26,13 +27,13 @@ const deepestLog2 = -1850;
  * bytes a value. Relative error of every mass as stated in the cut, 1e-12 up to totals of about 8,000.
  * @throws Problem (effort) `beyond-doubles` for masses below 1e-550, which this engine does not hold.
  */
-export function exactLinear(live: LiveTable, orderings: readonly Ordering[]): ExactCut[] {
+export function exactLinear(live: LiveTable, orderings: readonly Ordering[], meter?: Meter): ExactCut[] {
   const form = orderings[0]!.linear!;
   const sides = scoredSides(live, form);
   if (sides.rows.length === 1) return orderings.map(({ name }) => everythingTies(name));
   if (sides.columns.length === 2) return cutsOfCorner(sides, form, orderings);
   let cuts: ExactCut[] | undefined;
-  for (const dealt of laws(live, form)) {
+  for (const dealt of laws(live, form, meter)) {
     cuts = cutsOf(live, sides, form, dealt, orderings);
     if (cuts !== undefined) return cuts;
   }

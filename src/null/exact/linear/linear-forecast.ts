@@ -2,6 +2,7 @@
 // law of every partial sum: in the counted units of forecast.ts.
 import type { LinearForm } from '../../../statistic/contract.js';
 import type { LiveTable } from '../../../table/live-table.js';
+import { perDenseValue, perMove, perSparseValue } from './costs.js';
 import { codesOf, mostCodes } from './deal.js';
 import { moments, side } from './moments.js';
 import { scoredSides, type ScoredLine, type ScoredSides } from './scored-sides.js';
@@ -12,10 +13,6 @@ export interface LinearForecast {
   readonly sparse: boolean;
 }
 
-/** In units of 30 ns: a value added to an array, to a hash map; a move from node to node; a new node. */
-const perDenseValue = 0.06;
-const perSparseValue = 3;
-const perMove = 7;
 /** What the first steps of a program cost before it is warm: some 10 ms. */
 const start = 3e5;
 /** Values of two stages are held at once: 2^24 of them a stage take 256 MB. */

@@ -2,6 +2,7 @@
 // set from the observed value, and lowered where the answer turns out smaller than foreseen.
 import type { LinearForm, Place } from '../../../statistic/contract.js';
 import type { LiveTable } from '../../../table/live-table.js';
+import type { Meter } from '../meter.js';
 import { dealColumns, type DealtLaw } from './deal.js';
 import { usesHashMaps } from './linear-forecast.js';
 import { moments } from './moments.js';
@@ -13,17 +14,17 @@ import { wholeCounts } from './whole-counts.js';
 const negligible = 1e-22;
 
 /** Laws from the cheapest that may do to the complete one. */
-export function* laws(live: LiveTable, form: LinearForm): Generator<DealtLaw> {
+export function* laws(live: LiveTable, form: LinearForm, meter?: Meter): Generator<DealtLaw> {
   const sides = scoredSides(live, form);
   const sparse = usesHashMaps(live, form);
   const least = negligible * foreseen(live, form) * upscale;
-  if (least > 0) yield dealColumns(sides, least, sparse);
-  yield wholeLaw(live, form);
+  if (least > 0) yield dealColumns(sides, least, sparse, meter);
+  yield wholeLaw(live, form, meter);
 }
 
 /** The law with nothing left out. */
-export const wholeLaw = (live: LiveTable, form: LinearForm): DealtLaw =>
-  dealColumns(scoredSides(live, form), 0, usesHashMaps(live, form));
+export const wholeLaw = (live: LiveTable, form: LinearForm, meter?: Meter): DealtLaw =>
+  dealColumns(scoredSides(live, form), 0, usesHashMaps(live, form), meter);
 
 /** A probability below the p of most orderings, by the normal law of S. */
 function foreseen(live: LiveTable, form: LinearForm): number {

@@ -15,6 +15,8 @@ export interface SumLaw {
   readonly lowest: number;
   readonly highest: number;
   forEach(visit: (sum: number, value: number) => void): void;
+  /** Values held, or room for them. */
+  readonly size: number;
   /** 0 where nothing is held. */
   at(sum: number): number;
 }
@@ -82,6 +84,10 @@ export class DenseLaw implements SumLaw {
     return left;
   }
 
+  get size(): number {
+    return this.highest - this.lowest + 1;
+  }
+
   mass(): number {
     let mass = 0;
     const end = this.start + this.highest - this.lowest;
@@ -136,6 +142,10 @@ export class SparseLaw implements SumLaw {
       this.values.delete(sum);
     }
     return left;
+  }
+
+  get size(): number {
+    return this.values.size;
   }
 
   mass(): number {

@@ -22,10 +22,9 @@ const costOfSorting = 4;
 
 export function forecastNetwork(live: LiveTable, statistic: string): NetworkForecast {
   const table = orient(live);
-  const products = statistic === 'probability' || statistic === 'likelihood-ratio';
-  const count = new EntryCount(table, products);
+  const count = new EntryCount(table, statistic);
   const { first, second } = splitColumns(table);
-  const alike = products && sharesLists(table) ? count.arrangements() : 1;
+  const alike = isProduct(statistic) && sharesLists(table) ? count.arrangements() : 1;
   const a = count.half(first);
   const b = count.half(second);
   const meetings = alike === 1 ? a.last + costOfSorting * b.last : (a.last + b.last) / alike + a.merged + b.merged;
@@ -37,6 +36,8 @@ export function forecastNetwork(live: LiveTable, statistic: string): NetworkFore
   };
 }
 
+const isProduct = (statistic: string): boolean => statistic === 'probability' || statistic === 'likelihood-ratio';
+
 interface HalfCount {
   /** Entries made for the levels before the last, and for the last. */
   readonly before: number;
@@ -46,13 +47,15 @@ interface HalfCount {
   readonly held: number;
 }
 
-class EntryCount {
+export class EntryCount {
   private readonly radiusSquared: number;
+  private readonly products: boolean;
 
   constructor(
     private readonly table: OrientedTable,
-    private readonly products: boolean,
+    statistic: string,
   ) {
+    this.products = isProduct(statistic);
     const degrees = (table.rows - 1) * (table.columns - 1);
     // A table at the very centre still has the neighbours that rounding leaves undecided.
     this.radiusSquared = Math.max(chiSquare(table), degrees / 8);
@@ -74,6 +77,21 @@ class EntryCount {
       previous = log;
     });
     return { before, last, merged, held };
+  }
+
+  /** Ways from a node to a node, over all the half's columns. */
+  pairs(columns: readonly number[]): number {
+    let pairs = 0;
+    let nodes = 1;
+    let previous = 0;
+    columns.forEach((_, at) => {
+      const done = columns.slice(0, at + 1);
+      const log = this.logEntries(done);
+      pairs += nodes * Math.exp(log - previous);
+      nodes = Math.exp(this.logNodes(done));
+      previous = log;
+    });
+    return pairs;
   }
 
   /** Rows in any order share a list: how many arrangements a node has on average. */
@@ -145,7 +163,7 @@ class EntryCount {
   }
 }
 
-function chiSquare(table: OrientedTable): number {
+export function chiSquare(table: OrientedTable): number {
   let sum = 0;
   table.observed.forEach((column, j) =>
     column.forEach((count, i) => {

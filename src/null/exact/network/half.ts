@@ -1,8 +1,9 @@
 // Builds the lists of one half, column after column: each node's list is pulled together from the lists it can come from,
 // cut to the values that are still undecided, sorted and merged.
+import { OutOfReach } from '../out-of-reach.js';
+import { perTransition } from './costs.js';
 import { Level, type SummedSide } from './level.js';
 import type { Network } from './network.js';
-import { OutOfReach } from './out-of-reach.js';
 import type { SortedList } from './sorted-list.js';
 import { SourceRanges } from './source-ranges.js';
 import type { Transitions } from './transitions.js';
@@ -15,13 +16,19 @@ export interface Half {
   readonly levels: readonly Level[];
   /** Chance of the nodes left out as too improbable. */
   readonly leftOut: number;
+  /** List entries held. */
+  readonly entries: number;
 }
 
-/** @param depth how many of the columns to set; the others are set where the halves meet. */
-export function buildHalf(network: Network, columns: readonly number[], depth: number): Half {
+/**
+ * @param depth how many of the columns to set; the others are set where the halves meet.
+ * @param held list entries held already
+ */
+export function buildHalf(network: Network, columns: readonly number[], depth: number, held: number): Half {
   const { side, encoding, space } = network;
   const levels = [Level.root(space, side, encoding.form === 'keyed')];
   let leftOut = 0;
+  let entries = 0;
   for (let d = 1; d <= depth; d++) {
     const level = new Level(
       space.newIndex(),
@@ -30,15 +37,17 @@ export function buildHalf(network: Network, columns: readonly number[], depth: n
       side,
       encoding.form === 'keyed',
     );
-    leftOut += extend(network, levels[d - 1]!, level, columns.slice(0, d));
+    leftOut += extend(network, levels[d - 1]!, level, columns.slice(0, d), held + entries);
     levels.push(level);
+    entries += level.length;
   }
-  return { columns, levels, leftOut };
+  return { columns, levels, leftOut, entries };
 }
 
 /** Fills the level after one more column; returns the chance left out. */
-function extend(network: Network, from: Level, to: Level, done: readonly number[]): number {
-  const { table, encoding, bounds, space, side, margin, allAlike, farUp, list, transitions, entryLimit } = network;
+function extend(network: Network, from: Level, to: Level, done: readonly number[], held: number): number {
+  const { table, encoding, bounds, space, side, margin, allAlike, farUp, list, transitions, entryLimit, meter } =
+    network;
   const column = network.columns[done.at(-1)!]!;
   to.size += column.total;
   const rest = table.columnTotals.map((_, j) => j).filter((j) => !done.includes(j));
@@ -57,9 +66,10 @@ function extend(network: Network, from: Level, to: Level, done: readonly number[
       const high = observed + margin - leastAfter;
       transitions.collect(from, column, sums, undecidedOnly ? high : Infinity);
       const settled = gather(from, transitions, side, low, high, list);
+      meter.spend(transitions.length * perTransition + list.gathered * list.unitsPerEntry);
       list.sortAndMerge();
       if (list.length > 0 || settled > 0) to.append(sums, space.numberOf(sums), list, settled);
-      if (to.length > entryLimit) throw new OutOfReach(entryLimit);
+      if (held + to.length > entryLimit) throw new OutOfReach('memory', entryLimit);
     },
   });
 }
@@ -80,8 +90,9 @@ export function gather(
   list: SortedList,
 ): number {
   const { starts, values, weights, sums } = from;
-  list.clear(high);
+  list.clear(high, from, transitions);
   let settled = 0;
+  let gathered = 0;
   for (let t = 0; t < transitions.length; t++) {
     const node = transitions.sources[t]!;
     const end = starts[node + 1]!;
@@ -94,9 +105,12 @@ export function gather(
         settled += transitions.weights[t]! * (i < end ? sums[i]! : sums[end - 1]! + weights[end - 1]!);
       }
     }
+    gathered -= i;
     i = list.addShifted(from, i, end, transitions, t);
+    gathered += i;
     if (side === 'high' && i < end) settled += transitions.weights[t]! * sums[i]!;
     settled += transitions.weights[t]! * from.settled[node]!;
   }
+  list.gathered = gathered;
   return settled;
 }

@@ -83,7 +83,7 @@ export class Level {
       this.lows.set(lows);
     }
     if (this.length + more <= this.values.length) return;
-    const size = 4 * (this.length + more);
+    const size = (this.length < 2 ** 16 ? 4 : 2) * (this.length + more);
     const grown = (old: Float64Array): Float64Array => {
       const larger = new Float64Array(size);
       larger.set(old.subarray(0, this.length));

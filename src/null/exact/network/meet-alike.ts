@@ -1,5 +1,6 @@
 // Where the halves meet when lists do not depend on the order of rows: both halves are complete, one list for every
 // arrangement of a node, and each arrangement is one pass along two sorted lists.
+import { perLookup } from './costs.js';
 import type { Half } from './half.js';
 import type { NearTies } from './near-ties.js';
 import { NodeSpace } from './node-space.js';
@@ -35,7 +36,7 @@ function join(
   ties: NearTies,
   tally: Tally,
 ): void {
-  const { encoding, side } = network;
+  const { encoding, side, meter } = network;
   const { slack, observedValue, observedKey } = encoding;
   const [a, b] = [halves[0].levels.at(-1)!, halves[1].levels.at(-1)!];
   const end = a.starts[nodes[0] + 1]!;
@@ -53,7 +54,7 @@ function join(
     while (at > otherStart && b.values[at - 1]! >= threshold) at--;
     let after = at;
     for (; after < otherEnd && b.values[after]! <= threshold + 2 * slack; after++) {
-      if (a.keys[i]! + b.keys[after]! === observedKey) {
+      if (encoding.form === 'exact' || a.keys[i]! + b.keys[after]! === observedKey) {
         tied += a.weights[i]! * b.weights[after]!;
         continue;
       }
@@ -76,7 +77,7 @@ function join(
     lost = carried - summed - next;
     summed = carried;
   }
-  tally.work += end - first + otherEnd - otherStart;
+  meter.spend((end - first + otherEnd - otherStart) * perLookup);
   tally.summed.add(summed * ways, 0);
   tally.tied.add(tied * ways, 0);
 }

@@ -1,6 +1,7 @@
 // Where the halves meet. At every node the second half's list is completed, sorted and laid out for look-ups, and the first
 // half's entries are made one after the other and looked up. Neither whole half is ever held: memory is that of the lists
 // one column short of the meeting.
+import { perTransition } from './costs.js';
 import { gather, skipsHighValues, type Half } from './half.js';
 import { MeetingList } from './meeting-list.js';
 import type { NearTies } from './near-ties.js';
@@ -10,7 +11,7 @@ import type { Tally } from './tally.js';
 import { visitNodes } from './visit-nodes.js';
 
 export function meet(network: Network, first: Half, second: Half, ties: NearTies, tally: Tally): void {
-  const { encoding, bounds, space, side, margin, weights, farUp, list, transitions } = network;
+  const { encoding, bounds, space, side, margin, weights, farUp, list, transitions, meter } = network;
   const observed = encoding.observedValue;
   const lastFirst = network.columns[first.columns.at(-1)!]!;
   const lastSecond = network.columns[second.columns.at(-1)!]!;
@@ -40,11 +41,11 @@ export function meet(network: Network, first: Half, second: Half, ties: NearTies
       const low = observed - margin;
       const high = observed + margin;
       const settled = gather(secondLevel, transitions, side, low - mostFirst, high - leastFirst, list);
-      tally.work += list.length + transitions.length;
+      meter.spend(transitions.length * perTransition + list.gathered * list.unitsPerEntry);
       list.sortAndMerge();
       meeting.take(list, side, settled);
       transitions.collect(firstLevel, lastFirst, sums, undecidedOnly ? observed + margin - leastSecond : Infinity);
-      tally.work += transitions.length;
+      meter.spend(transitions.length * perTransition);
       const whole = stream.run(transitions, sums, left, ways, low - mostSecond, high - leastSecond);
       tally.summed.add(whole * ways * allSecond.mantissa(left), allSecond.exponent(left));
     },

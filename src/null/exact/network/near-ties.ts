@@ -2,6 +2,7 @@
 // (values are whole numbers, so a path is followed by equality), put in classes by an exact key, and one table of each
 // class is compared exactly with the observed one. No tolerance is involved and no list carries more than its values.
 import type { CellSum, Place } from '../../../statistic/contract.js';
+import { perNearTie } from './costs.js';
 import { exponentRule } from './encoding.js';
 import type { Half } from './half.js';
 import type { Level } from './level.js';
@@ -55,6 +56,7 @@ export class NearTies {
   }
 
   decide(first: Half, second: Half, pair: NearPair): NearMasses {
+    this.network.meter.spend(perNearTie);
     const parts: PartialClass[] = [];
     let before: readonly number[] = Array.from(pair.sums);
     if (pair.column !== null) {

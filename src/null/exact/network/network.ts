@@ -1,6 +1,7 @@
 // What one exact computation walks on: the table turned, its statistic in whole numbers, weights, bounds and nodes.
 // The columns are cut in two halves; each half's partial tables are listed node by node, and the halves meet where the row
 // sums of one complete those of the other (meet in the middle on the network of Mehta & Patel 1983).
+import type { Meter } from '../meter.js';
 import type { Encoding } from './encoding.js';
 import type { SummedSide } from './level.js';
 import type { NodeSpace } from './node-space.js';
@@ -32,6 +33,5 @@ export interface Network {
   readonly transitions: Transitions;
   /** Most list entries that may be held at once. */
   readonly entryLimit: number;
+  readonly meter: Meter;
 }
-
-export { OutOfReach } from './out-of-reach.js';

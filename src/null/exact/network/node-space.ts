@@ -1,8 +1,8 @@
 // Nodes of the network: vectors of row sums used up by some columns. Numbers them (mixed radix over all rows but the last,
 // whose sum follows from the others), and lists those worth visiting.
 import { nodeCodes } from './node-codes.js';
+import { OutOfReach } from '../out-of-reach.js';
 import { NodeIndex } from './node-index.js';
-import { OutOfReach } from './out-of-reach.js';
 import type { OrientedTable } from './oriented-table.js';
 
 export class NodeSpace {
@@ -31,7 +31,7 @@ export class NodeSpace {
     const coded = nodeCodes(rowTotals, blocks);
     this.blocks = coded === null ? [] : blocks;
     const plain = coded ?? nodeCodes(rowTotals, []);
-    if (plain === null) throw new OutOfReach(Infinity);
+    if (plain === null) throw new OutOfReach('memory', Infinity);
     const { codes, size } = plain;
     this.codes = codes;
     this.size = size;

@@ -2,6 +2,7 @@
 // turn out equal they are merged on arrival (open addressing), else after sorting. Values of one node spread evenly enough
 // for one pass of distribution into as many cells as entries, finished by insertion; crowded cells are sorted apart, so
 // that the time stays n log n whatever the values.
+import { perEntry } from './costs.js';
 import { sortCrowd } from './crowd-sort.js';
 import { insertInPlace } from './insert-in-place.js';
 import type { Level } from './level.js';
@@ -14,6 +15,8 @@ const fewDifferent = 0.4;
 
 export class SortedList {
   length = 0;
+  /** Entries gathered before equal ones were merged. */
+  gathered = 0;
   values: Float64Array = new Float64Array(4096);
   weights: Float64Array = new Float64Array(4096);
   keys: Float64Array;
@@ -21,6 +24,16 @@ export class SortedList {
   private spareWeights: Float64Array = new Float64Array(4096);
   private spareKeys: Float64Array;
   private starts = new Int32Array(4097);
+
+  /** What taking up, sorting and merging an entry costs, in the units of the forecast. */
+  get unitsPerEntry(): number {
+    return perEntry;
+  }
+
+  /** Bound on what adding in this list, beyond two units in the last place, does to a weight. */
+  get relativeError(): number {
+    return 0;
+  }
 
   private most = 0;
   // For merging on arrival: entry + 1 by slot, and the slots in use.
@@ -37,8 +50,8 @@ export class SortedList {
     this.spareKeys = new Float64Array(keyed ? 4096 : 0);
   }
 
-  /** Begins a new list, for values up to `most`. */
-  clear(most: number): void {
+  /** Begins a new list, for values up to `most`, that transitions will bring from a level. */
+  clear(most: number, _from: Level, _transitions: Transitions): void {
     this.length = 0;
     this.most = most;
     if (this.arrived < 4096) return;
@@ -114,6 +127,11 @@ export class SortedList {
     this.different += length - this.length;
     this.length = length;
     return i;
+  }
+
+  /** Room for so many entries altogether. */
+  protected provideRoom(entries: number): void {
+    this.makeRoom(Math.max(0, entries - this.length));
   }
 
   private makeRoom(more: number): void {

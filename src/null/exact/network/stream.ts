@@ -1,5 +1,6 @@
 // The first half's entries at one node, each finding by its own value how much of the second half's list ends on the summed
 // side. The innermost loop of the engine: a few nanoseconds an entry.
+import { perLookup } from './costs.js';
 import type { Half } from './half.js';
 import type { MeetingList } from './meeting-list.js';
 import type { NearTies } from './near-ties.js';
@@ -86,7 +87,7 @@ export class Stream {
       if (side === 'high' && i < end) settled += weight * level.sums[i]!;
       settled += weight * level.settled[node]!;
     }
-    this.tally.work += work;
+    this.network.meter.spend(work * perLookup);
     this.tally.summed.add(summed * ways, 0);
     this.tally.tied.add(tied * ways, 0);
     return settled;

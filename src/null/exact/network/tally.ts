@@ -7,6 +7,4 @@ export class Tally {
   readonly tied = new WideSum();
   /** Chance of what was left out. */
   leftOut = 0;
-  /** Additions made, for the error bound and the count of work. */
-  work = 0;
 }

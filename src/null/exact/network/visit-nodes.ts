@@ -3,6 +3,7 @@
 // the last two rows) the walk goes outward from the most probable node, so that both kinds end a line: chance falls
 // outward, and the multipliers of a bound stay valid for every node of the line, so that its slope says what lies beyond.
 import { logFactorial } from '../../../numeric/log-factorial.js';
+import { perBoundedCell } from './costs.js';
 import type { Network } from './network.js';
 import type { NodeSpace } from './node-space.js';
 
@@ -20,7 +21,7 @@ export function visitNodes(
   rest: readonly number[],
   visitor: NodeVisitor,
 ): number {
-  const { table, space, side, bounds, allAlike, logFloor } = network;
+  const { table, space, side, bounds, allAlike, logFloor, meter } = network;
   const { rows, rowTotals, total, columnTotals } = table;
   const size = done.reduce((sum, j) => sum + columnTotals[j]!, 0);
   const limit = network.encoding.observedValue + network.margin;
@@ -32,6 +33,7 @@ export function visitNodes(
   for (let i = rows - 1; i >= 0; i--) roomAfter[i] = roomAfter[i + 1]! + rowTotals[i]!;
   const chances = allAlike ? null : chanceTables(rowTotals, roomAfter, size);
   let leftOut = 0;
+  let bounded = 0;
 
   /** Outward from `from`; `to` is the last node of the line in this direction. */
   const walk = (from: number, to: number, isAbove: boolean): boolean => {
@@ -53,6 +55,7 @@ export function visitNodes(
       left[row] = rowTotals[row]! - n;
       left[row + 1] = rowTotals[row + 1]! - lastSum;
       if (!beyond) {
+        bounded++;
         const leastAfter = bounds.least(rest, total - size, left);
         const slopeAfter = bounds.slopeBetween(row, row + 1);
         const leastBefore = bounds.least(done, size, sums);
@@ -82,6 +85,8 @@ export function visitNodes(
     const start = Math.max(least, Math.min(most, mode));
     const belowIsAbove = walk(start, most, false);
     if (start > least) walk(start - 1, least, belowIsAbove);
+    meter.spend(bounded * rows * table.columns * perBoundedCell);
+    bounded = 0;
   };
 
   amounts[0] = size;

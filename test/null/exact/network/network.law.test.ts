@@ -9,7 +9,8 @@ import {
 } from '../../../../fixtures/reference/generator/oracle.js';
 import type { ExactCut, Ordering } from '../../../../src/null/contract.js';
 import { exactByEnumeration } from '../../../../src/null/exact/enumerate.js';
-import { exactCut, type NetworkOptions } from '../../../../src/null/exact/network/exact-cut.js';
+import { exactCut } from '../../../../src/null/exact/network/exact-cut.js';
+import type { NetworkOptions } from '../../../../src/null/exact/network/masses.js';
 import { liveFrom, orderingOf, relativeDifference, smallTable, tableOf, transpose } from '../../../helpers/tables.js';
 
 const statistics = ['pearson', 'likelihood-ratio', 'probability'] as const;
