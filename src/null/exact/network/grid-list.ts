@@ -37,14 +37,18 @@ export class GridList extends SortedList {
     return 2 ** -53 * this.mostAdded;
   }
 
-  override clear(most: number, from: Level, transitions: Transitions): void {
-    super.clear(most, from, transitions);
+  /** Told before a list is begun what transitions will bring to it: whether it will be long. */
+  foresee(from: Level, transitions: Transitions): void {
     let foreseen = 0;
     for (let t = 0; t < transitions.length; t++) {
       const node = transitions.sources[t]!;
       foreseen += from.starts[node + 1]! - from.starts[node]!;
     }
     this.onGrid = foreseen > this.rounding.keptApart;
+  }
+
+  override clear(most: number): void {
+    super.clear(most);
     if (!this.onGrid) return;
     const { step } = this.rounding;
     this.limit = most;

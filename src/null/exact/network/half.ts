@@ -2,6 +2,7 @@
 // cut to the values that are still undecided, sorted and merged.
 import { OutOfReach } from '../out-of-reach.js';
 import { perTransition } from './costs.js';
+import { GridList } from './grid-list.js';
 import { Level, type SummedSide } from './level.js';
 import type { Network } from './network.js';
 import type { SortedList } from './sorted-list.js';
@@ -90,7 +91,8 @@ export function gather(
   list: SortedList,
 ): number {
   const { starts, values, weights, sums } = from;
-  list.clear(high, from, transitions);
+  if (list instanceof GridList) list.foresee(from, transitions);
+  list.clear(high);
   let settled = 0;
   let gathered = 0;
   for (let t = 0; t < transitions.length; t++) {

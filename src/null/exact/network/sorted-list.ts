@@ -50,8 +50,8 @@ export class SortedList {
     this.spareKeys = new Float64Array(keyed ? 4096 : 0);
   }
 
-  /** Begins a new list, for values up to `most`, that transitions will bring from a level. */
-  clear(most: number, _from: Level, _transitions: Transitions): void {
+  /** Begins a new list, for values up to `most`. */
+  clear(most: number): void {
     this.length = 0;
     this.most = most;
     if (this.arrived < 4096) return;
