@@ -6,7 +6,7 @@
 //   5. What that says, with its error.                            pvalue
 import type { ReadTable } from './input/read-table.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
-import { OutOfReach } from './null/exact/network/out-of-reach.js';
+import { OutOfReach } from './null/exact/out-of-reach.js';
 import type { ExactEngine } from './null/forecast.js';
 import { orderingFor } from './null/ordering.js';
 import { choicesOf, refuseUnread } from './plan/choices.js';

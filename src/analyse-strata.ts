@@ -7,7 +7,7 @@
 //   6. Whether the strata agree, and how strong the association is.
 import type { ReadTable } from './input/read-table.js';
 import { onlyTable } from './null/exact/exact-cuts.js';
-import { OutOfReach } from './null/exact/network/out-of-reach.js';
+import { OutOfReach } from './null/exact/out-of-reach.js';
 import type { Plan, PlanOptions } from './plan/plan.js';
 import { rolesOf } from './plan/roles.js';
 import { unused } from './plan/settings.js';

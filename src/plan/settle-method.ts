@@ -13,8 +13,8 @@ export interface MethodQuestion {
   readonly forecast: Forecast;
   /** Bound on exact work, in counted units. */
   readonly effort: number;
-  /** Whether a bracket within that bound is likely to tell more than draws. */
-  readonly bracketPays: () => boolean;
+  /** Whether a bracket within that bound is likely to tell more than draws; left out where none can be had. */
+  readonly bracketPays?: () => boolean;
 }
 
 export interface SettledMethod {
@@ -45,7 +45,7 @@ export function settleMethod(question: MethodQuestion): SettledMethod {
       });
     }
   }
-  if ((asked === 'exact' || asked === 'auto') && !fits && question.bracketPays()) {
+  if ((asked === 'exact' || asked === 'auto') && !fits && question.bracketPays?.()) {
     return {
       method: 'exact',
       reason: `${asked === 'exact' ? 'asked for; ' : ''}${tables}; ${work}; partial sums were merged within it, for a bracket that holds p`,

@@ -2,7 +2,7 @@
 // one by one, sets of tables with equal T merged. T is held as whole numbers, packed into one.
 import type { ExactCut, OrderingName } from '../../null/contract.js';
 import { cutFrom } from '../../null/exact/exact-answer.js';
-import { OutOfReach } from '../../null/exact/network/out-of-reach.js';
+import { OutOfReach } from '../../null/exact/out-of-reach.js';
 import { countTables } from '../../null/exact/count-tables.js';
 import { WideSum } from '../../numeric/wide-number.js';
 import { cellsOf } from './exact-form.js';
@@ -154,7 +154,7 @@ export function exactVector(problem: Problem, judged: Judged, names: readonly Or
   const relativeError = roundings * 2 ** -53;
   return names.map((name, o) => {
     const [below, tied, above] = masses[o]!;
-    if (tied.isZero) throw new OutOfReach(law.high.length);
+    if (tied.isZero) throw new OutOfReach('memory', law.high.length);
     return cutFrom(name, { below, tied, above, whole }, relativeError);
   });
 }
