@@ -110,7 +110,18 @@ async function analyseWhole(
   const comparisons = prepared.plan.paired
     ? undefined
     : await lineComparisons(found, options, (lines, wishes) => answer(lines, wishes, surroundings));
-  const findings = { ...findingsOf(found), ...beside, byOrder, comparisons, designs: await otherDesigns(found) };
+  const nullSummary =
+    options.nullSummary && isWhole(prepared)
+      ? (await import('./null-summary.js')).summariseNull(found, prepared, options)
+      : undefined;
+  const findings = {
+    ...findingsOf(found),
+    ...beside,
+    byOrder,
+    comparisons,
+    designs: await otherDesigns(found),
+    nullSummary,
+  };
   if (cells === undefined) return buildResult(findings);
   const plan = Object.freeze({ ...prepared.plan, cells: cells.echo });
   return buildResult({ ...findings, plan, cells: await cells.entries() });

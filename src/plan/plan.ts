@@ -50,6 +50,8 @@ export interface PlanOptions {
   readonly outcomeOrder?: OutcomeOrder;
   /** With one margin of a 2x2 table fixed: gamma of Berger & Boos (1994), in (0, 1). Default: none. */
   readonly nuisanceRisk?: number;
+  /** How the statistic is spread by chance alone, in bins for a picture. Default: left out. */
+  readonly nullSummary?: boolean;
   readonly method?: Method;
   /** Number of sampled tables, 1 to 1e12, or (the default) until p is settled against alpha. */
   readonly draws?: number | 'auto';

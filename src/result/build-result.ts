@@ -10,7 +10,7 @@ import type { Table } from '../table/table.js';
 import type { ExpectationCheck } from '../table/expectation-check.js';
 import type { ResultBeforeWords } from './describe.js';
 import { methodsFor } from './methods.js';
-import type { Fragility, InputEcho, Note, Result } from './result.js';
+import type { Fragility, InputEcho, Note, NullSummary, Result } from './result.js';
 import { sentenceFor } from './sentence.js';
 import { version } from './version.js';
 
@@ -38,6 +38,7 @@ export interface Findings {
   /** What p would be under other designs; for a 2x2 table. */
   readonly designs?: readonly DesignLine[] | undefined;
   readonly quasi?: NonNullable<Result['quasiIndependence']> | undefined;
+  readonly nullSummary?: NullSummary | undefined;
   readonly notes: readonly Note[];
 }
 
@@ -62,6 +63,7 @@ export function beforeWords(found: Findings): ResultBeforeWords {
       ...found.expectations,
       ...(found.tables === undefined ? {} : { tables: found.tables }),
     },
+    ...(found.nullSummary === undefined ? {} : { nullSummary: found.nullSummary }),
     ...effectParts(found),
     ...(found.byOrder === undefined ? {} : { order: found.byOrder.order }),
     ...(found.fragility === undefined ? {} : { fragility: found.fragility }),

@@ -8,6 +8,7 @@ import { designLine } from './declared/design.js';
 import { effect } from './declared/effect.js';
 import { fragility } from './declared/fragility.js';
 import { input } from './declared/input.js';
+import { nullSummary } from './declared/null-summary.js';
 import { order } from './declared/order.js';
 import { pValue } from './declared/p-value.js';
 import { count, extendedNumber, probability } from './declared/pieces.js';
@@ -49,6 +50,7 @@ export const resultDeclaration = z.strictObject({
   /** For a 2x2 table: what p would be had the study fixed something else. */
   designs: z.array(designLine).optional(),
   diagnostics,
+  nullSummary: nullSummary.optional(),
   effects: z.array(effect).optional(),
   /** Tables with impossible cells: what independence in the others expects. */
   quasiIndependence: z

@@ -11,5 +11,6 @@ export type MissingRecords = NonNullable<InputEcho['missing']>;
 export type Diagnostics = Result['diagnostics'];
 export type Effect = NonNullable<Result['effects']>[number];
 export type EffectInterval = Effect['intervals'][number];
+export type NullSummary = NonNullable<Result['nullSummary']>;
 export type Fragility = NonNullable<Result['fragility']>;
 export type Note = Result['notes'][number];
