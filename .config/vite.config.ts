@@ -25,6 +25,9 @@ export default defineConfig({
       },
       // piscina starts threads from files of its own, so it stays a package.
       external: [...builtinModules, /^node:/, 'piscina'],
+      input: { main: 'src/cli/main.ts', index: 'src/index.ts', 'sampling-worker': 'src/sampling-worker.ts' },
+      // piscina starts threads from files of its own, resvg is machine code: they stay packages.
+      external: [...builtinModules, /^node:/, 'piscina', '@resvg/resvg-js'],
       output: {
         format: 'es',
         entryFileNames: '[name].js',

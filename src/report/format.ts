@@ -1,4 +1,5 @@
 // What every format is to the rest of the program: Result in, string out, under the same few settings.
+import type { Characters } from './histogram.js';
 import type { Result } from '../result/result.js';
 
 /** Colour that a report may use; it only repeats what words already say. Strings in, strings out. */
@@ -20,6 +21,8 @@ export interface ReportSettings {
   readonly paint: Painter;
   /** CSV: leave text cells as they are, even those that a spreadsheet would run as a formula. */
   readonly rawCsv: boolean;
+  /** Text and markdown: draw how chance alone spreads the statistic, in these characters. Default: not drawn. */
+  readonly histogram?: Characters;
 }
 
 export const defaultSettings: ReportSettings = { width: 80, paint: plainPainter, rawCsv: false };

@@ -3,18 +3,19 @@
 import { shown } from '../result/label-words.js';
 import { countWords } from '../result/number-words.js';
 import type { InputEcho, Result } from '../result/result.js';
-import type { Format } from './format.js';
+import type { Format, ReportSettings } from './format.js';
+import { histogramLines, histogramWords } from './histogram.js';
 import { pageFor, type Block, type Grid, type Sentence } from './page.js';
 
 export const markdown: Format = {
   words: 'headings, sentences and a table, for documents',
-  write(result) {
+  write(result, settings) {
     const { title, sections } = pageFor(result);
     const parts = [
       `# ${escaped(title)}`,
       ...sections.flatMap(({ heading, blocks }) => [
         `## ${heading}`,
-        ...blocks.map((block) => blockText(block, result)),
+        ...blocks.map((block) => blockText(block, result, settings)).filter((words) => words !== ''),
       ]),
       '## For a methods section',
       escaped(shown(result.methods)),
@@ -23,7 +24,7 @@ export const markdown: Format = {
   },
 };
 
-function blockText(block: Block, result: Result): string {
+function blockText(block: Block, result: Result, { histogram }: ReportSettings): string {
   switch (block.kind) {
     case 'sentence':
       return sentenceText(block);
@@ -31,6 +32,12 @@ function blockText(block: Block, result: Result): string {
       return tableText(result.input);
     case 'grid':
       return gridText(block);
+    case 'picture': {
+      const { nullSummary } = result;
+      if (histogram === undefined || nullSummary === undefined || block.picture !== 'null') return '';
+      const lines = histogramLines(nullSummary, 76, histogram).map((line) => `    ${line}`);
+      return `${lines.join('\n')}\n\n${escaped(histogramWords(nullSummary))}`;
+    }
     case 'command':
       return `    ${block.words.join(' ')}`;
   }

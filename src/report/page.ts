@@ -15,6 +15,7 @@ import { strataInWords } from '../result/strata-words.js';
 import { digits, percentWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
 import { cautionsFor } from './cautions.js';
+import type { PictureName } from './pictures/names.js';
 import { pairsQuestion, pairsSection } from './sections/pairs.js';
 import { quasiSection } from './sections/quasi.js';
 import { againCommand, againInWords, againSentences } from './run-again.js';
@@ -51,7 +52,13 @@ export interface Grid {
   readonly rows: readonly (readonly string[])[];
 }
 
-export type Block = Sentence | TablePlace | Command | Grid;
+/** A picture of the result; formats that cannot draw it say or show what they can. */
+export interface PicturePlace {
+  readonly kind: 'picture';
+  readonly picture: PictureName;
+}
+
+export type Block = Sentence | TablePlace | Command | Grid | PicturePlace;
 
 export interface Section {
   readonly heading: string;
@@ -72,7 +79,7 @@ export function pageFor(result: Result): Page {
 
 const sectionsOf = (result: Result): Section[] => [
   { heading: 'What was tested', blocks: tested(result) },
-  { heading: 'The table', blocks: [{ kind: 'table' }] },
+  { heading: 'The table', blocks: [{ kind: 'table' }, { kind: 'picture', picture: 'mosaic' }] },
   ...strataSections(result).slice(0, 1),
   { heading: 'The answer', blocks: answer(result) },
   { heading: 'How strong is it?', blocks: result.strata === undefined ? strengthBlocks(result) : [] },
@@ -122,7 +129,8 @@ const tested = (result: Result): Block[] => [
 ];
 
 function answer(result: Result): Block[] {
-  return [sentence(result.sentence, 'answer'), ...errorSentences(result.pValues[0]!).map(plain)];
+  const picture: Block[] = result.nullSummary?.bins.length ? [{ kind: 'picture', picture: 'null' }] : [];
+  return [sentence(result.sentence, 'answer'), ...errorSentences(result.pValues[0]!).map(plain), ...picture];
 }
 
 function otherReadings(result: Result): Block[] {

@@ -4,6 +4,7 @@ import { displayWidth } from './display-width.js';
 import { fold } from './fold.js';
 import type { Format, Painter, ReportSettings } from './format.js';
 import { pageFor, type Block, type Command, type Section, type Sentence } from './page.js';
+import { histogramLines, histogramWords } from './histogram.js';
 import { gridLines } from './text-grid.js';
 import { tableLines } from './text-table.js';
 
@@ -31,7 +32,7 @@ const sectionLines = (section: Section, result: Result, settings: ReportSettings
   ...section.blocks.flatMap((block) => blockLines(block, result, settings)),
 ];
 
-function blockLines(block: Block, result: Result, { width, paint }: ReportSettings): string[] {
+function blockLines(block: Block, result: Result, { width, paint, histogram }: ReportSettings): string[] {
   switch (block.kind) {
     case 'sentence':
       return fold(block.text, Math.min(width, widestProse), hanging).map(toneOf(block, paint));
@@ -44,6 +45,17 @@ function blockLines(block: Block, result: Result, { width, paint }: ReportSettin
       return gridLines(block, Math.min(width, widestProse) - margin).map((line) =>
         `${' '.repeat(margin)}${line}`.trimEnd(),
       );
+    case 'picture': {
+      const { nullSummary } = result;
+      if (histogram === undefined || nullSummary === undefined || block.picture !== 'null') return [];
+      const prose = Math.min(width, widestProse);
+      return [
+        '',
+        ...histogramLines(nullSummary, prose - margin, histogram).map((line) => `${' '.repeat(margin)}${line}`),
+        '',
+        ...fold(histogramWords(nullSummary), prose, hanging),
+      ];
+    }
     case 'command':
       return commandLines(block, Math.min(width, widestProse));
   }

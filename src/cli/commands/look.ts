@@ -7,6 +7,7 @@ export interface LookValues {
   readonly color?: true;
   readonly noColor?: true;
   readonly rawCsv?: true;
+  readonly histogram?: true;
   readonly output?: string;
 }
 
@@ -15,7 +16,13 @@ export async function lookFor(values: LookValues, shell: Shell): Promise<ReportS
     width: values.width ?? shell.columns,
     paint: wantsColour(values, shell) ? await chalkPainter() : plainPainter,
     rawCsv: values.rawCsv ?? false,
+    ...(values.histogram ? { histogram: canShowBlocks(shell) ? ('blocks' as const) : ('ascii' as const) } : {}),
   };
+}
+
+/** Block characters need UTF-8, by the first of these that is set, and a terminal that is more than a teletype. */
+function canShowBlocks({ environment: { LC_ALL, LC_CTYPE, LANG, TERM } }: Shell): boolean {
+  return TERM !== 'dumb' && /utf-?8/i.test(LC_ALL || LC_CTYPE || LANG || '');
 }
 
 /** An explicit flag beats the environment; else colour needs a terminal that wants it (no-color.org). */

@@ -41,12 +41,14 @@ export const testCommand = command({
     const source = chooseSource(operands, values, shell.stdinIsTerminal);
     if (source === undefined) return nothingNamed(shell);
     const destination = await destinationFor(values.output, shell, source.form === 'inline' ? null : source.path);
+    const pictures = await plotFilesFor(values, source.form === 'inline' ? null : source.path);
     const table = await readSource(source, values, shell);
     const wishes = await withOwnStatistic(planOptions(values));
     const result = await withProgress(values, shell, (surroundings) => analyse(table, wishes, surroundings));
     const report = await documentOf(result, values, shell);
     if (!values.quiet) await remarkOnSampling(result, shell);
     await destination.write(report);
+    await pictures?.(result);
     return 0;
   },
 });
@@ -57,7 +59,21 @@ function planOptions(values: TestValues): PlanOptions {
     Object.entries(values).filter(([name]) => name in planning),
   );
   const { noCells, ...wishes } = chosen;
-  return noCells ? { ...wishes, cells: false } : wishes;
+  const nullSummary = values.histogram || values.plot?.some(({ picture }) => picture === 'null');
+  return { ...wishes, ...(noCells ? { cells: false } : {}), ...(nullSummary ? { nullSummary } : {}) };
+}
+
+/** Tries the files of --plot; what it gives draws into them. */
+async function plotFilesFor(
+  { plot, output }: TestValues,
+  inputPath: string | null,
+): Promise<((result: Result) => Promise<void>) | undefined> {
+  if (plot === undefined) return undefined;
+  const write = await (await import('../plots/plot-files.js')).plotFiles(plot, inputPath, output);
+  return async (result) => {
+    const { drawPicture } = await import('../../report/pictures/pictures.js');
+    await write((picture) => drawPicture(result, picture));
+  };
 }
 
 /** A method that was picked for the user is never a silent matter. */

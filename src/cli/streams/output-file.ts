@@ -4,25 +4,30 @@ import { access, chmod, constants, open, realpath, rename, stat, unlink } from '
 import type { Stats } from 'node:fs';
 import { basename, dirname, join } from 'node:path';
 import { dataProblem, usageProblem, type Problem } from '../../problem/problem.js';
-import type { Destination } from './write-out.js';
+
+/** Takes text, or the bytes of a picture. */
+export interface FileDestination {
+  write(content: string | Uint8Array): Promise<unknown>;
+}
 
 /**
  * Checks that the file can be made, without leaving a trace; `write` then replaces it in one step, so that a run that
  * dies half-way leaves the old file. Devices and pipes are written to as they are.
  * @throws Problem (usage): `output-is-input`, `output-is-directory`, `cannot-open-output`.
  */
-export async function toFile(path: string, inputPath: string | null): Promise<Destination> {
+export async function toFile(path: string, inputPath: string | null, option = '--output'): Promise<FileDestination> {
   try {
     const target = await realpath(path).catch(() => path);
     const existing = await stat(target).catch(() => undefined);
-    if (existing?.isDirectory()) throw isDirectory(path);
-    if (inputPath !== null && existing !== undefined && (await sameFile(existing, inputPath))) throw isInput(path);
+    if (existing?.isDirectory()) throw isDirectory(path, option);
+    if (inputPath !== null && existing !== undefined && (await sameFile(existing, inputPath)))
+      throw isInput(path, option);
     if (existing !== undefined) await access(target, constants.W_OK);
     if (existing !== undefined && !existing.isFile()) return { write: (text) => writePlainly(target, path, text) };
     await unlink(await emptyNeighbour(target));
     return { write: (text) => replace(target, path, existing, text) };
   } catch (thrown) {
-    throw cannotOpen(path, thrown);
+    throw cannotOpen(path, thrown, option);
   }
 }
 
@@ -33,7 +38,12 @@ async function emptyNeighbour(target: string): Promise<string> {
   return name;
 }
 
-async function replace(target: string, path: string, existing: Stats | undefined, text: string): Promise<void> {
+async function replace(
+  target: string,
+  path: string,
+  existing: Stats | undefined,
+  text: string | Uint8Array,
+): Promise<void> {
   let temporary: string | undefined;
   try {
     temporary = await emptyNeighbour(target);
@@ -46,7 +56,7 @@ async function replace(target: string, path: string, existing: Stats | undefined
   }
 }
 
-async function writePlainly(target: string, path: string, text: string): Promise<void> {
+async function writePlainly(target: string, path: string, text: string | Uint8Array): Promise<void> {
   try {
     await writeWhole(target, text);
   } catch (thrown) {
@@ -54,7 +64,7 @@ async function writePlainly(target: string, path: string, text: string): Promise
   }
 }
 
-async function writeWhole(path: string, text: string): Promise<void> {
+async function writeWhole(path: string, text: string | Uint8Array): Promise<void> {
   const file = await open(path, constants.O_WRONLY);
   try {
     await file.writeFile(text);
@@ -68,29 +78,29 @@ async function sameFile(one: Stats, path: string): Promise<boolean> {
   return other !== undefined && other.isFile() && other.dev === one.dev && other.ino === one.ino;
 }
 
-const isDirectory = (path: string): Problem =>
+const isDirectory = (path: string, option: string): Problem =>
   usageProblem({
     code: 'output-is-directory',
     message: `"${path}" is a directory`,
-    place: '--output',
+    place: option,
     hint: `name a file in it, such as ${join(path, 'result.json')}`,
   });
 
-const isInput = (path: string): Problem =>
+const isInput = (path: string, option: string): Problem =>
   usageProblem({
     code: 'output-is-input',
     message: `"${path}" is the file the counts come from`,
-    place: '--output',
+    place: option,
     hint: 'name another file; the counts would be overwritten by the report',
   });
 
-const cannotOpen = (path: string, thrown: unknown): unknown => {
+const cannotOpen = (path: string, thrown: unknown, option: string): unknown => {
   const code = (thrown as NodeJS.ErrnoException).code;
   if (thrown instanceof Error && 'exitStatus' in thrown) return thrown;
   return usageProblem({
     code: 'cannot-open-output',
     message: `"${path}" cannot be written (${String(code ?? thrown)})`,
-    place: '--output',
+    place: option,
     hint:
       code === 'ENOENT'
         ? `make the directory "${dirname(path)}" first, or check how it is spelled`

@@ -1,0 +1,178 @@
+// The table as a mosaic (Hartigan & Kleiner 1981): each row a band as high as its share of all, parted by the shares of its
+// columns; cells far from what independence expects are marked by hatching and by signs (Friendly 1994).
+import { countWords } from '../../result/number-words.js';
+import type { Result } from '../../result/result.js';
+import {
+  blue,
+  cutToWidth,
+  element,
+  escapedText,
+  ink,
+  label,
+  orange,
+  paper,
+  quiet,
+  quietEdge,
+  textWidth,
+  type Markup,
+} from './element.js';
+import { line, pictureWidth, type Picture } from './frame.js';
+import { residualHatching } from './hatching.js';
+import { bandsOf, type Tile } from './mosaic-tiles.js';
+import { caption, keyFor, type KeyEntry } from './words.js';
+
+/** The sign itself: a hyphen is too short to be seen on hatching. */
+const minus = '\u2212';
+const height = 170;
+/** Widest row label, in units. */
+const widestLabel = 90;
+/** Narrowest place in which a column's label stands upright. */
+const uprightLabel = 44;
+const right = pictureWidth - 10;
+
+/** @param id as of the document: names the hatching. */
+export function mosaic(result: Result, id: string): Picture {
+  const { input } = result;
+  const hasResiduals = result.cells !== undefined;
+  const title = 'Counts as areas, row by row';
+  const head = caption(title);
+  const key = keyFor(hasResiduals ? keyEntries(id) : [plainEntry], head.bottom);
+  const left = 14 + Math.min(widestLabel, Math.max(...input.rowLabels.map((words) => textWidth(words || '(blank)'))));
+  const columns = columnLabels(result, left, key.bottom);
+  const bands = bandsOf(result, { left, right, top: columns.bottom, bottom: columns.bottom + height });
+  return {
+    title: 'Mosaic of the table',
+    description: describe(result),
+    height: columns.bottom + height + 10,
+    marks: [
+      residualHatching(id),
+      ...head.marks,
+      ...key.marks,
+      ...columns.marks(bands.find(({ tiles }) => tiles.length > 0)!.tiles),
+      ...bands.flatMap(({ label: words, middle, tiles }) => [
+        label(left - 6, middle + 3.5, cutToWidth(words, left - 10), { 'text-anchor': 'end' }),
+        ...tiles.map((tile) => tileMark(tile, id)),
+      ]),
+    ],
+  };
+}
+
+const plainEntry: KeyEntry = {
+  words: 'areas are counts; residuals of cells were not worked out',
+  sample: (x, y) => element('rect', { x, y, width: 14, height: 9, fill: quiet, stroke: quietEdge }),
+};
+
+const keyEntries = (id: string): KeyEntry[] => {
+  const pair =
+    (first: string, second: string, stroke: string): KeyEntry['sample'] =>
+    (x, y) =>
+      element('rect', { x, y, width: 7, height: 9, fill: `url(#${id}-${first})`, stroke, 'stroke-width': 0.8 }) +
+      element('rect', { x: x + 7, y, width: 7, height: 9, fill: `url(#${id}-${second})`, stroke, 'stroke-width': 0.8 });
+  return [
+    { words: '+ more than expected: adjusted residual 2 to 4; ++ from 4', sample: pair('more-1', 'more-2', blue) },
+    {
+      words: `${minus} fewer than expected: ${minus}2 to ${minus}4; ${minus}${minus} from ${minus}4`,
+      sample: pair('fewer-1', 'fewer-2', orange),
+    },
+  ];
+};
+
+function describe({ input, cells, sentence }: Result): string {
+  const far = (cells ?? []).filter(({ adjustedResidual }) => Math.abs(adjustedResidual ?? 0) >= 2);
+  const named = far.map(
+    ({ row, column, count, adjustedResidual }) =>
+      `${row}, ${column}: ${countWords(count)}, ${adjustedResidual! > 0 ? 'more' : 'fewer'} than expected`,
+  );
+  return `A ${input.rowLabels.length} by ${input.columnLabels.length} table of ${countWords(input.total)} counts drawn as areas. ${
+    named.length === 0 ? 'No cell has an adjusted residual beyond 2.' : `Marked cells: ${named.join('; ')}.`
+  } ${sentence}`;
+}
+
+interface ColumnLabels {
+  readonly bottom: number;
+  marks(tiles: readonly Tile[]): Markup[];
+}
+
+/** Labels in places of equal width, each with a line to its part of the first band; on their side where places are narrow. */
+function columnLabels({ input }: Result, left: number, top: number): ColumnLabels {
+  const labels = input.columnLabels.map((words) => (words.trim() === '' ? '(blank)' : words));
+  const place = (right - left) / labels.length;
+  const isUpright = place >= uprightLabel;
+  const widest = Math.max(...labels.map((words) => textWidth(words)));
+  const room = isUpright ? 14 : Math.min(70, widest + 4);
+  const leader = 12;
+  return {
+    bottom: top + room + leader,
+    marks: (tiles) =>
+      labels.flatMap((words, j) => {
+        const x = left + (j + 0.5) * place;
+        const tile = tiles[j]!;
+        return [
+          isUpright
+            ? label(x, top + 10, cutToWidth(words, place - 4), { 'text-anchor': 'middle' })
+            : label(x + 3.5, top + room, cutToWidth(words, room), {
+                transform: `rotate(-90 ${(x + 3.5).toFixed(2)} ${(top + room).toFixed(2)})`,
+              }),
+          line(x, top + room + 1, tile.x + tile.width / 2, top + room + leader - 2, {
+            stroke: quietEdge,
+            'stroke-width': 0.6,
+          }),
+        ];
+      }),
+  };
+}
+
+function tileMark({ x, y, width, height: high, count, strength, words }: Tile, id: string): Markup {
+  const title = element('title', {}, escapedText(words));
+  if (count === 0 || width <= 0.8) {
+    return element(
+      'circle',
+      { class: 'keepsum-none', cx: x + width / 2, cy: y + high / 2, r: 2.4, fill: paper, stroke: ink },
+      title,
+    );
+  }
+  const fill = strength === 0 ? quiet : `url(#${id}-${strength > 0 ? 'more' : 'fewer'}-${Math.abs(strength)})`;
+  const stroke = strength === 0 ? quietEdge : strength > 0 ? blue : orange;
+  const sign = (strength > 0 ? '+' : minus).repeat(Math.abs(strength));
+  const full = `${countWords(count)}${sign === '' ? '' : ` ${sign}`}`;
+  const inside = [full, sign].find((text) => text !== '' && textWidth(text) + 4 <= width && high >= 13);
+  return element(
+    'g',
+    { class: 'keepsum-cell' },
+    title,
+    element('rect', {
+      class: 'keepsum-tile',
+      x,
+      y,
+      width,
+      height: high,
+      fill,
+      stroke,
+      'stroke-width': strength === 0 ? 0.6 : 1.2,
+    }),
+    inside === undefined ? '' : plate(inside, x + width / 2, y + high / 2, strength !== 0),
+  );
+}
+
+/** Words on a patch of paper, so that hatching does not cross them. */
+function plate(words: string, x: number, y: number, onHatching: boolean): Markup {
+  const wide = textWidth(words) + 3;
+  return (
+    (onHatching
+      ? element('rect', {
+          class: 'keepsum-paper',
+          x: x - wide / 2,
+          y: y - 6.5,
+          width: wide,
+          height: 13,
+          fill: paper,
+          rx: 2,
+        })
+      : '') +
+    label(x, y + 3.6, words, {
+      'text-anchor': 'middle',
+      class: onHatching ? 'keepsum-words' : 'keepsum-on-tile',
+      ...(onHatching ? { 'font-weight': 'bold' } : {}),
+    })
+  );
+}

@@ -1,0 +1,59 @@
+// The pictures of a result, by name; adding one is a file and an entry here. Loaded only by runs that draw.
+import { usageProblem } from '../../problem/problem.js';
+import type { Result } from '../../result/result.js';
+import { svgDocument, type Picture } from './frame.js';
+import { mosaic } from './mosaic.js';
+import { nullDistribution } from './null-distribution.js';
+import type { PictureName } from './names.js';
+
+/** What keeps a result from having a picture, and what to do about it. */
+interface Lack {
+  readonly because: string;
+  readonly hint: string;
+}
+
+interface Entry {
+  /** Undefined where it can be drawn. */
+  lacks(result: Result): Lack | undefined;
+  draw(result: Result, id: string): Picture;
+}
+
+const entries: Readonly<Record<PictureName, Entry>> = {
+  null: {
+    lacks: ({ nullSummary, plan }) =>
+      nullSummary !== undefined && nullSummary.bins.length > 0
+        ? undefined
+        : {
+            because:
+              plan.fixed === 'pairs'
+                ? 'the law of changes in pairs is not summed up for pictures'
+                : 'the result holds no summary of what chance alone does',
+            hint: 'only a table with two rows and two columns that hold counts can have one; --plot mosaic=FILE.svg draws the counts',
+          },
+    draw: (result, id) => nullDistribution(result, result.nullSummary!, id),
+  },
+  mosaic: {
+    lacks: ({ input }) =>
+      input.total > 0 ? undefined : { because: 'the table holds no counts', hint: 'leave the picture out' },
+    draw: mosaic,
+  },
+};
+
+/** True where the result has what the picture shows. */
+export const canDraw = (result: Result, name: PictureName): boolean => entries[name].lacks(result) === undefined;
+
+/**
+ * One picture of a result as an SVG document.
+ * @param id parts the names inside from those of other pictures on the same page; letters, digits and hyphens.
+ * @throws Problem (usage) `no-picture` when the result does not hold what the picture shows.
+ */
+export function drawPicture(result: Result, name: PictureName, id: string = `keepsum-${name}`): string {
+  const lack = entries[name].lacks(result);
+  if (lack === undefined) return svgDocument(entries[name].draw(result, id), id);
+  throw usageProblem({
+    code: 'no-picture',
+    message: `there is no picture "${name}" of this result: ${lack.because}`,
+    place: '--plot',
+    hint: lack.hint,
+  });
+}
