@@ -71,8 +71,17 @@ async function plotFilesFor(
   if (plot === undefined) return undefined;
   const write = await (await import('../plots/plot-files.js')).plotFiles(plot, inputPath, output);
   return async (result) => {
-    const { drawPicture } = await import('../../report/pictures/pictures.js');
-    await write((picture) => drawPicture(result, picture));
+    const { drawPicture, lackOf } = await import('../../report/pictures/pictures.js');
+    await write((picture) => {
+      const lack = lackOf(result, picture);
+      if (lack === undefined) return drawPicture(result, picture);
+      throw usageProblem({
+        code: 'no-picture',
+        message: `there is no picture "${picture}" of this result: ${lack.because}`,
+        place: '--plot',
+        hint: lack.hint,
+      });
+    });
   };
 }
 

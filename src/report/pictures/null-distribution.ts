@@ -74,7 +74,7 @@ function keyEntries(result: Result, { limit, orderedBy, tail }: NullSummary, id:
   return [
     { words: 'less extreme than observed', sample: box(quiet, quietEdge) },
     {
-      words: `at least as extreme: ${doubled ? `the ${orderedBy} tail, of which p is twice; ` : ''}${pName(p)} ${pNumber(p)}`,
+      words: `at least as extreme${doubled ? `, in the ${orderedBy} tail, of which p is twice` : ''}${pWords(p)}`,
       sample: box(`url(#${id}-hatching)`, blue),
     },
     ...(limit === undefined
@@ -91,6 +91,10 @@ function keyEntries(result: Result, { limit, orderedBy, tail }: NullSummary, id:
         ]),
   ];
 }
+
+/** The p that the hatched part stands for; that of another law or approximation is not what is drawn. */
+const pWords = (p: Result['pValues'][number]): string =>
+  p.method === 'exact' || p.method === 'sample' ? `: p ${pNumber(p)}, ${pName(p).replace(/ permutation p\b/, '')}` : '';
 
 function barOf(
   { left, right, mass, inTail }: DrawnBin,

@@ -1,5 +1,4 @@
 // The pictures of a result, by name; adding one is a file and an entry here. Loaded only by runs that draw.
-import { usageProblem } from '../../problem/problem.js';
 import type { Result } from '../../result/result.js';
 import { svgDocument, type Picture } from './frame.js';
 import { mosaic } from './mosaic.js';
@@ -7,7 +6,7 @@ import { nullDistribution } from './null-distribution.js';
 import type { PictureName } from './names.js';
 
 /** What keeps a result from having a picture, and what to do about it. */
-interface Lack {
+export interface Lack {
   readonly because: string;
   readonly hint: string;
 }
@@ -39,21 +38,16 @@ const entries: Readonly<Record<PictureName, Entry>> = {
   },
 };
 
-/** True where the result has what the picture shows. */
-export const canDraw = (result: Result, name: PictureName): boolean => entries[name].lacks(result) === undefined;
+/** Undefined where the result has what the picture shows. */
+export const lackOf = (result: Result, name: PictureName): Lack | undefined => entries[name].lacks(result);
 
 /**
  * One picture of a result as an SVG document.
  * @param id parts the names inside from those of other pictures on the same page; letters, digits and hyphens.
- * @throws Problem (usage) `no-picture` when the result does not hold what the picture shows.
+ * @throws TypeError when the result does not hold what the picture shows; `lackOf` tells.
  */
 export function drawPicture(result: Result, name: PictureName, id: string = `keepsum-${name}`): string {
-  const lack = entries[name].lacks(result);
-  if (lack === undefined) return svgDocument(entries[name].draw(result, id), id);
-  throw usageProblem({
-    code: 'no-picture',
-    message: `there is no picture "${name}" of this result: ${lack.because}`,
-    place: '--plot',
-    hint: lack.hint,
-  });
+  const lack = lackOf(result, name);
+  if (lack !== undefined) throw new TypeError(`there is no picture "${name}" of this result: ${lack.because}`);
+  return svgDocument(entries[name].draw(result, id), id);
 }

@@ -3,7 +3,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { analyse } from '../../../src/analyse.js';
 import type { PlanOptions } from '../../../src/plan/plan.js';
-import { canDraw, drawPicture } from '../../../src/report/pictures/pictures.js';
+import { drawPicture, lackOf } from '../../../src/report/pictures/pictures.js';
 import { smallTable } from '../../helpers/tables.js';
 import { expectSoundSvg, marksOf, wordsOf } from './picture-parts.js';
 
@@ -64,7 +64,8 @@ describe('the null distribution', () => {
 
   it('is refused where there is no summary, with a way out', async () => {
     const result = await analyse(orchids);
-    expect(canDraw(result, 'null')).toBe(false);
+    expect(lackOf(result, 'null')!.hint).toContain('mosaic');
+    expect(lackOf(result, 'mosaic')).toBeUndefined();
     expect(() => drawPicture(result, 'null')).toThrow(/no picture "null"/);
   });
 });
