@@ -23,9 +23,6 @@ export default defineConfig({
         'sampling-worker': 'src/sampling-worker.ts',
         'batch-worker': 'src/batch/batch-worker.ts',
       },
-      // piscina starts threads from files of its own, so it stays a package.
-      external: [...builtinModules, /^node:/, 'piscina'],
-      input: { main: 'src/cli/main.ts', index: 'src/index.ts', 'sampling-worker': 'src/sampling-worker.ts' },
       // piscina starts threads from files of its own, resvg is machine code: they stay packages.
       external: [...builtinModules, /^node:/, 'piscina', '@resvg/resvg-js'],
       output: {

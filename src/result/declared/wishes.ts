@@ -25,6 +25,7 @@ const options = {
   lambda: z.union([z.string(), z.number()]),
   ordered: z.enum(['rows', 'columns', 'both']),
   cells: z.boolean(),
+  nullSummary: z.boolean(),
   compare: z.enum(['rows', 'columns']),
   control: z.string(),
   fixed: z.enum(fixedSides),
