@@ -5,17 +5,9 @@ import { stages } from './arguments/option.js';
 import { fold } from '../report/fold.js';
 import { commands } from './commands/all.js';
 import type { CommandFile, Example } from './commands/command-file.js';
+import { purpose, rootExamples } from './purpose.js';
 import { statuses } from './statuses.js';
 import type { Topic } from './topics/topic.js';
-
-const purpose =
-  'keepsum tells whether the rows and columns of a table of counts are related, with a p-value that states its own error.';
-
-const rootExamples: readonly Example[] = [
-  { line: 'keepsum test 8,2 1,9', words: 'a table typed in, one word a row' },
-  { line: 'keepsum test fixtures/demo/orchid-forms.tsv', words: 'a table from a file' },
-  { line: 'keepsum batch fixtures/demo/shift-checks.ndjson', words: 'many tables' },
-];
 
 /** What `keepsum --help` prints, and, without its last part, what is shown when nothing was asked. */
 export function rootHelp(width: number): string {

@@ -16,11 +16,19 @@ export const anyText: CheckValue<string> = (text, flag) => {
   });
 };
 
+/** A check that knows its closed list of names, for completions. */
+export type NamedCheck<T> = CheckValue<T> & { readonly names: readonly string[] };
+
+export const withNames = <T>(names: readonly string[], check: CheckValue<T>): NamedCheck<T> =>
+  Object.assign((text: string, flag: string) => check(text, flag), { names });
+
+/** The names that a check allows; undefined where the value is free. */
+export const namesOf = (check: CheckValue<unknown>): readonly string[] | undefined =>
+  'names' in check ? (check as NamedCheck<unknown>).names : undefined;
+
 /** One of a closed list of names. */
-export const oneOf =
-  <T extends string>(allowed: readonly T[]): CheckValue<T> =>
-  (text, flag) =>
-    oneOfNames(text, allowed[0]!, allowed, flag);
+export const oneOf = <T extends string>(allowed: readonly T[]): NamedCheck<T> =>
+  withNames(allowed, (text, flag) => oneOfNames(text, allowed[0]!, allowed, flag));
 
 /** A whole number in digits, or with a power of ten such as 1e6 or 2.5e6; both ends included, no upper end: Infinity. */
 export const wholeNumber =

@@ -58,4 +58,10 @@ export const commands: readonly CommandEntry[] = [
     summary: 'definitions and sources, or the options of a command',
     load: async () => (await import('./help.js')).helpCommand,
   },
+  {
+    name: 'completions',
+    operands: 'SHELL',
+    summary: 'a script that lets bash, zsh or fish complete',
+    load: async () => (await import('./completions.js')).completionsCommand,
+  },
 ];

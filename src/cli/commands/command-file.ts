@@ -17,6 +17,8 @@ export interface CommandFile<D extends Declarations = Declarations> {
   /** As typed at the root of a clone; a test runs every one. */
   readonly examples: readonly Example[];
   readonly options: D;
+  /** Words that may stand as operands, where they are a closed list; for completions. */
+  readonly operandNames?: () => Promise<readonly string[]>;
   /** Does the work and returns the exit status. */
   run(operands: readonly string[], values: Values<D>, shell: Shell): Promise<number>;
 }

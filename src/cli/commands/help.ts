@@ -18,6 +18,10 @@ export const helpCommand = command({
     { line: 'keepsum help blaker', words: 'one rule alone' },
   ],
   options: { debug: debugOption, help: helpOption },
+  operandNames: async () => [
+    ...(await import('../topics/all.js')).topicNames,
+    ...(await import('./all.js')).commands.map((entry) => entry.name),
+  ],
   async run(operands, _values, shell) {
     const [name, ...more] = operands;
     if (more.length > 0) {

@@ -3,7 +3,14 @@ import { usageProblem } from '../../problem/problem.js';
 import { statisticNamed, statisticNames } from '../../statistic/registry.js';
 import { powerOrders, twoGroupTests } from '../../power/design.js';
 import { powerFormats } from '../../report/power.js';
-import { anyText, betweenZeroAndOne, oneOf, wholeNumber, type CheckValue } from '../arguments/check-value.js';
+import {
+  anyText,
+  betweenZeroAndOne,
+  oneOf,
+  wholeNumber,
+  withNames,
+  type CheckValue,
+} from '../arguments/check-value.js';
 import { valued } from '../arguments/option.js';
 import { command } from './command-file.js';
 import { lookFor } from './look.js';
@@ -70,7 +77,7 @@ const planning = {
   statistic: valued(
     'The test',
     'NAME',
-    (text) => statisticNamed(text).name,
+    withNames(statisticNames, (text) => statisticNamed(text).name),
     `simulated: ${either(statisticNames)} (pearson)`,
   ),
   method: valued(

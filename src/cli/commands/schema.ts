@@ -25,6 +25,7 @@ export const schemaCommand = command({
   purpose: 'Prints the JSON Schema (draft 2020-12) that every such document satisfies.',
   examples: [{ line: 'keepsum schema result', words: 'on the screen, or on to another program' }],
   options: sharedOptions,
+  operandNames: async () => schemaNames,
   async run(operands, values, shell) {
     const schema = schemas[nameIn(operands)]!;
     const destination = await destinationFor(values.output, shell);

@@ -1,5 +1,12 @@
 // Options that become the plan: names as in PlanOptions, so that they pass through unchanged.
-import { anyText, betweenZeroAndOne, oneOf, wholeNumber, type CheckValue } from '../../arguments/check-value.js';
+import {
+  anyText,
+  betweenZeroAndOne,
+  oneOf,
+  wholeNumber,
+  withNames,
+  type CheckValue,
+} from '../../arguments/check-value.js';
 import { toggle, valued } from '../../arguments/option.js';
 import { standardEffort } from '../../../null/forecast.js';
 import { standardMostDraws, standardRelativeError } from '../../../plan/draws.js';
@@ -23,10 +30,11 @@ export const planning = {
   statistic: valued(
     'The test',
     'NAME',
-    (text) =>
+    withNames([...statisticNames, ...pairedNames, ...stratifiedNames], (text) =>
       isModulePath(text) || pairedNames.includes(text) || stratifiedNames.includes(text)
         ? text
         : statisticNamed(text).name,
+    ),
     `${either(statisticNames)} (pearson), or one of your own: ./mine.mjs; over strata ${either(stratifiedNames)} (by their shape)`,
   ),
   paired: toggle(
