@@ -32,7 +32,7 @@ describe('keepsum help TOPIC', () => {
     ['rules', twoSidedRules],
     ['methods', methods],
     ['designs', fixedSides.map((side) => `--fixed ${side}`)],
-    ['exit-status', ['0', '1', '2', '3', '130']],
+    ['exit-status', ['0', '1', '2', '3', '4', '130']],
     ['seeds', ['--seed TEXT']],
   ])('%s explains every one', async (topic, names) => {
     const { status, out } = await run(['help', topic]);
