@@ -1,4 +1,6 @@
 // The library: what a program may use, grouped by the stages of the flow.
+import type { PictureName } from './report/pictures/names.js';
+import type { Result } from './result/result.js';
 
 // input -> Table
 export { makeTable, type Table, type TableParts } from './table/table.js';
@@ -30,6 +32,15 @@ export { drawTables, type DrawOptions } from './draw-tables.js';
 
 // Result -> report
 export { render } from './report/formats.js';
+
+// Result -> pictures, and the report that holds them; loaded when first called
+/** One picture as an SVG document; `null` needs a result made with the option `nullSummary`. */
+export const drawPicture = async (result: Result, name: PictureName): Promise<string> =>
+  (await import('./report/pictures/pictures.js')).drawPicture(result, name);
+/** One or more results as one HTML file. */
+export const htmlReport = async (results: readonly Result[]): Promise<string> =>
+  (await import('./report/html/report.js')).htmlReport(results);
+export type { PictureName } from './report/pictures/names.js';
 
 // what goes wrong
 export { Problem } from './problem/problem.js';

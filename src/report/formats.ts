@@ -10,6 +10,10 @@ export const formats = { text, json, csv, markdown } as const satisfies Record<s
 export type FormatName = keyof typeof formats;
 export const formatNames = Object.keys(formats) as FormatName[];
 
+/** What the command takes: html as well, whose pictures are loaded only where it is written (`html/report.ts`). */
+export type ReportFormat = FormatName | 'html';
+export const reportFormats: readonly ReportFormat[] = [...formatNames, 'html'];
+
 /** A result in one of the formats: a whole document, ending in a line feed. */
 export const render = (result: Result, format: FormatName, settings: Partial<ReportSettings> = {}): string =>
   formats[format].write(result, { ...defaultSettings, ...settings });

@@ -1,13 +1,13 @@
 // The one document that goes out: the report in its format, its one line, or the sources of what was used.
 import { usageProblem, type Problem } from '../../problem/problem.js';
-import { render, type FormatName } from '../../report/formats.js';
+import { render, type ReportFormat } from '../../report/formats.js';
 import type { CitationForm } from '../../result/citations.js';
 import type { Result } from '../../result/result.js';
 import type { Shell } from '../shell.js';
 import { lookFor, type LookValues } from './look.js';
 
 export interface DocumentValues extends LookValues {
-  readonly format?: FormatName;
+  readonly format?: ReportFormat;
   readonly brief?: true;
   readonly citations?: CitationForm;
 }
@@ -24,6 +24,7 @@ export async function documentOf(result: Result, values: DocumentValues, shell: 
     return (await import('../../result/citations.js')).citationsOf(result, values.citations);
   }
   if (values.brief) return (await import('../../report/brief.js')).briefLine(result);
+  if (values.format === 'html') return (await import('../../report/html/report.js')).htmlReport([result]);
   return render(result, values.format ?? 'text', await lookFor(values, shell));
 }
 

@@ -59,7 +59,8 @@ function planOptions(values: TestValues): PlanOptions {
     Object.entries(values).filter(([name]) => name in planning),
   );
   const { noCells, ...wishes } = chosen;
-  const nullSummary = values.histogram || values.plot?.some(({ picture }) => picture === 'null');
+  const nullSummary =
+    values.histogram || values.format === 'html' || values.plot?.some(({ picture }) => picture === 'null');
   return { ...wishes, ...(noCells ? { cells: false } : {}), ...(nullSummary ? { nullSummary } : {}) };
 }
 

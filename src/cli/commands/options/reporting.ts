@@ -1,14 +1,14 @@
 // Options that change how a result is shown, and no digit of it.
 import { oneOf, wholeNumber } from '../../arguments/check-value.js';
 import { repeatable, toggle, valued } from '../../arguments/option.js';
-import { formatNames } from '../../../report/formats.js';
+import { reportFormats } from '../../../report/formats.js';
 import { outputOption } from '../shared-options.js';
 import { pictureNames } from '../../../report/pictures/names.js';
 import { resultPlot } from '../../plots/plot-wish.js';
 import { either } from './words.js';
 
 export const reporting = {
-  format: valued('The report', 'NAME', oneOf(formatNames), `${either(formatNames)} (text)`),
+  format: valued('The report', 'NAME', oneOf(reportFormats), `${either(reportFormats)} (text)`),
   output: outputOption,
   rawCsv: toggle('The report', 'leave text cells of CSV output that a spreadsheet would run as a formula as they are'),
   width: valued(

@@ -1,0 +1,44 @@
+// How the report looks: on screens light and dark, on A4 and Letter. Contrast of words is at least 7 to 1 in both.
+
+export const style = `
+:root { color-scheme: light dark; --ink: #222; --paper: #fff; --rule: #767676; --soft: #f2f2f2; --note: #7a3d00; }
+body { margin: 0; background: var(--paper); color: var(--ink); font: 1rem/1.55 system-ui, 'Segoe UI', Verdana, sans-serif; }
+main { max-width: 46rem; margin: 0 auto; padding: 1.5rem 1.25rem 3rem; }
+h1 { font-size: 1.6rem; line-height: 1.25; }
+h2 { font-size: 1.2rem; margin: 2rem 0 .4rem; }
+h3 { font-size: 1.05rem; margin: 1.5rem 0 .3rem; }
+p { margin: .5rem 0; overflow-wrap: anywhere; }
+a { color: inherit; }
+.answer { font-weight: 600; }
+.warning { border-left: .25rem solid var(--note); padding-left: .75rem; }
+.warning::before { content: 'Take note: '; font-weight: 600; color: var(--note); }
+.wide { overflow-x: auto; margin: .75rem 0; }
+table { border-collapse: collapse; font-variant-numeric: tabular-nums; }
+caption { text-align: left; padding-bottom: .3rem; }
+th, td { padding: .25rem .8rem .25rem 0; text-align: left; vertical-align: top; font-weight: normal; }
+thead th, thead td { border-bottom: 1px solid var(--rule); }
+tfoot th, tfoot td { border-top: 1px solid var(--rule); }
+.number, thead th:not(:first-child) { text-align: right; }
+pre { background: var(--soft); padding: .75rem; white-space: pre-wrap; overflow-wrap: anywhere; }
+figure { margin: 1rem 0; }
+.keepsum-picture { width: 26rem; max-width: 100%; height: auto; }
+article + article { border-top: 1px solid var(--rule); margin-top: 3rem; }
+footer { margin-top: 2.5rem; border-top: 1px solid var(--rule); padding-top: .5rem; font-size: .9rem; }
+@media screen and (prefers-color-scheme: dark) {
+  :root { --ink: #eaeaea; --paper: #181818; --rule: #9a9a9a; --soft: #272727; --note: #ffb870; }
+  .keepsum-paper { fill: #181818; }
+  .keepsum-words, .keepsum-ink { fill: #eaeaea; }
+  .keepsum-line, .keepsum-observed { stroke: #eaeaea; }
+  .keepsum-casing { stroke: #181818; }
+  .keepsum-none { fill: #181818; stroke: #eaeaea; }
+}
+@page { margin: 18mm; }
+@media print {
+  :root { color-scheme: light; }
+  main { max-width: none; padding: 0; }
+  h1, h2, h3 { break-after: avoid; }
+  figure, table, pre, .answer { break-inside: avoid; }
+  .wide { overflow: visible; }
+  article + article { break-before: page; border: 0; margin: 0; }
+}
+`;

@@ -1,0 +1,58 @@
+// Tables that a spreadsheet takes over as they are: plain digits, one cell each, headings that say what they head.
+import { shown } from '../../result/label-words.js';
+import type { InputEcho } from '../../result/result.js';
+import type { Grid } from '../page.js';
+import { element, worded, type Markup } from './element.js';
+
+const labelWords = (label: string): string => (label.trim() === '' ? '(blank)' : shown(label));
+
+/** Wide tables scroll on their own, by keyboard too. */
+const scrolling = (name: string, table: Markup): Markup =>
+  element('div', { class: 'wide', role: 'region', tabindex: '0', 'aria-label': name }, table);
+
+/** An empty heading would head nothing. */
+const columnHeading = (words: string): Markup => (words === '' ? '<td></td>' : worded('th', words, { scope: 'col' }));
+
+const number = (count: number): Markup => element('td', { class: 'number' }, String(count));
+
+/** @param place tells it from the other tables of counts of a report. */
+export function countsTable(input: InputEcho, place: string): Markup {
+  const line = (label: string, counts: readonly number[], total: number): Markup =>
+    element('tr', {}, worded('th', label, { scope: 'row' }), ...counts.map(number), number(total));
+  const headings = ['', ...input.columnLabels.map(labelWords), 'all'].map(columnHeading);
+  return scrolling(
+    `Counts${place}`,
+    element(
+      'table',
+      {},
+      worded('caption', 'Counts, with the totals of rows and columns'),
+      element('thead', {}, element('tr', {}, ...headings)),
+      element(
+        'tbody',
+        {},
+        ...input.rowLabels.map((label, i) => line(labelWords(label), input.counts[i]!, input.rowTotals[i]!)),
+      ),
+      element('tfoot', {}, line('all', input.columnTotals, input.total)),
+    ),
+  );
+}
+
+/** The first column holds names. @param name of the section that the grid stands in. */
+export function gridTable({ headings, rows }: Grid, name: string): Markup {
+  const cells = ([first, ...others]: readonly string[]): Markup =>
+    element(
+      'tr',
+      {},
+      worded('th', first!, { scope: 'row' }),
+      ...others.map((words) => worded('td', words, { class: 'number' })),
+    );
+  return scrolling(
+    name,
+    element(
+      'table',
+      {},
+      element('thead', {}, element('tr', {}, ...headings.map(columnHeading))),
+      element('tbody', {}, ...rows.map(cells)),
+    ),
+  );
+}
