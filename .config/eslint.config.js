@@ -28,7 +28,7 @@ const stages = [
 ];
 
 const readsOnlyTheResult = {
-  regex: '^(\\.\\./)+(?!\\.\\./|result/|[\\w-]+\\.js$)[\\w-]+/',
+  regex: '^(\\.\\./)+(?!\\.\\./|result/|pictures/|[\\w-]+\\.js$)[\\w-]+/',
   message: 'Reports read the result and nothing else.',
 };
 
