@@ -2,22 +2,9 @@
 // with them, so that adjusted p-values use how the outcomes hang together (Westfall & Young 1993). Subjects with the same outcomes
 // are one column of a table of groups by outcome profiles; its margins hold all that is fixed, and it is never expanded.
 import { drawTables } from '../draw-tables.js';
+import type { JointCounts } from '../input/joint-counts.js';
 import { makeTable } from '../table/table.js';
 import { OutcomeValues } from './outcome-values.js';
-
-export interface JointOutcome {
-  readonly label: string;
-  readonly levels: readonly string[];
-}
-
-export interface JointCounts {
-  readonly groups: readonly string[];
-  readonly outcomes: readonly JointOutcome[];
-  /** For each profile, the level of every outcome. */
-  readonly profiles: readonly (readonly number[])[];
-  /** counts[group][profile]. */
-  readonly counts: readonly (readonly number[])[];
-}
 
 export interface JointAnswer {
   /** Draws, the observed table not counted. */

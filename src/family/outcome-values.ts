@@ -1,7 +1,7 @@
 // One outcome of many: its table is what a table of groups by profiles comes down to, its statistic Pearson's, as an exact ratio
 // of whole numbers. Each distinct table is valued once.
 import { greatestCommonDivisor } from '../numeric/greatest-common-divisor.js';
-import type { JointCounts } from './joint.js';
+import type { JointCounts } from '../input/joint-counts.js';
 
 /** sum n^2 / (R C): with the total the same for all outcomes, Pearson's statistic is n (this - 1). */
 export class ExactValue {

@@ -2,7 +2,8 @@
 // adjusted p-values are worked out from the definition (Westfall & Young 1993, algorithms 2.8 and 4.1).
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { jointCounts, type JointCounts } from '../../src/family/joint.js';
+import { jointCounts } from '../../src/family/joint.js';
+import type { JointCounts } from '../../src/input/joint-counts.js';
 
 /** Subjects one by one: their group (0 or 1) and their outcomes. */
 interface Subjects {

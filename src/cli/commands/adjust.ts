@@ -1,0 +1,63 @@
+// keepsum adjust: p-values of a family of results on disk, adjusted.
+import { usageProblem } from '../../problem/problem.js';
+import { nameHint } from '../../problem/suggest.js';
+import { adjustments, type Adjustment } from '../../family/adjust.js';
+import { standardAdjustments } from '../../family/adjust-results.js';
+import { betweenZeroAndOne, oneOf, type CheckValue } from '../arguments/check-value.js';
+import { toggle, valued } from '../arguments/option.js';
+import { remark } from '../streams/write-out.js';
+import { command } from './command-file.js';
+import { either } from './options/words.js';
+import { destinationFor, sharedOptions } from './shared-options.js';
+
+const formats = ['ndjson', 'csv'] as const;
+
+const methodList: CheckValue<Adjustment[]> = (text, flag) =>
+  text.split(',').map((part) => {
+    const name = part.trim();
+    const found = adjustments.find((each) => each === name);
+    if (found !== undefined) return found;
+    throw usageProblem({ code: 'unknown-value', message: `"${name}" is not a value of ${flag}`, place: flag, hint: nameHint(name, adjustments) });
+  });
+
+export const adjustCommand = command({
+  name: 'adjust',
+  usage: [{ line: 'keepsum adjust RESULTS', words: 'results one a line, as keepsum batch writes them; - is standard input' }],
+  purpose: 'Adjusts the p-values of many results for being many: each family on its own.',
+  examples: [
+    { line: 'keepsum adjust fixtures/demo/shift-results.ndjson', words: 'the usual adjustments' },
+    {
+      line: 'keepsum adjust fixtures/demo/shift-results.ndjson --by holm,tarone --format csv',
+      words: 'one that uses what each table could attain',
+    },
+  ],
+  options: {
+    by: valued('The test', 'NAMES', methodList, `${either(adjustments)} (${standardAdjustments.join(', ')})`),
+    alpha: valued('The test', 'LEVEL', betweenZeroAndOne('0.05'), 'the level that gilbert picks tests for (0.05)'),
+    format: valued('The report', 'NAME', oneOf(formats), `${either(formats)} (ndjson)`),
+    quiet: toggle('The report', 'no remarks on standard error', 'q'),
+    ...sharedOptions,
+  },
+  async run(operands, values, shell) {
+    const [path, ...more] = operands;
+    if (more.length > 0 || (path === undefined && shell.stdinIsTerminal())) {
+      throw usageProblem({
+        code: more.length > 0 ? 'two-files' : 'nothing-named',
+        message: more.length > 0 ? `one file at a time, not ${operands.length}` : 'no results are named',
+        hint: 'write keepsum adjust results.ndjson, or pipe them in',
+      });
+    }
+    const file = path === undefined || path === '-' ? null : path;
+    const destination = await destinationFor(values.output, shell, file);
+    const { fileBytes, pieces } = await import('../streams/input-file.js');
+    const { resultsIn } = await import('../streams/result-lines.js');
+    const { adjustResults } = await import('../../family/adjust-results.js');
+    const sourceName = file ?? 'standard input';
+    const results = await resultsIn(file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file), sourceName);
+    const { lines, remarks } = adjustResults(results, { methods: values.by ?? standardAdjustments, alpha: values.alpha ?? 0.05 });
+    if (!values.quiet) await remark(shell.stderr, remarks.map((text) => `note: ${text}\n`).join(''));
+    const { adjustedLines } = await import('../../report/adjusted.js');
+    await destination.write(adjustedLines(lines, values.format ?? 'ndjson'));
+    return 0;
+  },
+});
