@@ -36,7 +36,12 @@ export async function testTogether(
   const { joint } = read;
   refuseOneGroup(joint);
   if (options.seed === '') {
-    throw usageProblem({ code: 'empty-seed', message: 'the seed is empty', place: '--seed', hint: 'give any text, such as --seed 2026' });
+    throw usageProblem({
+      code: 'empty-seed',
+      message: 'the seed is empty',
+      place: '--seed',
+      hint: 'give any text, such as --seed 2026',
+    });
   }
   const draws = wholeNumber(options.draws ?? standardDraws, 1, 1e9, '--draws');
   const samplingConfidence = share(options.samplingConfidence, 0.99, '--sampling-confidence');

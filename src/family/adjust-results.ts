@@ -15,13 +15,18 @@ export interface AdjustWishes {
 }
 
 /** Those that need nothing beyond the p-values. */
-export const standardAdjustments: readonly Adjustment[] = adjustments.filter((one) => !discreteAdjustments.includes(one));
+export const standardAdjustments: readonly Adjustment[] = adjustments.filter(
+  (one) => !discreteAdjustments.includes(one),
+);
 
 /**
  * Failed tests are named and left out: they gave no p, and counting them would only raise the others. One that is unknown to reach
  * anything (no least attainable p) is taken to reach everything.
  */
-export function adjustResults(results: readonly (FoundTest | FailedTest)[], { methods, alpha }: AdjustWishes): Adjusted {
+export function adjustResults(
+  results: readonly (FoundTest | FailedTest)[],
+  { methods, alpha }: AdjustWishes,
+): Adjusted {
   const found = results.filter((one): one is FoundTest => !('code' in one));
   const failed = results.filter((one): one is FailedTest => 'code' in one);
   const families = new Map<string, FoundTest[]>();
@@ -49,10 +54,17 @@ export function adjustResults(results: readonly (FoundTest | FailedTest)[], { me
       adjusted: values.get(test)!,
     })),
     remarks: [
-      ...[...families].map(([name, members]) => `family ${name}: ${members.length} test${members.length === 1 ? ' counts' : 's count'}`),
+      ...[...families].map(
+        ([name, members]) => `family ${name}: ${members.length} test${members.length === 1 ? ' counts' : 's count'}`,
+      ),
       ...(failed.length === 0
         ? []
-        : [`left out because they failed: ${failed.slice(0, 20).map(({ key, code }) => `${key} (${code})`).join(', ')}${failed.length > 20 ? `, and ${failed.length - 20} more` : ''}`]),
+        : [
+            `left out because they failed: ${failed
+              .slice(0, 20)
+              .map(({ key, code }) => `${key} (${code})`)
+              .join(', ')}${failed.length > 20 ? `, and ${failed.length - 20} more` : ''}`,
+          ]),
       ...unknownReach(found, methods),
     ],
   };

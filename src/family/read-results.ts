@@ -9,6 +9,9 @@ export interface FoundTest {
   readonly p: number | null;
   readonly leastAttainable: number | null;
   readonly method: string;
+  /** Of lines that hold them: what the least attainable p can be worked out from. */
+  readonly counts?: readonly (readonly number[])[];
+  readonly wishes?: object;
 }
 
 export interface FailedTest {
@@ -20,7 +23,10 @@ interface ResultLine {
   readonly key?: unknown;
   readonly family?: unknown;
   readonly error?: { readonly code?: unknown };
-  readonly plan?: { readonly tableKey?: unknown };
+  readonly plan?: { readonly tableKey?: unknown; readonly asked?: unknown; readonly statistic?: unknown };
+  readonly counts?: unknown;
+  readonly input?: { readonly counts?: unknown };
+  readonly schema?: unknown;
   readonly pValues?: readonly {
     readonly p?: unknown;
     readonly log10P?: unknown;
@@ -41,7 +47,12 @@ export function readResultLine(text: string, place: string, number: number): Fou
   try {
     line = JSON.parse(text) as ResultLine;
   } catch {
-    throw dataProblem({ code: 'not-json', message: 'this line is not JSON', place, hint: 'give the output of keepsum batch, or of keepsum test --format ndjson, one result a line' });
+    throw dataProblem({
+      code: 'not-json',
+      message: 'this line is not JSON',
+      place,
+      hint: 'give the output of keepsum batch, or of keepsum test --format ndjson, one result a line',
+    });
   }
   const key = String(line?.key ?? (line?.plan?.tableKey || number));
   if (typeof line?.error?.code === 'string') return { key, code: line.error.code };
@@ -49,7 +60,12 @@ export function readResultLine(text: string, place: string, number: number): Fou
   const isP = (value: unknown): value is number => typeof value === 'number' && value >= 0 && value <= 1;
   const tiny = headline?.p === null && typeof headline.log10P === 'number';
   if (headline === undefined || !(isP(headline.p) || tiny)) {
-    throw dataProblem({ code: 'not-a-result', message: 'this line holds no result of keepsum', place, hint: 'give the output of keepsum batch, or of keepsum test --format ndjson, one result a line' });
+    throw dataProblem({
+      code: 'not-a-result',
+      message: 'this line holds no result of keepsum',
+      place,
+      hint: 'give the output of keepsum batch, or of keepsum test --format ndjson, one result a line',
+    });
   }
   return {
     key,
@@ -57,5 +73,15 @@ export function readResultLine(text: string, place: string, number: number): Fou
     p: isP(headline.p) ? headline.p : null,
     leastAttainable: isP(headline.leastAttainable) ? headline.leastAttainable : null,
     method: String(headline.method),
+    ...originOf(line),
   };
+}
+
+function originOf(line: ResultLine): Pick<FoundTest, 'counts' | 'wishes'> {
+  const whole = line.schema === 'keepsum/result/1';
+  const counts = whole ? line.input?.counts : line.counts;
+  const wishes = whole ? line.plan?.asked : line.plan;
+  return Array.isArray(counts) && typeof wishes === 'object' && wishes !== null
+    ? { counts: counts as number[][], wishes }
+    : {};
 }

@@ -19,7 +19,10 @@ export interface JointRead {
 export type JointRecordOptions = Omit<RecordOptions, 'rows' | 'columns' | 'totals'> & JointNames;
 
 /** @throws Problem: those of readRecords, and `too-many-profiles`. */
-export async function readJointRecords(chunks: AsyncIterable<Uint8Array>, options: JointRecordOptions): Promise<JointRead> {
+export async function readJointRecords(
+  chunks: AsyncIterable<Uint8Array>,
+  options: JointRecordOptions,
+): Promise<JointRead> {
   const { sourceName, missing: rule = 'fail', groups, outcomes } = options;
   const tally = new JointTally(options, rule, sourceName);
   const { sha256, notes } = await walk(chunks, { ...options, rows: groups, columns: outcomes[0]! }, tally);

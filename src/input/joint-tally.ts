@@ -55,7 +55,8 @@ export class JointTally extends RecordTally {
     const taken = new Map([used.rows, used.columns, used.count].map((index) => [index, titles[index] ?? '']));
     this.further = this.wanted.outcomes.slice(1).map((name) => {
       const field = columnIndex(titles, name, '--outcomes', this.sourceName);
-      if (taken.has(field)) throw sameColumn('--outcomes', field === used.rows ? '--groups' : '--outcomes', titles[field]!);
+      if (taken.has(field))
+        throw sameColumn('--outcomes', field === used.rows ? '--groups' : '--outcomes', titles[field]!);
       taken.set(field, titles[field]!);
       return { field, name: titles[field] === '' ? `column ${field + 1}` : titles[field]!, levels: new Levels() };
     });

@@ -6,7 +6,7 @@ import type { Result } from '../result/result.js';
 import { makeTable } from '../table/table.js';
 
 /** @throws Problem (data): those of makeTable, `margins-differ` where totals in the record are not those of its counts. */
-export function readAgain({ input, strata, clusters }: Result): ReadTable {
+export function readAgain({ input, strata, clusters, quasiIndependence }: Result): ReadTable {
   const { source, sha256, missing, levels, counts, rowLabels, columnLabels } = input;
   const facts = {
     source: source as ReadTable['source'],
@@ -20,7 +20,8 @@ export function readAgain({ input, strata, clusters }: Result): ReadTable {
     const read: ReadTable = { ...strataFromParts({ strata: parts, rowLabels, columnLabels }), ...facts };
     return checked(read, input);
   }
-  const table = makeTable({ counts, rowLabels, columnLabels });
+  const impossible = quasiIndependence?.expected.map((row) => row.map((expected) => expected === null));
+  const table = makeTable({ counts, rowLabels, columnLabels, ...(impossible === undefined ? {} : { impossible }) });
   return checked({ table, ...facts, ...(clusters === undefined ? {} : { clusters: membersOf(clusters) }) }, input);
 }
 

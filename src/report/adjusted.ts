@@ -4,7 +4,9 @@ import type { AdjustedLine } from '../result/adjusted.js';
 
 export function adjustedLines(lines: readonly AdjustedLine[], format: 'ndjson' | 'csv'): string {
   if (format === 'ndjson') return lines.map((line) => `${JSON.stringify(line)}\n`).join('');
-  const methods = [...new Set(lines.flatMap(({ adjusted }) => Object.keys(adjusted)))] as (keyof AdjustedLine['adjusted'])[];
+  const methods = [
+    ...new Set(lines.flatMap(({ adjusted }) => Object.keys(adjusted))),
+  ] as (keyof AdjustedLine['adjusted'])[];
   const header = ['key', 'family', 'tests', 'p', 'leastAttainable', ...methods];
   const rows = lines.map(({ key, family, tests, p, leastAttainable, adjusted }) => [
     field(key),

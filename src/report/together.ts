@@ -36,18 +36,26 @@ function text(result: TogetherResult, { width: wide, paint }: ReportSettings): s
   return [
     paint.bold('Which outcomes differ between the groups?'),
     ...heading('What was tested'),
-    ...said(`${outcomes.length} outcomes of ${countWords(input.total)} subjects in the groups ${input.groups.map(quoted).join(', ')}.`),
+    ...said(
+      `${outcomes.length} outcomes of ${countWords(input.total)} subjects in the groups ${input.groups.map(quoted).join(', ')}.`,
+    ),
     ...said(
       `${countWords(records)} records were read${dropped === 0 ? '' : `; ${countWords(dropped)} subjects with a value missing were left out`}${rule === 'level' ? '; missing was kept as a level of its own' : ''}.`,
     ),
-    ...said(`Chance deals the groups to the subjects anew, each subject keeping all its outcomes: ${countWords(plan.draws)} times, seed ${quoted(plan.seed)}.`),
+    ...said(
+      `Chance deals the groups to the subjects anew, each subject keeping all its outcomes: ${countWords(plan.draws)} times, seed ${quoted(plan.seed)}.`,
+    ),
     ...heading('The answer'),
     ...gridLines(grid, prose - 2).map((line) => `  ${line}`.trimEnd()),
-    ...said('An adjusted p speaks for all outcomes together: the probability to see any as extreme, were none related to the groups.'),
+    ...said(
+      'An adjusted p speaks for all outcomes together: the probability to see any as extreme, were none related to the groups.',
+    ),
     ...heading('Before you use it'),
     ...notes.flatMap(({ text: words }) => said(words).map((line) => paint.warn(line))),
     ...said('Association is not causation. Subjects were taken as independent of each other.'),
-    ...said("A decision that can hurt someone (clinical, food, product safety) belongs with the study's protocol, local rules and a qualified statistician."),
+    ...said(
+      "A decision that can hurt someone (clinical, food, product safety) belongs with the study's protocol, local rules and a qualified statistician.",
+    ),
     '',
   ].join('\n');
 }
@@ -59,7 +67,8 @@ function pWords({ p, estimate }: DrawnP, draws: number): string {
 }
 
 function csv({ outcomes, plan, input, tool }: TogetherResult): string {
-  const header = 'outcome,statistic,p,pLower,pUpper,maxT,maxTLower,maxTUpper,minP,minPLower,minPUpper,draws,seed,total,version';
+  const header =
+    'outcome,statistic,p,pLower,pUpper,maxT,maxTLower,maxTUpper,minP,minPLower,minPUpper,draws,seed,total,version';
   const rows = outcomes.map(({ label, statistic, alone, maxT, minP }) =>
     [
       field(label),

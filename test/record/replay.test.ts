@@ -30,6 +30,8 @@ const cases: readonly [string, Parameters<typeof analyse>[0], PlanOptions][] = [
   ['strata, sampled', strata, { method: 'sample', draws: 1000, statistic: 'general-association' }],
   ['pairs', square, { paired: true }],
   ['agreement', square, { paired: true, statistic: 'kappa' }],
+  ['impossible cells', { counts: [[0, 8, 3], [6, 0, 9], [4, 7, 0]], impossible: [[true, false, false], [false, true, false], [false, false, true]] }, {}], // prettier-ignore
+  ['impossible cells, by a chain', { counts: [[0, 8, 3], [6, 0, 9], [4, 7, 0]], impossible: [[true, false, false], [false, true, false], [false, false, true]] }, { method: 'sample', draws: 1000 }], // prettier-ignore
   ['asymptotic', large, { method: 'asymptotic' }],
 ];
 

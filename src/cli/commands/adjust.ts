@@ -1,8 +1,10 @@
 // keepsum adjust: p-values of a family of results on disk, adjusted.
 import { usageProblem } from '../../problem/problem.js';
 import { nameHint } from '../../problem/suggest.js';
-import { adjustments, type Adjustment } from '../../family/adjust.js';
+import { adjustments, discreteAdjustments, type Adjustment } from '../../family/adjust.js';
 import { standardAdjustments } from '../../family/adjust-results.js';
+import type { FailedTest, FoundTest } from '../../family/read-results.js';
+import type { PlanOptions } from '../../plan/plan.js';
 import { betweenZeroAndOne, oneOf, type CheckValue } from '../arguments/check-value.js';
 import { toggle, valued } from '../arguments/option.js';
 import { remark } from '../streams/write-out.js';
@@ -17,12 +19,19 @@ const methodList: CheckValue<Adjustment[]> = (text, flag) =>
     const name = part.trim();
     const found = adjustments.find((each) => each === name);
     if (found !== undefined) return found;
-    throw usageProblem({ code: 'unknown-value', message: `"${name}" is not a value of ${flag}`, place: flag, hint: nameHint(name, adjustments) });
+    throw usageProblem({
+      code: 'unknown-value',
+      message: `"${name}" is not a value of ${flag}`,
+      place: flag,
+      hint: nameHint(name, adjustments),
+    });
   });
 
 export const adjustCommand = command({
   name: 'adjust',
-  usage: [{ line: 'keepsum adjust RESULTS', words: 'results one a line, as keepsum batch writes them; - is standard input' }],
+  usage: [
+    { line: 'keepsum adjust RESULTS', words: 'results one a line, as keepsum batch writes them; - is standard input' },
+  ],
   purpose: 'Adjusts the p-values of many results for being many: each family on its own.',
   examples: [
     { line: 'keepsum adjust fixtures/demo/shift-results.ndjson', words: 'the usual adjustments' },
@@ -53,11 +62,27 @@ export const adjustCommand = command({
     const { resultsIn } = await import('../streams/result-lines.js');
     const { adjustResults } = await import('../../family/adjust-results.js');
     const sourceName = file ?? 'standard input';
-    const results = await resultsIn(file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file), sourceName);
-    const { lines, remarks } = adjustResults(results, { methods: values.by ?? standardAdjustments, alpha: values.alpha ?? 0.05 });
+    const read = await resultsIn(file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file), sourceName);
+    const methods = values.by ?? standardAdjustments;
+    const results = methods.some((method) => discreteAdjustments.includes(method)) ? await withReach(read) : read;
+    const { lines, remarks } = adjustResults(results, {
+      methods,
+      alpha: values.alpha ?? 0.05,
+    });
     if (!values.quiet) await remark(shell.stderr, remarks.map((text) => `note: ${text}\n`).join(''));
     const { adjustedLines } = await import('../../report/adjusted.js');
     await destination.write(adjustedLines(lines, values.format ?? 'ndjson'));
     return 0;
   },
 });
+
+/** Exact p-values of 2x2 tables that do not say what they could attain: worked out from their margins. */
+async function withReach(results: readonly (FoundTest | FailedTest)[]): Promise<(FoundTest | FailedTest)[]> {
+  const { reachOf } = await import('../../reach-of.js');
+  const all: (FoundTest | FailedTest)[] = [];
+  for (const one of results) {
+    const known = 'code' in one || one.leastAttainable !== null || one.method !== 'exact' || one.counts === undefined;
+    all.push(known ? one : { ...one, leastAttainable: await reachOf(one.counts!, one.wishes as PlanOptions) });
+  }
+  return all;
+}

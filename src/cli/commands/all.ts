@@ -47,6 +47,18 @@ export const commands: readonly CommandEntry[] = [
     load: async () => (await import('./replay.js')).replayCommand,
   },
   {
+    name: 'adjust',
+    operands: 'RESULTS | -',
+    summary: 'p-values of a family of results, adjusted',
+    load: async () => (await import('./adjust.js')).adjustCommand,
+  },
+  {
+    name: 'together',
+    operands: 'FILE | -',
+    summary: 'several outcomes of the same subjects, adjusted over all',
+    load: async () => (await import('./together.js')).togetherCommand,
+  },
+  {
     name: 'schema',
     operands: 'NAME',
     summary: 'the JSON Schemas of what is read and printed',

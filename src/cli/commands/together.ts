@@ -22,7 +22,9 @@ const own = {
 
 export const togetherCommand = command({
   name: 'together',
-  usage: [{ line: 'keepsum together FILE --groups COLUMN --outcomes COLUMNS', words: 'raw records, one subject a line' }],
+  usage: [
+    { line: 'keepsum together FILE --groups COLUMN --outcomes COLUMNS', words: 'raw records, one subject a line' },
+  ],
   purpose: 'Tests several outcomes of the same subjects against one grouping, with p-values adjusted over all of them.',
   examples: [
     {
@@ -56,7 +58,8 @@ export const togetherCommand = command({
     const { readJointRecords } = await import('../../input/joint-records.js');
     const { fileBytes, isPlainFile, pieces } = await import('../streams/input-file.js');
     const sourceName = path ?? 'standard input';
-    const bytes = (): AsyncIterable<Uint8Array> => (path === null ? pieces(shell.stdin(), sourceName) : fileBytes(path));
+    const bytes = (): AsyncIterable<Uint8Array> =>
+      path === null ? pieces(shell.stdin(), sourceName) : fileBytes(path);
     const read = await readJointRecords(bytes(), {
       groups,
       outcomes: parseLabelList(outcomes, '--outcomes'),

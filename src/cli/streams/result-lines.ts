@@ -5,14 +5,25 @@ import { readResultLine, type FailedTest, type FoundTest } from '../../family/re
 import { dataProblem } from '../../problem/problem.js';
 
 /** @throws Problem (data): `empty-input`, and those of a line. */
-export async function resultsIn(bytes: AsyncIterable<Uint8Array>, sourceName: string): Promise<(FoundTest | FailedTest)[]> {
+export async function resultsIn(
+  bytes: AsyncIterable<Uint8Array>,
+  sourceName: string,
+): Promise<(FoundTest | FailedTest)[]> {
   const results: (FoundTest | FailedTest)[] = [];
   let number = 0;
-  for await (const line of createInterface({ input: Readable.from(bytes, { objectMode: false }), crlfDelay: Infinity })) {
+  for await (const line of createInterface({
+    input: Readable.from(bytes, { objectMode: false }),
+    crlfDelay: Infinity,
+  })) {
     number++;
     const text = number === 1 ? line.replace(/^\ufeff/, '') : line;
     if (text.trim() !== '') results.push(readResultLine(text, `${sourceName}:${number}`, number));
   }
   if (results.length > 0) return results;
-  throw dataProblem({ code: 'empty-input', message: 'there are no results', place: sourceName, hint: 'give the output of keepsum batch, one result a line' });
+  throw dataProblem({
+    code: 'empty-input',
+    message: 'there are no results',
+    place: sourceName,
+    hint: 'give the output of keepsum batch, one result a line',
+  });
 }
