@@ -9,10 +9,16 @@ import { purpose, rootExamples } from './purpose.js';
 import { statuses } from './statuses.js';
 import type { Topic } from './topics/topic.js';
 
-/** What `keepsum --help` prints, and, without its last part, what is shown when nothing was asked. */
-export function rootHelp(width: number): string {
+/** What is shown when nothing was asked. */
+export const firstScreen = (width: number): string => screen(firstParts(width));
+
+/** What `keepsum --help` prints. */
+export const rootHelp = (width: number): string =>
+  screen([...firstParts(width), section('Exit status', statuses, width)]);
+
+function firstParts(width: number): string[] {
   const listed = commands.map(({ name, operands, summary }) => [`${name} ${operands}`.trimEnd(), summary] as const);
-  return screen([
+  return [
     wrapped(purpose, width),
     section('Usage: keepsum COMMAND ...', listed, width),
     section('Examples', exampleItems(rootExamples), width),
@@ -20,13 +26,11 @@ export function rootHelp(width: number): string {
       'Anywhere',
       [
         ['--help, -h', 'this, or after a command its options'],
-        ['help TOPIC', 'definitions and sources: statistics, tails, rules, designs, methods, seeds'],
         ['--version', 'the version'],
       ],
       width,
     ),
-    section('Exit status', statuses, width),
-  ]);
+  ];
 }
 
 /** What `keepsum COMMAND --help` prints. */

@@ -27,7 +27,7 @@ export async function main(words: readonly string[], shell: Shell = processShell
 
 async function runCommand([name, ...words]: readonly string[], shell: Shell): Promise<number> {
   if (name === undefined) {
-    await remark(shell.stderr, await rootHelp(shell));
+    await remark(shell.stderr, (await import('./help.js')).firstScreen(shell.columns));
     return 2;
   }
   if (name === '--version') return print(`${version}\n`, shell);

@@ -4,6 +4,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { commands } from '../../src/cli/commands/all.js';
+import { rootExamples } from '../../src/cli/purpose.js';
 import { inShell, keepsum } from './run-command.js';
 
 let folder = '';
@@ -94,7 +95,7 @@ it('an operand after -- is never an option', async () => {
 
 describe('the examples of the help', async () => {
   const files = await Promise.all(commands.map((entry) => entry.load()));
-  const lines = files.flatMap((file) => file.examples.map((example) => example.line));
+  const lines = [...rootExamples, ...files.flatMap((file) => file.examples)].map((example) => example.line);
 
   it.each([...new Set(lines)])('%s', async (line) => {
     const { status, out, err } = await inShell(line);

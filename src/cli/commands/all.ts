@@ -37,7 +37,7 @@ export const commands: readonly CommandEntry[] = [
   {
     name: 'selfcheck',
     operands: '',
-    summary: 'does this copy give the known answers on this machine?',
+    summary: 'are the known answers found on this machine?',
     load: async () => (await import('./selfcheck.js')).selfCheckCommand,
   },
   {

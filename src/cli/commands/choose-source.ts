@@ -2,6 +2,7 @@
 import { usageProblem } from '../../problem/problem.js';
 import { looksLikeRow } from '../../input/inline.js';
 import { flagOf } from '../arguments/option.js';
+import { refuseRowSlips } from './row-slips.js';
 
 export type Source =
   | { readonly form: 'inline'; readonly rows: readonly string[] }
@@ -21,6 +22,7 @@ export function chooseSource(
   given: Given,
   stdinIsTerminal: () => boolean,
 ): Source | undefined {
+  refuseRowSlips(operands);
   const rows = operands.filter(looksLikeRow);
   const paths = operands.filter((operand) => !looksLikeRow(operand));
   refuseBothTotals(given);

@@ -1,10 +1,9 @@
 // Bytes of a file or of standard input, in pieces as they come, and what is wrong when there are none.
 import { createReadStream } from 'node:fs';
-import { readdir, stat } from 'node:fs/promises';
+import { stat } from 'node:fs/promises';
 import type { Readable } from 'node:stream';
-import { basename, dirname, join } from 'node:path';
+import { dirname } from 'node:path';
 import { dataProblem, type Problem } from '../../problem/problem.js';
-import { nearest } from '../../problem/suggest.js';
 
 /** A failure, at the start or half-way, is a Problem (data) that names the path. */
 export const fileBytes = (path: string): AsyncIterable<Uint8Array> => pieces(createReadStream(path), path);
@@ -80,19 +79,22 @@ async function unreadable(path: string, thrown: unknown): Promise<unknown> {
 
 async function noSuchFile(path: string): Promise<Problem> {
   const directory = dirname(path);
-  const names = await readdir(directory).catch(() => undefined);
-  const close = names === undefined ? undefined : nearest(basename(path), names);
+  const directoryExists = await stat(directory).then(
+    (facts) => facts.isDirectory(),
+    () => false,
+  );
+  const close = await (await import('./near-path.js')).nearPath(path);
   return dataProblem({
     code: 'no-such-file',
     message: 'there is no such file',
     place: path,
-    hint: hintForMissing(path, directory, names !== undefined, close),
+    hint: hintForMissing(path, directory, directoryExists, close),
   });
 }
 
 function hintForMissing(path: string, directory: string, directoryExists: boolean, close: string | undefined): string {
+  if (close !== undefined) return `did you mean ${close}?`;
   if (!directoryExists) return `there is no directory "${directory}" either; check how it is spelled`;
-  if (close !== undefined) return `did you mean ${directory === '.' ? close : join(directory, close)}?`;
   if (/^[^/]*[0-9][;,. ]/.test(path))
     return 'if a row of counts was meant: whole numbers with commas between, as in 8,2';
   return 'give the path of a file, rows of counts such as 8,2 1,9, or - for standard input';
