@@ -74,6 +74,7 @@ export async function analyseStrata(
       pooled,
       corners?.at(-1) ?? null,
       questions[0]!,
+      plan.confidence,
     );
     return buildResult({
       read,

@@ -77,10 +77,15 @@ export function pageFor(result: Result): Page {
   };
 }
 
+const forestBlock = ({ strata }: Result): Block[] =>
+  strata?.oddsRatios === undefined ? [] : [{ kind: 'picture', picture: 'strata' }];
+
 const sectionsOf = (result: Result): Section[] => [
   { heading: 'What was tested', blocks: tested(result) },
   { heading: 'The table', blocks: [{ kind: 'table' }, { kind: 'picture', picture: 'mosaic' }] },
-  ...strataSections(result).slice(0, 1),
+  ...strataSections(result)
+    .slice(0, 1)
+    .map(({ heading, blocks }) => ({ heading, blocks: [...blocks, ...forestBlock(result)] })),
   { heading: 'The answer', blocks: answer(result) },
   { heading: 'How strong is it?', blocks: result.strata === undefined ? strengthBlocks(result) : [] },
   { heading: 'How fragile is it?', blocks: fragilityBlocks(result) },

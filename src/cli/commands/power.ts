@@ -11,7 +11,8 @@ import {
   withNames,
   type CheckValue,
 } from '../arguments/check-value.js';
-import { valued } from '../arguments/option.js';
+import { repeatable, valued } from '../arguments/option.js';
+import { plotWish } from '../plots/plot-wish.js';
 import { command } from './command-file.js';
 import { lookFor } from './look.js';
 import { either } from './options/words.js';
@@ -116,6 +117,12 @@ export const powerCommand = command({
   ],
   options: {
     ...planning,
+    plot: repeatable(
+      'The report',
+      'FILE',
+      plotWish(['curve'] as const),
+      'the power over the sizes asked for, drawn into FILE.svg or FILE.png',
+    ),
     width: reporting.width,
     color: reporting.color,
     noColor: reporting.noColor,
@@ -129,6 +136,10 @@ export const powerCommand = command({
     const { planPower } = await import('../../plan-power.js');
     const { renderPower } = await import('../../report/power.js');
     const { withSteps } = await import('../streams/steps.js');
+    const draw =
+      values.plot === undefined
+        ? undefined
+        : await (await import('../plots/plot-files.js')).plotFiles(values.plot, null, values.output);
     const { sizes, total, number, format, ...rest } = values;
     const groups = readGroups(operands, total !== undefined);
     const wishes = {
@@ -140,6 +151,18 @@ export const powerCommand = command({
     };
     const result = await withSteps(values, shell, (onProgress) => planPower(wishes, onProgress));
     await destination.write(renderPower(result, format ?? 'text', await lookFor(values, shell)));
+    if (draw === undefined) return 0;
+    const { drawPowerCurve, lackOfCurve } = await import('../../report/pictures/power-curve.js');
+    await draw(() => {
+      const lack = lackOfCurve(result);
+      if (lack === undefined) return drawPowerCurve(result);
+      throw usageProblem({
+        code: 'no-picture',
+        message: `there is no curve of this result: ${lack}`,
+        place: '--plot',
+        hint: 'give several sizes, such as --sizes 20..60:10',
+      });
+    });
     return 0;
   },
 });

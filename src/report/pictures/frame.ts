@@ -52,13 +52,20 @@ export interface Tick {
 }
 
 /** Ticks with words that do not run into each other. */
-export function ticksOf(scale: ScaleContinuousNumeric<number, number>, wanted: number): Tick[] {
+export function ticksOf(
+  scale: ScaleContinuousNumeric<number, number>,
+  wanted: number,
+  along: 'across' | 'up' = 'across',
+): Tick[] {
   for (let number = wanted; ; number--) {
     const write = scale.tickFormat(number);
     const ticks = scale.ticks(number).map((value) => ({ at: scale(value), words: write(value).replace('−', '-') }));
     const fits = ticks.every(({ at, words }, k) => {
       const next = ticks[k + 1];
-      return next === undefined || Math.abs(next.at - at) > (textWidth(words) + textWidth(next.words)) / 2 + 4;
+      return (
+        next === undefined ||
+        Math.abs(next.at - at) > (along === 'up' ? fontSize : (textWidth(words) + textWidth(next.words)) / 2 + 4)
+      );
     });
     if (fits || number <= 2) return ticks;
   }

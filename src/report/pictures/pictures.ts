@@ -1,6 +1,7 @@
 // The pictures of a result, by name; adding one is a file and an entry here. Loaded only by runs that draw.
 import type { Result } from '../../result/result.js';
 import { svgDocument, type Picture } from './frame.js';
+import { forest, mostStrata } from './forest.js';
 import { mosaic } from './mosaic.js';
 import { nullDistribution } from './null-distribution.js';
 import type { PictureName } from './names.js';
@@ -35,6 +36,15 @@ const entries: Readonly<Record<PictureName, Entry>> = {
     lacks: ({ input }) =>
       input.total > 0 ? undefined : { because: 'the table holds no counts', hint: 'leave the picture out' },
     draw: mosaic,
+  },
+  strata: {
+    lacks: ({ strata }) =>
+      strata?.oddsRatios === undefined
+        ? { because: 'it has no strata of 2x2 tables', hint: 'name what tells the strata apart with --strata' }
+        : strata.labels.length > mostStrata
+          ? { because: `more than ${mostStrata} strata make no picture`, hint: 'the json format holds all of them' }
+          : undefined,
+    draw: forest,
   },
 };
 

@@ -13,6 +13,8 @@ export const strata = z.strictObject({
   decides: z.array(z.boolean()),
   /** 2x2: a d / (b c) of each stratum, null where it has no value (0 / 0). */
   oddsRatios: z.array(extendedNumber.nullable()).optional(),
+  /** Woolf's (1955) interval of each, at the plan's confidence; null where a cell is empty. */
+  oddsRatioIntervals: z.array(z.tuple([z.number(), z.number()]).nullable()).optional(),
   /** The same of all strata thrown together. */
   pooledOddsRatio: extendedNumber.nullable().optional(),
   /** The one of Mantel & Haenszel (1959) over strata. */
