@@ -5,6 +5,10 @@ import { inShell } from './run-command.js';
 describe('an interrupted run', () => {
   it.each([
     ['in the middle of sampling', 'keepsum test 800,200,30 100,900,40 5,7,900 --method sample --draws 1e11'],
+    [
+      'in the middle of exact work',
+      'keepsum test 31,22,9,14 18,34,27,12 7,19,41,22 12,15,18,33 --method exact --effort 1e11',
+    ],
     ['while it waits for input', 'sleep 60 | keepsum test -'],
   ])('%s', async (_case, line) => {
     // Job control gives the background job its own group and lets it take the signal.

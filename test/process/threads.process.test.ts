@@ -32,4 +32,21 @@ describe('threads', () => {
     expect(JSON.parse(one).pValues[0].errors[0].draws).toBeGreaterThan(500_000);
     for (const threads of ['2', '3']) expect(await run([...settings, '--threads', threads])).toBe(one);
   });
+
+  it('a run that is settled while other threads are still drawing ends well', async () => {
+    const wide = Array.from({ length: 8 }, (_, i) => Array.from({ length: 8 }, (__, j) => 40 + 30 * Number(i === j)));
+    const rows = wide.map((row) => row.join());
+    const { status, err, out } = await keepsum([
+      'test',
+      ...rows,
+      '--method',
+      'sample',
+      '--seed',
+      't',
+      '--threads',
+      '4',
+    ]);
+    expect([status, err]).toEqual([0, '']);
+    expect(out).toMatch(/settled at or below the level/);
+  });
 });

@@ -57,8 +57,12 @@ export async function* blocksInOrder(
   last = blocksFor(sampling.draws),
 ): AsyncGenerator<Block> {
   if (begin >= last) return;
-  const ask = (first: number): ReturnType<BlockSource['tallies']> =>
-    source.tallies(first, Math.min(last, first + source.stride));
+  const ask = (first: number): ReturnType<BlockSource['tallies']> => {
+    const asked = source.tallies(first, Math.min(last, first + source.stride));
+    // Whoever has seen enough leaves the last question unread; that its work is then ended is no failure of the run.
+    asked.catch(() => undefined);
+    return asked;
+  };
   let next = ask(begin);
   for (let first = begin; first < last; first += source.stride) {
     const tallies = await next;
