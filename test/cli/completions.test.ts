@@ -7,7 +7,7 @@ import { bashScript } from '../../src/cli/completions/bash.js';
 import { fishScript } from '../../src/cli/completions/fish.js';
 import { completedCommands } from '../../src/cli/completions/model.js';
 import { zshScript } from '../../src/cli/completions/zsh.js';
-import { formatNames } from '../../src/report/formats.js';
+import { reportFormats } from '../../src/report/formats.js';
 import { statisticNames } from '../../src/statistic/registry.js';
 
 const model = await completedCommands();
@@ -37,7 +37,7 @@ describe('bash, running its script, offers', () => {
   });
 
   it('the values of closed lists, also after an equals sign, and none where a value is free', () => {
-    expect(offered('keepsum', 'test', '8,2', '--format', '')).toEqual(formatNames);
+    expect(offered('keepsum', 'test', '8,2', '--format', '')).toEqual(reportFormats);
     expect(offered('keepsum', 'test', '8,2', '--format', '=', 'js')).toEqual(['json']);
     expect(offered('keepsum', 'test', '--statistic', '')).toEqual(expect.arrayContaining([...statisticNames]));
     expect(offered('keepsum', 'test', '--seed', '')).toEqual([]);

@@ -30,6 +30,9 @@ const asked: readonly [number[][], PlanOptions][] = [
   [larger, { method: 'sample', draws: 1000, seed: 'c', bootstrap: 100 }],
   [larger, { method: 'sample', seed: 'c', mostDraws: 1000, cells: true }],
   [larger, { ordered: 'both', cells: true }],
+  [larger, { compare: 'rows' }],
+  ...(['rows', 'columns', 'total'] as const).map((fixed): [number[][], PlanOptions] => [small, { fixed }]),
+  [small, { fixed: 'rows', outcomeOrder: 'conditional-p', nuisanceRisk: 1e-6 }],
   ...pairedStatistics.map(({ name, about }): [number[][], PlanOptions] => [
     about === 'change' && name === 'mcnemar' ? small : larger,
     { paired: true, statistic: name },
@@ -53,6 +56,18 @@ describe('every source that a methods paragraph names', () => {
   ] as const)('over strata, with %j', async (options) => {
     const result = checked(await analyse({ strata: inStrata }, options));
     expect(withoutSource(result.methods)).toEqual([]);
+  });
+
+  it('with impossible cells, exactly and by a chain', async () => {
+    const counts = larger.map((row, i) => row.map((n, j) => (i === j ? 0 : n + 1)));
+    const impossible = larger.map((row, i) => row.map((_, j) => i === j));
+    for (const method of ['exact', 'sample'] as const) {
+      const { methods } = checked(
+        await analyse({ counts, impossible }, { method, ...(method === 'sample' ? { seed: 'c', draws: 1000 } : {}) }),
+      );
+      expect(mentionsIn(methods).length).toBeGreaterThan(0);
+      expect(withoutSource(methods)).toEqual([]);
+    }
   });
 
   it('in every sample result and every plan of a study', async () => {

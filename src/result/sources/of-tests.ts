@@ -26,6 +26,8 @@ Boschloo 1970 | Boschloo, R. D. | Raised conditional level of significance for t
 Suissa & Shuster 1985 | Suissa, S. and Shuster, J. J. | Exact unconditional sample sizes for the 2 x 2 binomial trial | Journal of the Royal Statistical Society, Series A | 148 | 4 | 317-327
 Suissa & Shuster 1991 | Suissa, S. and Shuster, J. J. | The 2 x 2 matched-pairs trial: exact unconditional design and analysis | Biometrics | 47 | 2 | 361-372
 Berger & Boos 1994 | Berger, R. L. and Boos, D. D. | P values maximized over a confidence set for the nuisance parameter | Journal of the American Statistical Association | 89 | 427 | 1012-1016
+Bernstein 1912 | Bernstein, S. N. | Démonstration du théorème de Weierstrass fondée sur le calcul des probabilités | Communications de la Société Mathématique de Kharkov, 2nd series | 13 | 1 | 1-2
+de Casteljau 1959 | de Casteljau, P. | Outillages méthodes calcul | book: André Citroën Automobiles, Paris (technical report) | | |
 McNemar 1947 | McNemar, Q. | Note on the sampling error of the difference between correlated proportions or percentages | Psychometrika | 12 | 2 | 153-157
 Edwards 1948 | Edwards, A. L. | Note on the "correction for continuity" in testing the significance of the difference between correlated proportions | Psychometrika | 13 | 3 | 185-187
 Bowker 1948 | Bowker, A. H. | A test for symmetry in contingency tables | Journal of the American Statistical Association | 43 | 244 | 572-574
