@@ -134,7 +134,7 @@ async function otherDesigns({
   prepared: { plan },
   pValues,
 }: Answer): Promise<DesignLine[] | undefined> {
-  if (!isTwoByTwo(table) || !fixedSides.some((side) => side === plan.fixed)) return undefined;
+  if (!isTwoByTwo(table) || plan.nullValue || !fixedSides.some((side) => side === plan.fixed)) return undefined;
   return (await import('./design/panel.js')).designPanel(table, plan, questionsOf(plan)[0]!, pValues);
 }
 
@@ -188,6 +188,7 @@ async function carryOut(
   withCells: boolean,
 ): Promise<Answer> {
   const { plan, statistic, bound, named, valueOfOnlyTable, design, conditional, choices } = prepared;
+  if (design === 'null-value') return (await import('./stated-answer.js')).statedAnswer(read, live, prepared);
   const questions = questionsOf(plan);
   const value = bound === null ? valueOfOnlyTable : bound.value(live.counts);
 
@@ -226,7 +227,7 @@ async function carryOut(
   };
 
   async function askDesign(): Promise<PValueEntry[]> {
-    if (design === 'conditional') return [];
+    if (design === 'conditional' || design === 'null-value') return [];
     const { designAnswer } = await import('./design/answer.js');
     const { table } = read;
     const { onProgress } = surroundings;

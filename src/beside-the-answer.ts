@@ -44,7 +44,9 @@ export async function besideThe(
     notes: [
       ...notes,
       ...straddleNotes(rules, plan.alpha),
-      ...(isTwoSided ? disagreementNotes(disagreements(effects, headline!, plan), headline!, plan) : []),
+      ...(isTwoSided && plan.nullValue === undefined
+        ? disagreementNotes(disagreements(effects, headline!, plan), headline!, plan)
+        : []),
       ...hintNotes(table, live, statistic, plan.ordered !== undefined),
     ],
   };

@@ -9,7 +9,7 @@ import { bootstrapEntries } from './bootstrap-entries.js';
 import { multinomialEntries, twoGroupsEntries } from './unconditional-entries.js';
 
 export interface DesignParts {
-  readonly kind: DesignKind;
+  readonly kind: Exclude<DesignKind, 'null-value'>;
   readonly table: Table;
   readonly live: LiveTable;
   readonly statistic: Statistic;

@@ -73,7 +73,7 @@ type Found = Pick<UnconditionalP, 'p' | 'log10' | 'relativeError'> & {
   readonly nuisance: { readonly value: number; readonly second?: number; readonly certifiedUpper: number };
 };
 
-function unconditionalEntry(question: Question, found: Found, ordered: string): PValueEntry {
+export function unconditionalEntry(question: Question, found: Found, ordered: string): PValueEntry {
   const { tail, rule, statistic } = question;
   const underflow = found.p < smallestDouble;
   return {

@@ -46,6 +46,7 @@ export function planClusters(
   if (options.cells) throw unused('--cells', 'with --cluster', 'leave it out');
   if (options.compare !== undefined) throw unused('--compare', 'with --cluster', 'leave it out');
   if (options.fixed !== undefined) throw unused('--fixed', 'with --cluster', 'leave it out');
+  if (options.nullValue !== undefined) throw unused('--null-value', 'with --cluster', 'leave it out');
   const signed = statistic.sided === 'signed';
   const tail = oneOf(options.tail, signed ? 'both' : 'upper', tails, '--tail');
   if (!signed && tail === 'both') {

@@ -4,10 +4,11 @@ import { secondsPerUnit, type PlannedForecast } from '../null/forecast.js';
 import { multinomialWork } from '../null/unconditional/multinomial-work.js';
 import { unconditionalWork } from '../null/unconditional/unconditional-work.js';
 import { effortProblem, usageProblem, type Problem } from '../problem/problem.js';
-import type { Statistic } from '../statistic/contract.js';
+import type { Roles, Statistic } from '../statistic/contract.js';
 import type { LiveTable } from '../table/live-table.js';
 import type { Table } from '../table/table.js';
 import { bootstrapDraws } from './bootstrap-draws.js';
+import { statedValue, statedWork, withNullValue } from './null-value.js';
 import type { ChosenMethod, Method, Plan, PlanOptions, Tail, TwoSidedRule } from './plan.js';
 import { oneOf, share, unused } from './settings.js';
 
@@ -19,7 +20,7 @@ export const outcomeOrders = ['statistic', 'conditional-p'] as const;
 export type OutcomeOrder = (typeof outcomeOrders)[number];
 
 /** How the headline p is found. */
-export type DesignKind = 'conditional' | 'two-groups' | 'multinomial' | 'bootstrap';
+export type DesignKind = 'conditional' | 'two-groups' | 'multinomial' | 'bootstrap' | 'null-value';
 
 export interface Design {
   readonly kind: DesignKind;
@@ -36,8 +37,9 @@ const ordersByConditionalP = ['probability', 'score', 'wald'];
 export const fixedOf = (options: PlanOptions): FixedSide => oneOf(options.fixed, 'both', fixedSides, '--fixed');
 
 /** Defaults that the design brings with it. @throws Problem (usage) for options that it leaves unread. */
-export function withDesign(table: Table, options: PlanOptions): PlanOptions {
-  const fixed = fixedOf(options);
+export function withDesign(table: Table, wishes: PlanOptions): PlanOptions {
+  const fixed = fixedOf(wishes);
+  const options = wishes.nullValue === undefined ? wishes : withNullValue(table, wishes, wishes.nullValue);
   const isTwoGroups = (fixed === 'rows' || fixed === 'columns') && isTwoByTwo(table);
   const order = oneOf(options.outcomeOrder, 'statistic', outcomeOrders, '--outcome-order');
   for (const [name, value] of [
@@ -80,12 +82,15 @@ export interface DesignQuestion {
   readonly rule: TwoSidedRule | null;
   readonly asked: Method;
   readonly effort: number;
+  /** Of two groups, as indexes into the whole table. */
+  readonly roles: Roles;
 }
 
 /** @param options as `withDesign` left them. @throws Problem: usage, or effort where exact work is over the bound. */
 export function designOf(question: DesignQuestion, options: PlanOptions): Design {
   const fixed = fixedOf(options);
   const { table, asked } = question;
+  if (options.nullValue !== undefined) return nullValueDesign(question, options.nullValue, fixed);
   if (fixed === 'both') return { kind: 'conditional', echo: {} };
   const isSmall = isTwoByTwo(table);
   if (asked === 'asymptotic' || (fixed !== 'total' && !isSmall)) return { kind: 'conditional', echo: { fixed } };
@@ -106,6 +111,19 @@ export function designOf(question: DesignQuestion, options: PlanOptions): Design
   const nuisanceRisk =
     options.nuisanceRisk === undefined ? {} : { nuisanceRisk: share(options.nuisanceRisk, 1e-6, '--nuisance-risk') };
   return { kind: 'two-groups', echo: { fixed, outcomeOrder: order, ...nuisanceRisk, ...echo } };
+}
+
+function nullValueDesign(question: DesignQuestion, text: string, fixed: FixedSide): Design {
+  const stated = statedValue(text);
+  const isOdds = stated.of === 'odds-ratio';
+  const { workUnits, tables } = statedWork(stated, { cells: question.table.counts, ...question.roles });
+  const many = groupedDigits(tables);
+  const what = isOdds
+    ? `${many} ${tables === 1 ? 'table has' : 'tables have'} these margins`
+    : `p is the largest over the proportions that the stated ${stated.of} allows; ${many} outcomes have these group sizes`;
+  const echo = withinBound(question, workUnits, isOdds ? 'two-by-two' : 'unconditional', tables, what);
+  const isPair = 'between' in stated;
+  return { kind: 'null-value', echo: { fixed, nullValue: stated, ...(isPair ? { twoSidedRule: null } : {}), ...echo } };
 }
 
 function totalFixed(question: DesignQuestion, options: PlanOptions): Design {

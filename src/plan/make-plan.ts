@@ -56,7 +56,7 @@ export function makePlan(table: Table, live: LiveTable, wishes: PlanOptions): Pr
   const effort = positive(options.effort, standardEffort, '--effort');
   const asked = oneOf(options.method, 'auto', methods, '--method');
   const forecast = forecastExact(live, bound, statistic.name);
-  const design = designOf({ table, live, statistic, tail, rule, asked, effort }, options);
+  const design = designOf({ table, live, statistic, tail, rule, asked, effort, roles: named ?? noRoles }, options);
   // Where both margins are not fixed, the conditional p stands beside, exact where that can be had.
   const beside = design.kind === 'conditional' ? asked : forecast.workUnits <= effort ? 'exact' : 'auto';
   const bracketPays = (): boolean =>

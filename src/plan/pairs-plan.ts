@@ -58,6 +58,7 @@ const unread = [
   'fixed',
   'outcomeOrder',
   'nuisanceRisk',
+  'nullValue',
 ] as const;
 
 /** Wishes that no analysis of pairs reads. @throws Problem (usage) `option-without-effect`. */

@@ -2,6 +2,7 @@
 import type { OrderingName } from '../null/contract.js';
 import type { PlannedForecast } from '../null/forecast.js';
 import type { FixedSide, OutcomeOrder } from './design.js';
+import type { StatedValue } from './null-value.js';
 import type { OwnStatistic } from '../statistic/own.js';
 import type { ScoreWish } from './scores.js';
 
@@ -52,6 +53,9 @@ export interface PlanOptions {
   readonly nuisanceRisk?: number;
   /** How the statistic is spread by chance alone, in bins for a picture. Default: left out. */
   readonly nullSummary?: boolean;
+  /** What a 2x2 table is tested against instead of none: "odds-ratio=2", "difference=-0.1", "ratio=1.25"; two values with a comma
+   *  between for equivalence. Differences and ratios with `fixed` rows or columns. */
+  readonly nullValue?: string;
   readonly method?: Method;
   /** Number of sampled tables, 1 to 1e12, or (the default) until p is settled against alpha. */
   readonly draws?: number | 'auto';
@@ -122,6 +126,7 @@ export interface Plan {
   /** These two for two groups of fixed size. */
   readonly outcomeOrder?: OutcomeOrder;
   readonly nuisanceRisk?: number;
+  readonly nullValue?: StatedValue;
   readonly draws: number | 'auto' | null;
   /** These three for draws `auto` only. */
   readonly mostDraws?: number;

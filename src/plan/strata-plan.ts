@@ -64,6 +64,7 @@ const readBy: Readonly<Record<string, readonly string[]>> = {
   fixed: [],
   outcomeOrder: [],
   nuisanceRisk: [],
+  nullValue: [],
   statisticDigest: [],
 };
 

@@ -62,6 +62,8 @@ export interface ApproximationError {
   kind: 'approximation';
 }
 
+type NullMeasure = 'difference' | 'ratio' | 'odds-ratio';
+
 export interface PValueEntry {
   tail: Tail;
   rule?: TwoSidedRule;
@@ -81,6 +83,8 @@ export interface PValueEntry {
   value?: number;
   /** Where an unconditional p is largest, and the proved bound of it. */
   nuisance?: { value: number; second?: number; certifiedUpper: number };
+  /** What p is tested against where that is not "none": one value, or two that equivalence lies between. */
+  nullValue?: { of: NullMeasure; value: number } | { of: NullMeasure; between: [number, number] };
   guaranteed: boolean;
   errors: (
     RoundingError | SamplingError | SequentialError | BracketError | MaximumError | ChainError | ApproximationError

@@ -9,7 +9,8 @@ export function briefLine({ statistic, pValues, plan, input }: Result): string {
   const value = statistic.value === null ? 'undefined' : statisticValueWords(statistic.value);
   const by = headline.method === 'asymptotic' ? ' ' : ', ';
   const answer = `${pName(headline)} ${pNumber(headline)}${errorAside(headline)}${by}${foundWords(headline, plan.seed)}`;
-  return `${shown(`${shortStatisticWords(statistic.name)} ${value}; ${answer}${roundingWords(headline)}; n ${countWords(input.total)}`)}\n`;
+  const measured = headline.nullValue === undefined ? `${shortStatisticWords(statistic.name)} ${value}; ` : '';
+  return `${shown(`${measured}${answer}${roundingWords(headline)}; n ${countWords(input.total)}`)}\n`;
 }
 
 function roundingWords({ errors, method }: PValue): string {

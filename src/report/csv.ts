@@ -1,5 +1,6 @@
 // One row per p-value, the headline first, under published columns: for spreadsheets and data frames.
 import { shown } from '../result/label-words.js';
+import { statedText } from '../result/stated-words.js';
 import type { ResultBeforeWords } from '../result/describe.js';
 import type { PValue } from '../result/result.js';
 import type { Format } from './format.js';
@@ -103,6 +104,11 @@ export const csvColumns: readonly Column[] = [
     name: 'maximumError',
     words: 'how far an unconditional p can lie above the true maximum, relative',
     cell: (p) => maximum(p)?.relative,
+  },
+  {
+    name: 'nullValue',
+    words: 'what p is tested against, where that is not none: difference=-0.1',
+    cell: (p) => (p.nullValue === undefined ? undefined : statedText(p.nullValue)),
   },
 ];
 

@@ -13,6 +13,7 @@ import { designSentences } from '../result/design-words.js';
 import { quoted, shown } from '../result/label-words.js';
 import { strataInWords } from '../result/strata-words.js';
 import { digits, percentWords } from '../result/number-words.js';
+import { statedOpening, statedQuestion } from '../result/stated-words.js';
 import type { Result } from '../result/result.js';
 import { cautionsFor } from './cautions.js';
 import type { PictureName } from './pictures/names.js';
@@ -107,11 +108,14 @@ function questionOf(result: Result): string {
   return result.strata === undefined ? question : question.replace(/\?$/, ', stratum by stratum?');
 }
 
-function wholeQuestion({ statistic, pValues }: Result): string {
+function wholeQuestion(result: Result): string {
+  const { statistic, pValues } = result;
   if (statistic.groups === undefined || statistic.event === undefined) return 'Are rows and columns related?';
   const [first, second] = statistic.groups.map(({ label }) => quoted(label));
   const event = quoted(statistic.event);
   const tail = pValues[0]!.tail;
+  const stated = statedQuestion(result);
+  if (stated !== undefined) return stated;
   if (tail === 'both') return `Is ${event} as common in ${first} as in ${second}?`;
   return `Is ${event} more common in ${tail === 'upper' ? `${first} than in ${second}` : `${second} than in ${first}`}?`;
 }
@@ -129,7 +133,11 @@ const tested = (result: Result): Block[] => [
   ...missingSentences(result).map(plain),
   ...levelSentences(result.input).map(plain),
   ...clusterSentences(result).map(plain),
-  plain(`Measured by ${citedStatistic(result.statistic.name)}.`),
+  plain(
+    result.plan.nullValue === undefined
+      ? `Measured by ${citedStatistic(result.statistic.name)}.`
+      : statedOpening(result.pValues[0]!)!,
+  ),
   ...methodSentences(result).map(plain),
 ];
 
@@ -146,7 +154,7 @@ function otherReadings(result: Result): Block[] {
 }
 
 function footing(result: Result): Block[] {
-  if (isOneTableOnly(result)) return [];
+  if (isOneTableOnly(result) || result.plan.nullValue !== undefined) return [];
   const { smallestExpected, shareBelowFive, cochranSentence } = result.diagnostics;
   const where = result.plan.fixed === 'pairs' ? ' off the diagonal' : '';
   const share =

@@ -1,5 +1,6 @@
 // How to run the same analysis again: a command where it can be typed safely, and the facts that decide every digit.
 import { quoted, shown } from '../result/label-words.js';
+import { statedText } from '../result/stated-words.js';
 import { countWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
 
@@ -35,6 +36,7 @@ export function againInWords({ input, plan }: Result): string {
     ...(plan.bootstrap === undefined ? [] : [`bootstrap ${plan.bootstrap}`]),
     ...(declaredFixed(plan.fixed) === null ? [] : [`fixed ${plan.fixed}`]),
     ...(plan.outcomeOrder === undefined ? [] : [`outcome order ${plan.outcomeOrder}`]),
+    ...(plan.nullValue === undefined ? [] : [`null value ${statedText(plan.nullValue)}`]),
     ...(plan.nuisanceRisk === undefined ? [] : [`nuisance risk ${plan.nuisanceRisk}`]),
     `method ${plan.method}`,
     ...(plan.cells?.asked ? ['cells'] : []),
@@ -154,6 +156,7 @@ const planOptionsOf = (plan: Result['plan'], roles: readonly Option[]): Option[]
   ...optional('lambda', plan.lambda),
   ...optional('fixed', declaredFixed(plan.fixed)),
   ...optional('outcome-order', plan.outcomeOrder === 'statistic' ? null : plan.outcomeOrder),
+  ...optional('null-value', plan.nullValue === undefined ? null : statedText(plan.nullValue)),
   ...optional('nuisance-risk', plan.nuisanceRisk),
   ...optional('method', plan.method),
   // How far a bracket is refined depends on it.

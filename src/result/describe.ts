@@ -14,6 +14,7 @@ import {
   roundedTo,
   tinyWords,
 } from './number-words.js';
+import { statedDirection, statedPName } from './stated-words.js';
 import type { PValue, PValueError, Result } from './result.js';
 
 /** A result whose sentence and methods paragraph are still to be written. */
@@ -70,6 +71,8 @@ const tailWords = { upper: 'upper-tailed', lower: 'lower-tailed', both: 'two-tai
 
 /** Which p: "two-tailed permutation p (rule: distance)". */
 export function pName(p: PValue): string {
+  const stated = statedPName(p);
+  if (stated !== undefined) return stated;
   return `${tailWords[p.tail]} ${kindOf(p)}${p.rule === undefined ? '' : ` (rule: ${p.rule})`}`;
 }
 
@@ -149,6 +152,7 @@ export const degreesWords = (degrees: number): string => `${degrees} degree${deg
 /** What the tail means for two groups: which of them has the greater share of events. */
 export function directionWords(result: ResultBeforeWords, p: PValue): string | undefined {
   const { groups, event } = result.statistic;
+  if (p.nullValue !== undefined) return statedDirection(p);
   if (p.statistic === 'mcnemar' && p.tail !== 'both') {
     const [first, second] = result.input.rowLabels.map(quoted) as [string, string];
     return p.tail === 'upper'
@@ -167,7 +171,8 @@ export function pSentence(result: ResultBeforeWords, p: PValue): string {
   const direction = directionWords(result, p);
   const aside = direction === undefined ? '' : ` (${direction})`;
   const guarantee = p.guaranteed || p.method === 'asymptotic' ? '' : ', not guaranteed';
-  return `The ${pName(p)} of ${shortStatisticWords(p.statistic)}${aside} is ${pNumber(p)}${shortFoundWords(p)}${guarantee}.`;
+  const of = p.nullValue === undefined ? ` of ${shortStatisticWords(p.statistic)}` : '';
+  return `The ${pName(p)}${of}${aside} is ${pNumber(p)}${shortFoundWords(p)}${guarantee}.`;
 }
 
 function shortFoundWords(p: PValue): string {

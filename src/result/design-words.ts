@@ -1,5 +1,6 @@
 // Words for what the study held fixed, and for p-values that rest on it.
 import { countWords, digits, probabilityWords, tinyWords } from './number-words.js';
+import { statedChance, statedPlace } from './stated-words.js';
 import type { PValue, Result } from './result.js';
 
 type Fixed = Result['plan']['fixed'];
@@ -10,6 +11,7 @@ export const isBootstrap = ({ method, errors }: PValue): boolean =>
 
 /** What chance was taken to do, in the report. */
 export function chanceSentence(plan: Result['plan'], headline: PValue): string {
+  if (plan.nullValue !== undefined) return statedChance(plan, plan.nullValue);
   if (headline.method !== 'unconditional' && !isBootstrap(headline)) {
     return plan.fixed === 'both'
       ? 'Chance deals the counts anew with every row and column total held.'
@@ -49,7 +51,8 @@ export function fixedWords(fixed: Fixed): string {
 }
 
 /** "exact, the largest over the unknown proportion (found at 0.132)". */
-export const largestWords = (p: Pick<PValue, 'nuisance'>): string => `exact, ${placeWords(p.nuisance)}`;
+export const largestWords = (p: Pick<PValue, 'nuisance' | 'nullValue'>): string =>
+  `exact, ${p.nullValue === undefined || p.nuisance === undefined ? placeWords(p.nuisance) : statedPlace(p.nullValue, shareWords(p.nuisance.value))}`;
 
 function placeWords(nuisance: PValue['nuisance']): string {
   if (nuisance === undefined) return 'the largest over what is unknown';

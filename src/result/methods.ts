@@ -22,6 +22,7 @@ import { bracketWords, countWords, levelWords } from './number-words.js';
 import { quasiMethod, quasiSentence } from './quasi-methods.js';
 import { agreementInterval, agreementOpening, changeMethods } from './pairs-methods.js';
 import { isAboutChange } from './pairs-sentence.js';
+import { statedMethod, statedOpening } from './stated-words.js';
 import type { PValue } from './result.js';
 import { strataMethods } from './strata-words.js';
 
@@ -63,6 +64,8 @@ function effectsSentence(result: ResultBeforeWords): string | undefined {
 }
 
 function testSentence(result: ResultBeforeWords): string {
+  const stated = statedOpening(result.pValues[0]!);
+  if (stated !== undefined) return stated;
   return `Association between the rows and the columns of a ${tableWords(result)} was tested with ${citedStatistic(result.statistic.name)}.`;
 }
 
@@ -89,6 +92,8 @@ function settingsSentence({ plan }: ResultBeforeWords): string | undefined {
 
 function methodSentence(result: ResultBeforeWords, p: PValue): string {
   const name = `The ${pName(p)}`;
+  const stated = statedMethod(name, p);
+  if (stated !== undefined) return stated;
   if (p.method === 'exact' && result.clusters !== undefined) {
     return `${name} is exact: it adds up the probabilities of all ways to deal the clusters to the rows, as many to each as it has, that are at least as extreme as the observed one.`;
   }
@@ -149,7 +154,7 @@ const approximationWords = (p: PValue, words: (name: string) => string = shortSt
   `the ${approximationName(p)} approximation to ${words(p.statistic)}`;
 
 function ruleSentence(p: PValue): string | undefined {
-  if (p.method === 'unconditional' && p.rule === 'probability') return undefined;
+  if (p.nullValue !== undefined || (p.method === 'unconditional' && p.rule === 'probability')) return undefined;
   switch (p.rule) {
     case 'distance':
       return 'Two-tailed, a table is as extreme when its statistic lies at least as far from the centre.';
@@ -165,7 +170,7 @@ function ruleSentence(p: PValue): string | undefined {
 }
 
 function tiesSentence({ quasiIndependence }: ResultBeforeWords, p: PValue): string | undefined {
-  if (p.method === 'asymptotic') return undefined;
+  if (p.method === 'asymptotic' || (p.nullValue !== undefined && p.method === 'unconditional')) return undefined;
   if (quasiIndependence !== undefined && p.statistic === 'pearson') return undefined;
   const mid = p.mid === null ? '' : ', a mid-p counts them by half (Lancaster 1961)';
   if (bracketOf(p) !== undefined) return `Ties count as at least as extreme${mid}; strict and mid-p are estimates.`;

@@ -104,6 +104,12 @@ export async function unsettledNotes(headline: PValueEntry, plan: Plan): Promise
 }
 
 /** What a reader should know of the design that was declared. */
+/** Of the score at a stated difference or ratio, whose constrained proportions are roots of a cubic or a quadratic. */
+export const nearTiesNote: Note = {
+  code: 'near-ties-counted',
+  text: 'Outcomes whose score at the stated value lies within 1e-8 of the observed one count as tied: that can make p larger, never smaller.',
+};
+
 export function designNotes({ fixed, method }: Plan, table: Table, kind: DesignKind): Note[] {
   const isLarger = table.rowLabels.length > 2 || table.columnLabels.length > 2;
   if ((fixed === 'rows' || fixed === 'columns') && isLarger && method !== 'asymptotic') {

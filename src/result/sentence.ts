@@ -36,6 +36,7 @@ export function sentenceFor(result: ResultBeforeWords): string {
   const drawn = result.clusters === undefined ? [] : ['random ways to deal the clusters to the rows'];
   const found = foundWords(headline, result.plan.seed, ...drawn);
   const answer = `${pNumber(headline)}${errorAside(headline)}${headline.method === 'asymptotic' ? ' ' : ', '}${found}`;
+  if (headline.nullValue !== undefined) return `${seen}the ${name} is ${answer}.`;
   return `${seen}${valueWords(result)} and its ${name} is ${answer}.`;
 }
 

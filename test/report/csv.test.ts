@@ -19,7 +19,7 @@ describe('the csv report', () => {
       'headline,statistic,value,tail,rule,orderedBy,method,p,log10P,reason,strict,mid,tied,point,degreesOfFreedom,' +
         'guaranteed,relativeError,atLeast,atLeastUpper,atLeastLower,draws,estimate,standardError,intervalLower,' +
         'intervalUpper,intervalConfidence,stoppedBecause,risk,groups,event,first,second,rows,columns,total,seed,version,' +
-        'fixed,nuisance,nuisanceSecond,maximumError',
+        'fixed,nuisance,nuisanceSecond,maximumError,nullValue',
     );
     for (const column of csvColumns) expect(column.words).not.toBe('');
   });

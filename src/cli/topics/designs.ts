@@ -27,6 +27,15 @@ export const designsTopic: Topic = {
   entries: [
     ...Object.entries(fixedLines).map(([name, lines]) => ({ name: `--fixed ${name}`, lines })),
     {
+      name: '--null-value',
+      lines: [
+        'a 2x2 table tested against a stated value instead of none; two values with a comma between test equivalence, and p is the larger of two one-tailed ones',
+        'odds-ratio=2: given both margins, by the noncentral hypergeometric law; --two-sided-rule doubled or probability',
+        'difference=-0.1, ratio=1.25: with --fixed rows or columns, the largest over all proportions that the value allows, ordered by the score at it; --two-sided-rule distance or doubled',
+        'source: Cornfield (1956), Miettinen & Nurminen (1985), Farrington & Manning (1990), Chan (1998), Schuirmann (1987)',
+      ],
+    },
+    {
       name: '--strata',
       lines: [
         'the margins of every stratum held; association is looked for within strata',

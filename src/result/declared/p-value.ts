@@ -1,5 +1,6 @@
 // One p-value: what it is of, the number, and each error that it carries.
 import { z } from 'zod';
+import { nullValueMeasures } from '../../plan/null-value-measures.js';
 import { sequentialRule, stopReasons } from '../../pvalue/sequential/contract.js';
 import { count, level, probability } from './pieces.js';
 
@@ -58,6 +59,12 @@ export const nuisance = z.strictObject({
   certifiedUpper: probability,
 });
 
+/** One stated value, or two that equivalence lies between. */
+export const nullValue = z.union([
+  z.strictObject({ of: z.enum(nullValueMeasures), value: z.number() }),
+  z.strictObject({ of: z.enum(nullValueMeasures), between: z.tuple([z.number(), z.number()]) }),
+]);
+
 /** Tables of a chain depend on one another: p is valid, but no error of drawing is known. */
 const chainError = z.strictObject({
   kind: z.literal('chain'),
@@ -97,6 +104,8 @@ export const pValue = z.strictObject({
   value: z.number().optional(),
   /** Unconditional entries: the unknown proportions at which p is largest, and the proved bound of that maximum. */
   nuisance: nuisance.optional(),
+  /** What p is tested against, where that is not "none": a difference (first minus second), ratio or odds ratio (first over second). */
+  nullValue: nullValue.optional(),
   /** True when rejecting at p <= a errs at most with probability a under the null. */
   guaranteed: z.boolean(),
   errors: z.array(

@@ -3,6 +3,7 @@ import { z } from 'zod';
 import { orderedSides } from '../../order/questions.js';
 import { cellsEcho } from './cell.js';
 import { compactWishes } from './wishes.js';
+import { nullValue } from './p-value.js';
 import { count, digest, level } from './pieces.js';
 
 const forecast = z.strictObject({
@@ -65,6 +66,8 @@ export const plan = z.strictObject({
   outcomeOrder: z.enum(['statistic', 'conditional-p']).optional(),
   /** Gamma of Berger & Boos (1994), added to p. */
   nuisanceRisk: level.optional(),
+  /** What p is tested against instead of none. */
+  nullValue: nullValue.optional(),
   /** `auto`: until p is settled against alpha, by the rule that the error of the p-value names. */
   draws: z.union([count, z.literal('auto')]).nullable(),
   mostDraws: count.optional(),

@@ -31,6 +31,7 @@ const options = {
   fixed: z.enum(fixedSides),
   outcomeOrder: z.enum(outcomeOrders),
   nuisanceRisk: level,
+  nullValue: z.string().min(1),
   method: z.enum(methods),
   draws,
   mostDraws: z.int().min(1000).max(1e12),

@@ -24,6 +24,9 @@ Barnard 1945 | Barnard, G. A. | A new test for 2 x 2 tables | Nature | 156 | 395
 Barnard 1947 | Barnard, G. A. | Significance tests for 2 x 2 tables | Biometrika | 34 | 1/2 | 123-138
 Boschloo 1970 | Boschloo, R. D. | Raised conditional level of significance for the 2 x 2-table when testing the equality of two probabilities | Statistica Neerlandica | 24 | 1 | 1-9
 Suissa & Shuster 1985 | Suissa, S. and Shuster, J. J. | Exact unconditional sample sizes for the 2 x 2 binomial trial | Journal of the Royal Statistical Society, Series A | 148 | 4 | 317-327
+Chan 1998 | Chan, I. S. F. | Exact tests of equivalence and efficacy with a non-zero lower bound for comparative studies | Statistics in Medicine | 17 | 12 | 1403-1413
+Farrington & Manning 1990 | Farrington, C. P. and Manning, G. | Test statistics and sample size formulae for comparative binomial trials with null hypothesis of non-zero risk difference or non-unity relative risk | Statistics in Medicine | 9 | 12 | 1447-1454
+Schuirmann 1987 | Schuirmann, D. J. | A comparison of the two one-sided tests procedure and the power approach for assessing the equivalence of average bioavailability | Journal of Pharmacokinetics and Biopharmaceutics | 15 | 6 | 657-680
 Suissa & Shuster 1991 | Suissa, S. and Shuster, J. J. | The 2 x 2 matched-pairs trial: exact unconditional design and analysis | Biometrics | 47 | 2 | 361-372
 Berger & Boos 1994 | Berger, R. L. and Boos, D. D. | P values maximized over a confidence set for the nuisance parameter | Journal of the American Statistical Association | 89 | 427 | 1012-1016
 Bernstein 1912 | Bernstein, S. N. | Démonstration du théorème de Weierstrass fondée sur le calcul des probabilités | Communications de la Société Mathématique de Kharkov, 2nd series | 13 | 1 | 1-2

@@ -56,6 +56,12 @@ export const planning = {
     betweenZeroAndOne('1e-6'),
     'likewise, look for the common proportion in an interval only, and add this to p (0)',
   ),
+  nullValue: valued(
+    'The test',
+    'MEASURE=VALUE',
+    anyText,
+    'of a 2x2 table, test against this instead of none: odds-ratio=2; with rows or columns fixed also difference=-0.1, ratio=1.25; two values for equivalence: difference=-0.1,0.1',
+  ),
   groups: valued('The test', 'SIDE', oneOf(sides), `of a 2x2 table, what is compared: ${either(sides)} (rows)`),
   event: valued('The test', 'LABEL', anyText, 'the outcome whose proportions are compared (the first)'),
   reference: valued('The test', 'LABEL', anyText, 'the group compared with (the second)'),
