@@ -49,14 +49,12 @@ export function statedQuestion({ statistic: { groups, event }, pValues }: Result
 
 /** What chance was taken to do. */
 export function statedChance({ fixed }: Result['plan'], stated: Stated): string {
-  const under =
-    'value' in stated
-      ? `${statedWords(stated)}`
-      : `${measureWords[stated.of]} of either value, ${stated.between.join(' or ')}`;
-  if (stated.of === 'odds-ratio')
-    return `Chance deals the counts anew with every row and column total held, under ${under}.`;
+  const values = 'value' in stated ? `${stated.value}` : `${stated.between[0]}, or of ${stated.between[1]}`;
+  if (stated.of === 'odds-ratio') {
+    return `Chance deals the counts anew with every row and column total held, under an odds ratio of ${values}.`;
+  }
   const line = fixed === 'columns' ? 'column' : 'row';
-  return `The study fixed the ${line} totals only: chance draws each ${line} anew at its own total, under ${under} of the two unknown proportions.`;
+  return `The study fixed the ${line} totals only: chance draws each ${line} anew at its own total, with two unknown proportions under ${measureWords[stated.of]} of ${values}.`;
 }
 
 /** For the methods paragraph: what was tested, and how p came about. */
