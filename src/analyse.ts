@@ -82,11 +82,26 @@ export async function analyse(
   options: PlanOptions = {},
   surroundings: Surroundings = {},
 ): Promise<Result> {
-  const result = await analyseWhole(data, options, surroundings);
+  let part: Result['part'];
+  const onTallies: Surroundings['onTallies'] = (tallies, draws) => {
+    part = { draws, tallies: tallies.map(([below, tied, above]) => [below, tied, above]) };
+  };
+  const watched = options.shard === undefined ? surroundings : { ...surroundings, onTallies };
+  const result = await analyseWhole(data, options, watched);
   const { plan } = result;
   const seed = options.seed ?? plan.seed ?? plan.cells?.seed ?? null;
-  return { ...result, plan: { ...plan, asked: keptWishes(options, plan, seed) as NonNullable<typeof plan.asked> } };
+  const asked = keptWishes(options, plan, seed) as NonNullable<typeof plan.asked>;
+  return {
+    ...result,
+    plan: { ...plan, asked },
+    ...(part === undefined || plan.shard === undefined ? {} : { part, notes: [...result.notes, partNote(plan.shard)] }),
+  };
 }
+
+const partNote = ({ index, of }: NonNullable<PlanOptions['shard']>): Note => ({
+  code: 'part-of-a-run',
+  text: `These are the draws of part ${index} of ${of}; keepsum merge pools all parts into the result of the whole run.`,
+});
 
 async function analyseWhole(
   data: TableParts | StrataParts | ReadTable,

@@ -11,8 +11,8 @@ import {
   type BlockSource,
 } from './null/sampled/block-source.js';
 import { rankCounts, type RankTable } from './null/sampled/ranked-sampler.js';
-import { blocksFor, CutCount, type Sampling } from './null/sampled/sample-cuts.js';
-import type { Plan } from './plan/plan.js';
+import { blocksFor, CutCount, type Sampling, type Tally } from './null/sampled/sample-cuts.js';
+import type { Plan, Shard } from './plan/plan.js';
 import type { PValueEntry, Question } from './pvalue/contract.js';
 import { conditionalPValues } from './pvalue/p-values.js';
 import { followQuestions } from './pvalue/sequential/follow-questions.js';
@@ -32,10 +32,22 @@ export interface Surroundings {
   readonly threads?: number;
   /** Told now and then how many draws are made, and the most that will be. */
   readonly onProgress?: (draws: number, most: number) => void;
+  /** Told the tallies of all blocks together: one for each ordering, then those of ranks; of parts of a run. */
+  readonly onTallies?: (tallies: readonly Tally[], draws: number) => void;
+  /** Tallies that parts of the run have made, instead of drawing. */
+  readonly pooled?: Pooled;
   /** Told what exact work is foreseen to take, before it starts. */
   readonly beforeExact?: (foreseen: ForeseenWork) => Promise<void>;
   /** The same for exact work: counted units spent, and those foreseen. Called while nothing else can run. */
   readonly onWork?: (units: number, foreseen: number) => void;
+}
+
+/** What the parts of one run have counted together; for the answer of that statistic and table alone. */
+export interface Pooled {
+  readonly statistic: string;
+  readonly tableKey: string;
+  readonly tallies: readonly Tally[];
+  readonly draws: number;
 }
 
 /** Work worth the start of threads, and what is done on one thread before they are thought of. */
@@ -57,16 +69,48 @@ export async function sampledPValues(
   const counted = new CutCount(names);
   const sources = sourcesFor(live, orderings, sampling, recipe, surroundings, plan.draws === 'auto', cells?.table);
   const follower = plan.draws === 'auto' ? followQuestions(questions, plan) : null;
-  for await (const block of inTurn(sources, sampling)) {
+  const all = new TallySum();
+  const pooled = pooledFor(plan, surroundings);
+  for await (const block of pooled === undefined ? ownBlocks() : [pooled]) {
+    all.add(block.tallies, block.draws);
     counted.add(block.tallies, block.draws);
     cells?.follower.add(rankCounts(block.tallies, names.length), block.draws);
     surroundings.onProgress?.(counted.draws, most);
     if (follower?.settles((name) => atLeast(block, names.indexOf(name)), block.draws)) break;
   }
+  if (plan.shard !== undefined) surroundings.onTallies?.(all.tallies, all.draws);
   const cuts = counted.cuts();
   return follower === null
     ? conditionalPValues(questions, cuts, null, plan.samplingConfidence)
     : follower.pValues((name) => cuts.find(({ ordering }) => ordering === name)!);
+
+  function ownBlocks(): AsyncGenerator<Block> {
+    return plan.shard === undefined
+      ? inTurn(sources, sampling)
+      : everySoMany(localSource(live, orderings, sampling, cells?.table), sampling, plan.shard);
+  }
+}
+
+const pooledFor = ({ statistic, tableKey }: Plan, { pooled }: Surroundings): Pooled | undefined =>
+  pooled?.statistic === statistic && pooled.tableKey === tableKey ? pooled : undefined;
+
+/** The blocks of one part, on this thread: other parts run elsewhere. */
+async function* everySoMany(source: BlockSource, sampling: Sampling, { index, of }: Shard): AsyncGenerator<Block> {
+  for (let k = index - 1; k < blocksFor(sampling.draws); k += of) yield* blocksInOrder(source, sampling, k, k + 1);
+}
+
+/** Tallies of every kind, added up. */
+class TallySum {
+  tallies: [number, number, number][] = [];
+  draws = 0;
+
+  add(tallies: readonly Tally[], draws: number): void {
+    this.draws += draws;
+    tallies.forEach((tally, k) => {
+      const sum = (this.tallies[k] ??= [0, 0, 0]);
+      tally.forEach((count, side) => (sum[side]! += count));
+    });
+  }
 }
 
 const atLeast = ({ tallies }: Block, ordering: number): number => tallies[ordering]![1] + tallies[ordering]![2];

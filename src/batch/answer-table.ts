@@ -17,6 +17,8 @@ export interface BatchSettings {
   readonly wishes: PlanOptions & { readonly seed: string };
   /** Whole results instead of compact lines. */
   readonly full: boolean;
+  /** Of a batch's part, as its lines are stamped: "3/16". */
+  readonly shard?: string;
   /** How places name the input: a file, `standard input`; for objects, nothing. */
   readonly sourceName: string;
 }

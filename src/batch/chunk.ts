@@ -59,10 +59,14 @@ export async function answerChunk(task: ChunkTask, surroundings: Surroundings): 
     if (found.kind === 'error') faults++;
     work += workOf(found);
     if (style === 'objects') objects.push(lineOf(found));
-    else text += style === 'ndjson' ? ndjsonText(found) : csvText(found, style === 'raw-csv');
+    else text += style === 'ndjson' ? stamped(ndjsonText(found), settings.shard) : csvText(found, style === 'raw-csv');
   }
   return { text, objects, tables, faults, work };
 }
+
+/** The part of a batch that a line belongs to stands behind its key. */
+const stamped = (line: string, shard: string | undefined): string =>
+  shard === undefined ? line : line.replace(/^\{"key":"(?:[^"\\]|\\.)*"/, (start) => `${start},"shard":"${shard}"`);
 
 /** One promise a table, each made when the one before it has been awaited. */
 function* outcomes(chunk: Chunk, settings: BatchSettings, surroundings: Surroundings): Generator<Promise<Outcome>> {

@@ -20,8 +20,12 @@ export const lineDeclaration = z.strictObject({
 });
 
 /** What a table's line says unless whole results were asked for. */
+/** Of a batch's part: "3/16". */
+const shard = z.string().regex(/^\d+\/\d+$/);
+
 export const compactDeclaration = z.strictObject({
   key: z.string(),
+  shard: shard.optional(),
   counts,
   /** Where the data brought labels. */
   rowLabels: labels.optional(),
@@ -35,6 +39,7 @@ export const compactDeclaration = z.strictObject({
 /** What stands in place of a table that could not be used. */
 export const errorDeclaration = z.strictObject({
   key: z.string(),
+  shard: shard.optional(),
   error: z.strictObject({
     code: z.string(),
     message: z.string(),

@@ -24,6 +24,7 @@ import {
 import { isTwoByTwo, noRoles, rolesOf, type NamedRoles } from './roles.js';
 import { oneOf, positive, share, unused, wholeNumber } from './settings.js';
 import { drawsOf } from './draws.js';
+import { shardOf } from './shard-of.js';
 import { settleMethod } from './settle-method.js';
 
 export interface Prepared {
@@ -107,6 +108,7 @@ export function makePlan(table: Table, live: LiveTable, wishes: PlanOptions): Pr
     seed: drawsAnything ? (options.seed ?? freshSeed()) : null,
     tableKey: options.tableKey ?? '',
     generator: drawsAnything ? generatorName : null,
+    ...shardOf(options, method, sampled && drawing !== null ? drawing.draws : null),
     blockSize: sampled ? blockSize : null,
     effort,
     alpha,

@@ -66,6 +66,8 @@ export interface PlanOptions {
   /** For draws `auto`: half the interval over its middle at which p is precise enough, 0 to 1. Default 0.02. */
   readonly relativeError?: number;
   readonly seed?: string;
+  /** Part of a run with a fixed number of draws: every `of`-th block, from the `index`-th on (1 to `of`). */
+  readonly shard?: Shard;
   /** Names the table among those of one run; its draws are keyed by seed and name. Default: the empty text. */
   readonly tableKey?: string;
   /** Bound on exact work in counted units. Default 6e7, about two seconds. */
@@ -78,6 +80,11 @@ export interface PlanOptions {
   readonly bootstrap?: number;
   /** Level of the interval of a sampled p, in (0, 1). Default 0.99. */
   readonly samplingConfidence?: number;
+}
+
+export interface Shard {
+  readonly index: number;
+  readonly of: number;
 }
 
 /** What was settled about the cells. */
@@ -136,6 +143,7 @@ export interface Plan {
   readonly bootstrap?: number;
   readonly seed: string | null;
   readonly tableKey: string;
+  readonly shard?: Shard;
   readonly generator: string | null;
   readonly blockSize: number | null;
   readonly effort: number;

@@ -44,13 +44,17 @@ const ofTheVersion = [
  * @throws Problem: `not-a-record` (data), `own-statistic-needed` and `own-statistic-differs` (usage), and those of an analysis.
  */
 export async function replay(record: unknown, place: string, settings: ReplaySettings = {}): Promise<Replayed> {
-  const { key, ...rest } = (typeof record === 'object' && record !== null ? record : {}) as Record<string, unknown>;
+  const {
+    key,
+    shard: _,
+    ...rest
+  } = (typeof record === 'object' && record !== null ? record : {}) as Record<string, unknown>;
   if (rest['schema'] === 'keepsum/result/1') {
     const result = resultDeclaration.safeParse(rest);
     if (result.success) return replayResult(rest as Result, typeof key === 'string' ? key : null, settings);
     throw notARecord(place, result.error.issues[0]!);
   }
-  const line = compactDeclaration.safeParse(record);
+  const line = compactDeclaration.safeParse(key === undefined ? rest : { key, ...rest });
   if (line.success) return replayLine(line.data, settings);
   throw notARecord(place, line.error.issues[0]!);
 }
@@ -61,7 +65,7 @@ async function replayResult(result: Result, key: string | null, settings: Replay
   const wishes: PlanOptions = {
     ...(plan.asked as PlanOptions | undefined),
     ...ownStatisticOf(plan.statistic, plan.statisticDigest, settings),
-    tableKey: plan.tableKey,
+    ...(plan.tableKey === '' ? {} : { tableKey: plan.tableKey }),
     // A later version may foresee other work: the method that was used is used again.
     ...(sameVersion || plan.asked?.draws !== undefined ? {} : { method: plan.method }),
   };

@@ -69,6 +69,8 @@ export const resultDeclaration = z.strictObject({
   fragility: fragility.optional(),
   strata: strata.optional(),
   clusters: clusters.optional(),
+  /** Of one part of a run: what was counted, below, tied and above for each ordering, then for the ranks of the cells. */
+  part: z.strictObject({ draws: count, tallies: z.array(z.tuple([count, count, count])) }).optional(),
   sentence: z.string(),
   methods: z.string(),
   notes: z.array(z.strictObject({ code: z.string(), text: z.string() })),

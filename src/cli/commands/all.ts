@@ -59,6 +59,12 @@ export const commands: readonly CommandEntry[] = [
     load: async () => (await import('./together.js')).togetherCommand,
   },
   {
+    name: 'merge',
+    operands: 'PART PART ...',
+    summary: 'pool the parts of one run',
+    load: async () => (await import('./merge.js')).mergeCommand,
+  },
+  {
     name: 'schema',
     operands: 'NAME',
     summary: 'the JSON Schemas of what is read and printed',

@@ -4,6 +4,7 @@ import { rmSync } from 'node:fs';
 import { freshSeed } from '../../plan/fresh-seed.js';
 import type { PlanOptions } from '../../plan/plan.js';
 import type { Shell } from '../shell.js';
+import { partOf } from '../../batch/part-source.js';
 import { batchWords, progressLine } from '../streams/progress.js';
 import { journalOf, nothingYet } from '../streams/unfinished-file.js';
 import { remark } from '../streams/write-out.js';
@@ -52,8 +53,13 @@ export const batchCommand = command({
     const line = progressLine(values, shell);
     try {
       const reached = await runBatch({
-        source: tables.source,
-        settings: { wishes: { ...wishes, seed }, full: values.full ?? false, sourceName: tables.sourceName },
+        source: values.shard === undefined ? tables.source : partOf(tables.source, values.shard),
+        settings: {
+          wishes: { ...wishes, seed },
+          full: values.full ?? false,
+          sourceName: tables.sourceName,
+          ...stampOf(values),
+        },
         style: values.format !== 'csv' ? 'ndjson' : values.rawCsv ? 'raw-csv' : 'csv',
         threads: values.threads ?? availableParallelism(),
         sink,
@@ -79,8 +85,16 @@ export const batchCommand = command({
   },
 });
 
+const stampOf = ({ shard }: BatchValues): { shard?: string } =>
+  shard === undefined ? {} : { shard: `${shard.index}/${shard.of}` };
+
+/** A part of a batch is some of its tables, each of them whole. */
 function planOptions(values: BatchValues): PlanOptions {
-  const { noCells, ...wishes } = Object.fromEntries(Object.entries(values).filter(([name]) => name in planning));
+  const {
+    noCells,
+    shard: _,
+    ...wishes
+  } = Object.fromEntries(Object.entries(values).filter(([name]) => name in planning));
   return noCells ? { ...wishes, cells: false } : wishes;
 }
 

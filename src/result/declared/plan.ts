@@ -77,6 +77,8 @@ export const plan = z.strictObject({
   bootstrap: count.optional(),
   seed: z.string().nullable(),
   tableKey: z.string(),
+  /** Part of a run: every `of`-th block of draws, from the `index`-th on. */
+  shard: z.strictObject({ index: z.int().min(1), of: z.int().min(1) }).optional(),
   generator: z.string().nullable(),
   blockSize: count.nullable(),
   effort: z.number().positive(),

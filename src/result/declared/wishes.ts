@@ -38,6 +38,7 @@ const options = {
   samplingRisk: level,
   relativeError: level,
   bootstrap: z.int().min(100).max(1e6),
+  shard: z.strictObject({ index: z.int().min(1), of: z.int().min(1) }),
   seed: z.string().min(1),
   effort: z.number().positive(),
   alpha: level,

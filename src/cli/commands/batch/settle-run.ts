@@ -14,9 +14,11 @@ import type { RunDescription, Sink } from './sink.js';
 export type BatchValues = Values<typeof batchOptions>;
 
 /** @throws Problem (usage) */
-export function checkCombinations({ rawCsv, format, full, resume, output }: BatchValues): void {
+export function checkCombinations({ rawCsv, format, full, resume, output, shard }: BatchValues): void {
   if (rawCsv && format !== 'csv')
     throw doesNotFit('--raw-csv is for CSV output only', 'add --format csv, or leave it out');
+  if (shard !== undefined && format === 'csv')
+    throw doesNotFit('--shard is for lines of JSON only: they can be pooled', 'leave --format csv out');
   if (full && format === 'csv') {
     throw doesNotFit(
       '--full is for lines of JSON only: CSV has a row for each p-value',
@@ -43,6 +45,7 @@ export function described(values: BatchValues, wishes: PlanOptions, from: Tables
     input: from.form === 'files' ? from.paths : from.path,
     format: values.format ?? 'ndjson',
     full: values.full ?? false,
+    ...(values.shard === undefined ? {} : { shard: values.shard }),
     rawCsv: values.rawCsv ?? false,
   };
 }

@@ -12,7 +12,8 @@ import { standardEffort } from '../../../null/forecast.js';
 import { standardMostDraws, standardRelativeError } from '../../../plan/draws.js';
 import { orderedSides } from '../../../order/questions.js';
 import { fixedSides, outcomeOrders } from '../../../plan/design.js';
-import { methods, tails, twoSidedRules } from '../../../plan/plan.js';
+import { methods, tails, twoSidedRules, type Shard } from '../../../plan/plan.js';
+import { usageProblem } from '../../../problem/problem.js';
 import { pairedNames } from '../../../statistic/paired.js';
 import { statisticNamed, statisticNames } from '../../../statistic/registry.js';
 import { stratifiedNames } from '../../../statistic/stratified.js';
@@ -25,6 +26,19 @@ const orAuto =
   (check: CheckValue<number>): CheckValue<number | 'auto'> =>
   (text, flag) =>
     text === 'auto' ? 'auto' : check(text, flag);
+
+/** "3/16". */
+const shardPart: CheckValue<Shard> = (text, flag) => {
+  const match = /^(\d{1,6})\/(\d{1,6})$/.exec(text);
+  const [index, of] = [Number(match?.[1]), Number(match?.[2])];
+  if (index >= 1 && index <= of) return { index, of };
+  throw usageProblem({
+    code: 'not-a-shard',
+    message: `"${text}" names no part`,
+    place: flag,
+    hint: `write ${flag} 3/16 for the third of sixteen parts`,
+  });
+};
 
 export const planning = {
   statistic: valued(
@@ -121,6 +135,12 @@ export const planning = {
     'N',
     wholeNumber(100, 1e6, '2000'),
     "resampled tables for an interval of Cramer's V of a larger table (none)",
+  ),
+  shard: valued(
+    'How p is found',
+    'K/N',
+    shardPart,
+    'only part K of N: every Nth block of draws, or of a batch every Nth table; keepsum merge pools them',
   ),
   seed: valued('How p is found', 'TEXT', anyText, 'makes the draws repeatable (one is made and shown)'),
   effort: valued(
