@@ -79,8 +79,8 @@ describe('a result replays to the last digit', () => {
 });
 
 describe('what was changed is found', () => {
+  // eslint-disable-next-line @typescript-eslint/no-explicit-any
   const tampered: readonly [string, (result: Record<string, any>) => void, RegExp][] = [
-    // eslint-disable-line @typescript-eslint/no-explicit-any
     ['a count', (result) => { result['input'].counts[0][0]++; }, /./], // prettier-ignore
     ['a p', (result) => { result['pValues'][0].p *= 1 + 1e-15; }, /pValues\[0\]\.p/], // prettier-ignore
     ['a p beside', (result) => { result['pValues'][1].p = 0.5; }, /pValues\[1\]\.p/], // prettier-ignore
