@@ -38,7 +38,9 @@ export async function* recordsIn(lines: AsyncIterable<string>, sourceName: strin
   const text = whole.join('\n');
   const record = parsed(/^\s*</.test(text) ? inside(text, sourceName) : text);
   if (record === undefined) throw notJson(sourceName);
-  yield { record, place: sourceName };
+  // A page of several results holds a list.
+  for (const each of Array.isArray(record) ? (record as unknown[]) : [record])
+    yield { record: each, place: sourceName };
 }
 
 /** An html report carries its record in a script element that runs nothing. */

@@ -47,6 +47,12 @@ export const commands: readonly CommandEntry[] = [
     load: async () => (await import('./replay.js')).replayCommand,
   },
   {
+    name: 'report',
+    operands: 'RESULTS | -',
+    summary: 'saved results as one html file',
+    load: async () => (await import('./report.js')).reportCommand,
+  },
+  {
     name: 'adjust',
     operands: 'RESULTS | -',
     summary: 'p-values of a family of results, adjusted',

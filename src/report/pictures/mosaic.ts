@@ -26,17 +26,18 @@ const minus = '\u2212';
 const height = 170;
 /** Widest row label, in units. */
 const widestLabel = 90;
-/** Narrowest place in which a column's label stands upright. */
-const uprightLabel = 44;
+/** Labels wider than their place stand on their side, unless it is as wide as this. */
+const uprightLabel = 70;
 const right = pictureWidth - 10;
 
 /** @param id as of the document: names the hatching. */
 export function mosaic(result: Result, id: string): Picture {
   const { input } = result;
   const hasResiduals = result.cells !== undefined;
-  const title = 'Counts as areas, row by row';
+  const title = hasResiduals ? 'Counts as areas, marked by adjusted residuals' : 'Counts as areas, row by row';
   const head = caption(title);
-  const key = keyFor(hasResiduals ? keyEntries(id) : [plainEntry], head.bottom);
+  const ring = input.counts.some((row) => row.includes(0)) ? [ringEntry] : [];
+  const key = keyFor([...(hasResiduals ? keyEntries(id) : [plainEntry]), ...ring], head.bottom);
   const left = 14 + Math.min(widestLabel, Math.max(...input.rowLabels.map((words) => textWidth(words || '(blank)'))));
   const columns = columnLabels(result, left, key.bottom);
   const bands = bandsOf(result, { left, right, top: columns.bottom, bottom: columns.bottom + height });
@@ -57,6 +58,8 @@ export function mosaic(result: Result, id: string): Picture {
   };
 }
 
+const ringEntry: KeyEntry = { words: 'no counts', sample: (x, y) => ring(x + 7, y + 4.5) };
+
 const plainEntry: KeyEntry = {
   words: 'areas are counts; residuals of cells were not worked out',
   sample: (x, y) => element('rect', { x, y, width: 14, height: 9, fill: quiet, stroke: quietEdge }),
@@ -69,7 +72,7 @@ const keyEntries = (id: string): KeyEntry[] => {
       element('rect', { x, y, width: 7, height: 9, fill: `url(#${id}-${first})`, stroke, 'stroke-width': 0.8 }) +
       element('rect', { x: x + 7, y, width: 7, height: 9, fill: `url(#${id}-${second})`, stroke, 'stroke-width': 0.8 });
   return [
-    { words: '+ more than expected: adjusted residual 2 to 4; ++ from 4', sample: pair('more-1', 'more-2', blue) },
+    { words: '+ more than expected: residual 2 to 4; ++ from 4', sample: pair('more-1', 'more-2', blue) },
     {
       words: `${minus} fewer than expected: ${minus}2 to ${minus}4; ${minus}${minus} from ${minus}4`,
       sample: pair('fewer-1', 'fewer-2', orange),
@@ -97,8 +100,8 @@ interface ColumnLabels {
 function columnLabels({ input }: Result, left: number, top: number): ColumnLabels {
   const labels = input.columnLabels.map((words) => (words.trim() === '' ? '(blank)' : words));
   const place = (right - left) / labels.length;
-  const isUpright = place >= uprightLabel;
   const widest = Math.max(...labels.map((words) => textWidth(words)));
+  const isUpright = widest <= place - 4 || place >= uprightLabel;
   const room = isUpright ? 14 : Math.min(70, widest + 4);
   const leader = 12;
   return {
@@ -122,14 +125,13 @@ function columnLabels({ input }: Result, left: number, top: number): ColumnLabel
   };
 }
 
+const ring = (cx: number, cy: number, ...inside: Markup[]): Markup =>
+  element('circle', { class: 'keepsum-none', cx, cy, r: 2.4, fill: paper, stroke: ink }, ...inside);
+
 function tileMark({ x, y, width, height: high, count, strength, words }: Tile, id: string): Markup {
   const title = element('title', {}, escapedText(words));
   if (count === 0 || width <= 0.8) {
-    return element(
-      'circle',
-      { class: 'keepsum-none', cx: x + width / 2, cy: y + high / 2, r: 2.4, fill: paper, stroke: ink },
-      title,
-    );
+    return ring(x + width / 2, y + high / 2, title);
   }
   const fill = strength === 0 ? quiet : `url(#${id}-${strength > 0 ? 'more' : 'fewer'}-${Math.abs(strength)})`;
   const stroke = strength === 0 ? quietEdge : strength > 0 ? blue : orange;

@@ -107,7 +107,8 @@ describe('the mosaic', () => {
       'mosaic',
     );
     expectSoundSvg(svg);
-    expect(marksOf(svg, 'keepsum-none')).toBe(1);
+    // One in the key, one in the table.
+    expect(marksOf(svg, 'keepsum-none')).toBe(2);
     expect(wordsOf(svg).join(' ')).toContain('residuals of cells were not worked out');
   });
 });

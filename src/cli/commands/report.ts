@@ -1,0 +1,75 @@
+// keepsum report: saved results, one or many, in one html file.
+import { dataProblem, usageProblem } from '../../problem/problem.js';
+import type { Result } from '../../result/result.js';
+import { command } from './command-file.js';
+import { destinationFor, sharedOptions } from './shared-options.js';
+
+/** A page of more is none that anybody reads or opens. */
+const mostResults = 1000;
+
+export const reportCommand = command({
+  name: 'report',
+  usage: [{ line: 'keepsum report RESULTS', words: 'JSON results, one alone or one a line (keepsum batch --full)' }],
+  purpose: 'Writes saved results as one html file, each with its pictures and its record.',
+  examples: [
+    { line: 'keepsum report fixtures/golden/orchid-forms.json --output /tmp/orchids.html', words: 'a page to send' },
+  ],
+  options: sharedOptions,
+  async run(operands, values, shell) {
+    const [path, ...more] = operands;
+    if (more.length > 0 || (path === undefined && shell.stdinIsTerminal())) {
+      throw usageProblem({
+        code: more.length > 0 ? 'two-files' : 'nothing-named',
+        message: more.length > 0 ? `one file at a time, not ${operands.length}` : 'no results are named',
+        hint: 'write keepsum report results.ndjson, or pipe them in',
+      });
+    }
+    const file = path === undefined || path === '-' ? null : path;
+    const destination = await destinationFor(values.output, shell, file);
+    const { fileBytes, pieces } = await import('../streams/input-file.js');
+    const { textLines } = await import('../streams/text-lines.js');
+    const { recordsIn } = await import('../../record/records-in.js');
+    const sourceName = file ?? 'standard input';
+    const bytes = file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file);
+    const results: Result[] = [];
+    for await (const { record, place } of recordsIn(textLines(bytes), sourceName)) {
+      if (results.length === mostResults) {
+        throw dataProblem({
+          code: 'too-many-results',
+          message: `more than ${mostResults} results make no page`,
+          place,
+          hint: 'split the file, or select the results that the report is about',
+        });
+      }
+      results.push(await wholeResult(record, place));
+    }
+    if (results.length === 0) {
+      throw dataProblem({
+        code: 'no-results',
+        message: 'the file holds no results',
+        place: sourceName,
+        hint: 'give what --format json or keepsum batch --full wrote',
+      });
+    }
+    const { htmlReport } = await import('../../report/html/report.js');
+    await destination.write(htmlReport(results));
+    return 0;
+  },
+});
+
+/** Only what keeps the published shape is put on a page. */
+async function wholeResult(record: unknown, place: string): Promise<Result> {
+  const { resultDeclaration } = await import('../../result/declaration.js');
+  const read = resultDeclaration.safeParse(record);
+  if (read.success) return read.data;
+  const [issue] = read.error.issues;
+  const isCompact = typeof record === 'object' && record !== null && 'key' in record && !('schema' in record);
+  throw dataProblem({
+    code: 'no-whole-result',
+    message: isCompact
+      ? 'this is a compact line of a batch, which lacks what a report says'
+      : `this is no result: ${issue!.path.join('.') || 'the whole'}: ${issue!.message}`,
+    place,
+    hint: isCompact ? 'run keepsum batch --full' : 'give what --format json or keepsum batch --full wrote, unchanged',
+  });
+}
