@@ -13,7 +13,20 @@ export const standardChainTables = 100_000;
 /** Steps of listing that `auto` tries before it takes a chain. */
 export const stepsToTry = 3e6;
 
-const read = ['statistic', 'tail', 'method', 'draws', 'seed', 'effort', 'alpha', 'confidence', 'samplingConfidence'];
+/** A key names the table; a summary for pictures is left out here, as it is where there is none. */
+const read = [
+  'statistic',
+  'tail',
+  'method',
+  'draws',
+  'seed',
+  'effort',
+  'alpha',
+  'confidence',
+  'samplingConfidence',
+  'tableKey',
+  'nullSummary',
+];
 
 export interface QuasiWishes {
   readonly statistic: QuasiStatistic;
