@@ -15,7 +15,8 @@ export async function effectsOf(
   const settings = { confidence: plan.confidence };
   if (named !== null && named.referenceLabel !== null) {
     const { twoByTwoEffects } = await import('./two-by-two-effects.js');
-    return twoByTwoEffects(table, named, settings);
+    const hasFixedGroups = plan.fixed === named.groups && plan.method === 'exact';
+    return twoByTwoEffects(table, named, hasFixedGroups ? { ...settings, exactWork: plan.effort } : settings);
   }
   const { tableEffects } = await import('./larger/table-effects.js');
   const { bootstrap, seed, tableKey } = plan;

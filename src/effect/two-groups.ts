@@ -17,6 +17,8 @@ export interface TwoGroups {
 export interface EffectSettings {
   /** Level of the intervals, in (0, 1). */
   readonly confidence: number;
+  /** Where the study fixed both group sizes: counted work that their exact unconditional intervals may take. */
+  readonly exactWork?: number;
 }
 
 /** Effects use the whole table: a group without units stays one. @param named roles of two groups. */

@@ -36,6 +36,7 @@ const measures: Readonly<Record<string, Wording>> = {
 const methods: Readonly<Record<string, readonly [short: string, cited: string]>> = {
   newcombe: ['Newcombe', 'from Wilson limits (Newcombe 1998, method 10)'],
   koopman: ['score', 'from the score test (Koopman 1984)'],
+  'chan-zhang': ['exact, unconditional', 'that is exact for two groups of fixed size (Chan & Zhang 1999)'],
   central: ['exact, central', 'that is exact and central (Cornfield 1956)'],
   probability: ['exact, probability', 'that inverts the exact test by probability (Baptista & Pike 1977)'],
   blaker: ['exact, blaker', 'that inverts the exact test by the smaller tail (Blaker 2000)'],

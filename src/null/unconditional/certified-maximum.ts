@@ -67,6 +67,23 @@ export function certifiedMaximum(
   return { upper: upper * (1 + error), lower: best * (1 - error), at };
 }
 
+/** True where no value of the polynomial exceeds the level, rounding included; false where one does, or it cannot be told. */
+export function staysBelow(coefficients: Float64Array, level: number): boolean {
+  const degree = coefficients.length - 1;
+  const most = level * (1 - 1e-11 - degree * 40 * 2 ** -53);
+  const floor = level * floorShare;
+  const raised = coefficients.map((c) => Math.max(c, floor));
+  const open: Piece[] = [{ from: 0, width: 1, coefficients: raised, largest: greatest(raised), depth: 0 }];
+  for (let piece = open.pop(); piece !== undefined; piece = open.pop()) {
+    if (piece.largest <= most) continue;
+    if (piece.coefficients[0]! > most || piece.coefficients[degree]! > most || piece.depth > 30) return false;
+    const [left, right] = halves(piece);
+    if (right.coefficients[0]! > most) return false;
+    open.push(left, right);
+  }
+  return true;
+}
+
 /** The same polynomial on [from, to] within [0, 1], from < to, as coefficients there. Relative error 6 degree 2^-53. */
 export function onPart(coefficients: Float64Array, from: number, to: number): Float64Array {
   const below = to >= 1 ? coefficients : splitAt(coefficients, to)[0];

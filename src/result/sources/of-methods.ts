@@ -38,6 +38,7 @@ Tango 1998 | Tango, T. | Equivalence test and confidence interval for the differ
 Altman 1998 | Altman, D. G. | Confidence intervals for the number needed to treat | British Medical Journal | 317 | 7168 | 1309-1312
 Miettinen & Nurminen 1985 | Miettinen, O. and Nurminen, M. | Comparative analysis of two rates | Statistics in Medicine | 4 | 2 | 213-226
 Katz et al. 1978 | Katz, D. and Baptista, J. and Azen, S. P. and Pike, M. C. | Obtaining confidence intervals for the risk ratio in cohort studies | Biometrics | 34 | 3 | 469-474
+Chan & Zhang 1999 | Chan, I. S. F. and Zhang, Z. | Test-based exact confidence intervals for the difference of two binomial proportions | Biometrics | 55 | 4 | 1202-1209
 Koopman 1984 | Koopman, P. A. R. | Confidence intervals for the ratio of two binomial proportions | Biometrics | 40 | 2 | 513-517
 Bergsma 2013 | Bergsma, W. | A bias-correction for Cramer's V and Tschuprow's T | Journal of the Korean Statistical Society | 42 | 3 | 323-328
 Goodman & Kruskal 1954 | Goodman, L. A. and Kruskal, W. H. | Measures of association for cross classifications | Journal of the American Statistical Association | 49 | 268 | 732-764
