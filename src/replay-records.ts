@@ -1,6 +1,6 @@
 // The spine of a replay: every record of a file made again, and what came out the same.
 import { createHash } from 'node:crypto';
-import type { ReplayReport } from './record/declaration.js';
+import type { ReplayReport } from './result/replay-declaration.js';
 import type { Found } from './record/records-in.js';
 import { replay, type ReplaySettings } from './record/replay.js';
 import { version } from './result/version.js';

@@ -1,6 +1,6 @@
 // The spine of several outcomes tested together: counts by group and outcome profile in, adjusted p-values out.
 import { jointCounts, type JointOutcomeAnswer } from './family/joint.js';
-import type { TogetherResult } from './family/together-declaration.js';
+import type { TogetherResult } from './result/together-declaration.js';
 import type { JointCounts } from './input/joint-counts.js';
 import type { JointRead } from './input/joint-records.js';
 import { blockSize } from './null/sampled/limits.js';

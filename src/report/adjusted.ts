@@ -1,6 +1,6 @@
 // Adjusted lines for programs and spreadsheets.
 import { shown } from '../result/label-words.js';
-import type { AdjustedLine } from '../result/adjusted.js';
+import type { AdjustedLine } from '../result/adjusted-declaration.js';
 
 export function adjustedLines(lines: readonly AdjustedLine[], format: 'ndjson' | 'csv'): string {
   if (format === 'ndjson') return lines.map((line) => `${JSON.stringify(line)}\n`).join('');

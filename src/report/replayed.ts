@@ -1,7 +1,7 @@
 // What a replay found, for a screen.
 import { quoted, shown } from '../result/label-words.js';
 import { countWords } from '../result/number-words.js';
-import type { ReplayReport } from '../result/replayed.js';
+import type { ReplayReport } from '../result/replay-declaration.js';
 import { fold } from './fold.js';
 
 /** Of one record, and of a file. */

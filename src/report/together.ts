@@ -1,7 +1,7 @@
 // The report of several outcomes tested together.
 import { quoted, shown } from '../result/label-words.js';
 import { countWords, digits, roundedTo } from '../result/number-words.js';
-import type { TogetherResult } from '../result/together.js';
+import type { TogetherResult } from '../result/together-declaration.js';
 import { fold } from './fold.js';
 import type { ReportSettings } from './format.js';
 import { gridLines } from './text-grid.js';

@@ -3,9 +3,9 @@ import { readFileSync, readdirSync } from 'node:fs';
 import { join } from 'node:path';
 import { Ajv2020 } from 'ajv/dist/2020.js';
 import { describe, expect, it } from 'vitest';
-import { adjustedJsonSchema } from '../../src/family/declaration.js';
-import { togetherJsonSchema } from '../../src/family/together-declaration.js';
-import { replayJsonSchema } from '../../src/record/declaration.js';
+import { adjustedJsonSchema } from '../../src/result/adjusted-declaration.js';
+import { togetherJsonSchema } from '../../src/result/together-declaration.js';
+import { replayJsonSchema } from '../../src/result/replay-declaration.js';
 import { keepsum, root } from './run-command.js';
 
 const golden = join(root, 'fixtures/golden');

@@ -2,7 +2,7 @@
 import { usageProblem } from '../../problem/problem.js';
 import { nameHint } from '../../problem/suggest.js';
 import { adjustments, discreteAdjustments, type Adjustment } from '../../family/adjust.js';
-import { standardAdjustments } from '../../family/adjust-results.js';
+import { standardAdjustments } from '../../adjust-results.js';
 import type { FailedTest, FoundTest } from '../../family/read-results.js';
 import type { PlanOptions } from '../../plan/plan.js';
 import { betweenZeroAndOne, oneOf, type CheckValue } from '../arguments/check-value.js';
@@ -60,7 +60,7 @@ export const adjustCommand = command({
     const destination = await destinationFor(values.output, shell, file);
     const { fileBytes, pieces } = await import('../streams/input-file.js');
     const { resultsIn } = await import('../streams/result-lines.js');
-    const { adjustResults } = await import('../../family/adjust-results.js');
+    const { adjustResults } = await import('../../adjust-results.js');
     const sourceName = file ?? 'standard input';
     const read = await resultsIn(file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file), sourceName);
     const methods = values.by ?? standardAdjustments;

@@ -1,7 +1,7 @@
 // The lines that `keepsum adjust` writes, declared once.
 import { z } from 'zod';
-import { probability } from '../result/declared/pieces.js';
-import { adjustments } from './adjust.js';
+import { probability } from './declared/pieces.js';
+import { adjustments } from '../family/adjust.js';
 
 export const adjustedDeclaration = z.strictObject({
   key: z.string(),

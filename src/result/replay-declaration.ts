@@ -1,6 +1,6 @@
 // What a replay finds, declared once.
 import { z } from 'zod';
-import { count, digest } from '../result/declared/pieces.js';
+import { count, digest } from './declared/pieces.js';
 
 const difference = z.strictObject({
   field: z.string(),

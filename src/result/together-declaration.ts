@@ -1,6 +1,6 @@
 // Several outcomes of the same subjects, tested together: the reported shape, declared once.
 import { z } from 'zod';
-import { count, digest, level, probability } from '../result/declared/pieces.js';
+import { count, digest, level, probability } from './declared/pieces.js';
 
 const drawnP = z.strictObject({
   /** (atLeast + 1) / (draws + 1), guaranteed. */

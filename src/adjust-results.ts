@@ -1,7 +1,7 @@
 // Results to families, families to adjusted lines in the order of the results.
-import { adjusted, adjustments, discreteAdjustments, type Adjustment } from './adjust.js';
-import type { AdjustedLine } from './declaration.js';
-import type { FailedTest, FoundTest } from './read-results.js';
+import { adjusted, adjustments, discreteAdjustments, type Adjustment } from './family/adjust.js';
+import type { AdjustedLine } from './result/adjusted-declaration.js';
+import type { FailedTest, FoundTest } from './family/read-results.js';
 
 export interface Adjusted {
   readonly lines: readonly AdjustedLine[];
