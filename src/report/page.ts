@@ -1,13 +1,7 @@
 // What a report for people says, and in which order, before any format lays it out: what was tested, the table, the
 // answer with its error, how strong, how fragile, other readings, the footing of the approximation, cautions, how to run it again.
-import {
-  citedStatistic,
-  errorSentences,
-  isOneTableOnly,
-  pSentence,
-  tableWords,
-  tiesSentence,
-} from '../result/describe.js';
+import { citedStatistic, isOneTableOnly, pSentence, tableWords, tiesSentence } from '../result/describe.js';
+import { errorSentences } from '../result/error-sentences.js';
 import { levelSentences } from '../result/level-words.js';
 import { designSentences } from '../result/design-words.js';
 import { quoted, shown } from '../result/label-words.js';

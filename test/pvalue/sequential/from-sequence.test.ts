@@ -5,7 +5,7 @@ import type { SampledCut } from '../../../src/null/contract.js';
 import { sequentialDoubled, sequentialPValue } from '../../../src/pvalue/sequential/from-sequence.js';
 import { startDoubledSequence, startSequence } from '../../../src/pvalue/sequential/stopping-rule.js';
 import { resultDeclaration } from '../../../src/result/declaration.js';
-import { errorSentences } from '../../../src/result/describe.js';
+import { errorSentences } from '../../../src/result/error-sentences.js';
 import { resultJsonSchema } from '../../../src/result/schema.js';
 import { pearsonSampled } from '../../helpers/sample-results.js';
 

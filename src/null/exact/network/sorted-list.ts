@@ -6,6 +6,7 @@ import { perEntry } from './costs.js';
 import { sortCrowd } from './crowd-sort.js';
 import { insertInPlace } from './insert-in-place.js';
 import type { Level } from './level.js';
+import { mergeEqual } from './merge-equal.js';
 import type { Transitions } from './transitions.js';
 
 /** Shorter lists are sorted by insertion alone. */
@@ -232,26 +233,7 @@ export class SortedList {
     [this.keys, this.spareKeys] = [this.spareKeys, this.keys];
   }
 
-  /** Adds up neighbours with equal value (and key), with a compensated sum (Neumaier's form, all terms being positive). */
   private merge(): void {
-    const { length, values, weights, keys, keyed } = this;
-    let kept = 0;
-    for (let i = 0; i < length;) {
-      const value = values[i]!;
-      const key = keyed ? keys[i]! : 0;
-      let sum = weights[i]!;
-      let lost = 0;
-      for (i++; i < length && values[i] === value && (!keyed || keys[i] === key); i++) {
-        const next = weights[i]!;
-        const total = sum + next;
-        lost += sum >= next ? sum - total + next : next - total + sum;
-        sum = total;
-      }
-      values[kept] = value;
-      weights[kept] = sum + lost;
-      if (keyed) keys[kept] = key;
-      kept++;
-    }
-    this.length = kept;
+    this.length = mergeEqual(this.length, this.values, this.weights, this.keyed ? this.keys : null);
   }
 }
