@@ -55,7 +55,7 @@ export function forecastExact(live: LiveTable, bound?: BoundStatistic | null, st
     return { engine: 'enumeration', workUnits: 0, tables: 1, tablesAreCounted: true, seconds: 0 };
   }
   const { tables, counted } = countTables(live);
-  const { engine, workUnits } = cheapest(live, tables, bound, statistic);
+  const { engine, workUnits } = cheapest(live, tables, counted, bound, statistic);
   return {
     engine,
     workUnits: Math.round(workUnits),
@@ -77,6 +77,7 @@ interface Choice {
 function cheapest(
   live: LiveTable,
   tables: number,
+  counted: boolean,
   bound: BoundStatistic | null | undefined,
   statistic: string | undefined,
 ): Choice {
@@ -85,7 +86,9 @@ function cheapest(
   if (live.rows === 2 && live.columns === 2 && !anyPlace) {
     return { engine: 'two-by-two', workUnits: Math.min(tables, stepsOfTwoByTwo(live)) };
   }
-  const choices: Choice[] = [{ engine: 'enumeration', workUnits: tables * live.rows * live.columns }];
+  // An estimate of their number can be several times too low.
+  const listing = tables * live.rows * live.columns * (counted ? 1 : 5);
+  const choices: Choice[] = [{ engine: 'enumeration', workUnits: listing }];
   if (bound?.linear !== undefined) {
     choices.push({ engine: 'linear', workUnits: forecastLinear(live, bound.linear).workUnits });
   }

@@ -70,7 +70,7 @@ const scored = table.chain((counts) =>
   }),
 );
 
-const runs = { numRuns: 250 };
+const runs = { numRuns: 120 };
 
 describe('exact p of scored responses equals brute force', () => {
   it('kruskal-wallis with declared scores', async () => {

@@ -18,7 +18,7 @@ export const mergeCommand = command({
   ],
   purpose: 'Pools the parts of one run into exactly the result that one machine would have given.',
   examples: [
-    { line: 'keepsum merge fixtures/demo/part-1.json fixtures/demo/part-2.json', words: 'two halves of a run' },
+    { line: 'keepsum merge fixtures/golden/part-1.json fixtures/golden/part-2.json', words: 'two halves of a run' },
   ],
   options: {
     format: valued('The report', 'NAME', oneOf(formatNames), `${either(formatNames)} (json)`),

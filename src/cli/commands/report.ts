@@ -11,9 +11,7 @@ export const reportCommand = command({
   name: 'report',
   usage: [{ line: 'keepsum report RESULTS', words: 'JSON results, one alone or one a line (keepsum batch --full)' }],
   purpose: 'Writes saved results as one html file, each with its pictures and its record.',
-  examples: [
-    { line: 'keepsum report fixtures/golden/orchid-forms.json --output /tmp/orchids.html', words: 'a page to send' },
-  ],
+  examples: [{ line: 'keepsum report fixtures/golden/orchid-forms.json', words: 'a page to send' }],
   options: sharedOptions,
   async run(operands, values, shell) {
     const [path, ...more] = operands;
