@@ -9,7 +9,11 @@ export default defineConfig({
     hookTimeout: 120_000,
     setupFiles: ['test/helpers/steady-seed.ts'],
     projects: [
-      { extends: true, test: { name: 'source', include: ['test/**/*.test.ts'], exclude: [ofTheCommand] } },
+      {
+        extends: true,
+        // One set of modules for the files of a worker: loading them anew for each took most of the time.
+        test: { name: 'source', include: ['test/**/*.test.ts'], exclude: [ofTheCommand], isolate: false },
+      },
       {
         extends: true,
         test: { name: 'process', include: [ofTheCommand], globalSetup: ['test/helpers/build-once.ts'] },

@@ -52,14 +52,14 @@ describe('the network gives the masses of the oracle', () => {
       it(`${statistic}, ${kind} tables, a list for every node`, () => {
         fc.assert(
           fc.property(arbitrary, (table) => compareWithOracle(table, statistic, statistic, { allAlike: false })),
-          { numRuns: 400, seed: 1 },
+          { numRuns: 250, seed: 1 },
         );
       });
       if (statistic === 'pearson') continue;
       it(`${statistic}, ${kind} tables, lists shared by all arrangements of rows`, () => {
         fc.assert(
           fc.property(arbitrary, (table) => compareWithOracle(table, statistic, statistic, { allAlike: true })),
-          { numRuns: 400, seed: 2 },
+          { numRuns: 250, seed: 2 },
         );
       });
       it(`${statistic}, ${kind} tables, without keys: near ties are traced back and decided one by one`, () => {
