@@ -136,7 +136,8 @@ export function cellText(cell: Cell, raw: boolean): string {
 const formulaStart = /^[=+\-@\t\r\n\uff1d\uff0b\uff0d\uff20]/;
 
 /** A text cell that no spreadsheet runs and no terminal obeys. Our word for an infinite number stays a number. */
-const disarmed = (text: string): string => (formulaStart.test(text) && text !== '-infinity' ? "'" : '') + shown(text);
+export const disarmed = (text: string): string =>
+  (formulaStart.test(text) && text !== '-infinity' ? "'" : '') + shown(text);
 
 /** Quoted where CSV needs it (RFC 4180). */
 const csvField = (text: string): string => (/[",\r\n]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text);

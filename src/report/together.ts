@@ -2,6 +2,7 @@
 import { quoted, shown } from '../result/label-words.js';
 import { countWords, digits, roundedTo } from '../result/number-words.js';
 import type { TogetherResult } from '../result/together-declaration.js';
+import { disarmed } from './csv.js';
 import { fold } from './fold.js';
 import type { ReportSettings } from './format.js';
 import { gridLines } from './text-grid.js';
@@ -84,5 +85,4 @@ function csv({ outcomes, plan, input, tool }: TogetherResult): string {
 }
 
 /** Quoted, and disarmed where a spreadsheet would run it. */
-const field = (words: string): string =>
-  `"${(/^[=+\-@\t\r\n]/.test(words) ? "'" : '') + shown(words).replaceAll('"', '""')}"`;
+const field = (words: string): string => `"${disarmed(words).replaceAll('"', '""')}"`;

@@ -1,8 +1,7 @@
 // A stream of result lines, read one by one; only what a family needs of each is kept.
-import { createInterface } from 'node:readline';
-import { Readable } from 'node:stream';
 import { readResultLine, type FailedTest, type FoundTest } from '../../family/read-results.js';
 import { dataProblem } from '../../problem/problem.js';
+import { textLines } from './text-lines.js';
 
 /** @throws Problem (data): `empty-input`, and those of a line. */
 export async function resultsIn(
@@ -11,10 +10,7 @@ export async function resultsIn(
 ): Promise<(FoundTest | FailedTest)[]> {
   const results: (FoundTest | FailedTest)[] = [];
   let number = 0;
-  for await (const line of createInterface({
-    input: Readable.from(bytes, { objectMode: false }),
-    crlfDelay: Infinity,
-  })) {
+  for await (const line of textLines(bytes)) {
     number++;
     const text = number === 1 ? line.replace(/^\ufeff/, '') : line;
     if (text.trim() !== '') results.push(readResultLine(text, `${sourceName}:${number}`, number));

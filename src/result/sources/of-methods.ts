@@ -3,7 +3,7 @@
 
 export const sourcesOfMethods = `
 Patefield 1981 | Patefield, W. M. | Algorithm AS 159: an efficient method of generating random R x C tables with given row and column totals | Applied Statistics | 30 | 1 | 91-97
-Neves & Araujo 2012 | Neves, S. and Araujo, F. | Fast and small nonlinear pseudorandom number generators for computer simulation | Parallel Processing and Applied Mathematics, Lecture Notes in Computer Science | 7203 | | 92-101
+Neves & Araujo 2012 | Neves, S. and Araujo, F. | Fast and small nonlinear pseudorandom number generators for computer simulation | Parallel Processing and Applied Mathematics (PPAM 2011), Springer | 7203 | | 92-101
 Phipson & Smyth 2010 | Phipson, B. and Smyth, G. K. | Permutation P-values should never be zero: calculating exact P-values when permutations are randomly drawn | Statistical Applications in Genetics and Molecular Biology | 9 | 1 | Article 39
 Clopper & Pearson 1934 | Clopper, C. J. and Pearson, E. S. | The use of confidence or fiducial limits illustrated in the case of the binomial | Biometrika | 26 | 4 | 404-413
 Darling & Robbins 1967 | Darling, D. A. and Robbins, H. | Confidence sequences for mean, variance, and median | Proceedings of the National Academy of Sciences | 58 | 1 | 66-68
