@@ -150,7 +150,11 @@ export const powerCommand = command({
       ...(number === undefined ? {} : { tables: number }),
     };
     const result = await withSteps(values, shell, (onProgress) => planPower(wishes, onProgress));
-    await destination.write(renderPower(result, format ?? 'text', await lookFor(values, shell)));
+    await destination.write(
+      format === 'html'
+        ? (await import('../../report/html/power.js')).powerHtml(result)
+        : renderPower(result, format ?? 'text', await lookFor(values, shell)),
+    );
     if (draw === undefined) return 0;
     const { drawPowerCurve, lackOfCurve } = await import('../../report/pictures/power-curve.js');
     await draw(() => {

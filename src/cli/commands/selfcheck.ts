@@ -39,7 +39,12 @@ export const selfCheckCommand = command({
     const { withSteps } = await import('../streams/steps.js');
     const cases = await shippedCases();
     const report = await withSteps(values, shell, (onProgress) => selfCheck(cases, thisMachine(), onProgress));
-    await destination.write(renderSelfCheck(report, values.format ?? 'text', await lookFor(values, shell)));
+    const { format } = values;
+    await destination.write(
+      format === 'html'
+        ? (await import('../../report/html/self-check.js')).selfCheckHtml(report)
+        : renderSelfCheck(report, format ?? 'text', await lookFor(values, shell)),
+    );
     return report.verdict === 'agrees' ? 0 : 1;
   },
 });

@@ -25,6 +25,14 @@ export function element(
   return `<${name}${listed}>${inside.join('')}</${name}>`;
 }
 
+const rightToLeft = String.raw`[\p{Script=Hebrew}\p{Script=Arabic}\p{Script=Syriac}\p{Script=Thaana}\p{Script=Nko}]`;
+/** Letters written from the right, with what stands between them and the brackets around. */
+const rightToLeftRun = new RegExp(`[([{]?${rightToLeft}(?:[^\\p{L}&;]*${rightToLeft})*[)\\]}]?`, 'gu');
+
+/** Text for running words. What is written from right to left is set apart, so that it does not carry the numbers beside it along. */
+export const escapedWords = (words: string): Markup =>
+  escapedText(words).replace(rightToLeftRun, (run) => `<bdi>${run}</bdi>`);
+
 /** A tag around words. */
 export const worded = (name: string, words: string, attributes: Readonly<Record<string, string>> = {}): Markup =>
-  element(name, attributes, escapedText(words));
+  element(name, attributes, escapedWords(words));

@@ -1,17 +1,17 @@
-// The report as one file for a browser: the same page as the other formats, pictures and record inside. It needs no network
-// and no script, and its policy allows none. Loaded only by runs that write it.
-import { shown, shownJson } from '../../result/label-words.js';
+// The report as one file for a browser: the same page as the other formats, pictures and record inside. Loaded only by runs
+// that write it.
+import { sourcesUsed } from '../../result/citations.js';
+import { shown } from '../../result/label-words.js';
 import type { Result } from '../../result/result.js';
+import { asText } from '../../result/sources/source.js';
 import { json } from '../json.js';
 import { defaultSettings } from '../format.js';
-import { pageFor, type Block, type Section, type Sentence } from '../page.js';
+import { pageFor, type Section } from '../page.js';
 import { drawPicture, lackOf } from '../pictures/pictures.js';
-import { element, escapedText, worded, type Markup } from './element.js';
-import { style } from './style.js';
-import { countsTable, gridTable } from './tables.js';
-
-/** Where the record stands in the file, for whoever reads it back. */
-export const recordId = 'keepsum-record';
+import { htmlDocument } from './document.js';
+import { element, escapedWords, worded, type Markup } from './element.js';
+import { sectionMarkup, type DrawnBlock } from './sections.js';
+import { countsTable } from './tables.js';
 
 /**
  * One or more results as an HTML document, ending in a line feed. Its record is in the element `#keepsum-record`: one result as in
@@ -19,27 +19,14 @@ export const recordId = 'keepsum-record';
  */
 export function htmlReport(results: readonly Result[]): string {
   const alone = results.length === 1;
-  const articles = results.map((result, k) => articleFor(result, k, alone));
   const title = alone ? pageFor(results[0]!).title : `${results.length} tests of association`;
-  return `<!doctype html>\n${element(
-    'html',
-    { lang: 'en' },
-    element(
-      'head',
-      {},
-      '<meta charset="utf-8">',
-      '<meta name="viewport" content="width=device-width, initial-scale=1">',
-      `<meta http-equiv="Content-Security-Policy" content="default-src 'none'; style-src 'unsafe-inline'">`,
-      worded('title', shown(title)),
-      `<style>${style}</style>`,
-    ),
-    element(
-      'body',
-      {},
-      element('main', {}, ...(alone ? [] : [worded('h1', title), contents(results)]), ...articles, footer(results)),
-      record(results),
-    ),
-  )}\n`;
+  const articles = results.map((result, k) => articleFor(result, k, alone));
+  return htmlDocument({
+    title,
+    main: alone ? articles : [worded('h1', title), contents(results), ...articles],
+    version: results[0]!.tool.version,
+    record: recordOf(results),
+  });
 }
 
 /** The names of what stands in a table of the report tell it from those of other results. */
@@ -56,17 +43,23 @@ const contents = (results: readonly Result[]): Markup =>
         element(
           'li',
           {},
-          element('a', { href: `#test-${k + 1}` }, escapedText(nameOf(result, k))),
-          `: ${escapedText(result.sentence)}`,
+          element('a', { href: `#test-${k + 1}` }, escapedWords(nameOf(result, k))),
+          `: ${escapedWords(result.sentence)}`,
         ),
       ),
     ),
   );
 
 function articleFor(result: Result, k: number, alone: boolean): Markup {
-  const [heading, below] = alone ? ['h1', 'h2'] : ['h2', 'h3'];
+  const [heading, below] = alone ? (['h1', 'h2'] as const) : (['h2', 'h3'] as const);
   const { title, sections } = pageFor(result);
   const place = alone ? '' : ` of test ${k + 1}`;
+  const draw = (block: DrawnBlock): Markup => {
+    if (block.kind === 'table') return countsTable(result.input, place);
+    return lackOf(result, block.picture) === undefined
+      ? element('figure', {}, drawPicture(result, block.picture, `test-${k + 1}-${block.picture}`))
+      : '';
+  };
   const methods: Section = {
     heading: 'For a methods section',
     blocks: [{ kind: 'sentence', text: shown(result.methods), tone: 'plain' }],
@@ -74,46 +67,21 @@ function articleFor(result: Result, k: number, alone: boolean): Markup {
   return element(
     'article',
     { id: `test-${k + 1}` },
-    worded(heading!, alone ? title : nameOf(result, k)),
-    ...[...sections, methods].map((section) =>
-      element(
-        'section',
-        {},
-        worded(below!, section.heading),
-        ...section.blocks.map((block) => blockMarkup(block, section, result, k, place)),
-      ),
-    ),
+    worded(heading, alone ? title : nameOf(result, k)),
+    ...[...sections, methods].map((section) => sectionMarkup(section, below, place, draw)),
+    sourcesOf(result, below),
   );
 }
 
-function blockMarkup(block: Block, section: Section, result: Result, k: number, place: string): Markup {
-  switch (block.kind) {
-    case 'sentence':
-      return paragraph(block);
-    case 'table':
-      return countsTable(result.input, place);
-    case 'grid':
-      return gridTable(block, `${section.heading}${place}`);
-    case 'command':
-      return element('pre', {}, worded('code', block.words.join(' ')));
-    case 'picture':
-      return lackOf(result, block.picture) === undefined
-        ? element('figure', {}, drawPicture(result, block.picture, `test-${k + 1}-${block.picture}`))
-        : '';
-  }
+/** What the methods paragraph cites, in full. */
+function sourcesOf(result: Result, heading: string): Markup {
+  const used = sourcesUsed(result);
+  if (used.length === 0) return '';
+  const items = used.map((source) => worded('li', asText(source)));
+  return element('section', {}, worded(heading, 'Sources'), element('ul', { class: 'sources' }, ...items));
 }
 
-const paragraph = ({ text, tone }: Sentence): Markup => worded('p', text, tone === 'plain' ? {} : { class: tone });
-
-const footer = (results: readonly Result[]): Markup =>
-  worded(
-    'footer',
-    `Written by keepsum ${results[0]!.tool.version}. This file holds the whole record, in its element "${recordId}", with every digit.`,
-  );
-
-/** No text in it can end the element: every < is spelled out, which JSON reads back as the same. */
-function record(results: readonly Result[]): Markup {
+function recordOf(results: readonly Result[]): string {
   const each = results.map((result) => json.write(result, defaultSettings).trimEnd());
-  const whole = results.length === 1 ? each[0]! : `[${each.join(',\n')}]`;
-  return `<script type="application/json" id="${recordId}">${shownJson(whole).replaceAll('<', '\\u003c')}</script>`;
+  return results.length === 1 ? each[0]! : `[${each.join(',\n')}]`;
 }

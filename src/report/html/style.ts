@@ -13,15 +13,22 @@ a { color: inherit; }
 .warning { border-left: .25rem solid var(--note); padding-left: .75rem; }
 .warning::before { content: 'Take note: '; font-weight: 600; color: var(--note); }
 .wide { overflow-x: auto; margin: .75rem 0; }
-table { border-collapse: collapse; font-variant-numeric: tabular-nums; }
+table { border-collapse: collapse; font-variant-numeric: tabular-nums; min-width: min(22rem, 100%); }
 caption { text-align: left; padding-bottom: .3rem; }
 th, td { padding: .25rem .8rem .25rem 0; text-align: left; vertical-align: top; font-weight: normal; }
+tbody th, tfoot th { min-width: 5.5rem; max-width: 18rem; }
+thead th { max-width: 11rem; vertical-align: bottom; }
+th { overflow-wrap: break-word; }
+td.number { white-space: nowrap; }
+td.words { white-space: normal; }
 thead th, thead td { border-bottom: 1px solid var(--rule); }
 tfoot th, tfoot td { border-top: 1px solid var(--rule); }
 .number, thead th:not(:first-child) { text-align: right; }
 pre { background: var(--soft); padding: .75rem; white-space: pre-wrap; overflow-wrap: anywhere; }
 figure { margin: 1rem 0; }
 .keepsum-picture { width: 26rem; max-width: 100%; height: auto; }
+ul { padding-left: 1.2rem; }
+.sources { font-size: .9rem; overflow-wrap: anywhere; }
 article + article { border-top: 1px solid var(--rule); margin-top: 3rem; }
 footer { margin-top: 2.5rem; border-top: 1px solid var(--rule); padding-top: .5rem; font-size: .9rem; }
 @media screen and (prefers-color-scheme: dark) {
@@ -31,14 +38,30 @@ footer { margin-top: 2.5rem; border-top: 1px solid var(--rule); padding-top: .5r
   .keepsum-line, .keepsum-observed { stroke: #eaeaea; }
   .keepsum-casing { stroke: #181818; }
   .keepsum-none { fill: #181818; stroke: #eaeaea; }
+  .keepsum-picture [stroke='#0072b2'] { stroke: #56b4e9; }
+  .keepsum-picture [fill='#0072b2'] { fill: #56b4e9; }
+  .keepsum-picture [stroke='#d55e00'] { stroke: #e69f00; }
 }
 @page { margin: 18mm; }
 @media print {
-  :root { color-scheme: light; }
+  :root { color-scheme: light; font-size: 10pt; }
+  body { line-height: 1.4; }
   main { max-width: none; padding: 0; }
+  h1 { font-size: 15pt; margin: 0 0 .5rem; }
+  h2 { font-size: 12pt; margin: 1.1rem 0 .3rem; }
+  h3 { font-size: 10.5pt; margin: .9rem 0 .2rem; }
+  p, .wide, figure { margin: .35rem 0; }
+  p { orphans: 3; widows: 3; }
   h1, h2, h3 { break-after: avoid; }
-  figure, table, pre, .answer { break-inside: avoid; }
+  figure, pre, tr, .answer, .warning { break-inside: avoid; }
   .wide { overflow: visible; }
+  /* As small as the number of columns asks for, as long as it can be read. */
+  table { max-width: 100%; font-size: clamp(4.5pt, calc(140mm / var(--columns, 1) / 4), 9pt); }
+  th, td { padding-right: .5em; }
+  tbody th, tfoot th { min-width: 6em; }
+  thead th { overflow-wrap: anywhere; }
+  .keepsum-picture { width: 85mm; }
+  footer { margin-top: 1rem; break-before: avoid; }
   article + article { break-before: page; border: 0; margin: 0; }
 }
 `;

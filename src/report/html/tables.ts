@@ -24,7 +24,7 @@ export function countsTable(input: InputEcho, place: string): Markup {
     `Counts${place}`,
     element(
       'table',
-      {},
+      { style: `--columns:${input.columnLabels.length + 1}` },
       worded('caption', 'Counts, with the totals of rows and columns'),
       element('thead', {}, element('tr', {}, ...headings)),
       element(
@@ -39,18 +39,19 @@ export function countsTable(input: InputEcho, place: string): Markup {
 
 /** The first column holds names. @param name of the section that the grid stands in. */
 export function gridTable({ headings, rows }: Grid, name: string): Markup {
+  const isNumber = (words: string): boolean => words === '' || /\d/.test(words);
   const cells = ([first, ...others]: readonly string[]): Markup =>
     element(
       'tr',
       {},
       worded('th', first!, { scope: 'row' }),
-      ...others.map((words) => worded('td', words, { class: 'number' })),
+      ...others.map((words) => worded('td', words, { class: isNumber(words) ? 'number' : 'number words' })),
     );
   return scrolling(
     name,
     element(
       'table',
-      {},
+      { style: `--columns:${headings.length}` },
       element('thead', {}, element('tr', {}, ...headings.map(columnHeading))),
       element('tbody', {}, ...rows.map(cells)),
     ),

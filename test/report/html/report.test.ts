@@ -1,8 +1,15 @@
 // The HTML report: well-formed, without anything that acts or loads, its record whole.
 import { describe, expect, it } from 'vitest';
 import { analyse } from '../../../src/analyse.js';
+import { escapedText } from '../../../src/report/html/element.js';
+import { powerHtml } from '../../../src/report/html/power.js';
+import { selfCheckHtml } from '../../../src/report/html/self-check.js';
 import { htmlReport } from '../../../src/report/html/report.js';
+import { sourcesUsed } from '../../../src/result/citations.js';
+import { asText } from '../../../src/result/sources/source.js';
 import { pageFor } from '../../../src/report/page.js';
+import { planPower } from '../../../src/plan-power.js';
+import { selfCheck, shippedCases } from '../../../src/self-check.js';
 import { hostileLabels, sampleResults } from '../../helpers/sample-results.js';
 
 /** Tags in order of their opening; every one is closed in its turn. */
@@ -58,7 +65,9 @@ describe('the html report', () => {
       ['1', title],
       ...sections.map(({ heading }) => ['2', heading]),
       ['2', 'For a methods section'],
+      ['2', 'Sources'],
     ]);
+    for (const source of sourcesUsed(result)) expect(html).toContain(escapedText(asText(source)));
     const tags = tagsOf(html);
     expect(tags.filter((tag) => tag === 'svg')).toHaveLength(2);
     expect(html).toContain('<html lang="en">');
@@ -92,6 +101,54 @@ describe('the html report', () => {
       expect(html).not.toMatch(/<img|<!--|\u001b|\u202e/);
     }
     expect((recordOf(htmlReport([fromTable])) as typeof fromTable).input.rowLabels[0]).toBe(label);
+  });
+
+  it('sets words apart that are written from the right', async () => {
+    const rowLabels = ['מחלקה (א) 3', 'ward'];
+    const html = htmlReport([
+      await analyse({
+        counts: [
+          [8, 2],
+          [1, 9],
+        ],
+        rowLabels,
+      }),
+    ]);
+    tagsOf(html);
+    expect(html).toContain('<th scope="row"><bdi>מחלקה (א)</bdi> 3</th>');
+    expect(html).toContain(`&quot;<bdi>מחלקה (א)</bdi> 3&quot;`);
+    expect(html).not.toMatch(/<title[^>]*>[^<]*<bdi>|aria-label="[^"]*<bdi/);
+  });
+
+  it('of a planned study holds its curve, its plan and its record', async () => {
+    const groups = [
+      { label: '<a>', probabilities: [0.7] },
+      { label: 'b', probabilities: [0.4] },
+    ];
+    const result = await planPower({
+      groups,
+      sizes: [
+        [20, 20],
+        [30, 30],
+      ],
+    });
+    const html = powerHtml(result);
+    expect(tagsOf(html).filter((tag) => tag === 'svg')).toHaveLength(1);
+    expect(recordOf(html)).toEqual(JSON.parse(JSON.stringify(result)));
+    expect(html.match(/<td class="number">0\.\d+<\/td>/g)!.length).toBeGreaterThanOrEqual(4);
+    expect(tagsOf(powerHtml(await planPower({ groups, sizes: [[20, 20]] })))).not.toContain('svg');
+  });
+
+  it('of a self check holds every case and its record', async () => {
+    const cases = (await shippedCases()).slice(0, 3);
+    const report = await selfCheck(cases, { runtime: 'r', engine: 'e', system: 's', architecture: 'a' });
+    const html = selfCheckHtml(report);
+    tagsOf(html);
+    expect(recordOf(html)).toEqual(JSON.parse(JSON.stringify(report)));
+    for (const { id, answers } of cases) {
+      expect(html).toContain(`<h3>${id}: `);
+      for (const { what } of answers) expect(html).toContain(`<th scope="row">${escapedText(what)}</th>`);
+    }
   });
 
   it('holds several results, each under a heading of its own, ids apart', async () => {
