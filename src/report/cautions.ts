@@ -1,5 +1,8 @@
-// What a reader should know before using the answer: remarks that belong to this table first, then the cautions that
-// belong to every p-value (Wasserstein & Lazar 2016).
+// What a reader should know before using the answer: remarks that belong to this table first, then whether an approximation
+// would do, then the cautions that belong to every p-value (Wasserstein & Lazar 2016).
+import { isOneTableOnly } from '../result/describe.js';
+import { shown } from '../result/label-words.js';
+import { digits, percentWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
 import type { Sentence } from './page.js';
 
@@ -8,23 +11,35 @@ const unitsIndependent =
 const clustersIndependent =
   'Clusters were permuted whole: their members may depend on each other, but clusters were taken as independent of each other, and as assigned to rows whole.';
 
-const standing = [
-  'Association is not causation.',
-  'A p says how well chance alone explains the counts; it is not the size of an effect, nor the probability that there is none.',
-  unitsIndependent,
-  "A decision that can hurt someone (clinical, food, product safety) belongs with the study's protocol, local rules and a qualified statistician.",
-] as const;
+const rightUse =
+  'Association is not causation; a p is neither the size of an effect nor the probability that there is none.';
+const whoDecides =
+  "A decision that can hurt someone (clinical, food, product safety) belongs with the study's protocol, local rules and a qualified statistician.";
 
 export const cautionsFor = (result: Result): Sentence[] => [
   ...result.notes.map(({ text }) => warning(asSentence(text))),
-  ...standingFor(result).map((text): Sentence => ({ kind: 'sentence', text, tone: 'plain' })),
+  ...[
+    ...footing(result),
+    rightUse,
+    result.clusters === undefined ? unitsIndependent : clustersIndependent,
+    whoDecides,
+  ].map(plain),
 ];
 
-/** With clusters the units within one need no independence, the clusters do. */
-const standingFor = ({ clusters }: Result): readonly string[] =>
-  clusters === undefined ? standing : standing.map((text) => (text === unitsIndependent ? clustersIndependent : text));
+/** How far an approximation could be leant on here: the expected counts, and what Cochran (1954) advises of them. */
+function footing(result: Result): string[] {
+  if (isOneTableOnly(result) || result.plan.nullValue !== undefined) return [];
+  const { smallestExpected, shareBelowFive, cochranSentence } = result.diagnostics;
+  const where = result.plan.fixed === 'pairs' ? ' off the diagonal' : '';
+  const share =
+    shareBelowFive === 0 ? `no cell${where} expects` : `${percentWords(shareBelowFive)} of the cells${where} expect`;
+  const smallest = smallestExpected === 0 ? '0' : digits(smallestExpected, 3);
+  return [`The smallest expected count${where} is ${smallest}; ${share} fewer than 5. ${cochranSentence}`];
+}
 
-const warning = (text: string): Sentence => ({ kind: 'sentence', text, tone: 'warning' });
+const sentence = (text: string, tone: Sentence['tone']): Sentence => ({ kind: 'sentence', text: shown(text), tone });
+const plain = (text: string): Sentence => sentence(text, 'plain');
+const warning = (text: string): Sentence => sentence(text, 'warning');
 
 /** Notes are written as clauses or as sentences; here they all become sentences. */
 const asSentence = (text: string): string =>

@@ -5,7 +5,6 @@ import type { Result } from '../result/result.js';
 /** Colour that a report may use; it only repeats what words already say. Strings in, strings out. */
 export interface Painter {
   bold(text: string): string;
-  dim(text: string): string;
   /** For what a reader must not miss. */
   warn(text: string): string;
 }
@@ -13,7 +12,7 @@ export interface Painter {
 const asItIs = (text: string): string => text;
 
 /** No colour at all. */
-export const plainPainter: Painter = { bold: asItIs, dim: asItIs, warn: asItIs };
+export const plainPainter: Painter = { bold: asItIs, warn: asItIs };
 
 export interface ReportSettings {
   /** Columns of the text report, from 40; anything less is taken as 40. */

@@ -5,6 +5,7 @@ import { countWords } from '../result/number-words.js';
 import type { InputEcho, Result } from '../result/result.js';
 import type { Format, ReportSettings } from './format.js';
 import { histogramLines, histogramWords } from './histogram.js';
+import { marksOf, type Mark, type Marks } from './marks.js';
 import { pageFor, type Block, type Grid, type Sentence } from './page.js';
 
 export const markdown: Format = {
@@ -29,9 +30,11 @@ function blockText(block: Block, result: Result, { histogram }: ReportSettings):
     case 'sentence':
       return sentenceText(block);
     case 'table':
-      return tableText(result.input);
+      return tableText(result.input, marksOf(result));
     case 'grid':
       return gridText(block);
+    case 'endings':
+      return `${escaped(block.start)}\n\n${block.endings.map(({ number, words }) => `- ${escaped(number)} ${escaped(words)}`).join('\n')}`;
     case 'picture': {
       const { nullSummary } = result;
       if (histogram === undefined || nullSummary === undefined || block.picture !== 'null') return '';
@@ -54,7 +57,7 @@ const ruleUnder = (headings: readonly string[]): string => row(headings.map((_, 
 const gridText = ({ headings, rows }: Grid): string =>
   [row(headings.map(escaped)), ruleUnder(headings), ...rows.map((cells) => row(cells.map(escaped)))].join('\n');
 
-function tableText(input: InputEcho): string {
+function tableText(input: InputEcho, marks: Marks | undefined): string {
   const bold = (words: string): string => `**${words}**`;
   const headings = ['', ...input.columnLabels.map(labelText), bold('all')];
   return [
@@ -63,13 +66,15 @@ function tableText(input: InputEcho): string {
     ...input.counts.map((counts, i) =>
       row([
         labelText(input.rowLabels[i]!),
-        ...counts.map((n, j) => (input.impossible?.[i]?.[j] ? '-' : countWords(n))),
+        ...counts.map((n, j) => (input.impossible?.[i]?.[j] ? '-' : markedCount(n, marks?.[i]?.[j]))),
         bold(countWords(input.rowTotals[i]!)),
       ]),
     ),
     row([bold('all'), ...[...input.columnTotals, input.total].map((total) => bold(countWords(total)))]),
   ].join('\n');
 }
+
+const markedCount = (count: number, mark: Mark = ''): string => `${countWords(count)}${mark === '' ? '' : ` ${mark}`}`;
 
 const labelText = (label: string): string => (label.trim() === '' ? '(blank)' : escaped(shown(label)));
 

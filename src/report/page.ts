@@ -1,26 +1,23 @@
 // What a report for people says, and in which order, before any format lays it out: what was tested, the table, the
-// answer with its error, how strong, how fragile, other readings, the footing of the approximation, cautions, how to run it again.
-import { citedStatistic, isOneTableOnly, pSentence, tableWords, tiesSentence } from '../result/describe.js';
+// answer with its error, the effect, the cells, what another choice would change, how fragile, cautions, how to run it again.
 import { errorSentences } from '../result/error-sentences.js';
-import { levelSentences } from '../result/level-words.js';
-import { designSentences } from '../result/design-words.js';
 import { quoted, shown } from '../result/label-words.js';
-import { strataInWords } from '../result/strata-words.js';
-import { digits, percentWords } from '../result/number-words.js';
-import { statedOpening, statedQuestion } from '../result/stated-words.js';
+import { statedQuestion } from '../result/stated-words.js';
 import type { Result } from '../result/result.js';
 import { cautionsFor } from './cautions.js';
+import { legendWords, marksOf } from './marks.js';
 import type { PictureName } from './pictures/names.js';
-import { pairsQuestion, pairsSection } from './sections/pairs.js';
-import { quasiSection } from './sections/quasi.js';
 import { againCommand, againInWords, againSentences } from './run-again.js';
-import { comparisonBlocks } from './sections/comparisons.js';
-import { orderSection } from './sections/order.js';
 import { cellsBlocks } from './sections/cells.js';
-import { fragilityBlocks } from './sections/fragility.js';
+import { choiceBlocks } from './sections/choices.js';
+import { comparisonBlocks } from './sections/comparisons.js';
 import { strengthBlocks } from './sections/effects.js';
-import { isOfAgreement, strataSections } from './sections/strata.js';
-import { clusterSentences, methodSentences, missingSentences, sourceWords } from './setting.js';
+import { fragilityBlocks } from './sections/fragility.js';
+import { orderBlocks } from './sections/order.js';
+import { pairsBlocks, pairsQuestion } from './sections/pairs.js';
+import { quasiSection } from './sections/quasi.js';
+import { agreementSection, strataBlocks, strataSection } from './sections/strata.js';
+import { methodSentence, testedSentences } from './setting.js';
 
 export interface Sentence {
   readonly kind: 'sentence';
@@ -47,13 +44,20 @@ export interface Grid {
   readonly rows: readonly (readonly string[])[];
 }
 
+/** Endings of one sentence, a line each: the number first, then under what choice it comes out. */
+export interface Endings {
+  readonly kind: 'endings';
+  readonly start: string;
+  readonly endings: readonly { readonly number: string; readonly words: string }[];
+}
+
 /** A picture of the result; formats that cannot draw it say or show what they can. */
 export interface PicturePlace {
   readonly kind: 'picture';
   readonly picture: PictureName;
 }
 
-export type Block = Sentence | TablePlace | Command | Grid | PicturePlace;
+export type Block = Sentence | TablePlace | Command | Grid | Endings | PicturePlace;
 
 export interface Section {
   readonly heading: string;
@@ -72,28 +76,22 @@ export function pageFor(result: Result): Page {
   };
 }
 
-const forestBlock = ({ strata }: Result): Block[] =>
-  strata?.oddsRatios === undefined ? [] : [{ kind: 'picture', picture: 'strata' }];
-
 const sectionsOf = (result: Result): Section[] => [
-  { heading: 'What was tested', blocks: tested(result) },
-  { heading: 'The table', blocks: [{ kind: 'table' }, { kind: 'picture', picture: 'mosaic' }] },
-  ...strataSections(result)
-    .slice(0, 1)
-    .map(({ heading, blocks }) => ({ heading, blocks: [...blocks, ...forestBlock(result)] })),
+  { heading: 'What was tested', blocks: testedSentences(result).map(plain) },
+  { heading: 'The table', blocks: table(result) },
+  strataSection(result),
   { heading: 'The answer', blocks: answer(result) },
-  { heading: 'How strong is it?', blocks: result.strata === undefined ? strengthBlocks(result) : [] },
-  { heading: 'How fragile is it?', blocks: fragilityBlocks(result) },
-  ...strataSections(result).slice(1),
-  { heading: 'Other readings of the same table', blocks: otherReadings(result) },
-  orderSection(result),
-  pairsSection(result),
+  {
+    heading: 'How strong is it?',
+    blocks: [...strataBlocks(result), ...pairsBlocks(result), ...strengthBlocks(result), ...orderBlocks(result)],
+  },
+  agreementSection(result),
   { heading: 'Which cells?', blocks: cellsBlocks(result) },
   { heading: 'Which lines differ?', blocks: comparisonBlocks(result) },
-  { heading: 'If the study fixed something else', blocks: designSentences(result).map(plain) },
   quasiSection(result),
-  { heading: 'Would an approximation do?', blocks: footing(result) },
-  { heading: 'Before you use it', blocks: cautionsFor(result).map(({ text, tone }) => sentence(text, tone)) },
+  { heading: 'What another choice would change', blocks: choiceBlocks(result) },
+  { heading: 'How fragile is it?', blocks: fragilityBlocks(result) },
+  { heading: 'Before you use it', blocks: cautionsFor(result) },
   { heading: 'To run it again', blocks: again(result) },
 ];
 
@@ -118,21 +116,10 @@ function wholeQuestion(result: Result): string {
 const sentence = (text: string, tone: Sentence['tone']): Sentence => ({ kind: 'sentence', text: shown(text), tone });
 const plain = (text: string): Sentence => sentence(text, 'plain');
 
-const tested = (result: Result): Block[] => [
-  plain(
-    result.strata === undefined
-      ? `A ${tableWords(result)}, ${sourceWords(result)}.`
-      : `${strataInWords(result)}, ${sourceWords(result)}.`,
-  ),
-  ...missingSentences(result).map(plain),
-  ...levelSentences(result.input).map(plain),
-  ...clusterSentences(result).map(plain),
-  plain(
-    result.plan.nullValue === undefined
-      ? `Measured by ${citedStatistic(result.statistic.name)}.`
-      : statedOpening(result.pValues[0]!)!,
-  ),
-  ...methodSentences(result).map(plain),
+const table = (result: Result): Block[] => [
+  { kind: 'table' },
+  ...(marksOf(result) === undefined ? [] : [plain(legendWords(result))]),
+  { kind: 'picture', picture: 'mosaic' },
 ];
 
 function answer(result: Result): Block[] {
@@ -140,30 +127,9 @@ function answer(result: Result): Block[] {
   return [sentence(result.sentence, 'answer'), ...errorSentences(result.pValues[0]!).map(plain), ...picture];
 }
 
-function otherReadings(result: Result): Block[] {
-  if (isOneTableOnly(result)) return [];
-  const [headline, ...others] = result.pValues.filter(({ statistic }) => !isOfAgreement(statistic));
-  const ties = tiesSentence(headline!);
-  return [...(ties === undefined ? [] : [ties]), ...others.map((p) => pSentence(result, p))].map(plain);
-}
-
-function footing(result: Result): Block[] {
-  if (isOneTableOnly(result) || result.plan.nullValue !== undefined) return [];
-  const { smallestExpected, shareBelowFive, cochranSentence } = result.diagnostics;
-  const where = result.plan.fixed === 'pairs' ? ' off the diagonal' : '';
-  const share =
-    shareBelowFive === 0 ? `no cell${where} expects` : `${percentWords(shareBelowFive)} of the cells${where} expect`;
-  return [
-    plain(
-      `The smallest expected count${where} is ${smallestExpected === 0 ? '0' : digits(smallestExpected, 3)}; ${share} fewer than 5.`,
-    ),
-    plain(cochranSentence),
-  ];
-}
-
 function again(result: Result): Block[] {
   const words = againCommand(result);
   const otherwise = againInWords(result);
   const first: Block = words === undefined ? plain(otherwise) : { kind: 'command', words, otherwise: shown(otherwise) };
-  return [first, ...againSentences(result).map((text) => sentence(text, 'aside'))];
+  return [first, ...[methodSentence(result), ...againSentences(result)].map((text) => sentence(text, 'aside'))];
 }

@@ -199,5 +199,5 @@ export function againSentences({ input, plan, tool }: Result): string[] {
             `${plan.blockSize === null ? '' : ` in blocks of ${countWords(plan.blockSize)}`}: the same seed gives the same digits on any machine.`,
         ];
   const bytes = input.sha256 === null ? [] : [`The bytes read have the SHA-256 ${input.sha256}.`];
-  return [...draws, ...bytes, `${tool.name} ${tool.version}; the json format holds every digit and the whole plan.`];
+  return [...draws, ...bytes, `${tool.name} ${tool.version}; the json format holds every digit, measure and setting.`];
 }

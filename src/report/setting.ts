@@ -1,14 +1,17 @@
 // The setting of a test in sentences: where the counts came from, what was missing, what chance was taken to be, and
 // which method was picked and why.
+import { citedStatistic, tableWords } from '../result/describe.js';
 import { chanceSentence } from '../result/design-words.js';
+import { levelSentences } from '../result/level-words.js';
+import { statedOpening } from '../result/stated-words.js';
 import { quoted } from '../result/label-words.js';
 import { countWords } from '../result/number-words.js';
 import { coinSentence } from './sections/pairs.js';
-import { scoresWords } from '../result/strata-words.js';
+import { scoresWords, strataInWords } from '../result/strata-words.js';
 import type { InputSource, Result } from '../result/result.js';
 
 /** How the table was read, as the end of a sentence that names it. */
-export function sourceWords({ input: { source } }: Result): string {
+function sourceWords({ input: { source } }: Result): string {
   switch (source.form) {
     case 'inline':
       return 'typed in';
@@ -46,7 +49,7 @@ const partWords = (has: boolean | undefined, words: string): string[] =>
   has === undefined ? [] : [has ? words : words.replace('a ', 'no ')];
 
 /** Raw records: how many were read, and what became of those with a value missing. */
-export function missingSentences({ input: { missing } }: Result): string[] {
+function missingSentences({ input: { missing } }: Result): string[] {
   if (missing === null) return [];
   const read = `${countWords(missing.records)} records were read`;
   const lacking = [
@@ -89,7 +92,7 @@ function scoreSentences(result: Result): string[] {
 }
 
 /** Units that belong together, in a sentence. */
-export function clusterSentences({ clusters, input }: Result): string[] {
+function clusterSentences({ clusters, input }: Result): string[] {
   if (clusters === undefined) return [];
   const by = clusters.from === null ? '' : ` from ${quoted(clusters.from)}`;
   const rows = input.rowLabels.map((label, i) => `${countWords(clusters.byRow[i]!)} in ${quoted(label)}`).join(', ');
@@ -100,17 +103,27 @@ export function clusterSentences({ clusters, input }: Result): string[] {
   return [`The counts come in ${countWords(clusters.number)} clusters${by} of ${sizes}: ${rows}.`];
 }
 
-/** What chance was taken to be, and the method with the reason for it. */
-export function methodSentences(result: Result): string[] {
-  const { plan } = result;
-  const picked = plan.methodAsked === plan.method ? '' : `picked by ${plan.methodAsked}: `;
+/** What was tested, on what, and what chance was taken to do. */
+export const testedSentences = (result: Result): string[] => {
+  const { plan, input, statistic, pValues } = result;
+  const table = result.strata === undefined ? `A ${tableWords(result)}` : strataInWords(result);
   return [
+    `${table}, ${sourceWords(result)}.`,
+    ...missingSentences(result),
+    ...levelSentences(input),
+    ...clusterSentences(result),
+    plan.nullValue === undefined ? `Measured by ${citedStatistic(statistic.name)}.` : statedOpening(pValues[0]!)!,
     ...scoreSentences(result),
     ...(plan.lambda === undefined ? [] : [`Lambda: ${plan.lambda}.`]),
     ...(plan.statisticDigest === undefined
       ? []
       : [`The module of the statistic has the SHA-256 ${plan.statisticDigest}.`]),
     ...(plan.method === 'asymptotic' ? [] : [chanceOf(result)]),
-    `Method: ${plan.method}, ${picked}${plan.methodReason.replace(/\.$/, '')}.`,
   ];
+};
+
+/** The method with the reason for it. */
+export function methodSentence({ plan }: Result): string {
+  const picked = plan.methodAsked === plan.method ? '' : `picked by ${plan.methodAsked}: `;
+  return `Method: ${plan.method}, ${picked}${plan.methodReason.replace(/\.$/, '')}.`;
 }

@@ -4,11 +4,7 @@ import { shown } from '../result/label-words.js';
 import { countWords } from '../result/number-words.js';
 import type { InputEcho } from '../result/result.js';
 import { cutInside, cutTo, displayWidth, padLeft, padRight } from './display-width.js';
-
-export interface TableLine {
-  readonly text: string;
-  readonly part: 'labels' | 'counts' | 'totals' | 'remark';
-}
+import type { Mark, Marks } from './marks.js';
 
 const totalsLabel = 'all';
 /** How wide a label may be, from generous to tight: the first that needs no folding is taken. */
@@ -35,11 +31,11 @@ interface Spacing {
 const spacingFor = (width: number): Spacing =>
   width < narrow ? { gap: 2, foldedHeading: 8 } : { gap: 3, foldedHeading: 12 };
 
-/** Lines of at most `width` columns (from 38: a count of 16 digits, set in threes, beside a label). */
-export function tableLines(input: InputEcho, width: number): TableLine[] {
+/** Lines of at most `width` columns (from 38: a count of 16 digits, set in threes, beside a label). Marks stand behind the counts. */
+export function tableLines(input: InputEcho, width: number, marks?: Marks): string[] {
   const spacing = spacingFor(width);
   const rowLabels = [...input.rowLabels.map(labelWords), totalsLabel];
-  const columns = columnsOf(input);
+  const columns = columnsOf(input, marks);
   const labelsWhole = widest(rowLabels);
   for (const limit of rowLabelLimits) {
     const labelWidth = Math.min(labelsWhole, limit);
@@ -56,13 +52,19 @@ const labelWords = (label: string): string => (label.trim() === '' ? '(blank)' :
 
 const widest = (labels: readonly string[]): number => Math.max(...labels.map(displayWidth));
 
-function columnsOf(input: InputEcho): Column[] {
+function columnsOf(input: InputEcho, marks: Marks | undefined): Column[] {
   const column = (
     heading: string,
     counts: readonly number[],
     impossible: readonly (boolean | undefined)[] = [],
+    signs: readonly Mark[] = [],
   ): Column => {
-    const words = counts.map((n, i) => (impossible[i] ? '-' : countWords(n)));
+    // Counts of a column stay under each other whether a sign follows or not.
+    const behind = signs.some((sign) => sign !== '') ? 2 : 0;
+    const words = counts.map((n, i) => {
+      const sign = signs[i] ?? '';
+      return (impossible[i] ? '-' : countWords(n)) + padRight(sign === '' ? '' : ` ${sign}`, behind);
+    });
     return { heading, counts: words, countWidth: widest(words) };
   };
   return [
@@ -71,6 +73,7 @@ function columnsOf(input: InputEcho): Column[] {
         labelWords(label),
         [...input.counts.map((row) => row[j]!), input.columnTotals[j]!],
         input.impossible?.map((row) => row[j]),
+        marks?.map((row) => row[j]!),
       ),
     ),
     column(totalsLabel, [...input.rowTotals, input.total]),
@@ -98,15 +101,15 @@ function foldedLines(
   columns: readonly Column[],
   room: number,
   { gap, foldedHeading }: Spacing,
-): TableLine[] {
+): string[] {
   const limits = [...headingLimits.filter((limit) => limit > foldedHeading), foldedHeading];
   const tight = columns.map((column) => columnWidth(column, foldedHeading));
   return columnGroups(tight, room, gap).flatMap(({ from, to }, place) => {
     const group = columns.slice(from, to);
     const widths = widthsWithin(group, room, gap, limits) ?? tight.slice(from, to);
     return [
-      ...(place === 0 ? [] : [{ text: '', part: 'remark' as const }]),
-      { text: whichColumns(from, to, columns.length - 1), part: 'remark' as const },
+      ...(place === 0 ? [] : ['']),
+      whichColumns(from, to, columns.length - 1),
       ...linesOf(rowLabels, labelWidth, group, widths, gap),
     ];
   });
@@ -145,7 +148,7 @@ function linesOf(
   columns: readonly Column[],
   widths: readonly number[],
   gap: number,
-): TableLine[] {
+): string[] {
   const laid = (label: string, cells: readonly string[]): string =>
     padRight(label, labelWidth) + cells.map((cell, j) => ' '.repeat(gap) + padLeft(cell, widths[j]!)).join('');
   const columnHeadings = columns.map(({ heading }) => heading);
@@ -155,12 +158,7 @@ function linesOf(
     return laid(label, counts);
   });
   const rule = widths.map((width) => '-'.repeat(width));
-  return [
-    { text: laid('', headings), part: 'labels' },
-    ...rows.slice(0, -1).map((text): TableLine => ({ text, part: 'counts' })),
-    { text: laid('', rule), part: 'totals' },
-    { text: rows.at(-1)!, part: 'totals' },
-  ];
+  return [laid('', headings), ...rows.slice(0, -1), laid('', rule), rows.at(-1)!];
 }
 
 /** Cut at the end; labels that would then look alike are cut inside, and numbered where even that is not enough. */

@@ -1,9 +1,10 @@
 // The report for a terminal: the page, folded to the width, with colour that only repeats what words say.
 import type { Result } from '../result/result.js';
-import { displayWidth } from './display-width.js';
+import { displayWidth, padLeft } from './display-width.js';
 import { fold } from './fold.js';
 import type { Format, Painter, ReportSettings } from './format.js';
-import { pageFor, type Block, type Command, type Section, type Sentence } from './page.js';
+import { marksOf } from './marks.js';
+import { pageFor, type Block, type Command, type Endings, type Section, type Sentence } from './page.js';
 import { histogramLines, histogramWords } from './histogram.js';
 import { gridLines } from './text-grid.js';
 import { tableLines } from './text-table.js';
@@ -37,14 +38,15 @@ function blockLines(block: Block, result: Result, { width, paint, histogram }: R
     case 'sentence':
       return fold(block.text, Math.min(width, widestProse), hanging).map(toneOf(block, paint));
     case 'table':
-      return tableLines(result.input, width - margin).map(({ text: line, part }) => {
-        const indented = `${' '.repeat(line === '' ? 0 : margin)}${line}`.trimEnd();
-        return part === 'counts' || indented === '' ? indented : paint.dim(indented);
-      });
+      return tableLines(result.input, width - margin, marksOf(result)).map((line) =>
+        `${' '.repeat(margin)}${line}`.trimEnd(),
+      );
     case 'grid':
       return gridLines(block, Math.min(width, widestProse) - margin).map((line) =>
         `${' '.repeat(margin)}${line}`.trimEnd(),
       );
+    case 'endings':
+      return endingLines(block, Math.min(width, widestProse));
     case 'picture': {
       const { nullSummary } = result;
       if (histogram === undefined || nullSummary === undefined || block.picture !== 'null') return [];
@@ -68,10 +70,22 @@ function toneOf({ tone }: Sentence, paint: Painter): (line: string) => string {
     case 'warning':
       return (line) => paint.warn(line);
     case 'aside':
-      return (line) => paint.dim(line);
     case 'plain':
       return (line) => line;
   }
+}
+
+/** Numbers under each other, the words that go with each to their right. */
+function endingLines({ start, endings }: Endings, width: number): string[] {
+  const column = Math.max(...endings.map(({ number }) => displayWidth(number)));
+  const indent = margin + column + 2;
+  return [
+    ...fold(start, width, hanging),
+    ...endings.flatMap(({ number, words }) => {
+      const [first, ...rest] = fold(words, width, { first: indent, rest: indent });
+      return [`${' '.repeat(margin)}${padLeft(number, column)}${first!.slice(margin + column)}`, ...rest];
+    }),
+  ];
 }
 
 /** A command over as many lines as it needs, joined by backslashes; a sentence where a word is wider than a line. */

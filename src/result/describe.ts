@@ -73,13 +73,19 @@ const tailWords = { upper: 'upper-tailed', lower: 'lower-tailed', both: 'two-tai
 export function pName(p: PValue): string {
   const stated = statedPName(p);
   if (stated !== undefined) return stated;
-  return `${tailWords[p.tail]} ${kindOf(p)}${p.rule === undefined ? '' : ` (rule: ${p.rule})`}`;
+  return `${tailWords[p.tail]} ${pKind(p) === '' ? 'p' : `${pKind(p)} p`}${ruleWords(p)}`;
 }
 
-function kindOf(p: PValue): string {
-  if (p.method === 'asymptotic') return 'p';
-  if (p.method === 'unconditional') return 'unconditional p';
-  return isBootstrap(p) ? 'parametric-bootstrap p' : 'permutation p';
+const ruleWords = ({ rule }: PValue): string => (rule === undefined ? '' : ` (rule: ${rule})`);
+
+/** The tail with its rule: "two-tailed (rule: distance)". */
+export const tailOf = (p: PValue): string => `${tailWords[p.tail]}${ruleWords(p)}`;
+
+/** What kind of p it is, by what chance was taken to do; nothing for an approximation. */
+export function pKind(p: PValue): string {
+  if (p.method === 'asymptotic') return '';
+  if (p.method === 'unconditional') return 'unconditional';
+  return isBootstrap(p) ? 'parametric-bootstrap' : 'permutation';
 }
 
 /** The number itself, no further than its error allows. */
@@ -183,15 +189,6 @@ function shortFoundWords(p: PValue): string {
   if (p.method === 'sample') return `${errorAside(p)}, from the same draws`;
   const degrees = p.degreesOfFreedom === undefined ? '' : ` on ${degreesWords(p.degreesOfFreedom)}`;
   return ` by the ${approximationName(p)} approximation${degrees}; its error is unknown`;
-}
-
-/** What counting ties by half, or not at all, would make of the p; undefined when the null does not tell. */
-export function tiesSentence(p: PValue): string | undefined {
-  if (p.mid === null || p.strict === null || p.tied === 0) return undefined;
-  return (
-    `With ties counted by half (mid-p, Lancaster 1961) the p would be ${besideP(p, p.mid)}, ` +
-    `with ties left out ${besideP(p, p.strict)}; neither is guaranteed.`
-  );
 }
 
 /** "4 x 5 table of 592 counts". */

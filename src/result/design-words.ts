@@ -62,23 +62,16 @@ function placeWords(nuisance: PValue['nuisance']): string {
     : `the largest over the proportions of the first row and the first column (found at ${shareWords(value)} and ${shareWords(second)})`;
 }
 
-/** The panel: what was assumed, then a line for each other design. */
-export function designSentences({ designs, plan }: Pick<Result, 'designs' | 'plan'>): string[] {
-  if (designs === undefined) return [];
-  const assumed = `Taken as fixed: ${fixedWords(plan.fixed)}${plan.fixed === 'both' ? ' (unless --fixed says what the study held fixed)' : ''}.`;
-  return [assumed, ...designs.filter((line) => !line.assumed).map((line) => lineSentence(line, plan))];
-}
-
 type DesignLine = NonNullable<Result['designs']>[number];
 
-function lineSentence(line: DesignLine, { nuisanceRisk }: Result['plan']): string {
+/** p had the study fixed something else, as the end of "p would be". */
+export function designEnding(line: DesignLine, { nuisanceRisk }: Result['plan']): { number: string; words: string } {
   const { fixed, p, log10P, reason, workUnits, orderedBy, nuisance, method } = line;
-  const start = `Had the study fixed ${fixedWords(fixed)}, `;
+  const start = `had the study fixed ${fixedWords(fixed)} (--fixed ${fixed})`;
   if (reason === 'over-bound') {
-    const work = workUnits === undefined ? '' : ` (forecast: ${countWords(Number(workUnits.toPrecision(2)))} units)`;
-    return `${start}p would take more work than this panel spends${work}; ask for it with --fixed ${fixed}.`;
+    const work = workUnits === undefined ? '' : `: forecast at ${countWords(Number(workUnits.toPrecision(2)))} units`;
+    return { number: 'unknown', words: `${start}, which takes more work than is done unasked${work}` };
   }
-  const number = p === null ? tinyWords(log10P ?? 0) : probabilityWords(p);
   const place =
     nuisance === undefined
       ? ''
@@ -87,7 +80,10 @@ function lineSentence(line: DesignLine, { nuisanceRisk }: Result['plan']): strin
         : `, at proportions of ${shareWords(nuisance.value)} and ${shareWords(nuisance.second)}`;
   const kind =
     method === 'unconditional' ? 'unconditional' : method === 'sample' ? 'sampled permutation' : 'permutation';
-  return `${start}p would be ${number} (${kind}, ordered by ${orderedBy ?? 'nothing'}${place}).`;
+  return {
+    number: p === null ? tinyWords(log10P ?? 0) : probabilityWords(p),
+    words: `${start}: ${kind}, ordered by ${orderedBy ?? 'nothing'}${place}`,
+  };
 }
 
 /** For the methods paragraph. */

@@ -13,6 +13,7 @@ import {
   tableWords,
   type ResultBeforeWords,
 } from './describe.js';
+import { comparisonMethods, orderMethods } from './beside-methods.js';
 import { cellsMethods } from './cell-words.js';
 import { levelSentences } from './level-words.js';
 import { bootstrapWords, isBootstrap, unconditionalSentence } from './design-words.js';
@@ -45,7 +46,9 @@ export function methodsFor(result: ResultBeforeWords): string {
       : [ruleSentence(headline), tiesSentence(result, headline), besideSentence(result, headline)]),
     agreement ? agreementInterval(result) : undefined,
     cellsMethods(result),
+    comparisonMethods(result),
     effectsSentence(result),
+    orderMethods(result),
     `Computed with ${result.tool.name} ${result.tool.version}.`,
   ]
     .filter((sentence) => sentence !== undefined)

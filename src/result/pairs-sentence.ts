@@ -12,7 +12,9 @@ import {
   type ResultBeforeWords,
 } from './describe.js';
 import { quoted } from './label-words.js';
-import { countWords, percentWords, pointsWords, statisticValueWords } from './number-words.js';
+import { intervalWords } from './headline-effect.js';
+import { countWords, digits, percentWords, pointsWords, statisticValueWords } from './number-words.js';
+import type { Effect } from './result.js';
 
 /** Labels in it are quoted and show no control characters. */
 export function changeSentence(result: ResultBeforeWords): string {
@@ -27,20 +29,39 @@ export function changeSentence(result: ResultBeforeWords): string {
   );
 }
 
-function seenWords({ input, statistic }: ResultBeforeWords): string {
+function seenWords({ input, statistic, effects = [] }: ResultBeforeWords): string {
   const { counts, rowLabels, rowTotals, columnTotals, total } = input;
   const all = `Of ${countWords(total)} pairs`;
   if (statistic.name !== 'mcnemar') {
     const changed = total - counts.reduce((sum, row, k) => sum + row[k]!, 0);
-    return `${all} in ${rowLabels.length} levels, ${countWords(changed)} lie off the diagonal`;
+    return `${all} in ${rowLabels.length} levels, ${countWords(changed)} lie off the diagonal${furthestWords(effects)}`;
   }
   const [there, back] = [counts[0]![1]!, counts[1]![0]!];
   const [first, second] = rowLabels.map(quoted) as [string, string];
   const shares = `${percentWords(rowTotals[0]! / total)} in the rows, ${percentWords(columnTotals[0]! / total)} in the columns`;
   return (
     `${all}, ${countWords(there)} went from ${first} to ${second} and ${countWords(back)} back ` +
-    `(${first}: ${shares}; rows minus columns: ${pointsWords((there - back) / total)})`
+    `(${first}: ${shares}; rows minus columns: ${pointsWords((there - back) / total)}${limitsWords(effects.find(isDifference))})`
   );
+}
+
+const isDifference = ({ name }: Effect): boolean => name === 'matched-difference';
+
+/** ", 95% interval -22.9 to 1.75", by the score method. */
+function limitsWords(effect: Effect | undefined): string {
+  const words = intervalWords(
+    effect?.intervals.find(({ method }) => method === 'tango'),
+    (limit) => (typeof limit === 'number' ? digits(100 * limit, 3) : limit),
+  );
+  return words === undefined ? '' : `, ${words}`;
+}
+
+/** The level whose two shares differ most. */
+function furthestWords(effects: readonly Effect[]): string {
+  const size = ({ estimate }: Effect): number => (typeof estimate === 'number' ? Math.abs(estimate) : -1);
+  const [furthest] = effects.filter(isDifference).sort((a, b) => size(b) - size(a));
+  if (furthest === undefined || typeof furthest.estimate !== 'number') return '';
+  return `, the share of ${quoted(furthest.event ?? '')} differs most (rows minus columns: ${pointsWords(furthest.estimate)}${limitsWords(furthest)}, taken alone)`;
 }
 
 function foundBy({ plan, pValues }: ResultBeforeWords): string {

@@ -127,7 +127,9 @@ describe('the panel', () => {
     ]);
     const line = result.designs!.find(({ fixed }) => fixed === 'total')!;
     expect(line).toMatchObject({ p: null, reason: 'over-bound' });
-    expect(render(result, 'text').replace(/\s+/g, ' ')).toContain('ask for it with --fixed total');
+    expect(render(result, 'text').replace(/\s+/g, ' ')).toContain(
+      'had the study fixed the total only (--fixed total), which takes more work than is done unasked',
+    );
   });
 
   it('is there for 2x2 tables only', async () => {

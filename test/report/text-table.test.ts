@@ -3,8 +3,7 @@ import { tableLines } from '../../src/report/text-table.js';
 import { beforeWords, emptyRow, hostileLabels, waldExact, wideTable } from '../helpers/sample-results.js';
 import type { InputEcho } from '../../src/result/result.js';
 
-const linesOf = (input: InputEcho, width: number): string[] =>
-  tableLines(input, width).map(({ text }) => text.trimEnd());
+const linesOf = (input: InputEcho, width: number): string[] => tableLines(input, width).map((line) => line.trimEnd());
 
 function inputWith(rowLabels: string[], columnLabels: string[], count = 1): InputEcho {
   return beforeWords({

@@ -13,17 +13,16 @@ describe('the text report', () => {
       'What was tested',
       'The table',
       'The answer',
-      'Other readings of the same table',
-      'Would an approximation do?',
+      'What another choice would change',
       'Before you use it',
       'To run it again',
     ]);
   });
 
-  it('has nothing to say of other readings or approximations where only one table is possible', () => {
-    const headings = headingsOf(render(samples.onlyOneTable, 'text'));
-    expect(headings).not.toContain('Other readings of the same table');
-    expect(headings).not.toContain('Would an approximation do?');
+  it('has nothing to say of other choices or approximations where only one table is possible', () => {
+    const report = render(samples.onlyOneTable, 'text');
+    expect(headingsOf(report)).not.toContain('What another choice would change');
+    expect(report).not.toContain('smallest expected count');
   });
 
   it('asks the one-tailed question when one tail was asked for', () => {
@@ -56,23 +55,34 @@ describe('the text report', () => {
     expect(running(render(samples.sampleResults[name]!, 'text'))).toContain(words);
   });
 
-  it('words every other p as a sentence, sampled ones with their error, approximate ones as such', () => {
-    const exact = running(render(samples.waldExact, 'text'));
+  it('gives p under every other choice as the end of one sentence, sampled ones with their error, approximate ones as such', () => {
+    const exact = render(samples.waldExact, 'text');
     expect(exact).toContain(
-      'The upper-tailed permutation p of the Wald statistic ("healed" more common in "treated") is 0.00274, exact.',
-    );
-    expect(exact).toContain(
-      'The two-tailed p (rule: distance) of the Wald statistic is 9.5e-6 by the normal approximation; its error is unknown.',
+      [
+        'What another choice would change',
+        '  p would be',
+        '      0.00280  two-tailed (rule: distance), with ties counted by half (mid-p,',
+        '               Lancaster 1961), not guaranteed',
+        '     0.000119  two-tailed (rule: distance), with ties left out, not guaranteed',
+        '      0.00274  upper-tailed ("healed" more common in "treated"), exact',
+        '  above 0.999  lower-tailed ("healed" more common in "control"), exact',
+        '       9.5e-6  two-tailed (rule: distance), by the normal approximation, error',
+        '               unknown',
+      ].join('\n'),
     );
     expect(running(render(samples.emptyRow, 'text'))).toContain(
-      "The upper-tailed p of Pearson's chi-square statistic is 0.0186 by the chi-square approximation on 4 degrees of freedom; its error is unknown.",
-    );
-    expect(exact).toContain(
-      'With ties counted by half (mid-p, Lancaster 1961) the p would be 0.00280, with ties left out 0.000119',
+      '0.0186 upper-tailed, by the chi-square approximation on 4 degrees of freedom, error unknown',
     );
     expect(running(render(samples.doubledSampled, 'text'))).toContain(
-      'is 0.041 (standard error 0.0028, 99% interval 0.0338 to 0.0483), from the same draws.',
+      '0.041 upper-tailed ("passed" more common in "new die"), from the same draws (standard error 0.0028, 99% interval 0.0338 to 0.0483)',
     );
+  });
+
+  it('says that a choice made after the fact is none, wherever it shows what choices change', () => {
+    for (const result of Object.values(samples.sampleResults)) {
+      const report = running(render(result, 'text'));
+      expect(report.includes('p would be')).toBe(report.includes('Such choices belong before the counts are seen'));
+    }
   });
 
   it('counts missing records and says what became of them', () => {
@@ -112,9 +122,14 @@ describe('the text report', () => {
     const report = running(render(samples.emptyRow, 'text'));
     const caution = report.slice(report.indexOf('Before you use it'));
     expect(caution).toMatch(
-      /^Before you use it Left out because no unit falls into it \(p is the same either way\): row "not given"\. Association is not causation\./,
+      /^Before you use it Left out because no unit falls into it \(p is the same either way\): row "not given"\. The smallest expected count is 3\.00;/,
     );
-    for (const words of ['not the size of an effect', 'independent of each other', 'qualified statistician']) {
+    for (const words of [
+      'Association is not causation',
+      'neither the size of an effect',
+      'independent of each other',
+      'qualified statistician',
+    ]) {
       expect(caution).toContain(words);
     }
   });
@@ -126,7 +141,7 @@ describe('the text report', () => {
 
   it('paints nothing that words do not say: unpainted, the report is the same', () => {
     const mark = (text: string): string => `<${text}>`;
-    const painted = render(samples.waldExact, 'text', { paint: { bold: mark, dim: mark, warn: mark } });
+    const painted = render(samples.waldExact, 'text', { paint: { bold: mark, warn: mark } });
     expect(painted).toContain('<The answer>');
     expect(painted).toMatch(/< {2}The asymptotic p is smaller than the exact one/);
     expect(painted.replace(/^<(.*)>$/gm, '$1')).toBe(render(samples.waldExact, 'text'));

@@ -34,9 +34,9 @@ function wantsColour({ color, noColor, output }: LookValues, shell: Shell): bool
   return toTerminal && !refusal && terminal !== 'dumb';
 }
 
-/** Built once, at the level we decided on: left alone, chalk would look at the words of the command line itself. */
+/** Magenta can be read on light grounds and on dark ones. Built once, at the level we decided on: left alone, chalk would look at the words of the command line itself. */
 async function chalkPainter(): Promise<Painter> {
   const { Chalk } = await import('chalk');
   const chalk = new Chalk({ level: 1 });
-  return { bold: (text) => chalk.bold(text), dim: (text) => chalk.dim(text), warn: (text) => chalk.yellow(text) };
+  return { bold: (text) => chalk.bold(text), warn: (text) => chalk.magenta(text) };
 }

@@ -6,6 +6,7 @@ import type { Result } from '../../result/result.js';
 import { asText } from '../../result/sources/source.js';
 import { json } from '../json.js';
 import { defaultSettings } from '../format.js';
+import { marksOf } from '../marks.js';
 import { pageFor, type Section } from '../page.js';
 import { drawPicture, lackOf } from '../pictures/pictures.js';
 import { htmlDocument } from './document.js';
@@ -55,7 +56,7 @@ function articleFor(result: Result, k: number, alone: boolean): Markup {
   const { title, sections } = pageFor(result);
   const place = alone ? '' : ` of test ${k + 1}`;
   const draw = (block: DrawnBlock): Markup => {
-    if (block.kind === 'table') return countsTable(result.input, place);
+    if (block.kind === 'table') return countsTable(result.input, place, marksOf(result));
     return lackOf(result, block.picture) === undefined
       ? element('figure', {}, drawPicture(result, block.picture, `test-${k + 1}-${block.picture}`))
       : '';

@@ -32,6 +32,15 @@ function blockMarkup(block: Block, name: string, draw: (block: DrawnBlock) => Ma
       return worded('p', block.text, block.tone === 'plain' ? {} : { class: block.tone });
     case 'grid':
       return gridTable(block, name);
+    case 'endings':
+      return (
+        worded('p', block.start) +
+        element(
+          'ul',
+          { class: 'endings' },
+          ...block.endings.map(({ number, words }) => worded('li', `${number} ${words}`)),
+        )
+      );
     case 'command':
       return element('pre', {}, worded('code', block.words.join(' ')));
     default:

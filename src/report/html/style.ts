@@ -24,6 +24,9 @@ td.words { white-space: normal; }
 thead th, thead td { border-bottom: 1px solid var(--rule); }
 tfoot th, tfoot td { border-top: 1px solid var(--rule); }
 .number, thead th:not(:first-child) { text-align: right; }
+.more::after { content: ' +'; }
+.fewer::after { content: ' \\2212'; }
+.endings { padding-left: 1.25rem; }
 pre { background: var(--soft); padding: .75rem; white-space: pre-wrap; overflow-wrap: anywhere; }
 figure { margin: 1rem 0; }
 .keepsum-picture { width: 26rem; max-width: 100%; height: auto; }

@@ -1,6 +1,7 @@
 // Tables that a spreadsheet takes over as they are: plain digits, one cell each, headings that say what they head.
 import { shown } from '../../result/label-words.js';
 import type { InputEcho } from '../../result/result.js';
+import type { Mark, Marks } from '../marks.js';
 import type { Grid } from '../page.js';
 import { element, worded, type Markup } from './element.js';
 
@@ -13,12 +14,27 @@ const scrolling = (name: string, table: Markup): Markup =>
 /** An empty heading would head nothing. */
 const columnHeading = (words: string): Markup => (words === '' ? '<td></td>' : worded('th', words, { scope: 'col' }));
 
-const number = (count: number): Markup => element('td', { class: 'number' }, String(count));
+/** The sign of a marked count comes from its class, so that a spreadsheet takes over the digits alone. */
+const number = (count: number, mark: Mark = ''): Markup =>
+  element('td', { class: `number${mark === '' ? '' : mark === '+' ? ' more' : ' fewer'}` }, String(count));
+
+const impossible: Markup = element('td', { class: 'number' }, '-');
 
 /** @param place tells it from the other tables of counts of a report. */
-export function countsTable(input: InputEcho, place: string): Markup {
-  const line = (label: string, counts: readonly number[], total: number): Markup =>
-    element('tr', {}, worded('th', label, { scope: 'row' }), ...counts.map(number), number(total));
+export function countsTable(input: InputEcho, place: string, marks?: Marks): Markup {
+  const line = (
+    label: string,
+    counts: readonly number[],
+    total: number,
+    signs: readonly (Mark | 'impossible')[] = [],
+  ): Markup =>
+    element(
+      'tr',
+      {},
+      worded('th', label, { scope: 'row' }),
+      ...counts.map((count, j) => (signs[j] === 'impossible' ? impossible : number(count, signs[j]))),
+      number(total),
+    );
   const headings = ['', ...input.columnLabels.map(labelWords), 'all'].map(columnHeading);
   return scrolling(
     `Counts${place}`,
@@ -30,7 +46,14 @@ export function countsTable(input: InputEcho, place: string): Markup {
       element(
         'tbody',
         {},
-        ...input.rowLabels.map((label, i) => line(labelWords(label), input.counts[i]!, input.rowTotals[i]!)),
+        ...input.rowLabels.map((label, i) =>
+          line(
+            labelWords(label),
+            input.counts[i]!,
+            input.rowTotals[i]!,
+            input.impossible?.[i]?.map((is) => (is ? 'impossible' : '')) ?? marks?.[i],
+          ),
+        ),
       ),
       element('tfoot', {}, line('all', input.columnTotals, input.total)),
     ),

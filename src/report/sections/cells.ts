@@ -43,8 +43,7 @@ export function cellsBlocks(result: Result): Block[] {
     plain(
       isAdjusted
         ? `The p of a cell is exact and its own alone; adjusted over all cells (${adjustmentWords(result)}) it is the chance that the ` +
-            'smallest p of a table is as small (Westfall & Young 1993). That controls the probability of any false finding under complete ' +
-            'independence; where some cell departs, no such promise covers the others.'
+            'smallest p of a table is as small (Westfall & Young 1993). That holds under complete independence; where some cell departs, it promises nothing of the others.'
         : 'The p of a cell is exact and its own alone: among many cells some are small by chance.',
     ),
     ...notAdjusted(result),

@@ -9,7 +9,7 @@ type Extended = NonNullable<Effect['estimate']>;
 
 export function strengthBlocks(result: Result): Block[] {
   const effects = shownEffects(result);
-  if (effects.length === 0) return [];
+  if (effects.length === 0 || result.strata !== undefined) return [];
   const level = levelWords(result.plan.confidence);
   const grid: Grid = {
     kind: 'grid',
@@ -29,7 +29,6 @@ export function strengthBlocks(result: Result): Block[] {
     ...openWords(effects.map(({ interval }) => interval)),
     ...needed(result),
     ...pairing(result),
-    ...(result.effects!.length > effects.length ? ['The json format holds more measures and intervals.'] : []),
   ];
   return [...whoIsCompared(result), grid, ...remarks.map(plain)];
 }

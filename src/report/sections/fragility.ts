@@ -28,7 +28,7 @@ function movedWords({ smallest, largest }: Fragility, alpha: number): string {
   };
   const crosses = (smallest.p ?? 0) <= alpha && (largest.p ?? 0) > alpha;
   return (
-    `With a single count in a neighbouring cell p would lie between ${number(smallest)} (${move(smallest)}) and ` +
+    `One count in a neighbouring cell would bring p to between ${number(smallest)} (${move(smallest)}) and ` +
     `${number(largest)} (${move(largest)}); Dupont 1986.${crosses ? ` One count decides on which side of ${alpha} it lies.` : ''}`
   );
 }

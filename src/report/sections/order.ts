@@ -1,43 +1,38 @@
-// What the order of rows and columns adds: which question each test answers, which way the counts go, and how strongly.
-import { errorAside, foundWords, pName, pNumber, shortStatisticWords } from '../../result/describe.js';
+// What the order of rows and columns adds: which way the counts go, how strongly, and which question each test answers.
+import { errorAside, foundWords, pNumber, shortStatisticWords, tailOf } from '../../result/describe.js';
 import { quoted, shown } from '../../result/label-words.js';
 import { digits } from '../../result/number-words.js';
 import type { Result } from '../../result/result.js';
-import type { Block, Section, Sentence } from '../page.js';
+import type { Block, Endings, Sentence } from '../page.js';
 
 type Order = NonNullable<Result['order']>;
+type Ending = Endings['endings'][number];
 type Asks = Order['questions'][number]['asks'];
 type Effect = NonNullable<Result['effects']>[number];
 
-export const orderSection = (result: Result): Section => ({
-  heading: 'What the order adds',
-  blocks: result.order === undefined ? [] : [...sentences(result.order).map(plain), ...measures(result)],
-});
+/** Which way the counts go, and how strongly. */
+export const orderBlocks = (result: Result): Block[] =>
+  result.order === undefined ? [] : [...measures(result), ...directionSentence(result.order).map(plain)];
+
+/** The questions that an order allows, each with its p: ends of "p would be". */
+export const orderEndings = ({ order }: Result): Ending[] =>
+  (order?.questions ?? []).map((question) => ({
+    number: pNumber(question.p),
+    words: `${meaning[question.asks]} ${answerWords(question)}`,
+  }));
 
 const plain = (text: string): Sentence => ({ kind: 'sentence', text: shown(text), tone: 'plain' });
 
-const sentences = (order: Order): string[] => [
-  ...directionSentence(order),
-  ...order.questions.map((question) => `${meaning[question.asks]} ${answerSentence(question)}`),
-  ...(order.questions.length === 0
-    ? []
-    : [
-        'A test that uses the order finds a steady rise or fall with fewer units; it can miss a rise followed by a fall. Choose the question before you see the answers.',
-      ]),
-];
-
 const meaning: Readonly<Record<Asks, string>> = {
-  'any-departure': 'Are rows and columns related in any way, the order left out?',
-  'rise-together': 'Do they rise or fall together, by their scores?',
-  'rise-of-any-shape': 'Do the responses rise, or fall, with the groups in their listed order, in steps of any size?',
-  'groups-on-a-scale': 'Do the groups lie alike on the ordered scale?',
+  'any-departure': 'asking whether rows and columns are related in any way, the order left out:',
+  'rise-together': 'asking whether they rise or fall together, by their scores:',
+  'rise-of-any-shape': 'asking whether responses rise, or fall, with the groups as listed, in steps of any size:',
+  'groups-on-a-scale': 'asking whether the groups lie alike on the ordered scale:',
 };
 
 /** It may have draws of its own, so the seed stands with it. */
-function answerSentence({ p, seed }: Order['questions'][number]): string {
-  const found = foundWords(p, seed ?? null);
-  return `The ${pName(p)} of ${shortStatisticWords(p.statistic)} is ${pNumber(p)}${errorAside(p)}${p.method === 'asymptotic' ? ' ' : ', '}${found}.`;
-}
+const answerWords = ({ p, seed }: Order['questions'][number]): string =>
+  `${tailOf(p)}, by ${shortStatisticWords(p.statistic)}, ${foundWords(p, seed ?? null)}${errorAside(p)}`;
 
 function directionSentence({ direction }: Order): string[] {
   if (direction === undefined) return [];

@@ -3,7 +3,7 @@ import { isAbout } from '../../result/describe.js';
 import { quoted, shown } from '../../result/label-words.js';
 import { digits, levelWords } from '../../result/number-words.js';
 import type { Result } from '../../result/result.js';
-import type { Block, Grid, Section } from '../page.js';
+import type { Block, Grid } from '../page.js';
 
 /** undefined for results that are not about pairs. */
 export function pairsQuestion({ statistic, plan, input, pValues }: Result): string | undefined {
@@ -33,12 +33,12 @@ const limitNames: Readonly<Record<string, string>> = {
 
 type Effects = NonNullable<Result['effects']>;
 
-export function pairsSection(result: Result): Section {
+/** How strong the change or the agreement is. */
+export function pairsBlocks(result: Result): Block[] {
   const effects = (result.plan.paired ? result.effects : undefined) ?? [];
+  if (effects.length === 0) return [];
   const agreement = isAbout(result.statistic.name) === 'agreement';
-  const heading = agreement ? 'How strong the agreement is' : 'How strong the change is';
-  if (effects.length === 0) return { heading, blocks: [] };
-  return { heading, blocks: [gridOf(effects, result.plan.confidence), ...(agreement ? [] : [readingOf(result)])] };
+  return [gridOf(effects, result.plan.confidence), ...(agreement ? [] : [readingOf(result)])];
 }
 
 /** With more than two levels the first interval of each difference stands for all. */

@@ -13,14 +13,25 @@ const agreement: readonly string[] = ['breslow-day', 'tarone', 'zelen'];
 /** p-values that the strata section says, so that no other one does. */
 export const isOfAgreement = (statistic: string): boolean => agreement.includes(statistic);
 
-export function strataSections(result: Result): Section[] {
-  if (result.strata === undefined) return [];
-  return [
-    { heading: 'The strata', blocks: [tablesGrid(result)] },
-    { heading: 'How strong, over all strata', blocks: measures(result) },
-    { heading: 'Do the strata agree?', blocks: agreementBlocks(result) },
-  ];
-}
+/** Their tables, and a picture of their odds ratios where they have any. */
+export const strataSection = (result: Result): Section => ({
+  heading: 'The strata',
+  blocks:
+    result.strata === undefined
+      ? []
+      : [
+          tablesGrid(result),
+          ...(result.strata.oddsRatios === undefined ? [] : [{ kind: 'picture', picture: 'strata' } as const]),
+        ],
+});
+
+/** How strong it is over all strata. */
+export const strataBlocks = (result: Result): Block[] => (result.strata === undefined ? [] : measures(result));
+
+export const agreementSection = (result: Result): Section => ({
+  heading: 'Do the strata agree?',
+  blocks: result.strata === undefined ? [] : agreementBlocks(result),
+});
 
 /** More cells than this make a line that nobody reads; only totals are shown then. */
 const mostCells = 8;

@@ -44,6 +44,7 @@ Bergsma 2013 | Bergsma, W. | A bias-correction for Cramer's V and Tschuprow's T 
 Goodman & Kruskal 1954 | Goodman, L. A. and Kruskal, W. H. | Measures of association for cross classifications | Journal of the American Statistical Association | 49 | 268 | 732-764
 Goodman & Kruskal 1963 | Goodman, L. A. and Kruskal, W. H. | Measures of association for cross classifications III: approximate sampling theory | Journal of the American Statistical Association | 58 | 302 | 310-364
 Goodman & Kruskal 1972 | Goodman, L. A. and Kruskal, W. H. | Measures of association for cross classifications, IV: simplification of asymptotic variances | Journal of the American Statistical Association | 67 | 338 | 415-421
+Brown & Benedetti 1977 | Brown, M. B. and Benedetti, J. K. | Sampling behavior of tests for correlation in two-way contingency tables | Journal of the American Statistical Association | 72 | 358 | 309-315
 Kendall 1945 | Kendall, M. G. | The treatment of ties in ranking problems | Biometrika | 33 | 3 | 239-251
 Stuart 1953 | Stuart, A. | The estimation and comparison of strengths of association in contingency tables | Biometrika | 40 | 1/2 | 105-110
 Somers 1962 | Somers, R. H. | A new asymmetric measure of association for ordinal variables | American Sociological Review | 27 | 6 | 799-811

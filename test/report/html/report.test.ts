@@ -72,7 +72,7 @@ describe('the html report', () => {
     expect(tags.filter((tag) => tag === 'svg')).toHaveLength(2);
     expect(html).toContain('<html lang="en">');
     expect(html).toContain('<th scope="col">lilac</th>');
-    expect(html).toContain('<th scope="row">meadow</th><td class="number">13</td>');
+    expect(html).toContain('<th scope="row">meadow</th><td class="number more">13</td>');
   });
 
   it('loads and runs nothing', async () => {
