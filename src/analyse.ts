@@ -26,7 +26,7 @@ import { orderedAnswers } from './ordered-answers.js';
 import { type Surroundings } from './sampled-answer.js';
 import { type TableParts } from './table/table.js';
 
-export { answer, findingsOf, type Answer } from './answer.js';
+export { answer, findingsOf, statisticOf, type Answer } from './answer.js';
 
 /**
  * Decides whether the rows and columns of a table of counts are associated.

@@ -16,7 +16,7 @@ import { planWithoutExact } from './plan/without-exact.js';
 import type { PValueEntry, Question } from './pvalue/contract.js';
 import { approximationsOf, asymptoticAlone, asymptoticBeside, degreesOfFreedomOf } from './pvalue/approximations.js';
 import { conditionalPValues, orderingsNeeded, questionsOf } from './pvalue/p-values.js';
-import { type Findings } from './result/build-result.js';
+import { statisticEcho, type Findings } from './result/build-result.js';
 import {
   asymptoticNotes,
   designNotes,
@@ -25,7 +25,7 @@ import {
   statisticNotes,
   unsettledNotes,
 } from './result/notes.js';
-import type { Note } from './result/result.js';
+import type { Note, Result } from './result/result.js';
 import { sampledPValues, type Surroundings } from './sampled-answer.js';
 import { checkExpectations } from './table/expectation-check.js';
 import { liveTable, type LiveTable } from './table/live-table.js';
@@ -59,10 +59,17 @@ export const findingsOf = ({ read, live, prepared, expectations, ...found }: Ans
   cells: undefined,
   read,
   plan: prepared.plan,
-  // Effects of any 2x2 table know two groups; statistics that know none do not name them.
-  named: prepared.statistic?.shape === 'any' ? null : prepared.named,
+  named: namedBy(prepared),
   expectations: expectations ?? checkExpectations(live),
 });
+
+/** Effects of any 2x2 table know two groups; statistics that know none do not name them. */
+const namedBy = ({ statistic, named }: Answer['prepared']): Prepared['named'] =>
+  statistic?.shape === 'any' ? null : named;
+
+/** The statistic as a compact line shows it. */
+export const statisticOf = ({ read, prepared, value, degreesOfFreedom, undefinedBecause }: Answer): Result['statistic'] =>
+  statisticEcho({ read, plan: prepared.plan, named: namedBy(prepared), value, degreesOfFreedom, undefinedBecause });
 
 /** The p-values alone, by the same steps and with the same digits. Arguments and problems as for `analyse`. */
 export const answer = (

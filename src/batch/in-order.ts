@@ -14,9 +14,9 @@ export interface Finished extends ChunkDone {
 /** Counted work worth the start of threads, and what is given to one of them at a time. */
 const shortMilliseconds = 150;
 const chunkMilliseconds = 40;
-const mostUnits = 128;
+const mostUnits = 1024;
 /** Chunks under way for each thread: enough that a long table does not stop the others at once. */
-const aheadOfEach = 16;
+const aheadOfEach = 8;
 
 /** Threads take built files only; undefined where there is none (the sources themselves are being run). */
 const workerFile = import.meta.url.endsWith('.ts') ? undefined : new URL('./batch-worker.js', import.meta.url).href;

@@ -1,12 +1,11 @@
 // Outcomes to lines: compact or whole, as objects for a program or as text.
-import { findingsOf, type Answer } from '../analyse.js';
+import { findingsOf, statisticOf, type Answer } from '../analyse.js';
 import { keptWishes } from '../plan/kept-wishes.js';
 import type { PlanOptions } from '../plan/plan.js';
 import { cellText, csvColumns, csvLine, csvRows } from '../report/csv.js';
-import { beforeWords, statisticEcho, type Findings } from '../result/build-result.js';
+import { beforeWords, type Findings } from '../result/build-result.js';
 import { shownJson } from '../result/label-words.js';
 import { checkExpectations } from '../table/expectation-check.js';
-import { defaultLabels } from '../table/table.js';
 import type { Outcome } from './answer-table.js';
 import type { CompactLine, ErrorLine, FullLine } from './lines.js';
 
@@ -40,7 +39,7 @@ export function compactLine(key: string, found: Answer, wishes: PlanOptions): Co
     counts: table.counts as number[][],
     ...(areOurs('row', table.rowLabels) ? {} : { rowLabels: table.rowLabels as string[] }),
     ...(areOurs('column', table.columnLabels) ? {} : { columnLabels: table.columnLabels as string[] }),
-    statistic: statisticEcho(findingsOf(found)),
+    statistic: statisticOf(found),
     pValues: found.pValues as CompactLine['pValues'],
     notes: found.notes as CompactLine['notes'],
     plan: keptWishes(wishes, found.prepared.plan, found.prepared.plan.seed) as CompactLine['plan'],
@@ -49,7 +48,7 @@ export function compactLine(key: string, found: Answer, wishes: PlanOptions): Co
 
 /** Labels of our own making. */
 const areOurs = (side: 'row' | 'column', labels: readonly string[]): boolean =>
-  labels[0] === `${side} 1` && defaultLabels(side, labels.length).every((label, k) => label === labels[k]);
+  labels[0] === `${side} 1` && labels.every((label, k) => k === 0 || label === `${side} ${k + 1}`);
 
 /** The published columns of a batch: the key, those of one table, and what is wrong with a table that could not be used. */
 export const csvHeader = (): string => csvLine(['key', ...csvColumns.map(({ name }) => name), 'error']);

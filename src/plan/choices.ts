@@ -50,6 +50,10 @@ const readBy = {
   lambda: ['lambda'],
 } as const satisfies Partial<Record<keyof PlanOptions, readonly Taken[]>>;
 
+/** By name, not by a loop: a batch asks it of every table. */
+const takesNothing = ({ groups, event, reference, rowScores, columnScores, lambda }: PlanOptions): boolean =>
+  (groups ?? event ?? reference ?? rowScores ?? columnScores ?? lambda) === undefined;
+
 const reasons = {
   groups: 'which treats all rows and all columns alike',
   event: 'which treats all rows and all columns alike',
@@ -61,11 +65,13 @@ const reasons = {
 
 /** @throws Problem (usage) `option-without-effect`. `twoByTwo`: there are two groups to compare, whatever the statistic. */
 export function refuseUnread(statistic: Statistic, options: PlanOptions, twoByTwo: boolean): void {
+  if (takesNothing(options)) return;
   for (const [name, kinds] of Object.entries(readBy) as [keyof typeof readBy, readonly Taken[]][]) {
+    if (options[name] === undefined) continue;
     const reads = ({ takes }: Statistic): boolean => kinds.some((kind) => takes?.includes(kind));
     // Declared scores of ordered sides are read by the questions that use the order.
     if (options.ordered !== undefined && (name === 'rowScores' || name === 'columnScores')) continue;
-    if (options[name] === undefined || reads(statistic)) continue;
+    if (reads(statistic)) continue;
     if (twoByTwo && readBy[name].some((kind) => kind === 'roles')) continue; // its effects read them
     const readers = statistics.filter(reads).map((one) => one.name);
     const option = `--${name.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`)}`;

@@ -42,13 +42,16 @@ export function withDesign(table: Table, wishes: PlanOptions): PlanOptions {
   const options = wishes.nullValue === undefined ? wishes : withNullValue(table, wishes, wishes.nullValue);
   const isTwoGroups = (fixed === 'rows' || fixed === 'columns') && isTwoByTwo(table);
   const order = oneOf(options.outcomeOrder, 'statistic', outcomeOrders, '--outcome-order');
-  for (const [name, value] of [
-    ['--outcome-order', options.outcomeOrder],
-    ['--nuisance-risk', options.nuisanceRisk],
-  ] as const) {
-    if (value === undefined || isTwoGroups) continue;
+  const unread = isTwoGroups
+    ? undefined
+    : options.outcomeOrder !== undefined
+      ? '--outcome-order'
+      : options.nuisanceRisk !== undefined
+        ? '--nuisance-risk'
+        : undefined;
+  if (unread !== undefined) {
     throw unused(
-      name,
+      unread,
       'unless two groups of fixed size are compared',
       'leave it out, or use --fixed rows or --fixed columns with a 2x2 table',
     );

@@ -8,20 +8,17 @@ export const standardRelativeError = 0.02;
 /** A sixth more draws at a true p a tenth above alpha than alpha / 100 takes, for a p that can be five times as small. */
 export const standardRiskShare = 1 / 500;
 
-const forAutoOnly = [
-  ['mostDraws', '--most-draws'],
-  ['samplingRisk', '--sampling-risk'],
-  ['relativeError', '--relative-error'],
-] as const;
-
 /** @throws Problem (usage) for numbers out of range, and for options that the method or a fixed number leaves unread. */
 export function drawsOf(
   options: PlanOptions,
   asked: Method,
   alpha: number,
 ): Pick<Plan, 'draws' | 'mostDraws' | 'samplingRisk' | 'relativeError'> {
-  const given = forAutoOnly.filter(([name]) => options[name] !== undefined).map(([, option]) => option);
-  if (options.draws !== undefined) given.unshift('--draws' as (typeof given)[number]);
+  const { mostDraws, samplingRisk, relativeError } = options;
+  const given: string[] = options.draws === undefined ? [] : ['--draws'];
+  if (mostDraws !== undefined) given.push('--most-draws');
+  if (samplingRisk !== undefined) given.push('--sampling-risk');
+  if (relativeError !== undefined) given.push('--relative-error');
   if (given.length > 0 && (asked === 'exact' || asked === 'asymptotic')) {
     throw unused(given[0]!, `with --method ${asked}`, 'leave it out, or use --method sample');
   }

@@ -15,9 +15,13 @@ export function questionsOf(plan: Plan): Question[] {
 }
 
 /** The orderings whose cuts those questions need, each once. */
-export const orderingsNeeded = (questions: readonly Question[]): OrderingName[] => [
-  ...new Set(questions.flatMap(({ tail, rule }) => orderingFor(tail, rule))),
-];
+export function orderingsNeeded(questions: readonly Question[]): OrderingName[] {
+  const names: OrderingName[] = [];
+  for (const { tail, rule } of questions) {
+    for (const name of orderingFor(tail, rule)) if (!names.includes(name)) names.push(name);
+  }
+  return names;
+}
 
 /** @param point probability of the observed table; needed for exact cuts only. */
 export async function conditionalPValues(

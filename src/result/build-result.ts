@@ -77,10 +77,12 @@ export function beforeWords(found: Findings): ResultBeforeWords {
 }
 
 /** The statistic with its value and the groups that it compares. */
-export const statisticEcho = (found: Findings): Result['statistic'] => ({
+export const statisticEcho = (found: Pick<Findings, 'read' | 'named' | FoundStatistic>): Result['statistic'] => ({
   ...statisticFound(found),
   ...(found.named === null ? {} : groupsCompared(found.read.table, found.named)),
 });
+
+type FoundStatistic = 'plan' | 'value' | 'degreesOfFreedom' | 'undefinedBecause';
 
 /** The statistic with its value. */
 export const statisticFound = ({
@@ -88,7 +90,7 @@ export const statisticFound = ({
   value,
   degreesOfFreedom,
   undefinedBecause = 'empty-group',
-}: Pick<Findings, 'plan' | 'value' | 'degreesOfFreedom' | 'undefinedBecause'>): Result['statistic'] => ({
+}: Pick<Findings, FoundStatistic>): Result['statistic'] => ({
   name: plan.statistic,
   value: value === null ? null : extended(value),
   ...(value === null ? { reason: undefinedBecause } : {}),

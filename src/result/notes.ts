@@ -11,11 +11,11 @@ import type { Note } from './result.js';
 
 /** Lines without counts take no part in a test that holds the margins. */
 export function emptyLineNotes(table: Table): Note[] {
+  if (!table.rowTotals.includes(0) && !table.columnTotals.includes(0)) return [];
   const empty = [
     ...table.rowLabels.filter((_, i) => table.rowTotals[i] === 0).map((label) => `row ${quoted(label)}`),
     ...table.columnLabels.filter((_, j) => table.columnTotals[j] === 0).map((label) => `column ${quoted(label)}`),
   ];
-  if (empty.length === 0) return [];
   return [
     {
       code: 'empty-lines',

@@ -29,16 +29,26 @@ export function liveTable(table: Table): LiveTable {
     rows: rowIndex.length,
     columns: columnIndex.length,
     counts,
-    rowTotals: Float64Array.from(rowIndex, (row) => table.rowTotals[row]!),
-    columnTotals: Float64Array.from(columnIndex, (column) => table.columnTotals[column]!),
+    rowTotals: picked(table.rowTotals, rowIndex),
+    columnTotals: picked(table.columnTotals, columnIndex),
     total: table.total,
     rowIndex,
     columnIndex,
   };
 }
 
-const indexesOfNonZero = (totals: readonly number[]): number[] =>
-  totals.flatMap((total, index) => (total > 0 ? [index] : []));
+// Plain loops: a batch comes through here once for every table.
+function indexesOfNonZero(totals: readonly number[]): number[] {
+  const indexes: number[] = [];
+  for (let k = 0; k < totals.length; k++) if (totals[k]! > 0) indexes.push(k);
+  return indexes;
+}
+
+function picked(totals: readonly number[], index: readonly number[]): Float64Array {
+  const values = new Float64Array(index.length);
+  for (let k = 0; k < index.length; k++) values[k] = totals[index[k]!]!;
+  return values;
+}
 
 /** True when the margins leave nothing to chance: one live row or one live column. */
 export const hasOneTableOnly = (live: LiveTable): boolean => live.rows < 2 || live.columns < 2;

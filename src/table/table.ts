@@ -24,8 +24,14 @@ export interface TableParts {
 }
 
 /** Labels of our own making where the data has none. */
-export const defaultLabels = (side: 'row' | 'column', length: number): string[] =>
-  Array.from({ length }, (_, index) => `${side} ${index + 1}`);
+export function defaultLabels(side: 'row' | 'column', length: number): readonly string[] {
+  const known = made[side];
+  while (known.length < length) known.push(`${side} ${known.length + 1}`);
+  return known.slice(0, length);
+}
+
+/** Made once: most tables of a batch bring none of their own. */
+const made: Record<'row' | 'column', string[]> = { row: [], column: [] };
 
 /**
  * Checks the parts and freezes them into a Table.

@@ -108,16 +108,22 @@ function cutIntoStretches(
 ): Stretch[] {
   const ends = sideEnds(law, direction);
   if (ends === undefined) return [];
-  const starts = new Set<number>([ends.from]);
-  for (const runs of runsOf) for (const run of runs) starts.add(run.from);
-  if (contains({ ...ends, place: 0 }, observed)) {
-    starts.add(observed);
-    if (observed !== ends.to) starts.add(observed + direction);
+  const starts = [ends.from];
+  for (const runs of runsOf) for (const run of runs) insert(starts, run.from, direction);
+  if ((observed - ends.from) * (observed - ends.to) <= 0) {
+    insert(starts, observed, direction);
+    if (observed !== ends.to) insert(starts, observed + direction, direction);
   }
-  const sorted = [...starts].sort((a, b) => (a - b) * direction);
-  return sorted.map((from, s) => ({
+  return starts.map((from, s) => ({
     from,
-    to: s + 1 < sorted.length ? sorted[s + 1]! - direction : ends.to,
+    to: s + 1 < starts.length ? starts[s + 1]! - direction : ends.to,
     mass: new WideSum(),
   }));
+}
+
+/** Into a list in walking order, once; a handful of starts, most of them the last one. */
+function insert(starts: number[], start: number, direction: 1 | -1): void {
+  let at = starts.length;
+  while (at > 0 && (starts[at - 1]! - start) * direction > 0) at--;
+  if (starts[at - 1] !== start) starts.splice(at, 0, start);
 }
