@@ -68,7 +68,13 @@ const namedBy = ({ statistic, named }: Answer['prepared']): Prepared['named'] =>
   statistic?.shape === 'any' ? null : named;
 
 /** The statistic as a compact line shows it. */
-export const statisticOf = ({ read, prepared, value, degreesOfFreedom, undefinedBecause }: Answer): Result['statistic'] =>
+export const statisticOf = ({
+  read,
+  prepared,
+  value,
+  degreesOfFreedom,
+  undefinedBecause,
+}: Answer): Result['statistic'] =>
   statisticEcho({ read, plan: prepared.plan, named: namedBy(prepared), value, degreesOfFreedom, undefinedBecause });
 
 /** The p-values alone, by the same steps and with the same digits. Arguments and problems as for `analyse`. */

@@ -17,6 +17,7 @@ export async function replayRecords(records: AsyncIterable<Found>, wishes: Repla
   let [all, passedOver] = [0, 0];
   let recorded: string | null = null;
   for await (const { record, place } of records) {
+    if (isPartEnd(record)) continue;
     if (isErrorLine(record)) {
       passedOver++;
       continue;
@@ -38,6 +39,10 @@ export async function replayRecords(records: AsyncIterable<Found>, wishes: Repla
     ...(sha256 === undefined ? {} : { against: { sha256, recorded, same: sha256 === recorded } }),
   };
 }
+
+/** What ends a part of a batch is no result. */
+const isPartEnd = (record: unknown): boolean =>
+  typeof record === 'object' && record !== null && 'part' in record && 'run' in record && !('pValues' in record);
 
 const isErrorLine = (record: unknown): boolean =>
   typeof record === 'object' && record !== null && 'error' in record && !('pValues' in record);

@@ -2,6 +2,7 @@
 import { availableParallelism } from 'node:os';
 import { freshSeed } from '../plan/fresh-seed.js';
 import type { PlanOptions } from '../plan/plan.js';
+import { unused } from '../plan/settings.js';
 import type { BatchLine, CompactLine, ErrorLine, FullLine } from './lines.js';
 import { answerInOrder } from './in-order.js';
 import { objectSource } from './object-source.js';
@@ -22,7 +23,7 @@ type Tables = Iterable<BatchLine> | AsyncIterable<BatchLine>;
  * message, place, hint) in its turn, and the others go on.
  * @param tables what lines of `keepsum batch` hold: counts, perhaps a key, labels and options of their own.
  * @param plan options of every table; those of a table go over them. Without a seed one is made, and given with every sampled p.
- * @throws only what `tables` itself throws, after what came before it has been handed on.
+ * @throws what `tables` itself throws, after what came before it has been handed on; Problem (usage) for `shard` in the plan.
  */
 export function analyseMany(
   tables: Tables,
@@ -39,6 +40,7 @@ export async function* analyseMany(
   plan: PlanOptions = {},
   { full = false, threads = availableParallelism() }: ManyOptions = {},
 ): AsyncGenerator<CompactLine | FullLine | ErrorLine, void> {
+  if (plan.shard !== undefined) throw unused('shard', 'on many tables', 'hand over those of one part only');
   const settings = { wishes: { ...plan, seed: plan.seed ?? freshSeed() }, full, sourceName: '' };
   for await (const { objects } of answerInOrder({
     source: objectSource(tables),

@@ -9,7 +9,7 @@ import type { Result } from '../result/result.js';
 import type { Surroundings } from '../sampled-answer.js';
 import type { TableParts } from '../table/table.js';
 import { lineDeclaration } from './declaration.js';
-import { misfit, notJson } from './line-problems.js';
+import { misfit, noKey, notJson } from './line-problems.js';
 
 /** How every table of a run is treated; plain data, so that it can be sent to a thread. */
 export interface BatchSettings {
@@ -19,6 +19,8 @@ export interface BatchSettings {
   readonly full: boolean;
   /** Of a batch's part, as its lines are stamped: "3/16". */
   readonly shard?: string;
+  /** Lines and objects without a key cannot be used. */
+  readonly requireKeys?: boolean;
   /** How places name the input: a file, `standard input`; for objects, nothing. */
   readonly sourceName: string;
 }
@@ -72,6 +74,7 @@ export async function answerObject(
   const line = lineDeclaration.safeParse(value);
   if (!line.success) return refused(keyIn(value) ?? String(number), misfit(value, line.error.issues), place);
   const { key = number, plan, ...parts } = line.data;
+  if (settings.requireKeys && line.data.key === undefined) return refused(String(number), noKey(), place);
   const wishes = plan === undefined ? settings.wishes : { ...settings.wishes, ...plan };
   return settle(
     String(key),

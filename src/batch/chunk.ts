@@ -46,6 +46,18 @@ export interface ChunkDone {
 export const unitsIn = (chunk: Chunk): number =>
   chunk.kind === 'lines' ? chunk.lines.length : chunk.kind === 'objects' ? chunk.objects.length : chunk.tables.length;
 
+/** Units as text, the same wherever chunks begin and end. */
+export function textOf(chunk: Chunk): string {
+  switch (chunk.kind) {
+    case 'lines':
+      return `${chunk.lines.join('\n')}\n`;
+    case 'objects':
+      return chunk.objects.map((object) => `${JSON.stringify(object)}\n`).join('');
+    case 'tables':
+      return chunk.tables.map((table) => `${JSON.stringify(table)}\n`).join('');
+  }
+}
+
 export async function answerChunk(task: ChunkTask, surroundings: Surroundings): Promise<ChunkDone> {
   const { settings, style } = task;
   const objects: OutputLine[] = [];

@@ -1,7 +1,7 @@
 // The lines that a batch reads and writes, declared once; types and published schemas are derived from here.
 import { z } from 'zod';
 import { resultDeclaration } from '../result/declaration.js';
-import { count } from '../result/declared/pieces.js';
+import { count, digest } from '../result/declared/pieces.js';
 import { compactWishes, lineWishes } from '../result/declared/wishes.js';
 
 const labels = z.array(z.string());
@@ -19,10 +19,10 @@ export const lineDeclaration = z.strictObject({
   plan: lineWishes.describe('options of this table, over those of the run').optional(),
 });
 
-/** What a table's line says unless whole results were asked for. */
 /** Of a batch's part: "3/16". */
 const shard = z.string().regex(/^\d+\/\d+$/);
 
+/** What a table's line says unless whole results were asked for. */
 export const compactDeclaration = z.strictObject({
   key: z.string(),
   shard: shard.optional(),
@@ -46,4 +46,13 @@ export const errorDeclaration = z.strictObject({
     place: z.string().describe('the line or file, and where in it'),
     hint: z.string(),
   }),
+});
+
+/** The last line of a batch's part: without it the part is not whole. */
+export const partEndDeclaration = z.strictObject({
+  part: shard,
+  lines: count.describe('of results in this part'),
+  tables: count.describe('of the whole run'),
+  input: digest.describe('SHA-256 of the tables of the whole run'),
+  run: z.looseObject({ version: z.string(), seed: z.string() }).describe('settings that all parts share'),
 });

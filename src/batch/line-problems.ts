@@ -15,6 +15,13 @@ export const notJson = (): Problem =>
     hint: `write one object a line, such as ${example}`,
   });
 
+export const noKey = (): Problem =>
+  dataProblem({
+    code: 'no-key',
+    message: 'this table has no key, and --require-keys is given',
+    hint: `name it, as in ${example}`,
+  });
+
 /** The first thing that the declaration finds wrong, told with its place in the line. */
 export function misfit(value: unknown, [issue]: readonly z.core.$ZodIssue[]): Problem {
   const path = issue!.path.map(String);

@@ -24,6 +24,8 @@ export class LineSource implements UnitSource {
   constructor(
     bytes: AsyncIterable<Uint8Array>,
     private readonly sourceName: string,
+    /** Whether no bytes at all are no tables, rather than a slip. */
+    private readonly mayBeEmpty = false,
   ) {
     this.pieces = bytes[Symbol.asyncIterator]();
   }
@@ -44,7 +46,7 @@ export class LineSource implements UnitSource {
   private async readOn(): Promise<void> {
     const { done, value } = await this.pieces.next();
     const bytes = done ? new Uint8Array() : value;
-    if (this.bytesRead === 0) this.refuse(headProblem(bytes, this.sourceName));
+    if (this.bytesRead === 0 && !(done && this.mayBeEmpty)) this.refuse(headProblem(bytes, this.sourceName));
     this.refuse(binaryProblem(bytes, this.bytesRead, this.sourceName));
     const text = done
       ? this.decoder.end()

@@ -1,6 +1,6 @@
 // The published JSON Schemas (draft 2020-12) of a batch's lines, derived from their declarations.
 import { z } from 'zod';
-import { compactDeclaration, errorDeclaration, lineDeclaration } from './declaration.js';
+import { compactDeclaration, errorDeclaration, lineDeclaration, partEndDeclaration } from './declaration.js';
 
 const published = (declaration: z.ZodType, name: string, description: string): object => ({
   ...z.toJSONSchema(declaration, { target: 'draft-2020-12' }),
@@ -24,3 +24,11 @@ export const compactLineJsonSchema = (): object =>
 /** A line that a batch writes for a table that could not be tested. */
 export const errorLineJsonSchema = (): object =>
   published(errorDeclaration, 'error-line', 'One table of a batch that could not be used, and why.');
+
+/** The line that ends a part of a batch. */
+export const partEndJsonSchema = (): object =>
+  published(
+    partEndDeclaration,
+    'part-end',
+    'The last line of a part of a batch: how long it is, and what all parts share.',
+  );

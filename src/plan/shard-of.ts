@@ -1,12 +1,12 @@
 // A part of a sampled run: every so many blocks of a fixed number of draws, to be pooled with the others later.
 import { blockSize } from '../null/sampled/limits.js';
-import { usageProblem } from '../problem/problem.js';
+import { usageProblem, type Problem } from '../problem/problem.js';
 import type { ChosenMethod, Plan, PlanOptions, Shard } from './plan.js';
 import { unused } from './settings.js';
 
 /** @throws Problem (usage) where draws are not of a fixed number, or there are fewer blocks than parts. */
 export function shardOf(
-  { shard }: PlanOptions,
+  { shard, seed }: PlanOptions,
   method: ChosenMethod,
   draws: Plan['draws'],
 ): { readonly shard?: Shard } {
@@ -29,6 +29,7 @@ export function shardOf(
       'add --method sample --draws N',
     );
   }
+  if (seed === undefined) throw partNeedsSeed();
   if (Math.ceil(draws / blockSize) < of) {
     throw usageProblem({
       code: 'more-shards-than-blocks',
@@ -39,3 +40,12 @@ export function shardOf(
   }
   return { shard: { index, of } };
 }
+
+/** Each part would make a seed of its own. */
+export const partNeedsSeed = (): Problem =>
+  usageProblem({
+    code: 'part-needs-seed',
+    message: 'a part needs the seed that all parts of its run share',
+    place: '--shard',
+    hint: 'add --seed TEXT, the same for every part',
+  });

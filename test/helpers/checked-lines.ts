@@ -1,7 +1,12 @@
 // Every line that a batch writes is held against the published schemas, by a validator that knows nothing of our code.
 import { Ajv2020 } from 'ajv/dist/2020.js';
 import type { CompactLine, ErrorLine, FullLine } from '../../src/batch/lines.js';
-import { batchLineJsonSchema, compactLineJsonSchema, errorLineJsonSchema } from '../../src/batch/schemas.js';
+import {
+  batchLineJsonSchema,
+  compactLineJsonSchema,
+  errorLineJsonSchema,
+  partEndJsonSchema,
+} from '../../src/batch/schemas.js';
 import { resultJsonSchema } from '../../src/result/schema.js';
 
 const ajv = new Ajv2020({ allErrors: true, strict: false });
@@ -10,6 +15,7 @@ const validators = {
   error: ajv.compile(errorLineJsonSchema()),
   full: ajv.compile(resultJsonSchema()),
 };
+export const isPartEnd = ajv.compile(partEndJsonSchema());
 export const isBatchLine = ajv.compile(batchLineJsonSchema());
 
 /** Hands the line on if its JSON form keeps the contract; throws with every breach if not. */

@@ -3,7 +3,7 @@ import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, describe, expect, it } from 'vitest';
-import { checkedLines } from '../helpers/checked-lines.js';
+import { checkedLines, isPartEnd } from '../helpers/checked-lines.js';
 import { inShell, keepsum } from './run-command.js';
 
 const folder = mkdtempSync(join(tmpdir(), 'keepsum-batch-'));
@@ -151,6 +151,8 @@ describe('wrong usage', () => {
     [['batch', demo, '--output', demo], 'is the file the counts come from'],
     [['batch', demo, '--output', 'no/such/x'], '"no/such/x" cannot be written'],
     [['batch', demo, '--seed='], 'the value is empty'],
+    [['batch', demo, '--shard', '1/2'], 'a part needs the seed'],
+    [['batch', ...records, '--require-keys'], '--require-keys does not go with'],
   ])('%j ends with 2 and two lines', async (words, part) => {
     const { status, out, err } = await keepsum(words);
     expect([status, out]).toEqual([2, '']);
@@ -166,4 +168,35 @@ it('a result of --output is the one that standard output gets, and nothing is le
   expect(await keepsum(['batch', demo, '--seed', 'x', '--output', file])).toEqual({ status: 0, out: '', err: '' });
   expect(readFileSync(file, 'utf8')).toBe(out);
   expect((await inShell(`ls ${folder}`)).out).toBe('whole.ndjson\n');
+});
+
+describe('parts', () => {
+  it('end with a line that says how long they are, which replay and adjust pass over', async () => {
+    const { out } = await keepsum(['batch', demo, '--seed', 'x', '--shard', '2/3']);
+    const [line, end, ...more] = out.trimEnd().split('\n').map((one) => JSON.parse(one) as unknown); // prettier-ignore
+    expect([isPartEnd(end), more]).toEqual([true, []]);
+    expect(line).toMatchObject({ key: 'glaze', shard: '2/3' });
+    expect(end).toMatchObject({ part: '2/3', lines: 1, tables: 4, run: { seed: 'x' } });
+    expect((await keepsum(['replay', '-'], { input: out })).status).toBe(0);
+    expect((await keepsum(['adjust', '-', '--by', 'holm'], { input: out })).err).toContain('1 test counts');
+  });
+
+  it('of another run, and parts that were cut short, are not pooled', async () => {
+    const made = async (name: string, ...words: string[]): Promise<string> => {
+      const path = join(folder, name);
+      writeFileSync(path, (await keepsum(['batch', demo, '--allow-errors', ...words])).out);
+      return path;
+    };
+    const one = await made('one', '--seed', 'x', '--shard', '1/2');
+    const two = await made('two', '--seed', 'x', '--shard', '2/2');
+    const other = await made('other', '--seed', 'x', '--alpha', '0.01', '--shard', '2/2');
+    const merge = (...paths: string[]) => keepsum(['merge', ...paths]);
+    expect((await merge(one, other)).err).toContain('alpha is not the same');
+    writeFileSync(join(folder, 'cut'), readFileSync(two, 'utf8').split('\n').slice(0, -2).join('\n'));
+    expect((await merge(one, join(folder, 'cut'))).err).toMatch(
+      /without the line that closes a whole part\nhint: make it again/,
+    );
+    expect((await merge(one, join(folder, 'none'))).err).toContain('there is no such file');
+    for (const name of ['one', 'two', 'other', 'cut']) rmSync(join(folder, name));
+  });
 });

@@ -3,8 +3,10 @@ import { spawn } from 'node:child_process';
 import {
   appendFileSync,
   existsSync,
+  mkdirSync,
   mkdtempSync,
   readFileSync,
+  rmdirSync,
   rmSync,
   statSync,
   truncateSync,
@@ -139,6 +141,38 @@ describe('an unfinished run', () => {
     expect((await again('--resume')).err).toContain('no unfinished run beside it');
     rmSync(output);
   });
+});
+
+it('a run killed between its header and its first table has one header', async () => {
+  const output = join(folder, 'header.csv');
+  const csv = ['batch', '-', '--format', 'csv', '--output', output, '--quiet'];
+  const child = spawn(process.execPath, [bin, ...csv], { stdio: ['pipe', 'ignore', 'inherit'] });
+  const ended = new Promise((resolve) => child.on('close', resolve));
+  while (child.exitCode === null && sizeOf(`${output}.partial`) === 0) await sleep(10);
+  child.kill('SIGKILL');
+  await ended;
+  expect(readFileSync(`${output}.partial`, 'utf8')).toMatch(/^key,headline,.*\n$/);
+  expect((await keepsum([...csv, '--resume'], { input: '{"counts":[[8,2],[1,9]]}\n' })).status).toBe(0);
+  expect(readFileSync(output, 'utf8').match(/^key,/gm)).toHaveLength(1);
+});
+
+it('a part that ended when all but its name was there has one closing line', async () => {
+  const output = join(folder, 'part.ndjson');
+  const part = ['batch', '-', '--seed', 's', '--shard', '2/3', '--quiet', '--output', output];
+  const lines = '{"counts":[[8,2],[1,9]]}\n'.repeat(5);
+  const child = spawn(process.execPath, [bin, ...part], { stdio: ['pipe', 'ignore', 'ignore'] });
+  const ended = new Promise((resolve) => child.on('close', resolve));
+  child.stdin.write(lines);
+  while (child.exitCode === null && sizeOf(`${output}.partial`) === 0) await sleep(10);
+  // A directory takes the name away, so that the whole part cannot have it.
+  mkdirSync(output);
+  child.stdin.end();
+  await ended;
+  expect(readFileSync(`${output}.partial`, 'utf8')).toContain('{"part":"2/3","lines":2,"tables":5');
+  rmdirSync(output);
+  expect((await keepsum([...part, '--resume'], { input: lines })).status).toBe(0);
+  const alone = await keepsum(part.slice(0, -2), { input: lines });
+  expect(readFileSync(output, 'utf8')).toBe(alone.out);
 });
 
 it('a disk that is full keeps what is finished, and says how to go on', async () => {

@@ -2,7 +2,7 @@
 import { describe, expect, it } from 'vitest';
 import { analyse } from '../../src/analyse.js';
 import type { PlanOptions } from '../../src/plan/plan.js';
-import { mergeLines } from '../../src/record/merge-lines.js';
+import { mergeLines, type PartLines } from '../../src/record/merge-lines.js';
 import { mergeParts, type Part } from '../../src/record/merge.js';
 import { replay } from '../../src/record/replay.js';
 import { checked } from '../helpers/checked-result.js';
@@ -72,28 +72,55 @@ describe('refused', () => {
 });
 
 describe('parts of a batch', () => {
-  const line = (key: string, shard: string): string => `{"key":"${key}","shard":"${shard}","counts":[[1]]}`;
-  const part = (shard: string, ...keys: string[]): { place: string; text: string } => ({
+  const end = (shard: string, lines: number, tables: number, seed = 's'): string =>
+    JSON.stringify({ part: shard, lines, tables, input: '0'.repeat(64), run: { version: '1', seed } });
+  const textOf = (shard: string, keys: readonly string[]): string[] =>
+    keys.map((key) => `{"key":"${key}","shard":"${shard}","counts":[[1]]}`);
+  const partOf = (shard: string, lines: readonly string[]): PartLines => ({
     place: shard,
-    text: keys.map((key) => `${line(key, shard)}\n`).join(''),
+    async *lines() {
+      yield* lines;
+    },
+  });
+  const part = (shard: string, tables: number, ...keys: string[]): PartLines =>
+    partOf(shard, [...textOf(shard, keys), end(shard, keys.length, tables)]);
+
+  async function merged(...parts: PartLines[]): Promise<string> {
+    let text = '';
+    for await (const piece of await mergeLines(parts)) text += piece;
+    return text;
+  }
+  const problem = (...parts: PartLines[]): Promise<unknown> =>
+    merged(...parts).catch((thrown: unknown) => (thrown as { code: string }).code);
+
+  it('are woven together in the order of the tables', async () => {
+    const text = await merged(part('2/3', 5, 'b', 'e'), part('1/3', 5, 'a', 'd'), part('3/3', 5, 'c'));
+    expect(text).toBe(['a', 'b', 'c', 'd', 'e'].map((key) => `{"key":"${key}","counts":[[1]]}\n`).join(''));
   });
 
-  it('are woven together in the order of the tables', () => {
-    const merged = mergeLines([part('2/3', 'b', 'e'), part('1/3', 'a', 'd'), part('3/3', 'c')]);
-    expect(merged).toBe(['a', 'b', 'c', 'd', 'e'].map((key) => `{"key":"${key}","counts":[[1]]}\n`).join(''));
+  it('may be empty where there are fewer tables than parts', async () => {
+    expect(await merged(part('3/3', 2), part('1/3', 2, 'a'), part('2/3', 2, 'b'))).toBe(
+      '{"key":"a","counts":[[1]]}\n{"key":"b","counts":[[1]]}\n',
+    );
   });
 
-  it('are refused with gaps, overlaps and parts cut short', () => {
-    const problem = (...parts: { place: string; text: string }[]): string => {
-      try {
-        return mergeLines(parts);
-      } catch (thrown) {
-        return (thrown as { code: string }).code;
-      }
-    };
-    expect(problem(part('1/2', 'a'), part('1/2', 'b'))).toBe('part-twice');
-    expect(problem(part('1/2', 'a'))).toBe('parts-missing');
-    expect(problem(part('1/2', 'a'), part('2/3', 'b'))).toBe('parts-differ');
-    expect(problem(part('1/2', 'a', 'c', 'e'), part('2/2', 'b'))).toBe('parts-differ');
+  it('are refused with gaps, overlaps and parts of other runs', async () => {
+    const [one, two] = [part('1/2', 2, 'a'), part('2/2', 2, 'b')];
+    expect(await problem(one, one)).toBe('part-twice');
+    expect(await problem(one)).toBe('parts-missing');
+    expect(await problem(one, part('2/3', 2, 'b'))).toBe('parts-differ');
+    expect(await problem(one, part('2/2', 3, 'b'))).toBe('parts-differ');
+    expect(await problem(one, partOf('2/2', [...textOf('2/2', ['b']), end('2/2', 1, 2, 'another')]))).toBe(
+      'parts-differ',
+    );
+    expect(await problem(two, partOf('x', ['{"key":"a","counts":[[1]]}']))).toBe('not-a-part');
+  });
+
+  it('are refused where the last line is missing, or any before it', async () => {
+    const two = part('2/2', 4, 'b', 'd');
+    expect(await problem(two, partOf('1/2', textOf('1/2', ['a', 'c'])))).toBe('part-cut-short');
+    expect(await problem(two, partOf('1/2', [...textOf('1/2', ['a']), end('1/2', 2, 4)]))).toBe('part-cut-short');
+    expect(await problem(two, part('1/2', 4, 'a'))).toBe('part-cut-short');
+    expect(await problem(two, partOf('1/2', []))).toBe('part-cut-short');
   });
 });

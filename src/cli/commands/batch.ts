@@ -3,8 +3,10 @@ import { availableParallelism } from 'node:os';
 import { rmSync } from 'node:fs';
 import { freshSeed } from '../../plan/fresh-seed.js';
 import type { PlanOptions } from '../../plan/plan.js';
+import { shownJson } from '../../result/label-words.js';
+import { version } from '../../result/version.js';
 import type { Shell } from '../shell.js';
-import { partOf } from '../../batch/part-source.js';
+import { partOf, type PartSource } from '../../batch/part-source.js';
 import { batchWords, progressLine } from '../streams/progress.js';
 import { journalOf, nothingYet } from '../streams/unfinished-file.js';
 import { remark } from '../streams/write-out.js';
@@ -13,7 +15,7 @@ import { openTables } from './batch/open-tables.js';
 import { batchOptions } from './batch/options.js';
 import { runBatch } from './batch/run-batch.js';
 import { checkCombinations, described, outputFile, streamSink, type BatchValues } from './batch/settle-run.js';
-import { fileSink, findUnfinished, type Progress } from './batch/sink.js';
+import { fileSink, findUnfinished, type Progress, type RunDescription } from './batch/sink.js';
 import { faultWords, resumeWords } from './batch/words.js';
 import { command } from './command-file.js';
 import { withOwnStatistic } from './module-path.js';
@@ -50,21 +52,24 @@ export const batchCommand = command({
     const tables = await openTables(from, values, shell);
     if (!values.quiet) for (const text of tables.remarks) await remark(shell.stderr, `note: ${text}\n`);
     const sink = path === undefined ? await streamSink(values.output, shell) : fileSink(path, run, seed, unfinished);
+    const part = values.shard === undefined ? undefined : partOf(tables.source, values.shard);
     const line = progressLine(values, shell);
     try {
       const reached = await runBatch({
-        source: values.shard === undefined ? tables.source : partOf(tables.source, values.shard),
+        source: part ?? tables.source,
         settings: {
           wishes: { ...wishes, seed },
           full: values.full ?? false,
+          requireKeys: values.requireKeys ?? false,
           sourceName: tables.sourceName,
           ...stampOf(values),
         },
         style: values.format !== 'csv' ? 'ndjson' : values.rawCsv ? 'raw-csv' : 'csv',
         threads: values.threads ?? availableParallelism(),
         sink,
-        header: values.format === 'csv' ? await csvHeader() : '',
+        header: values.format === 'csv' && !unfinished?.reached.bytes ? await csvHeader() : '',
         from: unfinished?.reached ?? nothingYet,
+        closing: part && (({ tables: lines }) => closingLine(values, lines, part.whole(), { ...run, seed })),
         path,
         onProgress: (done) => line?.show((seconds) => batchWords(done, tables.share(), seconds)),
       });
@@ -84,6 +89,17 @@ export const batchCommand = command({
     }
   },
 });
+
+/** What the parts of a batch must have in common, and how long this one is: `keepsum merge` pools no others. */
+function closingLine(
+  { shard }: BatchValues,
+  lines: number,
+  whole: ReturnType<PartSource['whole']>,
+  { shard: _, input: __, ...run }: RunDescription,
+): string {
+  const closing = { part: `${shard!.index}/${shard!.of}`, lines, ...whole, run: { version, ...run } };
+  return `${shownJson(JSON.stringify(closing))}\n`;
+}
 
 const stampOf = ({ shard }: BatchValues): { shard?: string } =>
   shard === undefined ? {} : { shard: `${shard.index}/${shard.of}` };

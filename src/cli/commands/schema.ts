@@ -14,6 +14,7 @@ const schemas: Readonly<Record<string, () => Promise<object>>> = {
   'batch-line': async () => (await import('../../batch/schemas.js')).batchLineJsonSchema(),
   'compact-line': async () => (await import('../../batch/schemas.js')).compactLineJsonSchema(),
   'error-line': async () => (await import('../../batch/schemas.js')).errorLineJsonSchema(),
+  'part-end': async () => (await import('../../batch/schemas.js')).partEndJsonSchema(),
 };
 const schemaNames = Object.keys(schemas);
 
@@ -24,6 +25,7 @@ export const schemaCommand = command({
     { line: 'keepsum schema batch-line', words: 'a line that keepsum batch reads' },
     { line: 'keepsum schema compact-line', words: 'a line that it writes' },
     { line: 'keepsum schema error-line', words: 'a line that it writes for a table that cannot be used' },
+    { line: 'keepsum schema part-end', words: 'the last line of a part that --shard made' },
   ],
   purpose: 'Prints the JSON Schema (draft 2020-12) that every such document satisfies.',
   examples: [{ line: 'keepsum schema result', words: 'on the screen, or on to another program' }],

@@ -5,9 +5,11 @@ import type { Stats } from 'node:fs';
 import { basename, dirname, join } from 'node:path';
 import { dataProblem, usageProblem, type Problem } from '../../problem/problem.js';
 
-/** Takes text, or the bytes of a picture. */
+/** Text, at once or piece by piece, or the bytes of a picture. */
+type Content = string | Uint8Array | AsyncIterable<string>;
+
 export interface FileDestination {
-  write(content: string | Uint8Array): Promise<unknown>;
+  write(content: Content): Promise<unknown>;
 }
 
 /**
@@ -38,12 +40,7 @@ async function emptyNeighbour(target: string): Promise<string> {
   return name;
 }
 
-async function replace(
-  target: string,
-  path: string,
-  existing: Stats | undefined,
-  text: string | Uint8Array,
-): Promise<void> {
+async function replace(target: string, path: string, existing: Stats | undefined, text: Content): Promise<void> {
   let temporary: string | undefined;
   try {
     temporary = await emptyNeighbour(target);
@@ -56,7 +53,7 @@ async function replace(
   }
 }
 
-async function writePlainly(target: string, path: string, text: string | Uint8Array): Promise<void> {
+async function writePlainly(target: string, path: string, text: Content): Promise<void> {
   try {
     await writeWhole(target, text);
   } catch (thrown) {
@@ -64,10 +61,11 @@ async function writePlainly(target: string, path: string, text: string | Uint8Ar
   }
 }
 
-async function writeWhole(path: string, text: string | Uint8Array): Promise<void> {
+async function writeWhole(path: string, text: Content): Promise<void> {
   const file = await open(path, constants.O_WRONLY);
   try {
-    await file.writeFile(text);
+    if (typeof text === 'string' || text instanceof Uint8Array) await file.writeFile(text);
+    else for await (const piece of text) await file.appendFile(piece);
   } finally {
     await file.close();
   }

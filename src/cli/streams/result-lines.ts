@@ -13,7 +13,8 @@ export async function resultsIn(
   for await (const line of textLines(bytes)) {
     number++;
     const text = number === 1 ? line.replace(/^\ufeff/, '') : line;
-    if (text.trim() !== '') results.push(readResultLine(text, `${sourceName}:${number}`, number));
+    if (text.trim() !== '' && !text.startsWith('{"part":'))
+      results.push(readResultLine(text, `${sourceName}:${number}`, number));
   }
   if (results.length > 0) return results;
   throw dataProblem({

@@ -15,6 +15,8 @@ export interface Reached {
   readonly output: string;
   readonly tables: number;
   readonly faults: number;
+  /** All is written, the closing line of a part too. */
+  readonly closed?: true;
 }
 
 export const partialOf = (path: string): string => `${path}.partial`;

@@ -46,8 +46,8 @@ const options = {
   samplingConfidence: level,
 } as const satisfies Record<Exclude<keyof PlanOptions, FromElsewhere>, z.ZodType>;
 
-/** Options that a line may give; each is left out where its default will do. */
-export const lineWishes = z.strictObject(options).partial();
+/** Options that a line may give; each is left out where its default will do. A part is of a whole run, never of one table in it. */
+export const lineWishes = z.strictObject(options).omit({ shard: true }).partial();
 
 /** The same as a compact line gives them back, where a statistic may be the user's own, known by name and digest. */
 export const compactWishes = z.strictObject({ ...options, statistic: z.string(), statisticDigest: digest }).partial();

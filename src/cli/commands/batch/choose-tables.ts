@@ -11,6 +11,7 @@ export type TablesFrom =
 
 const onlyRecords = ['by', 'rows', 'columns', 'count', 'missing'];
 const onlyFiles = ['headerRow', 'labelColumn'];
+const onlyLines = ['requireKeys'];
 const onlyText = ['delimiter', 'dropTotals', 'keepTotals', 'rowOrder', 'columnOrder'];
 
 /** @returns undefined when nothing is named and no input is piped. @throws Problem (usage) */
@@ -25,7 +26,7 @@ export async function chooseTables(
   if (onlyRecords.some((name) => name in given)) {
     const missing = ['by', 'rows', 'columns'].find((name) => !(name in given));
     if (missing !== undefined) throw needsAll(missing);
-    refuse(given, onlyFiles, 'one file of records');
+    refuse(given, [...onlyFiles, ...onlyLines], 'one file of records');
     if (more.length > 0) throw oneAtATime('file of records');
     return { form: 'records', path };
   }
@@ -34,6 +35,7 @@ export async function chooseTables(
     return { form: 'lines', path };
   }
   if (operands.includes('-')) throw oneAtATime('input, if it is standard input');
+  refuse(given, onlyLines, 'tables given as files');
   return { form: 'files', paths: operands };
 }
 

@@ -22,7 +22,11 @@ export interface OpenTables {
   readonly remarks: readonly string[];
 }
 
-export async function openTables(from: TablesFrom, values: ReadingValues, shell: Shell): Promise<OpenTables> {
+export async function openTables(
+  from: TablesFrom,
+  { allowErrors = false, ...values }: ReadingValues & { readonly allowErrors?: boolean },
+  shell: Shell,
+): Promise<OpenTables> {
   if (from.form === 'files') return filesInTurn(from.paths, values);
   const { path } = from;
   const sourceName = path ?? 'standard input';
@@ -47,7 +51,7 @@ export async function openTables(from: TablesFrom, values: ReadingValues, shell:
     };
     return { ...counted(items(), number), sourceName, remarks: notes.map(({ text }) => text) };
   }
-  const source = new LineSource(bytes(), sourceName);
+  const source = new LineSource(bytes(), sourceName, allowErrors);
   const share = (): number | undefined => (size === undefined ? undefined : source.bytesRead / size);
   return { source, sourceName, share, remarks: [] };
 }

@@ -16,6 +16,10 @@ export const readingTables = {
     anyText,
     'one long file of records: the columns whose values tell its tables apart, separated by commas',
   ),
+  requireKeys: toggle(
+    'Reading the tables',
+    'a line without a key cannot be used: its number names nothing where lines are dealt to several processes',
+  ),
   rows: reading.rows,
   columns: reading.columns,
   count: reading.count,
@@ -42,7 +46,10 @@ export const batchOptions = {
     'o',
   ),
   resume: toggle('The results', 'go on with a run that ended before its --output was whole'),
-  allowErrors: toggle('The results', 'status 0 although some tables could not be used; their lines say why'),
+  allowErrors: toggle(
+    'The results',
+    'status 0 although some tables could not be used (their lines say why), or there were none',
+  ),
   rawCsv: reporting.rawCsv,
   threads: reporting.threads,
   noProgress: reporting.noProgress,

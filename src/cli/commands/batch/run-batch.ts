@@ -1,6 +1,6 @@
 // A batch from its first unit to its last: what was finished before is passed over, the rest answered, written and counted.
 import { createHash, type Hash } from 'node:crypto';
-import { unitsIn, type Chunk, type Style, type UnitSource } from '../../../batch/chunk.js';
+import { textOf, unitsIn, type Style, type UnitSource } from '../../../batch/chunk.js';
 import type { BatchSettings } from '../../../batch/answer-table.js';
 import { answerInOrder } from '../../../batch/in-order.js';
 import { otherInput } from './resume-problems.js';
@@ -15,6 +15,8 @@ export interface BatchWork {
   /** Written before the first line of a new run. */
   readonly header: string;
   readonly from: Progress;
+  /** Of a batch's part: what is written behind its last line. */
+  readonly closing?: ((reached: Progress) => string) | undefined;
   /** The file whose unfinished run is gone on with. */
   readonly path: string | undefined;
   onProgress(tables: number): void;
@@ -26,7 +28,7 @@ export async function runBatch(work: BatchWork): Promise<Progress | undefined> {
   const hash = createHash('sha256');
   await passOver(source, from, hash, work.path);
   let reached: Progress = from;
-  if (from.units === 0 && work.header !== '' && !(await sink.write(work.header, from))) return undefined;
+  if (work.header !== '' && !(await sink.write(work.header, from))) return undefined;
   for await (const done of answerInOrder(work)) {
     hash.update(textOf(done.chunk));
     reached = {
@@ -38,7 +40,8 @@ export async function runBatch(work: BatchWork): Promise<Progress | undefined> {
     if (!(await sink.write(done.text, reached))) return undefined;
     work.onProgress(reached.tables);
   }
-  return reached;
+  if (work.closing === undefined || from.closed) return reached;
+  return (await sink.write(work.closing(reached), { ...reached, closed: true })) ? reached : undefined;
 }
 
 /** Reads what a run had read before, and sees to it that it is the same. */
@@ -51,16 +54,4 @@ async function passOver(source: UnitSource, from: Progress, hash: Hash, path: st
     hash.update(textOf(chunk));
   }
   if (from.units > 0 && hash.copy().digest('hex') !== from.input) throw otherInput(path!, from.units);
-}
-
-/** Units as text, the same wherever chunks begin and end. */
-function textOf(chunk: Chunk): string {
-  switch (chunk.kind) {
-    case 'lines':
-      return `${chunk.lines.join('\n')}\n`;
-    case 'objects':
-      return chunk.objects.map((object) => `${JSON.stringify(object)}\n`).join('');
-    case 'tables':
-      return chunk.tables.map((table) => `${JSON.stringify(table)}\n`).join('');
-  }
 }

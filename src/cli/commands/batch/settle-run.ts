@@ -6,6 +6,7 @@ import { usageProblem, type Problem } from '../../../problem/problem.js';
 import type { Values } from '../../arguments/option.js';
 import type { Shell } from '../../shell.js';
 import { writeOut } from '../../streams/write-out.js';
+import { partNeedsSeed } from '../../../plan/shard-of.js';
 import { destinationFor } from '../shared-options.js';
 import type { TablesFrom } from './choose-tables.js';
 import { readingTables, type batchOptions } from './options.js';
@@ -14,11 +15,12 @@ import type { RunDescription, Sink } from './sink.js';
 export type BatchValues = Values<typeof batchOptions>;
 
 /** @throws Problem (usage) */
-export function checkCombinations({ rawCsv, format, full, resume, output, shard }: BatchValues): void {
+export function checkCombinations({ rawCsv, format, full, resume, output, shard, seed }: BatchValues): void {
   if (rawCsv && format !== 'csv')
     throw doesNotFit('--raw-csv is for CSV output only', 'add --format csv, or leave it out');
   if (shard !== undefined && format === 'csv')
     throw doesNotFit('--shard is for lines of JSON only: they can be pooled', 'leave --format csv out');
+  if (shard !== undefined && seed === undefined) throw partNeedsSeed();
   if (full && format === 'csv') {
     throw doesNotFit(
       '--full is for lines of JSON only: CSV has a row for each p-value',
