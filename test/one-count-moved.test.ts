@@ -2,6 +2,10 @@
 import { describe, expect, it } from 'vitest';
 import { tablesWith } from '../fixtures/reference/generator/oracle.js';
 import { analyse, answer } from '../src/analyse.js';
+import { fragilityOf } from '../src/one-count-moved.js';
+import { makePlan } from '../src/plan/make-plan.js';
+import { liveTable } from '../src/table/live-table.js';
+import { makeTable } from '../src/table/table.js';
 import type { PlanOptions } from '../src/plan/plan.js';
 import { checked } from './helpers/checked-result.js';
 
@@ -58,6 +62,24 @@ describe('the least attainable p', () => {
     const { pValues } = checked(await analyse({ counts }, options));
     expect(Math.abs(pValues[0]!.leastAttainable! / least - 1)).toBeLessThan(1e-12);
   }); // prettier-ignore
+});
+
+describe('neither is looked for where that would take longer than the p itself is worth', () => {
+  it.each([
+    [[[3e15, 5], [7, 2e15]]],
+    [[[2e13, 5], [7, 2e13]]],
+  ])('%j', async (counts) => {
+    const table = makeTable({ counts });
+    const live = liveTable(table);
+    const options = { method: 'exact', effort: 1e12 } as const;
+    expect(await fragilityOf(table, live, makePlan(table, live, options), options)).toEqual({});
+  }); // prettier-ignore
+
+  it('but is where it is cheap, with millions of counts', async () => {
+    const counts = [[2_000_000, 1_000_000], [3_000_000, 1_600_000]]; // prettier-ignore
+    const { fragility } = checked(await analyse({ counts }));
+    expect(fragility!.moves).toBe(8);
+  });
 });
 
 const sum = (values: readonly number[]): number => values.reduce((a, b) => a + b, 0);

@@ -95,7 +95,7 @@ function unknownColumn(titles: readonly string[], name: string, option: string, 
     code: 'unknown-column',
     message: `${sourceName} has no column named ${shownValue(name)}`,
     place: option,
-    hint: `${suggestion}columns: ${shownList(titles)}`,
+    hint: `${suggestion}columns: ${shownList(titles.map((title, k) => (title === '' ? `${k + 1} (no name)` : title)))}`,
   });
 }
 

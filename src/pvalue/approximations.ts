@@ -56,12 +56,17 @@ export function asymptoticAlone(
     if (entry !== undefined) return entry;
     throw usageProblem({
       code: 'no-asymptotic-value',
-      message: `the ${question.tail} tail of ${question.statistic} has no asymptotic p at the value ${usual?.value ?? 'given by equal scores'}`,
+      message: `the ${question.tail === 'both' ? 'two' : question.tail}-tailed p of ${question.statistic} has no approximation ${whyNone(usual)}`,
       place: '--method asymptotic',
       hint: 'use --method exact or --method sample',
     });
   });
   return [...found, ...asymptoticBeside(questions[0]!, others)];
+}
+
+function whyNone(usual: Approximation | undefined): string {
+  if (usual === undefined) return 'where all scores of a side are equal';
+  return Number.isFinite(usual.value) ? `where its value is ${usual.value}` : 'where its value is infinite';
 }
 
 /** Those that have something to say about the question. */

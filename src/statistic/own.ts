@@ -8,8 +8,8 @@ import type { BoundStatistic, Place, Sided, Statistic } from './contract.js';
 export interface Margins {
   readonly rows: number;
   readonly columns: number;
-  readonly rowTotals: Float64Array;
-  readonly columnTotals: Float64Array;
+  readonly rowTotals: readonly number[];
+  readonly columnTotals: readonly number[];
   readonly total: number;
 }
 
@@ -23,7 +23,7 @@ export interface OwnStatistic {
   readonly words: string;
   /**
    * The value for a table: counts[i * margins.columns + j], whole numbers. A number, infinite ones allowed; not NaN. Must
-   * depend on its arguments alone and leave them as they are.
+   * depend on its arguments alone, and give the same number for the same table.
    */
   value(counts: ArrayLike<number>, margins: Margins): number;
   /** Signed ones: the value from which distance is measured. Default 0. */
@@ -83,18 +83,31 @@ function checked(offered: unknown): OwnStatistic {
 
 function bindOwn(own: OwnStatistic, live: LiveTable): BoundStatistic {
   const { rows, columns, rowTotals, columnTotals, total } = live;
-  const margins: Margins = Object.freeze({ rows, columns, rowTotals, columnTotals, total });
+  // A function that writes on what it is given, or sorts it, must not disturb the tables that are counted.
+  const sheet = new Float64Array(rows * columns);
+  const margins: Margins = Object.freeze({
+    rows,
+    columns,
+    rowTotals: Object.freeze([...rowTotals]),
+    columnTotals: Object.freeze([...columnTotals]),
+    total,
+  });
   const value = (counts: ArrayLike<number>): number => {
     let found: unknown;
+    sheet.set(counts);
     try {
-      found = own.value(counts, margins);
+      found = own.value(sheet, margins);
     } catch (thrown) {
       throw failure(own, live, counts, `failed: ${thrown instanceof Error ? thrown.message : String(thrown)}`);
     }
     if (typeof found === 'number' && !Number.isNaN(found)) return found;
-    throw failure(own, live, counts, `gave ${typeof found === 'number' ? 'NaN' : `a ${typeof found}, not a number`}`);
+    throw failure(own, live, counts, `gave ${kindOf(found)}`);
   };
   const observed = value(live.counts);
+  const again = value(live.counts);
+  if (again !== observed) {
+    throw failure(own, live, live.counts, `gave ${observed} and, asked again, ${again}`);
+  }
   const centre = own.centre ?? 0;
   const compare = (a: number, b: number): Place => (a > b ? 1 : a < b ? -1 : 0);
   return {
@@ -102,6 +115,13 @@ function bindOwn(own: OwnStatistic, live: LiveTable): BoundStatistic {
     place: (counts) => compare(value(counts), observed),
     distance: (counts) => compare(Math.abs(value(counts) - centre), Math.abs(observed - centre)),
   };
+}
+
+function kindOf(found: unknown): string {
+  if (typeof found === 'number') return 'NaN';
+  if (found === undefined || found === null) return `${found === null ? 'null' : 'nothing'}, not a number`;
+  if (found instanceof Promise) return 'a promise, not a number';
+  return `${typeof found === 'object' ? 'an object' : `a ${typeof found}`}, not a number`;
 }
 
 function failure(own: OwnStatistic, live: LiveTable, counts: ArrayLike<number>, what: string): Error {
@@ -113,6 +133,6 @@ function failure(own: OwnStatistic, live: LiveTable, counts: ArrayLike<number>, 
     code: 'statistic-failed',
     message: `the statistic "${own.name}" ${what.replace(/[.\s]+$/, '')}, at the table ${table.length > 80 ? `${table.slice(0, 79)}…` : table}`,
     place: '--statistic',
-    hint: 'it must give a number for every table with these margins; try it on this one',
+    hint: 'it must give a number for every table with these margins, and always the same; try it on this one',
   });
 }

@@ -35,4 +35,11 @@ describe("one's own statistic", () => {
     expect(status).toBeGreaterThan(0);
     expect(err).toMatch(/^error: .+\nhint: .+\n$/);
   });
+
+  it('that waits for ever says so, instead of ending the process without a word', async () => {
+    writeFileSync(join(folder, 'waits.mjs'), 'await new Promise(() => {});\nexport default {};\n');
+    const { out, err, status } = await keepsum(['test', '8,2', '1,9', '--statistic', './waits.mjs'], { folder });
+    expect([out, status]).toEqual(['', 2]);
+    expect(err).toMatch(/^error: --statistic: .+ never comes\nhint: .+\n$/);
+  });
 });

@@ -95,6 +95,20 @@ describe('a statistic of one’s own', () => {
     ['throws', { value: () => { throw new Error('division by zero.'); } }, /"broken" failed: division by zero, at the table 3,0,2 1,4,0 2,2,3/], // prettier-ignore
     ['gives NaN', { value: () => NaN }, /gave NaN/],
     ['gives a text', { value: () => '7' }, /gave a string, not a number/],
+    ['gives nothing', { value: () => undefined }, /gave nothing, not a number/],
+    ['gives a promise', { value: () => Promise.resolve(7) }, /gave a promise, not a number/],
+    ['gives a whole number of another kind', { value: () => 7n }, /gave a bigint, not a number/],
+    [
+      'gives another number each time',
+      {
+        value: (
+          (n) => () =>
+            n++
+        )(0),
+      },
+      /gave 0 and, asked again, 1/,
+    ],
+    ['writes on the margins', { value: (_: unknown, m: { rowTotals: number[] }) => (m.rowTotals[0] = 9) }, /read only/],
     ['gives NaN for another table only', { value: (t: ArrayLike<number>) => (t[0] === 3 ? 1 : NaN) }, /gave NaN/],
   ])('is a clear error where it %s', async (_, wrong, message) => {
     const problem = await refusal({ ...mine, name: 'broken', ...wrong });
@@ -112,6 +126,23 @@ describe('a statistic of one’s own', () => {
     const problem = await refusal(statistic);
     expect(problem.code).toBe(code);
     expect(problem.message).toMatch(message);
+  });
+
+  it('may write on the counts it is given: the tables that are counted stay as they are', async () => {
+    const spoils: OwnStatistic = {
+      ...mine,
+      name: 'spoils',
+      value: (t, margins) => {
+        const found = mine.value(t, margins);
+        (t as Float64Array).fill(0);
+        return found;
+      },
+    };
+    for (const options of [{}, { method: 'sample', draws: 2000, seed: 'own' }]) {
+      const ours = await analyse({ counts }, { statistic: spoils, ...options });
+      const theirs = await analyse({ counts }, { statistic: mine, ...options });
+      expect(ours.pValues[0]).toMatchObject({ p: theirs.pValues[0]!.p, tied: theirs.pValues[0]!.tied });
+    }
   });
 
   it('has no rule of probability and no asymptotic p', async () => {

@@ -2,6 +2,7 @@
 // It settles what a general parser gets wrong here: `-8,2` is a row with a negative count and not an option,
 // and `--seed --quiet` is a seed that was forgotten. What it hands on is unambiguous.
 import { usageProblem, type Problem } from '../../problem/problem.js';
+import { shownValue } from '../../input/shown-value.js';
 import { nearest } from '../../problem/suggest.js';
 import { flagOf, type Declarations } from './option.js';
 
@@ -11,7 +12,7 @@ export interface ScannedWords {
   readonly operands: readonly string[];
 }
 
-/** @throws Problem (usage): `unknown-option`, `missing-value`, `needless-value`. */
+/** @throws Problem (usage): `unknown-option`, `missing-value`, `needless-value`, `given-twice`, `contradiction`. */
 export function scan(words: readonly string[], declarations: Declarations): ScannedWords {
   const known = knownFlags(declarations);
   const options: string[] = [];
@@ -40,6 +41,7 @@ export function scan(words: readonly string[], declarations: Declarations): Scan
       options.push(`${flag.name}=${value}`);
     }
   }
+  refuseTwoAnswers(options, known);
   return { options, operands };
 }
 
@@ -57,12 +59,30 @@ function splitOption(word: string): { typed: string; joined: string | undefined 
 interface KnownFlag {
   readonly name: string;
   readonly placeholder: string | undefined;
+  readonly gathers: boolean;
+}
+
+/** Which of two answers to take would be a guess: an option with two values, and a switch beside its opposite. */
+function refuseTwoAnswers(options: readonly string[], known: ReadonlyMap<string, KnownFlag>): void {
+  const given = new Map<string, string>();
+  for (const option of options) {
+    const equals = option.indexOf('=');
+    const name = equals < 0 ? option : option.slice(0, equals);
+    const value = equals < 0 ? '' : option.slice(equals + 1);
+    const before = given.get(name);
+    if (before !== undefined && before !== value && !known.get(name)!.gathers) throw givenTwice(name, before, value);
+    given.set(name, value);
+  }
+  for (const name of given.keys()) {
+    const opposite = name.replace(/^--/, '--no-');
+    if (given.has(opposite)) throw contradiction(name, opposite);
+  }
 }
 
 function knownFlags(declarations: Declarations): Map<string, KnownFlag> {
   const known = new Map<string, KnownFlag>();
-  for (const [name, { short, placeholder }] of Object.entries(declarations)) {
-    const flag = { name: flagOf(name), placeholder };
+  for (const [name, { short, placeholder, gathers }] of Object.entries(declarations)) {
+    const flag = { name: flagOf(name), placeholder, gathers: gathers === true };
     known.set(flag.name, flag);
     if (short !== undefined) known.set(`-${short}`, flag);
   }
@@ -80,6 +100,20 @@ function unknownOption(typed: string, flags: readonly string[]): Problem {
     hint: close === undefined ? 'keepsum COMMAND --help lists the options' : `did you mean ${close}?`,
   });
 }
+
+const givenTwice = (flag: string, first: string, second: string): Problem =>
+  usageProblem({
+    code: 'given-twice',
+    message: `${flag} is given twice, as ${shownValue(first)} and as ${shownValue(second)}`,
+    hint: 'give it once',
+  });
+
+const contradiction = (flag: string, opposite: string): Problem =>
+  usageProblem({
+    code: 'contradiction',
+    message: `${flag} and ${opposite} contradict each other`,
+    hint: 'give one of them',
+  });
 
 const needlessValue = (flag: string): Problem =>
   usageProblem({

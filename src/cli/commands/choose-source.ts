@@ -27,6 +27,7 @@ export function chooseSource(
   const paths = operands.filter((operand) => !looksLikeRow(operand));
   refuseBothTotals(given);
   if (rows.length > 0 && paths.length > 0) throw rowsWithFiles(rows[0]!, paths[0]!);
+  if (paths.some((path) => path.trim() === '')) throw emptyWord();
   if (paths.length > 1) throw twoFiles(paths);
   if (rows.length > 0) {
     refuse(given, [...onlyRecords, ...onlyFiles], 'rows typed in', 'is for files');
@@ -77,6 +78,13 @@ const rowsWithFiles = (row: string, path: string): Error =>
     code: 'rows-with-files',
     message: `"${row}" is a row of counts and "${path}" is not`,
     hint: `give rows only, or one file only; ./ in front makes any word a file: ./${row}`,
+  });
+
+const emptyWord = (): Error =>
+  usageProblem({
+    code: 'empty-word',
+    message: 'a word of the command is empty, where a file or a row of counts is wanted',
+    hint: 'a variable of the shell that holds nothing gives an empty word; leave it out to read standard input',
   });
 
 const twoFiles = (paths: readonly string[]): Error =>

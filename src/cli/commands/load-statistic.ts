@@ -13,7 +13,7 @@ export interface LoadedStatistic {
   readonly statisticDigest: string;
 }
 
-/** @throws Problem (usage) `no-module`, `module-failed`, `no-default-export`. */
+/** @throws Problem (usage) `no-module`, `module-failed`, `no-default-export`; what is exported is checked by the plan. */
 export async function loadStatistic(path: string): Promise<LoadedStatistic> {
   const file = resolve(path);
   let bytes: Uint8Array;
@@ -29,7 +29,7 @@ export async function loadStatistic(path: string): Promise<LoadedStatistic> {
   }
   let exports: { default?: unknown };
   try {
-    exports = (await import(/* @vite-ignore */ pathToFileURL(file).href)) as { default?: unknown };
+    exports = await orNever(import(/* @vite-ignore */ pathToFileURL(file).href) as Promise<{ default?: unknown }>);
   } catch (thrown) {
     throw usageProblem({
       code: 'module-failed',
@@ -38,10 +38,11 @@ export async function loadStatistic(path: string): Promise<LoadedStatistic> {
       hint: 'it must be a JavaScript module; node runs it, so try it with node first',
     });
   }
-  if (exports.default === undefined) {
+  // A text would be taken for the name of a built-in statistic.
+  if (exports.default === undefined || typeof exports.default === 'string') {
     throw usageProblem({
       code: 'no-default-export',
-      message: `the module "${path}" has no default export`,
+      message: `the module "${path}" has no default export${exports.default === undefined ? '' : ' but a text'}`,
       place: '--statistic',
       hint: "export default { name: 'mine', sided: 'upper', words: 'my statistic', value: (counts, margins) => ... }",
     });
@@ -52,5 +53,19 @@ export async function loadStatistic(path: string): Promise<LoadedStatistic> {
   };
 }
 
-const reasonOf = (thrown: unknown): string =>
-  thrown instanceof Error ? ((thrown as NodeJS.ErrnoException).code ?? thrown.message.split('\n')[0]!) : String(thrown);
+/** A module that waits for something which never comes would end the process without a word. */
+async function orNever<T>(loading: Promise<T>): Promise<T> {
+  let ends: () => void;
+  const never = new Promise<T>((_, fail) => {
+    ends = () => fail(new Error('it waits for something that never comes'));
+    process.once('beforeExit', ends);
+  });
+  return Promise.race([loading, never]).finally(() => process.off('beforeExit', ends));
+}
+
+/** Codes of node for modules say less than its words; codes of the system say it in short. */
+function reasonOf(thrown: unknown): string {
+  if (!(thrown instanceof Error)) return String(thrown);
+  const { code } = thrown as NodeJS.ErrnoException;
+  return code === undefined || code.startsWith('ERR_') ? thrown.message.split('\n')[0]! : code;
+}

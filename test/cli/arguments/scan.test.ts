@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { anyText } from '../../../src/cli/arguments/check-value.js';
-import { flagOf, toggle, valued } from '../../../src/cli/arguments/option.js';
+import { flagOf, repeatable, toggle, valued } from '../../../src/cli/arguments/option.js';
 import { scan } from '../../../src/cli/arguments/scan.js';
 import { problemOf } from '../problem-of.js';
 
@@ -9,6 +9,9 @@ const declarations = {
   twoSidedRule: valued('The test', 'RULE', anyText, 'a rule'),
   output: valued('The report', 'FILE', anyText, 'a file', 'o'),
   quiet: toggle('The report', 'no remarks', 'q'),
+  color: toggle('The report', 'colours'),
+  noColor: toggle('The report', 'no colours'),
+  drop: repeatable('Reading the table', 'LABELS', anyText, 'levels'),
 };
 const scanned = (...words: string[]) => scan(words, declarations);
 
@@ -80,4 +83,25 @@ describe('which words are options and which are operands', () => {
 
 it('a flag is the name of its option with hyphens for capitals', () => {
   expect(flagOf('samplingConfidence')).toBe('--sampling-confidence');
+});
+
+describe('two answers to one question', () => {
+  it.each([
+    [
+      'two values, long and short',
+      ['-o', 'a', '--output=b'],
+      'given-twice',
+      /--output is given twice, as "a" and as "b"/,
+    ],
+    ['an empty value beside another', ['--seed=', '--seed', 'x'], 'given-twice', /as "" and as "x"/],
+    ['a switch and its opposite', ['--no-color', '--color'], 'contradiction', /--color and --no-color contradict/],
+  ])('are refused: %s', async (_case, words, code, message) => {
+    const problem = await problemOf(() => scanned(...words));
+    expect(problem).toMatchObject({ code, kind: 'usage' });
+    expect(problem.message).toMatch(message);
+  });
+
+  it('are one where they agree, and where an option may be given several times', () => {
+    expect(scanned('--seed', 'a', '--seed=a', '-q', '--quiet', '--drop', 'x', '--drop', 'y').options).toHaveLength(6);
+  });
 });

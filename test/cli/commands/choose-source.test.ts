@@ -38,6 +38,8 @@ describe('where the table stands', () => {
 describe('what does not go together', () => {
   it.each([
     ['rows and a file', ['8,2', 'x.csv'], {}, 'rows-with-files'],
+    ['an empty word', [''], {}, 'empty-word'],
+    ['a blank word', [' '], {}, 'empty-word'],
     ['rows and standard input', ['8,2', '-'], {}, 'rows-with-files'],
     ['two files', ['a.csv', 'b.csv'], {}, 'two-files'],
     ['standard input and a file', ['-', 'b.csv'], {}, 'two-files'],
