@@ -1,6 +1,7 @@
 // A statistic of the user's own, passed in by a program: exact, sampled, and refused where it misbehaves.
 import { describe, expect, it } from 'vitest';
 import { analyse } from '../../src/analyse.js';
+import type { PlanOptions } from '../../src/plan/plan.js';
 import type { Problem } from '../../src/problem/problem.js';
 import type { OwnStatistic } from '../../src/statistic/own.js';
 import { checked } from '../helpers/checked-result.js';
@@ -138,7 +139,7 @@ describe('a statistic of one’s own', () => {
         return found;
       },
     };
-    for (const options of [{}, { method: 'sample', draws: 2000, seed: 'own' }]) {
+    for (const options of [{}, { method: 'sample', draws: 2000, seed: 'own' }] satisfies PlanOptions[]) {
       const ours = await analyse({ counts }, { statistic: spoils, ...options });
       const theirs = await analyse({ counts }, { statistic: mine, ...options });
       expect(ours.pValues[0]).toMatchObject({ p: theirs.pValues[0]!.p, tied: theirs.pValues[0]!.tied });
