@@ -3,16 +3,18 @@
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { exactCuts } from '../src/null/exact/exact-cuts.js';
 import { Meter } from '../src/null/exact/meter.js';
+import type * as Source from '../src/answer.js';
+import type * as Forecasts from '../src/null/forecast.js';
 import { forecastExact } from '../src/null/forecast.js';
 import type { Problem } from '../src/problem/problem.js';
 import { boundTo, liveFrom, orderingOf } from './helpers/tables.js';
 
-let answer: typeof import('../src/answer.js').answer;
+let answer: typeof Source.answer;
 
 beforeAll(async () => {
   vi.resetModules();
   vi.doMock('../src/null/forecast.js', async (original) => {
-    const real = await original<typeof import('../src/null/forecast.js')>();
+    const real = await original<typeof Forecasts>();
     const forecast: typeof real.forecastExact = (...of) => ({ ...real.forecastExact(...of), workUnits: 1 });
     return { ...real, forecastExact: forecast };
   });
