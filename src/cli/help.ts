@@ -89,6 +89,7 @@ function section(heading: string, items: readonly (readonly [string, string])[],
   if (items.length === 0) return '';
   const helper = wrapper(width);
   const column = Math.min(30, Math.max(...items.map(([left]) => left.length)));
+  if (width - column < leastBeside) return `${heading}\n${items.flatMap((item) => stacked(item, width)).join('\n')}`;
   const lines = items.map(([left, words]) =>
     left.length <= column || words === ''
       ? helper.formatItem(left, column, words, helper)
@@ -96,6 +97,14 @@ function section(heading: string, items: readonly (readonly [string, string])[],
   );
   return `${heading}\n${lines.join('\n')}`;
 }
+
+/** Columns for words beside their terms, and what stands between; in less, words stand below. */
+const leastBeside = 28;
+
+const stacked = ([left, words]: readonly [string, string], width: number): string[] => [
+  `  ${left}`,
+  ...(words === '' ? [] : fold(words, width, { first: 6, rest: 6 })),
+];
 
 const wrapped = (text: string, width: number): string => wrapper(width).boxWrap(text, width);
 

@@ -32,13 +32,13 @@ async function runCommand([name, ...words]: readonly string[], shell: Shell): Pr
   }
   if (name === '--version') return print(`${version}\n`, shell);
   if (name === '--help' || name === '-h') return print(await rootHelp(shell), shell);
-  const file = await commandNamed(name).load();
+  const file = await commandNamed(name, words).load();
   if (asksForHelp(words)) return print((await import('./help.js')).commandHelp(file, shell.columns), shell);
   const { operands, values } = parseWords(file.name, words, file.options);
   return file.run(operands, values, shell);
 }
 
-function commandNamed(name: string): CommandEntry {
+function commandNamed(name: string, words: readonly string[]): CommandEntry {
   const found = commands.find((entry) => entry.name === name);
   if (found !== undefined) return found;
   if (name.startsWith('-')) {
@@ -48,12 +48,12 @@ function commandNamed(name: string): CommandEntry {
       hint: 'options come after the command, as in keepsum test 8,2 1,9 --format json',
     });
   }
-  const meantATable = /[0-9],[0-9]|\.|\//.test(name);
+  const meantATable = /[0-9],[0-9]|^\d+$|\.|\//.test(name);
   throw usageProblem({
     code: 'unknown-command',
     message: `there is no command "${name}"`,
     hint: meantATable
-      ? `to test a table, write keepsum test ${name} ...`
+      ? `to test a table, write keepsum test ${[name, ...words].join(' ')}`
       : nameHint(
           name,
           commands.map((entry) => entry.name),

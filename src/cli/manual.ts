@@ -1,4 +1,5 @@
 // The man page, in roff with the man macros, from the same declarations as the help. The build writes it to dist/keepsum.1.
+import { fold } from '../report/fold.js';
 import { version } from '../result/version.js';
 import { stages, type Declarations, flagOf } from './arguments/option.js';
 import { commands } from './commands/all.js';
@@ -15,7 +16,7 @@ export async function manualPage(): Promise<string> {
     '.SH NAME',
     `keepsum ${roff('-')} are the rows and columns of a table of counts related?`,
     '.SH SYNOPSIS',
-    ...files.flatMap(({ usage }) => usage.flatMap(({ line }) => [`.B ${roff(line)}`, '.br'])),
+    ...files.flatMap(({ usage }) => usage.flatMap(({ line }) => ['.br', `.B ${roff(line)}`])).slice(1),
     '.SH DESCRIPTION',
     text(purpose),
     ...files.flatMap(commandPart),
@@ -56,8 +57,11 @@ const exampleItems = (examples: readonly Example[]): string[] =>
 
 const item = (name: string, words: string): string[] => ['.TP', `.B ${roff(name)}`, text(words)];
 
-/** A line of running text: nothing in front that roff would take for a request. */
-const text = (words: string): string => roff(words).replace(/^(?=[.'])/, '\\&');
+/** Running text in lines that stay short when spelled: nothing in front of one that roff would take for a request. */
+const text = (words: string): string =>
+  fold(words, 60)
+    .map((line) => roff(line).replace(/^(?=[.'])/, '\\&'))
+    .join('\n');
 
 /** Characters that roff reads, or that are not ASCII, in its own spelling; a hyphen stays one that can be copied. */
 export const roff = (words: string): string =>

@@ -33,7 +33,16 @@ export class JointTally extends RecordTally {
     rule: MissingRule,
     sourceName: string,
   ) {
-    super({ rows: wanted.groups, columns: wanted.outcomes[0]!, count: wanted.count }, rule, sourceName);
+    super(
+      {
+        rows: wanted.groups,
+        columns: wanted.outcomes[0]!,
+        count: wanted.count,
+        sideOptions: ['--groups', '--outcomes'],
+      },
+      rule,
+      sourceName,
+    );
   }
 
   /** What was counted, groups and levels in their order of appearance. */

@@ -12,6 +12,8 @@ export interface ColumnNames {
   readonly count?: string | undefined;
   readonly strata?: string | undefined;
   readonly cluster?: string | undefined;
+  /** What the user calls the sides, where they are not --rows and --columns. */
+  readonly sideOptions?: readonly [rows: string, columns: string];
 }
 
 /** Indexes from 0; `count` is -1 where every record counts once, `strata` and `cluster` where there are none. */
@@ -34,15 +36,16 @@ export interface RecordColumns {
  */
 export function findColumns(header: readonly string[], names: ColumnNames, sourceName: string): RecordColumns {
   const titles = header.map((name) => name.trim());
-  const rows = columnIndex(titles, names.rows, '--rows', sourceName);
-  const columns = columnIndex(titles, names.columns, '--columns', sourceName);
+  const [rowsOption, columnsOption] = names.sideOptions ?? ['--rows', '--columns'];
+  const rows = columnIndex(titles, names.rows, rowsOption, sourceName);
+  const columns = columnIndex(titles, names.columns, columnsOption, sourceName);
   const count = names.count === undefined ? -1 : columnIndex(titles, names.count, '--count', sourceName);
   const strata = names.strata === undefined ? -1 : columnIndex(titles, names.strata, '--strata', sourceName);
   const cluster = names.cluster === undefined ? -1 : columnIndex(titles, names.cluster, '--cluster', sourceName);
   const used: [option: string, index: number][] = [];
   for (const [option, index] of [
-    ['--rows', rows],
-    ['--columns', columns],
+    [rowsOption, rows],
+    [columnsOption, columns],
     ['--count', count],
     ['--strata', strata],
     ['--cluster', cluster],

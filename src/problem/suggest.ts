@@ -30,7 +30,9 @@ export function nearest(typed: string, allowed: readonly string[]): string | und
   for (const name of allowed) {
     const wanted = name.toLowerCase();
     const given = typed.toLowerCase();
-    const distance = wanted.startsWith(given) && given.length >= 3 ? 0.5 : editDistance(given, wanted);
+    // What was only begun is nearer the less is missing: --row is --rows before --row-labels.
+    const isBegun = wanted.startsWith(given) && given.length >= 3;
+    const distance = isBegun ? 1 - 1 / (1 + wanted.length - given.length) : editDistance(given, wanted);
     if (distance < bestDistance && distance <= Math.max(1, Math.ceil(name.length / 3))) {
       best = name;
       bestDistance = distance;

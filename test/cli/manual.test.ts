@@ -37,6 +37,14 @@ describe('the man page', () => {
     expect(roff('a\\b -1 ^ \u00b2')).toBe('a\\eb \\-1 \\(ha \\[u00B2]');
   });
 
+  const hasMandoc = spawnSync('mandoc', ['-T', 'lint'], { input: '' }).error === undefined;
+  it.skipIf(!hasMandoc)(`has nothing that mandoc complains of${hasMandoc ? '' : ' (it is not installed here)'}`, () => {
+    const { stdout } = spawnSync('mandoc', ['-T', 'lint'], { input: page, encoding: 'utf8' });
+    // What is wanted of pages of an operating system only.
+    const ours = stdout.split('\n').filter((line) => line !== '' && !line.includes('missing date'));
+    expect(ours).toEqual([]);
+  });
+
   it(hasGroff ? 'is set by groff without a warning' : 'ends with a line feed (groff is not installed here)', () => {
     expect(page.endsWith('\n')).toBe(true);
     if (!hasGroff) return;

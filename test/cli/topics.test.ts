@@ -1,8 +1,11 @@
 // keepsum help TOPIC: every name that an option takes is explained, with its source, as the program itself has it.
 import { describe, expect, it } from 'vitest';
+import { analyse } from '../../src/analyse.js';
 import { main } from '../../src/cli/main.js';
 import { topics, topicNames } from '../../src/cli/topics/all.js';
 import { fixedSides } from '../../src/plan/design.js';
+import { adjustments } from '../../src/family/adjust.js';
+import { twoGroupTests } from '../../src/power/design.js';
 import { methods, tails, twoSidedRules } from '../../src/plan/plan.js';
 import { mentionsIn, sourceOf } from '../../src/result/citations.js';
 import { pairedStatistics } from '../../src/statistic/paired.js';
@@ -31,12 +34,38 @@ describe('keepsum help TOPIC', () => {
     ['tails', tails],
     ['rules', twoSidedRules],
     ['methods', methods],
+    ['adjustments', adjustments],
+    ['planned-tests', twoGroupTests],
     ['designs', fixedSides.map((side) => `--fixed ${side}`)],
     ['exit-status', ['0', '1', '2', '3', '4', '130']],
     ['seeds', ['--seed TEXT']],
   ])('%s explains every one', async (topic, names) => {
     const { status, out } = await run(['help', topic]);
     expect(status).toBe(0);
+    for (const name of names) expect(out).toMatch(new RegExp(`^${name}\n  \\S`, 'm'));
+  });
+
+  it('effects explains every measure that a result can hold', async () => {
+    const counts = [
+      [8, 2, 3],
+      [1, 9, 4],
+      [2, 5, 6],
+    ];
+    const small = [
+      [8, 2],
+      [1, 9],
+    ];
+    const strata = [small, small].map((table, k) => ({ label: String(k), counts: table }));
+    const results = await Promise.all([
+      analyse({ counts: small }, {}),
+      analyse({ counts: small }, { paired: true }),
+      analyse({ counts }, { ordered: 'both' }),
+      analyse({ counts }, { paired: true }),
+      analyse({ strata }, {}),
+    ]);
+    const names = new Set(results.flatMap(({ effects = [] }) => effects.map(({ name }) => name)));
+    expect(names.size).toBeGreaterThan(15);
+    const { out } = await run(['help', 'effects']);
     for (const name of names) expect(out).toMatch(new RegExp(`^${name}\n  \\S`, 'm'));
   });
 

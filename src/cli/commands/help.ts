@@ -12,10 +12,11 @@ export const helpCommand = command({
     { line: 'keepsum help TOPIC', words: 'definitions and sources' },
     { line: 'keepsum help COMMAND', words: 'its options' },
   ],
-  purpose: 'Explains a topic (statistics, tails, rules, designs, methods, seeds, exit-status), one name, or a command.',
+  purpose: 'Explains a topic such as statistics, tails, designs or effects, one name, or a command.',
   examples: [
     { line: 'keepsum help statistics', words: 'every statistic: formula, range, source' },
     { line: 'keepsum help blaker', words: 'one rule alone' },
+    { line: 'keepsum help power', words: 'the options of a command' },
   ],
   options: { debug: debugOption, help: helpOption },
   operandNames: async () => [

@@ -4,9 +4,13 @@ import { usageProblem } from '../../problem/problem.js';
 interface Slip {
   readonly message: string;
   readonly rows: readonly string[];
+  /** Where the rows alone do not say enough. */
+  readonly hint?: string;
 }
 
 const row = /^([^\s=,]+=)?\d+(,\d+)+$/;
+
+const rowsAreWords = 'each row is one word, its counts separated by commas alone:';
 
 /** Whether these words are a table: two rows or more, all of one width. */
 const isTable = (words: readonly string[]): boolean =>
@@ -17,15 +21,43 @@ const isTable = (words: readonly string[]): boolean =>
 /** @throws Problem (usage) `row-slip`, only for words that could not be read as a table in any case. */
 export function refuseRowSlips(operands: readonly string[]): void {
   if (operands.length === 0 || isTable(operands)) return;
-  const slip = [commasAtEnds, blanksWithin, quotesAround, brackets]
+  const slip = [commasAtEnds, blanksWithin, quotesAround, brackets, otherSeparators, singleCounts]
     .map((find) => find(operands))
     .find((found) => found !== undefined && isTable(found.rows));
   if (slip === undefined) return;
   throw usageProblem({
     code: 'row-slip',
     message: slip.message,
-    hint: `each row is one word, its counts separated by commas alone: ${slip.rows.join(' ')}`,
+    hint: slip.hint ?? `${rowsAreWords} ${slip.rows.join(' ')}`,
   });
+}
+
+/** `8 2 1 9`: the counts of several rows, read off one by one. A table of one column says nothing about association. */
+function singleCounts(words: readonly string[]): Slip | undefined {
+  if (!words.every((word) => /^([^\s=,]+=)?,?\d+,?$/.test(word))) return undefined;
+  const counts = words.map((word) => /\d+(?=,?$)/.exec(word)![0]);
+  const isEven = counts.length % 2 === 0 && counts.length > 2 && words.every((word) => !word.includes('='));
+  const half = counts.length / 2;
+  const rows = isEven ? [counts.slice(0, half).join(','), counts.slice(half).join(',')] : ['8,2', '1,9'];
+  return {
+    message: words.length === 1 ? 'one count alone is no table' : 'each word is one count, which makes a single column',
+    rows,
+    hint: `${rowsAreWords} ${isEven ? `for two rows ${rows.join(' ')}` : `for example ${rows.join(' ')}`}`,
+  };
+}
+
+/** `8/10 1/10`, `8-2 1-9`, `8:2 1:9`, `8;2 1;9` */
+function otherSeparators(words: readonly string[]): Slip | undefined {
+  const [, separator] = /^\d+([/:;|-])\d/.exec(words[0]!) ?? [];
+  if (separator === undefined || words.length < 2) return undefined;
+  const parts = words.map((word) => word.split(separator));
+  if (!parts.every((counts) => counts.every((count) => /^\d+$/.test(count)))) return undefined;
+  const rows = parts.map((counts) => counts.join(','));
+  const message = `the counts of a row are separated by "${separator}"`;
+  const ofTotals = parts.every(([events, total, ...more]) => more.length === 0 && Number(events) <= Number(total));
+  if (separator !== '/' || !ofTotals) return { message, rows };
+  const split = parts.map(([events, total]) => `${events!},${Number(total) - Number(events)}`);
+  return { message, rows, hint: `write ${split.join(' ')} if these are events of totals, else ${rows.join(' ')}` };
 }
 
 /** `8,2, 1,9,` */

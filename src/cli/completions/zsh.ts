@@ -30,13 +30,15 @@ ${options.map((option) => `        ${optionSpec(option)} \\`).join('\n')}
         ${operands === undefined ? "'*:file:_files'" : quotedWord(`*:name:(${operands.join(' ')})`)}
       ;;`;
 
-function optionSpec({ flag, short, words, placeholder, names }: CompletedOption): string {
+/** A flag that takes a value takes it behind an equals sign as well; one that may be repeated is offered again. */
+function optionSpec({ flag, short, words, placeholder, names, repeats }: CompletedOption): string {
   const said = `[${words.replace(/[[\]\\]/g, '\\$&')}]`;
   const value =
     placeholder === undefined ? '' : `:${placeholder}:${names === undefined ? '_files' : `(${names.join(' ')})`}`;
+  const named = `${flag}${placeholder === undefined ? '' : '='}`;
   return short === undefined
-    ? quotedWord(`${flag}${said}${value}`)
-    : `'(${flag} ${short})'{${flag},${short}}${quotedWord(`${said}${value}`)}`;
+    ? quotedWord(`${repeats ? '*' : ''}${named}${said}${value}`)
+    : `'(${flag} ${short})'{${named},${short}}${quotedWord(`${said}${value}`)}`;
 }
 
 const quotedWord = (text: string): string => `'${text.replaceAll("'", "'\\''")}'`;

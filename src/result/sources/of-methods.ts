@@ -16,6 +16,9 @@ Aoki & Takemura 2005 | Aoki, S. and Takemura, A. | Markov chain Monte Carlo exac
 Deming & Stephan 1940 | Deming, W. E. and Stephan, F. F. | On a least squares adjustment of a sampled frequency table when the expected marginal totals are known | Annals of Mathematical Statistics | 11 | 4 | 427-444
 Efron 1979 | Efron, B. | Bootstrap methods: another look at the jackknife | Annals of Statistics | 7 | 1 | 1-26
 Davison & Hinkley 1997 | Davison, A. C. and Hinkley, D. V. | Bootstrap Methods and their Application | book: Cambridge University Press, Cambridge | | |
+Dunn 1961 | Dunn, O. J. | Multiple comparisons among means | Journal of the American Statistical Association | 56 | 293 | 52-64
+Hochberg 1988 | Hochberg, Y. | A sharper Bonferroni procedure for multiple tests of significance | Biometrika | 75 | 4 | 800-802
+Gilbert 2005 | Gilbert, P. B. | A modified false discovery rate multiple-comparisons procedure for discrete data, applied to human immunodeficiency virus genetics | Applied Statistics | 54 | 1 | 143-158
 Holm 1979 | Holm, S. | A simple sequentially rejective multiple test procedure | Scandinavian Journal of Statistics | 6 | 2 | 65-70
 Tarone 1990 | Tarone, R. E. | A modified Bonferroni method for discrete data | Biometrics | 46 | 2 | 515-522
 Wright 1992 | Wright, S. P. | Adjusted P-values for simultaneous inference | Biometrics | 48 | 4 | 1005-1013
@@ -35,11 +38,14 @@ Wilson 1927 | Wilson, E. B. | Probable inference, the law of succession, and sta
 Newcombe 1998 | Newcombe, R. G. | Interval estimation for the difference between independent proportions: comparison of eleven methods | Statistics in Medicine | 17 | 8 | 873-890
 Newcombe 1998 (pairs) | Newcombe, R. G. | Improved confidence intervals for the difference between binomial proportions based on paired data | Statistics in Medicine | 17 | 22 | 2635-2650
 Tango 1998 | Tango, T. | Equivalence test and confidence interval for the difference in proportions for the paired-sample design | Statistics in Medicine | 17 | 8 | 891-908
+Laupacis et al. 1988 | Laupacis, A. and Sackett, D. L. and Roberts, R. S. | An assessment of clinically useful measures of the consequences of treatment | New England Journal of Medicine | 318 | 26 | 1728-1733
+Levin 1953 | Levin, M. L. | The occurrence of lung cancer in man | Acta Unio Internationalis Contra Cancrum | 9 | | 531-541
 Altman 1998 | Altman, D. G. | Confidence intervals for the number needed to treat | British Medical Journal | 317 | 7168 | 1309-1312
 Miettinen & Nurminen 1985 | Miettinen, O. and Nurminen, M. | Comparative analysis of two rates | Statistics in Medicine | 4 | 2 | 213-226
 Katz et al. 1978 | Katz, D. and Baptista, J. and Azen, S. P. and Pike, M. C. | Obtaining confidence intervals for the risk ratio in cohort studies | Biometrics | 34 | 3 | 469-474
 Chan & Zhang 1999 | Chan, I. S. F. and Zhang, Z. | Test-based exact confidence intervals for the difference of two binomial proportions | Biometrics | 55 | 4 | 1202-1209
 Koopman 1984 | Koopman, P. A. R. | Confidence intervals for the ratio of two binomial proportions | Biometrics | 40 | 2 | 513-517
+Cramer 1946 | Cramer, H. | Mathematical Methods of Statistics | book: Princeton University Press, Princeton | | |
 Bergsma 2013 | Bergsma, W. | A bias-correction for Cramer's V and Tschuprow's T | Journal of the Korean Statistical Society | 42 | 3 | 323-328
 Goodman & Kruskal 1954 | Goodman, L. A. and Kruskal, W. H. | Measures of association for cross classifications | Journal of the American Statistical Association | 49 | 268 | 732-764
 Goodman & Kruskal 1963 | Goodman, L. A. and Kruskal, W. H. | Measures of association for cross classifications III: approximate sampling theory | Journal of the American Statistical Association | 58 | 302 | 310-364
