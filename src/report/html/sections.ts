@@ -22,9 +22,15 @@ export const sectionMarkup = (
     'section',
     {},
     worded(heading, words),
-    ...blocks.map((block) => blockMarkup(block, `${words}${place}`, draw)),
+    ...blocks.map((block, k) => blockMarkup(block, `${words}${whichGrid(blocks, k)}${place}`, draw)),
     ...after,
   );
+
+/** Tables of one section have names of their own. */
+function whichGrid(blocks: readonly Block[], k: number): string {
+  const before = blocks.slice(0, k).filter(({ kind }) => kind === 'grid').length;
+  return before === 0 ? '' : `, table ${before + 1}`;
+}
 
 function blockMarkup(block: Block, name: string, draw: (block: DrawnBlock) => Markup): Markup {
   switch (block.kind) {
