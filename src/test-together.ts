@@ -1,4 +1,5 @@
 // The spine of several outcomes tested together: counts by group and outcome profile in, adjusted p-values out.
+import { tableEffects } from './effect/larger/table-effects.js';
 import { jointCounts, type JointOutcomeAnswer } from './family/joint.js';
 import type { TogetherResult } from './result/together-declaration.js';
 import type { JointCounts } from './input/joint-counts.js';
@@ -10,8 +11,10 @@ import { dataProblem, usageProblem } from './problem/problem.js';
 import { clopperPearson } from './pvalue/clopper-pearson.js';
 import { generatorName } from './random/stream.js';
 import { quoted } from './result/label-words.js';
-import { countWords } from './result/number-words.js';
+import { togetherMethods, togetherSentence } from './result/together-words.js';
 import { version } from './result/version.js';
+import { liveTable } from './table/live-table.js';
+import { makeTable } from './table/table.js';
 
 export interface TogetherOptions {
   /** Default 10,000. */
@@ -53,6 +56,7 @@ export async function testTogether(
       levels: [...joint.outcomes[k]!.levels],
       counts: outcome.counts,
       statistic: outcome.value,
+      ...effectOf(outcome.counts),
       ...(await drawn(outcome, draws, samplingConfidence)),
     })),
   );
@@ -69,7 +73,15 @@ export async function testTogether(
     outcomes,
     notes: notesOf(joint),
   };
-  return { ...before, methods: methodsOf(before) };
+  return { ...before, sentence: togetherSentence(before), methods: togetherMethods(before) };
+}
+
+/** Tau of the outcome from the group. */
+function effectOf(counts: number[][]): Pick<TogetherResult['outcomes'][number], 'effect'> {
+  const found = tableEffects(liveTable(makeTable({ counts })), { confidence: 0.95 }, null).find(
+    ({ name, predicts }) => name === 'goodman-kruskal-tau' && predicts === 'columns',
+  );
+  return found === undefined ? {} : { effect: { ...found, intervals: [...found.intervals] } };
 }
 
 type DrawnP = TogetherResult['outcomes'][number]['alone'];
@@ -113,14 +125,4 @@ function notesOf({ outcomes }: JointCounts): TogetherResult['notes'] {
           },
         ]),
   ];
-}
-
-function methodsOf({ input, plan, outcomes, tool }: Omit<TogetherResult, 'methods'>): string {
-  return (
-    `${outcomes.length} outcomes of ${countWords(input.total)} subjects in ${input.groups.length} groups were each tested with Pearson's chi-square statistic. ` +
-    `The groups were dealt to the subjects anew ${countWords(plan.draws)} times (seed ${quoted(plan.seed)}; generator ${plan.generator}), each subject keeping all its outcomes, and p-values were adjusted ` +
-    'step-down by the largest statistic (maxT) and by the smallest p (minP), the p of each outcome taken from the same draws (Westfall & Young 1993; Ge, Dudoit & Speed 2003). ' +
-    'Both hold the family-wise error when groups and outcomes that are not related are so together (subset pivotality). ' +
-    `p is (b + 1) / (m + 1) with b of m draws at least as extreme (Phipson & Smyth 2010). Computed with ${tool.name} ${tool.version}.`
-  );
 }

@@ -1,6 +1,6 @@
 // The sources of the methods used in one result: those that its methods paragraph cites, looked up in the one table of sources.
 import { asBibtex, asText, sources, type Source } from './sources/source.js';
-import type { Result } from './result.js';
+import { version } from './version.js';
 
 export type CitationForm = 'text' | 'bibtex';
 
@@ -29,17 +29,26 @@ export function sourceOf({ name, year }: Mention, paired: boolean): Source | und
   return meant.find(({ ofPairs }) => ofPairs === paired) ?? meant[0];
 }
 
+/** Whatever has a methods paragraph; a plan tells pairs apart, whose sources can share a name and year with others. */
+export interface Cited {
+  readonly methods: string;
+  readonly plan?: object;
+}
+
+const isOfPairs = (plan: object | undefined): boolean => plan !== undefined && 'paired' in plan && plan.paired === true;
+
 /** In alphabetical order, each once. */
-export function sourcesUsed({ methods, plan }: Pick<Result, 'methods' | 'plan'>): Source[] {
-  const used = new Set(mentionsIn(methods).map((mention) => sourceOf(mention, plan.paired === true)));
+export function sourcesUsed(...records: readonly Cited[]): Source[] {
+  const used = new Set(
+    records.flatMap(({ methods, plan }) => mentionsIn(methods).map((mention) => sourceOf(mention, isOfPairs(plan)))),
+  );
   return sources.filter((source) => used.has(source));
 }
 
 /** One document: a reference a line, or BibTeX entries; the program itself comes last. */
-export function citationsOf(result: Pick<Result, 'methods' | 'plan' | 'tool'>, form: CitationForm): string {
-  const { name, version } = result.tool;
-  const used = sourcesUsed(result);
-  if (form === 'text') return `${[...used.map(asText), `${name} ${version} (software).`].join('\n')}\n`;
-  const software = `@misc{${name},\n  title = {{${name}}},\n  note = {software, version ${version}}\n}`;
+export function citationsOf(records: readonly Cited[], form: CitationForm): string {
+  const used = sourcesUsed(...records);
+  if (form === 'text') return `${[...used.map(asText), `keepsum ${version} (software).`].join('\n')}\n`;
+  const software = `@misc{keepsum,\n  title = {{keepsum}},\n  note = {software, version ${version}}\n}`;
   return `${[...used.map(asBibtex), software].join('\n\n')}\n`;
 }

@@ -1,5 +1,6 @@
 // Several outcomes of the same subjects, tested together: the reported shape, declared once.
 import { z } from 'zod';
+import { effect } from './declared/effect.js';
 import { count, digest, level, probability } from './declared/pieces.js';
 
 const drawnP = z.strictObject({
@@ -36,6 +37,8 @@ export const togetherDeclaration = z.strictObject({
       /** Groups by levels. */
       counts: z.array(z.array(count)),
       statistic: z.number().min(0),
+      /** Tau of the outcome from the group; left out where all subjects share a level. */
+      effect: effect.optional(),
       /** Of this outcome alone, from the same draws. */
       alone: drawnP,
       /** Step-down, by the largest statistic of those ranked no higher. */
@@ -44,6 +47,7 @@ export const togetherDeclaration = z.strictObject({
       minP: drawnP,
     }),
   ),
+  sentence: z.string(),
   methods: z.string(),
   notes: z.array(z.strictObject({ code: z.string(), text: z.string() })),
 });

@@ -141,8 +141,8 @@ describe('the table of sources', () => {
 
 it('the document ends with the program, in both forms', async () => {
   const result = await analyse({ counts: small }, { statistic: 'probability' });
-  const text = citationsOf(result, 'text');
+  const text = citationsOf([result], 'text');
   expect(text).toContain('Freeman, G. H., Halton, J. H. (1951). Note on an exact treatment');
   expect(text.trimEnd().split('\n').at(-1)).toBe(`keepsum ${result.tool.version} (software).`);
-  expect(citationsOf(result, 'bibtex')).toContain(`@misc{keepsum,`);
+  expect(citationsOf([result], 'bibtex')).toContain(`@misc{keepsum,`);
 });

@@ -9,10 +9,14 @@ import { betweenZeroAndOne, oneOf, type CheckValue } from '../arguments/check-va
 import { toggle, valued } from '../arguments/option.js';
 import { remark } from '../streams/write-out.js';
 import { command } from './command-file.js';
+import { checkDocument, citationsIn } from './document.js';
+import { lookFor } from './look.js';
+import { documents } from './options/documents.js';
+import { reporting } from './options/reporting.js';
 import { either } from './options/words.js';
 import { destinationFor, sharedOptions } from './shared-options.js';
 
-const formats = ['ndjson', 'csv'] as const;
+const formats = ['ndjson', 'csv', 'text'] as const;
 
 const methodList: CheckValue<Adjustment[]> = (text, flag) =>
   text.split(',').map((part) => {
@@ -44,10 +48,15 @@ export const adjustCommand = command({
     by: valued('The test', 'NAMES', methodList, `${either(adjustments)} (${standardAdjustments.join(', ')})`),
     alpha: valued('The test', 'LEVEL', betweenZeroAndOne('0.05'), 'the level that gilbert picks tests for (0.05)'),
     format: valued('The report', 'NAME', oneOf(formats), `${either(formats)} (ndjson)`),
+    citations: documents.citations,
+    width: reporting.width,
+    color: reporting.color,
+    noColor: reporting.noColor,
     quiet: toggle('The report', 'no remarks on standard error', 'q'),
     ...sharedOptions,
   },
   async run(operands, values, shell) {
+    checkDocument(values);
     const [path, ...more] = operands;
     if (more.length > 0 || (path === undefined && shell.stdinIsTerminal())) {
       throw usageProblem({
@@ -65,13 +74,23 @@ export const adjustCommand = command({
     const read = await resultsIn(file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file), sourceName);
     const methods = values.by ?? standardAdjustments;
     const results = methods.some((method) => discreteAdjustments.includes(method)) ? await withReach(read) : read;
-    const { lines, remarks } = adjustResults(results, {
-      methods,
-      alpha: values.alpha ?? 0.05,
-    });
+    const alpha = values.alpha ?? 0.05;
+    const { lines, remarks } = adjustResults(results, { methods, alpha });
+    const { citations, format = 'ndjson' } = values;
+    if (citations !== undefined) {
+      const { adjustMethods } = await import('../../result/adjust-words.js');
+      await destination.write((await citationsIn([{ methods: adjustMethods(methods, alpha) }], values))!);
+      return 0;
+    }
+    if (format === 'text') {
+      const { adjustedPage } = await import('../../report/adjusted-page.js');
+      const { pageText } = await import('../../report/page-lines.js');
+      await destination.write(pageText(adjustedPage(lines, methods, alpha, remarks), await lookFor(values, shell)));
+      return 0;
+    }
     if (!values.quiet) await remark(shell.stderr, remarks.map((text) => `note: ${text}\n`).join(''));
     const { adjustedLines } = await import('../../report/adjusted.js');
-    await destination.write(adjustedLines(lines, values.format ?? 'ndjson'));
+    await destination.write(adjustedLines(lines, format));
     return 0;
   },
 });

@@ -14,6 +14,8 @@ import {
 import { repeatable, valued } from '../arguments/option.js';
 import { plotWish } from '../plots/plot-wish.js';
 import { command } from './command-file.js';
+import { checkDocument, citationsIn } from './document.js';
+import { documents } from './options/documents.js';
 import { lookFor } from './look.js';
 import { either } from './options/words.js';
 import { reporting } from './options/reporting.js';
@@ -123,6 +125,7 @@ export const powerCommand = command({
       plotWish(['curve'] as const),
       'the power over the sizes asked for, drawn into FILE.svg or FILE.png',
     ),
+    citations: documents.citations,
     width: reporting.width,
     color: reporting.color,
     noColor: reporting.noColor,
@@ -131,6 +134,7 @@ export const powerCommand = command({
     ...sharedOptions,
   },
   async run(operands, values, shell) {
+    checkDocument(values);
     const destination = await destinationFor(values.output, shell);
     const { readGroups } = await import('../../power/read-groups.js');
     const { planPower } = await import('../../plan-power.js');
@@ -151,9 +155,10 @@ export const powerCommand = command({
     };
     const result = await withSteps(values, shell, (onProgress) => planPower(wishes, onProgress));
     await destination.write(
-      format === 'html'
-        ? (await import('../../report/html/power.js')).powerHtml(result)
-        : renderPower(result, format ?? 'text', await lookFor(values, shell)),
+      (await citationsIn([result], values)) ??
+        (format === 'html'
+          ? (await import('../../report/html/power.js')).powerHtml(result)
+          : renderPower(result, format ?? 'text', await lookFor(values, shell))),
     );
     if (draw === undefined) return 0;
     const { drawPowerCurve, lackOfCurve } = await import('../../report/pictures/power-curve.js');

@@ -1,19 +1,44 @@
-// keepsum report: saved results, one or many, in one html file.
+// keepsum report: saved results, one or many, in one document; nothing is worked out again.
 import { dataProblem, usageProblem } from '../../problem/problem.js';
 import type { Result } from '../../result/result.js';
+import { oneOf } from '../arguments/check-value.js';
+import { valued } from '../arguments/option.js';
+import type { Shell } from '../shell.js';
 import { command } from './command-file.js';
+import { checkDocument, citationsIn } from './document.js';
+import { lookFor, type LookValues } from './look.js';
+import { documents } from './options/documents.js';
+import { reporting } from './options/reporting.js';
+import { either } from './options/words.js';
 import { destinationFor, sharedOptions } from './shared-options.js';
 
 /** A page of more is none that anybody reads or opens. */
 const mostResults = 1000;
 
+const formats = ['html', 'text', 'markdown'] as const;
+
 export const reportCommand = command({
   name: 'report',
   usage: [{ line: 'keepsum report RESULTS', words: 'JSON results, one alone or one a line (keepsum batch --full)' }],
-  purpose: 'Writes saved results as one html file, each with its pictures and its record.',
-  examples: [{ line: 'keepsum report fixtures/golden/orchid-forms.json', words: 'a page to send' }],
-  options: sharedOptions,
+  purpose:
+    'Writes saved results as one document, without working them out again: html with pictures and record, unless told.',
+  examples: [
+    { line: 'keepsum report fixtures/golden/orchid-forms.json', words: 'a page to send' },
+    {
+      line: 'keepsum report fixtures/golden/orchid-forms.json --citations bibtex',
+      words: 'the sources of what it used',
+    },
+  ],
+  options: {
+    format: valued('The report', 'NAME', oneOf(formats), `${either(formats)} (html)`),
+    citations: documents.citations,
+    width: reporting.width,
+    color: reporting.color,
+    noColor: reporting.noColor,
+    ...sharedOptions,
+  },
   async run(operands, values, shell) {
+    checkDocument(values);
     const [path, ...more] = operands;
     if (more.length > 0 || (path === undefined && shell.stdinIsTerminal())) {
       throw usageProblem({
@@ -49,11 +74,21 @@ export const reportCommand = command({
         hint: 'give what --format json or keepsum batch --full wrote',
       });
     }
-    const { htmlReport } = await import('../../report/html/report.js');
-    await destination.write(htmlReport(results));
+    await destination.write((await citationsIn(results, values)) ?? (await pageOf(results, values, shell)));
     return 0;
   },
 });
+
+async function pageOf(
+  results: readonly Result[],
+  { format = 'html', ...look }: LookValues & { readonly format?: (typeof formats)[number] },
+  shell: Shell,
+): Promise<string> {
+  if (format === 'html') return (await import('../../report/html/report.js')).htmlReport(results);
+  const { render } = await import('../../report/formats.js');
+  const settings = await lookFor(look, shell);
+  return results.map((result) => render(result, format, settings)).join('\n');
+}
 
 /** Only what keeps the published shape is put on a page. */
 async function wholeResult(record: unknown, place: string): Promise<Result> {

@@ -5,6 +5,8 @@ import { togetherFormats } from '../../report/together.js';
 import { anyText, betweenZeroAndOne, oneOf, wholeNumber } from '../arguments/check-value.js';
 import { valued } from '../arguments/option.js';
 import { command } from './command-file.js';
+import { checkDocument, citationsIn } from './document.js';
+import { documents } from './options/documents.js';
 import { lookFor } from './look.js';
 import { reading } from './options/reading.js';
 import { reporting } from './options/reporting.js';
@@ -37,6 +39,7 @@ export const togetherCommand = command({
     count: reading.count,
     missing: reading.missing,
     delimiter: reading.delimiter,
+    citations: documents.citations,
     width: reporting.width,
     color: reporting.color,
     noColor: reporting.noColor,
@@ -45,6 +48,7 @@ export const togetherCommand = command({
     ...sharedOptions,
   },
   async run(operands, values, shell) {
+    checkDocument(values);
     const path = onePath(operands, shell.stdinIsTerminal);
     const { groups, outcomes } = values;
     if (groups === undefined || outcomes === undefined) {
@@ -79,7 +83,10 @@ export const togetherCommand = command({
       ...(samplingConfidence === undefined ? {} : { samplingConfidence }),
     };
     const result = await withSteps(values, shell, (onProgress) => testTogether(read, wishes, onProgress));
-    await destination.write(renderTogether(result, values.format ?? 'text', await lookFor(values, shell)));
+    await destination.write(
+      (await citationsIn([result], values)) ??
+        renderTogether(result, values.format ?? 'text', await lookFor(values, shell)),
+    );
     return 0;
   },
 });

@@ -20,6 +20,9 @@ Dunn 1961 | Dunn, O. J. | Multiple comparisons among means | Journal of the Amer
 Hochberg 1988 | Hochberg, Y. | A sharper Bonferroni procedure for multiple tests of significance | Biometrika | 75 | 4 | 800-802
 Gilbert 2005 | Gilbert, P. B. | A modified false discovery rate multiple-comparisons procedure for discrete data, applied to human immunodeficiency virus genetics | Applied Statistics | 54 | 1 | 143-158
 Holm 1979 | Holm, S. | A simple sequentially rejective multiple test procedure | Scandinavian Journal of Statistics | 6 | 2 | 65-70
+Dunn 1961 | Dunn, O. J. | Multiple comparisons among means | Journal of the American Statistical Association | 56 | 293 | 52-64
+Hochberg 1988 | Hochberg, Y. | A sharper Bonferroni procedure for multiple tests of significance | Biometrika | 75 | 4 | 800-802
+Gilbert 2005 | Gilbert, P. B. | A modified false discovery rate multiple-comparisons procedure for discrete data, applied to human immunodeficiency virus genetics | Applied Statistics | 54 | 1 | 143-158
 Tarone 1990 | Tarone, R. E. | A modified Bonferroni method for discrete data | Biometrics | 46 | 2 | 515-522
 Wright 1992 | Wright, S. P. | Adjusted P-values for simultaneous inference | Biometrics | 48 | 4 | 1005-1013
 Westfall & Young 1993 | Westfall, P. H. and Young, S. S. | Resampling-Based Multiple Testing: Examples and Methods for p-Value Adjustment | book: Wiley, New York | | |
