@@ -31,12 +31,14 @@ import { liveTable, type LiveTable } from './table/live-table.js';
 /**
  * Decides whether rows and columns are associated once the strata are held apart.
  * @param read a table with strata
+ * @param withEffects whether to say how strong the association is
  * @throws Problem, of kind `usage` or `effort`.
  */
 export async function analyseStrata(
   read: ReadTable,
   options: PlanOptions,
   surroundings: Surroundings = {},
+  withEffects = true,
 ): Promise<Result> {
   if (read.clusters !== undefined) throw unused('--cluster', 'with --strata', 'leave one of the two out');
   const { table } = read;
@@ -85,7 +87,7 @@ export async function analyseStrata(
       pValues: [...found, ...beside, ...homogeneity],
       expectations: nothingVaries ? checkExpectations(live) : family.expectations,
       tables: undefined,
-      effects: await family.effects(plan.confidence, withLaw),
+      effects: withEffects ? await family.effects(plan.confidence, withLaw) : undefined,
       strata: facts,
       notes: [
         ...read.notes,

@@ -68,11 +68,7 @@ async function analyseWhole(
   surroundings: Surroundings,
 ): Promise<Result> {
   const read = 'table' in data ? data : 'strata' in data ? await strataFromProgram(data) : fromProgram(data);
-  if (read.strata !== undefined)
-    return (await import('./analyse-strata.js')).analyseStrata(read, options, surroundings);
-  if (read.clusters !== undefined) {
-    return (await import('./analyse-clusters.js')).analyseClusters(read, options, surroundings);
-  }
+  if (read.strata !== undefined || read.clusters !== undefined) return ofGroups(read, options, surroundings, true);
   const found = await find(read, options, surroundings, true);
   const { cells, prepared } = found;
   const byOrder =
@@ -110,6 +106,27 @@ async function otherDesigns({
 }: Answer): Promise<DesignLine[] | undefined> {
   if (!isTwoByTwo(table) || plan.nullValue || !fixedSides.some((side) => side === plan.fixed)) return undefined;
   return (await import('./design/panel.js')).designPanel(table, plan, questionsOf(plan)[0]!, pValues);
+}
+
+/** A table with strata or clusters without its effects: all that a compact line takes. Arguments and problems as for `analyse`. */
+export async function analyseGroups(
+  data: TableParts | StrataParts | ReadTable,
+  options: PlanOptions,
+  surroundings: Surroundings,
+): Promise<{ read: ReadTable; result: Result }> {
+  const read = 'table' in data ? data : await strataFromProgram(data as StrataParts);
+  return { read, result: await ofGroups(read, options, surroundings, false) };
+}
+
+async function ofGroups(
+  read: ReadTable,
+  options: PlanOptions,
+  surroundings: Surroundings,
+  withEffects: boolean,
+): Promise<Result> {
+  return read.strata !== undefined
+    ? (await import('./analyse-strata.js')).analyseStrata(read, options, surroundings, withEffects)
+    : (await import('./analyse-clusters.js')).analyseClusters(read, options, surroundings);
 }
 
 async function strataFromProgram(parts: StrataParts): Promise<ReadTable> {

@@ -55,9 +55,7 @@ export async function fragilityOf(
 ): Promise<Fragile> {
   const { plan, statistic, bound } = prepared;
   if (bound === null || statistic.own || plan.method === 'asymptotic') return {};
-  const asked = withoutDraws(options);
-  const ask = (counts: readonly (readonly number[])[]): Promise<PValueEntry | null> =>
-    exactHeadline(makeTable({ ...table, counts }), { ...asked, method: 'exact' });
+  const ask = askerFor(table, options);
   const moves = neighbours(table, live);
   const { workUnits } = forecastExact(live, bound, statistic.name);
   const cheap = Math.min(plan.effort, isTwoByTwo(live) ? cheapTwoByTwoWork : cheapWork);
@@ -80,6 +78,27 @@ export async function fragilityOf(
   const smallest = found.reduce((best, one) => (size(one) < size(best) ? one : best));
   const largest = found.reduce((best, one) => (size(one) > size(best) ? one : best));
   return { ...least, fragility: { moves: found.length, smallest, largest } };
+}
+
+/** The least p that the margins allow, alone; undefined where it is not to be had cheaply. Arguments as above. */
+export async function leastAttainableOf(
+  table: Table,
+  live: LiveTable,
+  prepared: Prepared,
+  options: PlanOptions,
+): Promise<number | undefined> {
+  const { plan, statistic, bound } = prepared;
+  if (statistic.own || plan.method === 'asymptotic') return undefined;
+  if (bound === null) return 1;
+  return (await leastAttainable(table, live, prepared, askerFor(table, options))).leastAttainable;
+}
+
+type Ask = (counts: readonly (readonly number[])[]) => Promise<PValueEntry | null>;
+
+/** Asks the question of a neighbouring table. */
+function askerFor(table: Table, options: PlanOptions): Ask {
+  const asked = withoutDraws(options);
+  return (counts) => exactHeadline(makeTable({ ...table, counts }), { ...asked, method: 'exact' });
 }
 
 /** The same question, without what only drawing reads. */
@@ -131,7 +150,7 @@ async function leastAttainable(
   table: Table,
   live: LiveTable,
   prepared: Prepared,
-  ask: (counts: readonly (readonly number[])[]) => Promise<PValueEntry | null>,
+  ask: Ask,
 ): Promise<Pick<Fragile, 'leastAttainable'>> {
   const { plan } = prepared;
   const extremes = isTwoByTwo(live)

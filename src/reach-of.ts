@@ -1,26 +1,25 @@
-// The least p that the margins of a 2x2 table allow, for results that do not say it: the p of its two most extreme tables.
-import { answer } from './analyse.js';
+// The least p that the margins of a table allow, for results that do not say it: the p of its most extreme tables.
+import { leastAttainableOf } from './one-count-moved.js';
+import { makePlan } from './plan/make-plan.js';
 import type { PlanOptions } from './plan/plan.js';
+import { Problem } from './problem/problem.js';
+import { liveTable } from './table/live-table.js';
+import { makeTable, type TableParts } from './table/table.js';
 
 /**
  * @param wishes those of the result, as its line or record holds them.
- * @returns null where it is not known: not a 2x2 table, or a p that is not exact given both margins.
+ * @returns null where it is not known: a p that is not exact given both margins, or too many tables to list.
  */
-export async function reachOf(counts: readonly (readonly number[])[], wishes: PlanOptions): Promise<number | null> {
-  if (counts.length !== 2 || counts.some((row) => row.length !== 2)) return null;
-  const [[a, b], [c, d]] = counts as [[number, number], [number, number]];
-  const down = Math.min(a, d);
-  const up = Math.min(b, c);
-  const ends = [
-    [[a - down, b + down], [c + down, d - down]], // prettier-ignore
-    [[a + up, b - up], [c - up, d + up]], // prettier-ignore
-  ];
-  let least = 1;
-  for (const end of ends) {
-    const { pValues } = await answer({ counts: end }, { ...wishes, method: 'exact' }).catch(() => ({ pValues: [] }));
-    const [headline] = pValues;
-    if (headline?.method !== 'exact') return null;
-    least = Math.min(least, headline.p ?? 0);
+export async function reachOf(parts: TableParts, wishes: PlanOptions): Promise<number | null> {
+  if (wishes.paired) return null;
+  try {
+    const table = makeTable(parts);
+    const live = liveTable(table);
+    const prepared = makePlan(table, live, wishes);
+    if (prepared.design !== 'conditional') return null;
+    return (await leastAttainableOf(table, live, prepared, wishes)) ?? null;
+  } catch (thrown) {
+    if (thrown instanceof Problem) return null;
+    throw thrown;
   }
-  return least;
 }

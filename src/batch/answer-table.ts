@@ -1,7 +1,8 @@
 // One table of a batch, from a line, an object or a file that was read, to its answer - or to what is wrong with it, so that the
 // other tables go on.
-import { analyse, answer, type Answer } from '../analyse.js';
+import { analyse, analyseGroups, answer, type Answer } from '../analyse.js';
 import { notUtf8 } from '../input/file-text.js';
+import type { StrataParts } from '../input/strata.js';
 import type { ReadTable } from '../input/read-table.js';
 import type { PlanOptions } from '../plan/plan.js';
 import { Problem, type ProblemParts } from '../problem/problem.js';
@@ -9,7 +10,8 @@ import type { Result } from '../result/result.js';
 import type { Surroundings } from '../sampled-answer.js';
 import type { TableParts } from '../table/table.js';
 import { lineDeclaration } from './declaration.js';
-import { misfit, noKey, notJson } from './line-problems.js';
+import { misfit, noKey, notJson, notOneTable } from './line-problems.js';
+import type { BatchLine } from './lines.js';
 
 /** How every table of a run is treated; plain data, so that it can be sent to a thread. */
 export interface BatchSettings {
@@ -27,17 +29,21 @@ export interface BatchSettings {
 
 /** A table to be answered: counts from a line or a program, or a table that an input function read. */
 interface Asked {
-  readonly data: TableParts | ReadTable;
+  readonly data: TableParts | StrataParts | ReadTable;
   readonly wishes: PlanOptions;
+  /** The family that it is adjusted in, if it names one. */
+  readonly family?: string | undefined;
 }
 
 interface Named {
   readonly key: string;
+  readonly family?: string | undefined;
 }
 
 export type Outcome = Named &
   (
     | { readonly kind: 'compact'; readonly answer: Answer; readonly wishes: PlanOptions }
+    | { readonly kind: 'grouped'; readonly read: ReadTable; readonly result: Result; readonly wishes: PlanOptions }
     | { readonly kind: 'full'; readonly result: Result }
     | { readonly kind: 'error'; readonly error: Readonly<Required<ProblemParts>> }
   );
@@ -73,12 +79,14 @@ export async function answerObject(
 ): Promise<Outcome> {
   const line = lineDeclaration.safeParse(value);
   if (!line.success) return refused(keyIn(value) ?? String(number), misfit(value, line.error.issues), place);
-  const { key = number, plan, ...parts } = line.data;
+  const { key = number, family, plan, ...parts } = line.data;
   if (settings.requireKeys && line.data.key === undefined) return refused(String(number), noKey(), place);
+  if ((parts.counts === undefined) === (parts.strata === undefined))
+    return refused(String(key), notOneTable(parts), place);
   const wishes = plan === undefined ? settings.wishes : { ...settings.wishes, ...plan };
   return settle(
     String(key),
-    { data: parts as TableParts, wishes: wishes as PlanOptions },
+    { data: partsIn(parts), wishes: wishes as PlanOptions, family },
     place,
     settings,
     surroundings,
@@ -91,20 +99,34 @@ export async function answerItem(
   surroundings: Surroundings,
 ): Promise<Outcome> {
   if ('error' in item) return { key: item.key, kind: 'error', error: item.error };
-  return settle(item.key, { data: item.read, wishes: settings.wishes }, item.place, settings, surroundings);
+  const { key, read: data, family } = item;
+  return settle(key, { data, wishes: settings.wishes, family }, item.place, settings, surroundings);
+}
+
+/** Strata without labels are numbered. */
+function partsIn({ strata, ...parts }: Omit<BatchLine, 'key' | 'family' | 'plan'>): TableParts | StrataParts {
+  if (strata === undefined) return parts as TableParts;
+  return {
+    ...parts,
+    strata: strata.map(({ label, counts }, k) => ({ label: label ?? `stratum ${k + 1}`, counts })),
+  } as StrataParts;
 }
 
 async function settle(
   key: string,
-  { data, wishes }: Asked,
+  { data, wishes, family }: Asked,
   place: string,
   { full }: BatchSettings,
   surroundings: Surroundings,
 ): Promise<Outcome> {
   const ofTable = { ...wishes, tableKey: key };
   try {
-    if (full) return { key, kind: 'full', result: await analyse(data, ofTable, surroundings) };
-    return { key, kind: 'compact', answer: await answer(data, ofTable, surroundings), wishes };
+    if (full) return { key, family, kind: 'full', result: await analyse(data, ofTable, surroundings) };
+    if ('strata' in data || 'clusters' in data) {
+      const { read, result } = await analyseGroups(data, ofTable, surroundings);
+      return { key, family, kind: 'grouped', read, result, wishes };
+    }
+    return { key, family, kind: 'compact', answer: await answer(data, ofTable, surroundings), wishes };
   } catch (thrown) {
     if (!(thrown instanceof Problem)) throw thrown;
     return refused(key, thrown, place);

@@ -105,7 +105,9 @@ const perDraw = 4e-4;
 function workOf(outcome: Outcome): number {
   if (outcome.kind === 'error') return perTable;
   const { plan, pValues } =
-    outcome.kind === 'full' ? outcome.result : { plan: outcome.answer.prepared.plan, pValues: outcome.answer.pValues };
+    outcome.kind === 'compact'
+      ? { plan: outcome.answer.prepared.plan, pValues: outcome.answer.pValues }
+      : outcome.result;
   if (plan.method === 'exact') return perTable + plan.forecast.seconds * 1000;
   const drawn = pValues[0]!.errors.find(({ kind }) => kind === 'sampling' || kind === 'sequential');
   return perTable + (drawn !== undefined && 'draws' in drawn ? drawn.draws * perDraw : 0);

@@ -15,6 +15,16 @@ export const notJson = (): Problem =>
     hint: `write one object a line, such as ${example}`,
   });
 
+/** Neither, or both. */
+export const notOneTable = (line: { readonly counts?: unknown }): Problem =>
+  line.counts === undefined
+    ? dataProblem({ code: 'missing-field', message: 'counts is missing', hint: `for example ${example}` })
+    : dataProblem({
+        code: 'counts-and-strata',
+        message: 'this line has both counts and strata',
+        hint: 'give strata alone: their counts are added up',
+      });
+
 export const noKey = (): Problem =>
   dataProblem({
     code: 'no-key',
@@ -52,14 +62,14 @@ export function misfit(value: unknown, [issue]: readonly z.core.$ZodIssue[]): Pr
   if (seen === undefined) {
     return dataProblem({ code: 'missing-field', message: `${where} is missing`, hint: `for example ${example}` });
   }
-  const negative = path[0] === 'counts' && typeof seen === 'number' && seen < 0;
+  const isCount = path.includes('counts');
+  const negative = isCount && typeof seen === 'number' && seen < 0;
   return dataProblem({
-    code: negative ? 'negative-count' : path[0] === 'counts' ? 'not-a-count' : 'bad-field',
+    code: negative ? 'negative-count' : isCount ? 'not-a-count' : 'bad-field',
     message: `${where} is ${short(seen)}`,
-    hint:
-      path[0] === 'counts'
-        ? `counts are rows of whole numbers from 0 to 2^53 - 1, as in ${example}`
-        : 'keepsum schema batch-line says what can stand there',
+    hint: isCount
+      ? `counts are rows of whole numbers from 0 to 2^53 - 1, as in ${example}`
+      : 'keepsum schema batch-line says what can stand there',
   });
 }
 

@@ -8,4 +8,4 @@ export type BatchLine = z.infer<typeof lineDeclaration>;
 export type CompactLine = z.infer<typeof compactDeclaration>;
 export type ErrorLine = z.infer<typeof errorDeclaration>;
 /** A whole result with the key of its table. */
-export type FullLine = Result & { readonly key: string };
+export type FullLine = Result & { readonly key: string; readonly family?: string };

@@ -10,8 +10,10 @@ const published = (declaration: z.ZodType, name: string, description: string): o
 });
 
 /** A line that a batch reads. */
-export const batchLineJsonSchema = (): object =>
-  published(lineDeclaration, 'batch-line', 'One table of a batch, with its own options where it needs them.');
+export const batchLineJsonSchema = (): object => ({
+  ...published(lineDeclaration, 'batch-line', 'One table of a batch, with its own options where it needs them.'),
+  oneOf: [{ required: ['counts'] }, { required: ['strata'] }],
+});
 
 /** A line that a batch writes for a table that was tested. */
 export const compactLineJsonSchema = (): object =>

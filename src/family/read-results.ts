@@ -10,8 +10,14 @@ export interface FoundTest {
   readonly leastAttainable: number | null;
   readonly method: string;
   /** Of lines that hold them: what the least attainable p can be worked out from. */
-  readonly counts?: readonly (readonly number[])[];
+  readonly table?: LabelledCounts;
   readonly wishes?: object;
+}
+
+export interface LabelledCounts {
+  readonly counts: readonly (readonly number[])[];
+  readonly rowLabels?: readonly string[];
+  readonly columnLabels?: readonly string[];
 }
 
 export interface FailedTest {
@@ -25,8 +31,11 @@ interface ResultLine {
   readonly error?: { readonly code?: unknown };
   readonly plan?: { readonly tableKey?: unknown; readonly asked?: unknown; readonly statistic?: unknown };
   readonly counts?: unknown;
-  readonly input?: { readonly counts?: unknown };
+  readonly input?: object;
   readonly schema?: unknown;
+  readonly strata?: unknown;
+  readonly clusters?: unknown;
+  readonly impossible?: unknown;
   readonly pValues?: readonly {
     readonly p?: unknown;
     readonly log10P?: unknown;
@@ -77,11 +86,12 @@ export function readResultLine(text: string, place: string, number: number): Fou
   };
 }
 
-function originOf(line: ResultLine): Pick<FoundTest, 'counts' | 'wishes'> {
+/** Nothing for tables with strata or clusters: their margins do not tell what they could attain. */
+function originOf(line: ResultLine): Pick<FoundTest, 'table' | 'wishes'> {
+  if (line.strata !== undefined || line.clusters !== undefined || line.impossible !== undefined) return {};
   const whole = line.schema === 'keepsum/result/1';
-  const counts = whole ? line.input?.counts : line.counts;
+  const { counts, rowLabels, columnLabels } = ((whole ? line.input : line) ?? {}) as Partial<LabelledCounts>;
   const wishes = whole ? line.plan?.asked : line.plan;
-  return Array.isArray(counts) && typeof wishes === 'object' && wishes !== null
-    ? { counts: counts as number[][], wishes }
-    : {};
+  if (!Array.isArray(counts) || typeof wishes !== 'object' || wishes === null) return {};
+  return { table: { counts, ...(rowLabels && { rowLabels }), ...(columnLabels && { columnLabels }) }, wishes };
 }

@@ -6,7 +6,7 @@ import type { JointCounts } from './joint-counts.js';
 import { Levels, fresh, missing, mostLevels } from './levels.js';
 import { columnIndex, sameColumn, type RecordColumns } from './record-columns.js';
 import { tooManyLevels } from './record-problems.js';
-import { RecordTally, type MissingRule } from './record-tally.js';
+import { RecordTally, type Found, type MissingRule } from './record-tally.js';
 
 export interface JointNames {
   /** Header name or number of the column of groups. */
@@ -71,7 +71,8 @@ export class JointTally extends RecordTally {
     });
   }
 
-  protected override count(record: readonly string[], row: number, column: number, count: number): void {
+  protected override count(record: readonly string[], found: Found, count: number): void {
+    const { row, column } = found;
     const levels = [column];
     for (const { field, levels: own, name } of this.further) {
       const text = record[field]!;
@@ -97,7 +98,7 @@ export class JointTally extends RecordTally {
       this.profiles.set(key, (profile = { levels, counts: [] }));
     }
     profile.counts[row] = (profile.counts[row] ?? 0) + count;
-    super.count(record, row, column, count);
+    super.count(record, found, count);
   }
 }
 

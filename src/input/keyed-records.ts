@@ -3,9 +3,11 @@
 import { Problem } from '../problem/problem.js';
 import { noData } from './cross-table-problems.js';
 import { placed } from './grid.js';
-import { KeyedTally } from './keyed-tally.js';
+import { KeyedTally, type KeyedCells } from './keyed-tally.js';
 import { orderLevels } from './level-order.js';
+import type { Table } from '../table/table.js';
 import type { InputNote, ReadTable } from './read-table.js';
+import { clustersOver, refuseTotalStratum, strataOver } from './record-groups.js';
 import { noRecords, noRecordsLeft } from './record-problems.js';
 import { settleRecordTotals } from './record-totals.js';
 import { walk, type RecordOptions } from './records.js';
@@ -13,12 +15,22 @@ import { walk, type RecordOptions } from './records.js';
 export interface KeyedOptions extends RecordOptions {
   /** The columns that tell tables apart: header names or numbers, one CSV record of them. */
   readonly by: string;
+  /** The column that names the family of each table. */
+  readonly family?: string | undefined;
+}
+
+interface Named {
+  readonly key: string;
+  readonly family?: string | undefined;
 }
 
 export interface KeyedTables {
+  /** Of every table. */
+  readonly rowLabels: readonly string[];
+  readonly columnLabels: readonly string[];
   readonly number: number;
   /** A table, or what kept its counts from being one. Made one at a time. */
-  readonly tables: Iterable<{ readonly key: string } & ({ readonly read: ReadTable } | { readonly problem: Problem })>;
+  readonly tables: Iterable<Named & ({ readonly read: ReadTable } | { readonly problem: Problem })>;
   /** Of the whole file. */
   readonly notes: readonly InputNote[];
 }
@@ -26,7 +38,7 @@ export interface KeyedTables {
 /** @throws Problem: those of readRecords, and `missing-key` (data). */
 export async function readKeyedRecords(chunks: AsyncIterable<Uint8Array>, options: KeyedOptions): Promise<KeyedTables> {
   const { sourceName } = options;
-  const tally = new KeyedTally(options, options.by, options.missing ?? 'fail', sourceName);
+  const tally = new KeyedTally(options, options.by, options.family, options.missing ?? 'fail', sourceName);
   const { delimiter, sha256, notes } = await walk(chunks, options, tally);
   const { used, rows, columns, records } = tally;
   if (used === undefined) throw noData(sourceName);
@@ -37,6 +49,7 @@ export async function readKeyedRecords(chunks: AsyncIterable<Uint8Array>, option
     rowLabels: rows.labels,
     columnLabels: columns.labels,
   });
+  if (used.strataName !== null) refuseTotalStratum(tally, options.totals ?? 'refuse', sourceName);
   // Totals and the order of levels are settled once, on the sum of all tables.
   const settled = settleRecordTotals(
     labelled(tally.cells),
@@ -55,25 +68,54 @@ export async function readKeyedRecords(chunks: AsyncIterable<Uint8Array>, option
     rowsFrom: used.rowsName,
     columnsFrom: used.columnsName,
     countFrom: used.countName,
+    ...(used.strataName === null ? {} : { strataFrom: used.strataName }),
+    ...(used.clusterName === null ? {} : { clusterFrom: used.clusterName }),
   };
-  function* made(): Generator<{ key: string } & ({ read: ReadTable } | { problem: Problem })> {
-    for (const [key, cells] of tally.tables) {
+  const lines = { rowLabels: rows.labels, columnLabels: columns.labels };
+  /** Strata and clusters that a table has records of. */
+  function groupsOf({ layers, clusters }: KeyedCells, table: Table): Partial<ReadTable> {
+    const labels = tally.strata.labels.filter((_, s) => layers?.[s] !== undefined);
+    const members = [...(clusters ?? [])].map(([label, { row, counts }]) => ({ label, row, counts }));
+    return {
+      ...(layers && { strata: strataOver(labels, layers.filter(Boolean), lines, table) }),
+      ...(clusters && { clusters: clustersOver(members, lines, table) }),
+    };
+  }
+  function* made(): Generator<Named & ({ read: ReadTable } | { problem: Problem })> {
+    for (const [key, { family, cells, ...groups }] of tally.tables) {
       const counts = keptRows.map((row) => keptColumns.map((column) => cells[row]?.[column] ?? 0));
       try {
         const table = placed(orderLevels({ ...settled.counts, counts }, options), undefined);
-        yield { key, read: { table, source, sha256, missing: null, notes: [] } };
+        const read = {
+          table,
+          ...groupsOf({ cells, family, ...groups }, table),
+          source,
+          sha256,
+          missing: null,
+          notes: [],
+        };
+        yield { key, family, read };
       } catch (thrown) {
         if (!(thrown instanceof Problem)) throw thrown;
         yield { key, problem: thrown };
       }
     }
   }
-  return { number: tally.tables.size, tables: made(), notes: [...notes, ...settled.notes, ...leftOut(tally)] };
+  const { rowLabels, columnLabels } = settled.counts;
+  return {
+    rowLabels,
+    columnLabels,
+    number: tally.tables.size,
+    tables: made(),
+    notes: [...notes, ...settled.notes, ...leftOut(tally)],
+  };
 }
 
 /** Records left out are never a silent matter. */
-function leftOut({ missingRow, missingColumn, missingBoth, withoutKey, records, dropped }: KeyedTally): InputNote[] {
-  const lacking = missingRow + missingColumn + missingBoth + withoutKey;
+function leftOut(tally: KeyedTally): InputNote[] {
+  const { missingRow, missingColumn, missingBoth, missingStratum, missingCluster, withoutKey, records, dropped } =
+    tally;
+  const lacking = missingRow + missingColumn + missingBoth + missingStratum + missingCluster + withoutKey;
   if (lacking === 0) return [];
   const treated = dropped + withoutKey > 0 ? 'were left out' : 'were counted under (missing)';
   return [{ code: 'missing-values', text: `${lacking} of ${records} records lack a value and ${treated}` }];

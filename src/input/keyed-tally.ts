@@ -5,19 +5,35 @@ import { notUtf8 } from './file-text.js';
 import { parseLabelList } from './label-list.js';
 import { missingLevel } from './levels.js';
 import { columnIndex, sameColumn, type ColumnNames, type RecordColumns } from './record-columns.js';
-import { missingKey } from './record-problems.js';
-import { RecordTally, type MissingRule } from './record-tally.js';
+import { clusterInTwoRows, missingFamily, missingKey, twoFamilies } from './record-problems.js';
+import { add, RecordTally, type Found, type MissingRule } from './record-tally.js';
+
+/** The counts of one table: cells[row][column], of each stratum, and by cluster; holes are 0. */
+export interface KeyedCells {
+  readonly cells: number[][];
+  layers?: number[][][];
+  clusters?: Map<string, { readonly row: number; readonly counts: number[] }>;
+  readonly family: string | undefined;
+}
 
 export class KeyedTally extends RecordTally {
-  /** Key -> cells[row][column], in the order in which keys appear; rows and columns are those of all tables. */
-  readonly tables = new Map<string, number[][]>();
+  /** By key, in the order in which keys appear; rows, columns and strata are those of all tables. */
+  readonly tables = new Map<string, KeyedCells>();
   /** Records left out because a key's value was missing. */
   withoutKey = 0;
   private by: readonly number[] = [];
+  /** The column that names the family of a table; -1 where there is none. */
+  private familyAt = -1;
   private readonly wanted: readonly string[];
 
   /** @param by header names or numbers, one CSV record of them. @throws Problem (usage) when it is no list. */
-  constructor(names: ColumnNames, by: string, rule: MissingRule, sourceName: string) {
+  constructor(
+    names: ColumnNames,
+    by: string,
+    private readonly family: string | undefined,
+    rule: MissingRule,
+    sourceName: string,
+  ) {
     super(names, rule, sourceName);
     this.wanted = parseLabelList(by, '--by');
   }
@@ -29,20 +45,56 @@ export class KeyedTally extends RecordTally {
       ['--rows', used.rows],
       ['--columns', used.columns],
       ['--count', used.count],
+      ['--strata', used.strata],
+      ['--cluster', used.cluster],
     ] as const;
     for (const [option, index] of others) {
       if (this.by.includes(index)) throw sameColumn('--by', option, titles[index]!);
     }
+    if (this.family !== undefined) this.familyAt = columnIndex(titles, this.family, '--family', this.sourceName);
   }
 
-  protected override count(record: readonly string[], row: number, column: number, count: number): void {
+  protected override count(record: readonly string[], found: Found, count: number): void {
     const key = this.keyOf(record);
     if (key === undefined) return;
-    let cells = this.tables.get(key);
-    if (cells === undefined) this.tables.set(key, (cells = []));
-    const line = (cells[row] ??= []);
-    line[column] = (line[column] ?? 0) + count;
-    super.count(record, row, column, count);
+    const { row, column, stratum } = found;
+    let table = this.tables.get(key);
+    if (table === undefined) {
+      const family = this.familyAt < 0 ? undefined : this.familyIn(record);
+      if (this.fault !== undefined) return;
+      this.tables.set(key, (table = { cells: [], family }));
+    } else if (this.familyAt >= 0 && this.familyIn(record) !== table.family) {
+      const families = [table.family!, record[this.familyAt]!.trim()] as const;
+      return this.fail(this.familyAt, (place) => twoFamilies(key, ...families, place));
+    }
+    const { strata, cluster } = this.used!;
+    add(this.cells, row, column, count);
+    add(table.cells, row, column, count);
+    if (strata >= 0) add(((table.layers ??= [])[stratum] ??= []), row, column, count);
+    if (cluster >= 0) this.addMember((table.clusters ??= new Map()), record[cluster]!.trim(), found, count);
+  }
+
+  /** A cluster belongs to its table: another table may have one of the same name. */
+  private addMember(
+    clusters: NonNullable<KeyedCells['clusters']>,
+    label: string,
+    { row, column }: Found,
+    count: number,
+  ): void {
+    const field = this.used!.cluster;
+    if (label.includes('\ufffd')) return this.fail(field, notUtf8);
+    let home = clusters.get(label);
+    if (home === undefined) clusters.set(label, (home = { row, counts: [] }));
+    const labels = [label, this.used!.rowsName, this.rows.labels[home.row]!, this.rows.labels[row]!] as const;
+    if (home.row !== row) return this.fail(field, (place) => clusterInTwoRows(...labels, place));
+    home.counts[column] = (home.counts[column] ?? 0) + count;
+  }
+
+  private familyIn(record: readonly string[]): string {
+    const value = record[this.familyAt]!.trim();
+    if (isMissingText(value)) this.fail(this.familyAt, missingFamily);
+    if (value.includes('\ufffd')) this.fail(this.familyAt, notUtf8);
+    return value;
   }
 
   private keyOf(record: readonly string[]): string | undefined {

@@ -8,10 +8,50 @@ import { shownValue } from './shown-value.js';
 import { alignedTo, linesIn } from './strata.js';
 import { isTotalLabel, type TotalsRule } from './total-lines.js';
 
-/**
- * The strata over the lines of the pooled table; undefined where none were asked for.
- * @throws Problem (data) `total-stratum`: records with counts whose stratum is named like a total
- */
+/** @throws Problem (data) `total-stratum`: records with counts whose stratum is named like a total */
+export function refuseTotalStratum({ used, strata }: RecordTally, rule: TotalsRule, place: string): void {
+  const total = used!.countName === null ? undefined : strata.labels.find(isTotalLabel);
+  if (total === undefined || rule === 'keep') return;
+  throw dataProblem({
+    code: 'total-stratum',
+    message: `the stratum ${shownValue(total)} is a total by its label`,
+    place,
+    hint: 'leave its records out of the file, or add --keep-totals if it is a stratum like the others',
+  });
+}
+
+/** The strata over the lines of the pooled table. @param layers[stratum][row][column] over the lines as they came; holes are 0. */
+export function strataOver(
+  labels: readonly string[],
+  layers: readonly (readonly (readonly number[])[])[],
+  whole: Omit<LabelledCounts, 'counts'>,
+  table: Table,
+): StratumTable[] {
+  const parts = labels.map((label, s) => ({
+    label,
+    counts: whole.rowLabels.map((_, row) => whole.columnLabels.map((__, column) => layers[s]?.[row]?.[column] ?? 0)),
+    rowLabels: whole.rowLabels,
+    columnLabels: whole.columnLabels,
+  }));
+  return alignedTo(table, parts);
+}
+
+/** Clusters with their rows and counts over the lines of the table; those in lines left out go with them. */
+export function clustersOver(
+  clusters: readonly Cluster[],
+  whole: Omit<LabelledCounts, 'counts'>,
+  table: Table,
+): Cluster[] {
+  const rows = linesIn(whole.rowLabels, table.rowLabels);
+  const columns = linesIn(table.columnLabels, whole.columnLabels);
+  return clusters.flatMap(({ label, row: before, counts: all }) => {
+    const row = rows[before]!;
+    const counts = columns.map((column) => all[column] ?? 0);
+    return row < 0 || counts.every((n) => n === 0) ? [] : [{ label, row, counts }];
+  });
+}
+
+/** Of all records; undefined where no strata were asked for. @throws Problem (data) `total-stratum` */
 export function strataOf(
   tally: RecordTally,
   whole: LabelledCounts,
@@ -20,33 +60,13 @@ export function strataOf(
   place: string,
 ): StratumTable[] | undefined {
   if (tally.used!.strataName === null) return undefined;
-  const total = tally.used!.countName === null ? undefined : tally.strata.labels.find(isTotalLabel);
-  if (total !== undefined && rule !== 'keep') {
-    throw dataProblem({
-      code: 'total-stratum',
-      message: `the stratum ${shownValue(total)} is a total by its label`,
-      place,
-      hint: 'leave its records out of the file, or add --keep-totals if it is a stratum like the others',
-    });
-  }
-  const parts = tally.strata.labels.map((label, s) => ({
-    label,
-    counts: whole.rowLabels.map((_, row) =>
-      whole.columnLabels.map((__, column) => tally.layers[s]?.[row]?.[column] ?? 0),
-    ),
-    rowLabels: whole.rowLabels,
-    columnLabels: whole.columnLabels,
-  }));
-  return alignedTo(table, parts);
+  refuseTotalStratum(tally, rule, place);
+  return strataOver(tally.strata.labels, tally.layers, whole, table);
 }
 
-/** The clusters with their rows and counts over the lines of the table; those in lines left out go with them. */
-export function clustersOf(tally: RecordTally, whole: LabelledCounts, table: Table): Cluster[] {
-  const rows = linesIn(whole.rowLabels, table.rowLabels);
-  const columns = linesIn(table.columnLabels, whole.columnLabels);
-  return tally.clusters.labels.flatMap((label, cluster) => {
-    const row = rows[tally.clusterRows[cluster]!]!;
-    const counts = columns.map((column) => tally.clusterCounts[cluster]![column] ?? 0);
-    return row < 0 || counts.every((n) => n === 0) ? [] : [{ label, row, counts }];
-  });
-}
+export const clustersOf = (tally: RecordTally, whole: LabelledCounts, table: Table): Cluster[] =>
+  clustersOver(
+    tally.clusters.labels.map((label, k) => ({ label, row: tally.clusterRows[k]!, counts: tally.clusterCounts[k]! })),
+    whole,
+    table,
+  );

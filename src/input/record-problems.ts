@@ -46,6 +46,23 @@ export const missingKey = (place: string): Problem =>
     hint: 'add --missing drop to leave such records out, or --missing level to make them tables of their own',
   });
 
+export const missingFamily = (place: string): Problem =>
+  dataProblem({
+    code: 'missing-family',
+    message: 'the value that names the family of this table is missing',
+    place,
+    hint: 'write the family into every record, or name another column with --family',
+  });
+
+/** A table is adjusted in one family. */
+export const twoFamilies = (key: string, before: string, here: string, place: string): Problem =>
+  dataProblem({
+    code: 'two-families',
+    message: `table ${shownValue(key)} has the family ${shownValue(here)} here and ${shownValue(before)} before`,
+    place,
+    hint: 'all records of a table need the same family; add the column to --by if these are two tables',
+  });
+
 const named = (name: string): string => shownValue(name).slice(1, -1);
 
 /** Under a rule that keeps missing values as a level: of clusters there is no such level. */

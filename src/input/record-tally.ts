@@ -94,14 +94,15 @@ export class RecordTally {
     if (column === fresh) column = this.addLevel(this.columns, columnText, used.columns);
     if (stratum === fresh) stratum = this.addLevel(this.strata, record[used.strata]!, used.strata);
     if (this.fault !== undefined) return;
-    this.count(record, row, column, count);
-    if (used.strata >= 0) add((this.layers[stratum] ??= []), row, column, count);
-    if (used.cluster >= 0) this.addToCluster(cluster, row, column, count, record[used.cluster]!);
+    this.count(record, { row, column, stratum, cluster }, count);
   }
 
   /** Adds to a cell; tallies of several tables look at the record to find out which. */
-  protected count(_record: readonly string[], row: number, column: number, count: number): void {
+  protected count(record: readonly string[], { row, column, stratum, cluster }: Found, count: number): void {
+    const { strata, cluster: field } = this.used!;
     add(this.cells, row, column, count);
+    if (strata >= 0) add((this.layers[stratum] ??= []), row, column, count);
+    if (field >= 0) this.addToCluster(cluster, row, column, count, record[field]!);
   }
 
   /** The fault to report once all is read: under `fail`, the missing values come out here. */
@@ -212,7 +213,8 @@ export class RecordTally {
   }
 }
 
-interface Found {
+/** Indexes of levels; 0 for strata and clusters where there are none. */
+export interface Found {
   readonly row: number;
   readonly column: number;
   readonly stratum: number;
@@ -222,7 +224,7 @@ interface Found {
 /** More clusters than this are not kept. */
 const mostClusters = 1_000_000;
 
-function add(cells: number[][], row: number, column: number, count: number): void {
+export function add(cells: number[][], row: number, column: number, count: number): void {
   const line = (cells[row] ??= []);
   line[column] = (line[column] ?? 0) + count;
 }

@@ -1,4 +1,5 @@
 // The table that a result was made from, rebuilt from the result itself: counts, labels, strata, clusters, and how they were read.
+import type { CompactLine } from '../batch/lines.js';
 import { strataFromParts } from '../input/strata.js';
 import type { Cluster, ReadTable } from '../input/read-table.js';
 import { dataProblem } from '../problem/problem.js';
@@ -25,7 +26,18 @@ export function readAgain({ input, strata, clusters, quasiIndependence }: Result
   return checked({ table, ...facts, ...(clusters === undefined ? {} : { clusters: membersOf(clusters) }) }, input);
 }
 
-function membersOf({ alike }: NonNullable<Result['clusters']>): Cluster[] {
+/** The same for a compact line. @throws Problem (data): those of makeTable, `counts-differ`. */
+export function lineAgain(line: CompactLine): ReadTable {
+  const { counts, impossible, rowLabels, columnLabels, strata, clusters } = line;
+  const facts = { source: { form: 'library' as const }, sha256: null, missing: null, notes: [] };
+  const labels = { ...(rowLabels && { rowLabels }), ...(columnLabels && { columnLabels }) };
+  const input = { counts, total: counts.flat().reduce((sum, n) => sum + n, 0) };
+  if (strata !== undefined) return checked({ ...strataFromParts({ strata, ...labels }), ...facts }, input);
+  const table = makeTable({ counts, ...labels, ...(impossible && { impossible }) });
+  return checked({ table, ...facts, ...(clusters && { clusters: membersOf({ alike: clusters }) }) }, input);
+}
+
+function membersOf({ alike }: Pick<NonNullable<Result['clusters']>, 'alike'>): Cluster[] {
   const members: Cluster[] = [];
   for (const { counts, byRow } of alike) {
     byRow.forEach((number, row) => {
@@ -36,7 +48,7 @@ function membersOf({ alike }: NonNullable<Result['clusters']>): Cluster[] {
 }
 
 /** Strata and clusters must add up to the counts that the record shows. */
-function checked(read: ReadTable, input: Result['input']): ReadTable {
+function checked(read: ReadTable, input: Pick<Result['input'], 'counts' | 'total'>): ReadTable {
   const same = JSON.stringify(read.table.counts) === JSON.stringify(input.counts);
   const units = read.clusters?.flatMap(({ counts }) => counts).reduce((a, b) => a + b, 0);
   if (same && (units === undefined || units === input.total)) return read;

@@ -1,7 +1,7 @@
 // A result made again from what it records - counts, labels and wishes - and held against itself, digit by digit.
-import { analyse, answer } from '../analyse.js';
+import { analyse, analyseGroups, answer } from '../analyse.js';
 import { compactDeclaration } from '../batch/declaration.js';
-import { compactLine } from '../batch/write-lines.js';
+import { compactLine, groupedLine } from '../batch/write-lines.js';
 import type { PlanOptions } from '../plan/plan.js';
 import { dataProblem, usageProblem, type Problem } from '../problem/problem.js';
 import { resultDeclaration } from '../result/declaration.js';
@@ -10,7 +10,7 @@ import { version } from '../result/version.js';
 import type { Surroundings } from '../sampled-answer.js';
 import type { OwnStatistic } from '../statistic/own.js';
 import { differencesBetween, type Difference } from './differences.js';
-import { readAgain } from './read-again.js';
+import { lineAgain, readAgain } from './read-again.js';
 
 export interface ReplaySettings {
   /** The user's own statistic, where the record was made with one. */
@@ -46,6 +46,7 @@ const ofTheVersion = [
 export async function replay(record: unknown, place: string, settings: ReplaySettings = {}): Promise<Replayed> {
   const {
     key,
+    family,
     shard: _,
     ...rest
   } = (typeof record === 'object' && record !== null ? record : {}) as Record<string, unknown>;
@@ -54,7 +55,11 @@ export async function replay(record: unknown, place: string, settings: ReplaySet
     if (result.success) return replayResult(rest as Result, typeof key === 'string' ? key : null, settings);
     throw notARecord(place, result.error.issues[0]!);
   }
-  const line = compactDeclaration.safeParse(key === undefined ? rest : { key, ...rest });
+  const line = compactDeclaration.safeParse({
+    ...(key === undefined ? {} : { key }),
+    ...(family === undefined ? {} : { family }),
+    ...rest,
+  });
   if (line.success) return replayLine(line.data, settings);
   throw notARecord(place, line.error.issues[0]!);
 }
@@ -91,20 +96,24 @@ function missingNotes(recorded: Result, obtained: Result): Difference[] {
 type Line = ReturnType<typeof compactDeclaration.parse>;
 
 async function replayLine(line: Line, settings: ReplaySettings): Promise<Replayed> {
-  const { key, counts, rowLabels, columnLabels, plan } = line;
+  const { key, family, plan } = line;
   const wishes = {
     ...plan,
     ...ownStatisticOf(plan.statistic ?? '', plan.statisticDigest, settings),
     tableKey: key,
   } as PlanOptions;
-  const parts = {
-    counts,
-    ...(rowLabels === undefined ? {} : { rowLabels }),
-    ...(columnLabels === undefined ? {} : { columnLabels }),
-  };
-  const found = await answer(parts, wishes, settings.surroundings);
-  const obtained = JSON.parse(JSON.stringify(compactLine(key, found, wishes))) as unknown;
-  return { key, sha256: null, madeWith: null, differences: differencesBetween(line, obtained, new Set(['notes'])) };
+  const name = family === undefined ? { key } : { key, family };
+  const { surroundings = {} } = settings;
+  const read = lineAgain(line);
+  let obtained: object;
+  if (read.strata === undefined && read.clusters === undefined) {
+    obtained = compactLine(name, await answer(read, wishes, surroundings), wishes);
+  } else {
+    const { result } = await analyseGroups(read, wishes, surroundings);
+    obtained = groupedLine(name, read, result, wishes);
+  }
+  const differences = differencesBetween(line, JSON.parse(JSON.stringify(obtained)), new Set(['notes']));
+  return { key, sha256: null, madeWith: null, differences };
 }
 
 function ownStatisticOf(name: string, digest: string | undefined, { own }: ReplaySettings): PlanOptions {

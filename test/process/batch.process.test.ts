@@ -200,3 +200,53 @@ describe('parts', () => {
     for (const name of ['one', 'two', 'other', 'cut']) rmSync(join(folder, name));
   });
 });
+
+describe('strata, clusters, levels and families', () => {
+  const strata = JSON.stringify([
+    { label: 'low', counts: [[6, 14], [1, 19]] }, // prettier-ignore
+    { label: 'high', counts: [[9, 11], [7, 13]] }, // prettier-ignore
+  ]);
+  const input = ['a', 'b', 'c', 'd', 'e']
+    .map((key) => `{"key":"${key}","family":"f${key < 'c' ? 1 : 2}","strata":${strata},"plan":{"method":"sample","draws":1000}}\n`)
+    .join(''); // prettier-ignore
+
+  it('of lines are resumed, dealt to parts, replayed and adjusted like others', async () => {
+    const single = (await keepsum(['batch', '-', '--seed', 's'], { input })).out;
+    expect(checkedLines(single)).toHaveLength(5);
+    expect((await keepsum(['replay', '-'], { input: single })).status).toBe(0);
+    const paths = ['1/2', '2/2'].map((part) => join(folder, part.replace('/', '-')));
+    for (const [k, path] of paths.entries()) {
+      await keepsum(['batch', '-', '--seed', 's', '--shard', `${k + 1}/2`, '--output', path], { input });
+    }
+    expect((await keepsum(['merge', ...paths])).out).toBe(single);
+    const { err } = await keepsum(['adjust', '-', '--by', 'holm'], { input: single });
+    expect(err).toContain('family f1: 2 tests count\nnote: family f2: 3 tests count');
+    for (const path of paths) rmSync(path);
+  });
+
+  it('of files and records are read as keepsum test reads them', async () => {
+    const seals = 'fixtures/demo/leaking-seals.csv';
+    const alone = JSON.parse((await keepsum(['test', seals, '--format', 'json'])).out) as { pValues: unknown };
+    const { out } = await keepsum(['batch', seals]);
+    expect(checkedLines(out)[0]).toMatchObject({ key: seals, strata: { length: 3 }, pValues: alone.pValues });
+    const merged = await keepsum(['batch', ...records, '--count', 'trees', '--family', 'blight', '--merge', 'any=none+sulphur', '--allow-errors']); // prettier-ignore
+    expect(checkedLines(merged.out).map((line) => 'rowLabels' in line && [line.family, line.rowLabels])).toEqual(
+      ['scab', 'canker', 'scab', 'canker'].map((family) => [family, ['any']]),
+    );
+    const held = await keepsum(['batch', records[0]!, '--by', 'blight', '--rows', 'spray', '--columns', 'state', '--strata', 'orchard', '--count', 'trees']); // prettier-ignore
+    expect(checkedLines(held.out)).toMatchObject([{ strata: [{ label: 'hill' }, { label: 'river' }] }, {}]);
+  });
+
+  it.each([
+    [[demo, '--strata', 'x'], /--strata does not go with tables given as lines.*\nhint: a line names its own/],
+    [[demo, '--merge', 'a=b+c'], /--merge does not go with tables given as lines/],
+    [[...records, '--merge', 'any=none+sulfur'], /there is no level "sulfur".*\nhint: did you mean "sulphur"/],
+    [[...records, '--strata', 'orchard'], /--by and --strata both name the column/],
+    [[...records, '--family', 'no'], /has no column named "no"/],
+    [[...records, '--family', 'blight', '--format', 'csv'], /--family is for lines of JSON only/],
+  ])('that do not fit are refused: %j', async (words, message) => {
+    const { status, out, err } = await keepsum(['batch', ...words]);
+    expect([status, out]).toEqual([2, '']);
+    expect(err).toMatch(message);
+  });
+});

@@ -95,13 +95,13 @@ export const adjustCommand = command({
   },
 });
 
-/** Exact p-values of 2x2 tables that do not say what they could attain: worked out from their margins. */
+/** Exact p-values that do not say what they could attain: worked out from the margins of their tables. */
 async function withReach(results: readonly (FoundTest | FailedTest)[]): Promise<(FoundTest | FailedTest)[]> {
   const { reachOf } = await import('../../reach-of.js');
   const all: (FoundTest | FailedTest)[] = [];
   for (const one of results) {
-    const known = 'code' in one || one.leastAttainable !== null || one.method !== 'exact' || one.counts === undefined;
-    all.push(known ? one : { ...one, leastAttainable: await reachOf(one.counts!, one.wishes as PlanOptions) });
+    const known = 'code' in one || one.leastAttainable !== null || one.method !== 'exact' || one.table === undefined;
+    all.push(known ? one : { ...one, leastAttainable: await reachOf(one.table!, one.wishes as PlanOptions) });
   }
   return all;
 }

@@ -36,6 +36,10 @@ export const batchCommand = command({
       line: 'keepsum batch fixtures/demo/orchard-blight.csv --by orchard,blight --rows spray --columns state --count trees',
       words: 'a table for each orchard and blight',
     },
+    {
+      line: 'keepsum batch fixtures/demo/shift-checks.ndjson | keepsum adjust -',
+      words: 'adjusted for being many, once all p-values are known',
+    },
   ],
   options: batchOptions,
   async run(operands, values, shell) {

@@ -4,7 +4,9 @@ import { z } from 'zod';
 import { fixedSides, outcomeOrders } from '../../plan/design.js';
 import { methods, tails, twoSidedRules, type PlanOptions } from '../../plan/plan.js';
 import { digest, level } from './pieces.js';
+import { pairedNames } from '../../statistic/paired.js';
 import { statisticNames } from '../../statistic/registry.js';
+import { stratifiedNames } from '../../statistic/stratified.js';
 
 const scores = z.union([z.string(), z.array(z.number())]);
 const draws = z.union([z.int().min(1).max(1e12), z.literal('auto')]);
@@ -13,7 +15,7 @@ const draws = z.union([z.int().min(1).max(1e12), z.literal('auto')]);
 type FromElsewhere = 'statisticDigest' | 'tableKey';
 
 const options = {
-  statistic: z.enum(statisticNames),
+  statistic: z.enum([...statisticNames, ...pairedNames, ...stratifiedNames]),
   paired: z.boolean(),
   tail: z.enum(tails),
   twoSidedRule: z.enum(twoSidedRules),

@@ -9,10 +9,20 @@ export type TablesFrom =
   | { readonly form: 'lines' | 'records'; readonly path: string | null }
   | { readonly form: 'files'; readonly paths: readonly string[] };
 
-const onlyRecords = ['by', 'rows', 'columns', 'count', 'missing'];
+const onlyRecords = ['by', 'rows', 'columns', 'count', 'cluster', 'family', 'missing'];
 const onlyFiles = ['headerRow', 'labelColumn'];
 const onlyLines = ['requireKeys'];
-const onlyText = ['delimiter', 'dropTotals', 'keepTotals', 'rowOrder', 'columnOrder'];
+const onlyText = [
+  'delimiter',
+  'dropTotals',
+  'keepTotals',
+  'rowOrder',
+  'columnOrder',
+  'strata',
+  'merge',
+  'keep',
+  'drop',
+];
 
 /** @returns undefined when nothing is named and no input is piped. @throws Problem (usage) */
 export async function chooseTables(
@@ -54,13 +64,18 @@ async function holdsLines(path: string): Promise<boolean> {
   }
 }
 
+/** What to do instead, where there is something. */
+const hints: Readonly<Record<string, string>> = {
+  strata: 'a line names its own: {"key":"a","strata":[{"label":"north","counts":[[8,2],[1,9]]}]}',
+};
+
 function refuse(given: Given, names: readonly string[], beside: string): void {
   const name = names.find((each) => each in given);
   if (name === undefined) return;
   throw usageProblem({
     code: 'option-does-not-fit',
     message: `${flagOf(name)} does not go with ${beside}`,
-    hint: `leave ${flagOf(name)} out`,
+    hint: hints[name] ?? `leave ${flagOf(name)} out`,
   });
 }
 

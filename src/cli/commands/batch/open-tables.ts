@@ -3,6 +3,7 @@ import { errorOf, type TableItem } from '../../../batch/answer-table.js';
 import type { UnitSource } from '../../../batch/chunk.js';
 import { LineSource } from '../../../batch/line-source.js';
 import { tableSource } from '../../../batch/table-source.js';
+import { changeLevels, planLevels } from '../../../input/level-changes.js';
 import { Problem } from '../../../problem/problem.js';
 import type { Values } from '../../arguments/option.js';
 import type { Shell } from '../../shell.js';
@@ -34,7 +35,7 @@ export async function openTables(
   const size = path === null ? undefined : await plainSize(path);
   if (from.form === 'records') {
     const { readKeyedRecords } = await import('../../../input/keyed-records.js');
-    const { tables, number, notes } = await readKeyedRecords(bytes(), {
+    const { tables, number, notes, rowLabels, columnLabels } = await readKeyedRecords(bytes(), {
       ...values,
       by: values.by!,
       rows: values.rows!,
@@ -43,10 +44,13 @@ export async function openTables(
       sourceName,
       ...(size === undefined ? {} : { reread: bytes }),
     });
+    // All tables have the same levels, so that a slip is one of the whole run.
+    planLevels(rowLabels, columnLabels, values);
     const items = function* (): Generator<TableItem> {
       for (const table of tables) {
         const place = `${sourceName}, table "${table.key}"`;
-        yield 'read' in table ? { ...table, place } : { key: table.key, error: errorOf(table.problem, place) };
+        if ('read' in table) yield changed({ ...table, place }, values);
+        else yield { key: table.key, error: errorOf(table.problem, place) };
       }
     };
     return { ...counted(items(), number), sourceName, remarks: notes.map(({ text }) => text) };
@@ -63,7 +67,7 @@ function filesInTurn(paths: readonly string[], values: ReadingValues): OpenTable
       try {
         const bytes = await whole(fileBytes(path), path);
         const table = readCrossTable(bytes, { ...values, totals: totalsRule(values), sourceName: path });
-        yield { key: path, read: table, place: path };
+        yield changed({ key: path, read: table, place: path }, values);
       } catch (thrown) {
         if (!(thrown instanceof Problem)) throw thrown;
         yield { key: path, error: errorOf(thrown, path) };
@@ -71,6 +75,17 @@ function filesInTurn(paths: readonly string[], values: ReadingValues): OpenTable
     }
   };
   return { ...counted(read(), paths.length), sourceName: '', remarks: [] };
+}
+
+/** Levels merged, kept or dropped; one that a table lacks is its problem. */
+function changed(item: Extract<TableItem, { read: unknown }>, { merge, keep, drop }: ReadingValues): TableItem {
+  if (merge === undefined && keep === undefined && drop === undefined) return item;
+  try {
+    return { ...item, read: changeLevels(item.read, { merge, keep, drop }) };
+  } catch (thrown) {
+    if (!(thrown instanceof Problem)) throw thrown;
+    return { key: item.key, error: errorOf(thrown, item.place) };
+  }
 }
 
 function counted(

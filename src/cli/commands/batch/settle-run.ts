@@ -15,11 +15,16 @@ import type { RunDescription, Sink } from './sink.js';
 export type BatchValues = Values<typeof batchOptions>;
 
 /** @throws Problem (usage) */
-export function checkCombinations({ rawCsv, format, full, resume, output, shard, seed }: BatchValues): void {
+export function checkCombinations(values: BatchValues): void {
+  const { rawCsv, format, full, resume, output, shard, seed, family, strata, cluster } = values;
   if (rawCsv && format !== 'csv')
     throw doesNotFit('--raw-csv is for CSV output only', 'add --format csv, or leave it out');
   if (shard !== undefined && format === 'csv')
     throw doesNotFit('--shard is for lines of JSON only: they can be pooled', 'leave --format csv out');
+  if (family !== undefined && format === 'csv')
+    throw doesNotFit('--family is for lines of JSON only: keepsum adjust reads these', 'leave --format csv out');
+  if (strata !== undefined && cluster !== undefined)
+    throw doesNotFit('--strata does not go with --cluster', 'leave one of the two out');
   if (shard !== undefined && seed === undefined) throw partNeedsSeed();
   if (full && format === 'csv') {
     throw doesNotFit(
