@@ -15,20 +15,20 @@ interface Filling {
 
 const fillings: Readonly<Record<Characters, Filling>> = {
   blocks: { bulk: '▁▂▃▄▅▆▇█', tail: '░▒▒▓', observed: '▲' },
-  ascii: { bulk: '.:#', tail: '.xx', observed: '^' },
+  ascii: { bulk: '.:#', tail: 'x', observed: '^' },
 };
 
 const plotLines = 8;
 
 /** Lines of at most `width` columns (from 38). Empty where the summary holds no bins. */
 export function histogramLines(summary: NullSummary, width: number, characters: Characters): string[] {
-  const { bins } = summary;
-  if (bins.length === 0) return [];
-  const highest = Math.max(...bins.map(({ mass }) => mass));
+  if (summary.bins.length === 0) return [];
+  // The scale takes six characters at most.
+  const shown = joinedBins(summary.bins, Math.max(1, width - 9));
+  const highest = Math.max(...shown.map(({ mass }) => mass));
   const scale = [digits(highest, 2), '0'];
   const indent = Math.max(...scale.map((words) => words.length));
-  const each = Math.max(1, Math.min(4, Math.floor((width - indent - 3) / bins.length)));
-  const shown = bins.slice(0, Math.max(1, width - indent - 3));
+  const each = Math.max(1, Math.min(4, Math.floor((width - indent - 3) / shown.length)));
   const filling = fillings[characters];
   const rows = Array.from({ length: plotLines }, (_, k) => {
     const line = shown.map((bin) => partOf(bin, plotLines - 1 - k, highest, filling).repeat(each)).join('');
@@ -38,8 +38,24 @@ export function histogramLines(summary: NullSummary, width: number, characters: 
   return [
     ...rows,
     `${scale[1]!.padStart(indent)} +${axis}`,
-    pointer(summary, shown.length * each, each, indent + 2, width, filling),
+    pointer({ ...summary, bins: shown }, shown.length * each, each, indent + 2, width, filling),
   ];
+}
+
+/** Neighbours joined, as many to a bar as it takes for all to find room. */
+function joinedBins(bins: NullSummary['bins'], most: number): NullSummary['bins'] {
+  const together = Math.ceil(bins.length / most);
+  if (together === 1) return bins;
+  const sum = (values: readonly number[]): number => values.reduce((all, value) => all + value, 0);
+  return Array.from({ length: Math.ceil(bins.length / together) }, (_, k) => {
+    const some = bins.slice(k * together, (k + 1) * together);
+    return {
+      from: some[0]!.from,
+      to: some.at(-1)!.to,
+      mass: sum(some.map(({ mass }) => mass)),
+      inTail: sum(some.map(({ inTail }) => inTail)),
+    };
+  });
 }
 
 /** What the drawing shows, for those who cannot see it and for all who read it. */

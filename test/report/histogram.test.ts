@@ -66,6 +66,21 @@ describe('the histogram in characters', () => {
     }
   });
 
+  it('joins bars where there is no room for each, and leaves none out', () => {
+    const bins = Array.from({ length: 60 }, (_, k) => ({
+      from: k,
+      to: k + 1,
+      mass: 1 / 60,
+      inTail: k < 40 ? 0 : 1 / 60,
+    }));
+    const lines = histogramLines({ ...summary, observed: 40.5, bins }, 38, 'ascii');
+    expect(lines.slice(-3)).toEqual([
+      '      |#############xxxxxxx',
+      '    0 +-------------=======',
+      '                    ^ observed 40.50',
+    ]);
+  });
+
   it('is drawn in text and markdown when wanted only', async () => {
     const result = await analyse(
       {

@@ -1,4 +1,5 @@
 // keepsum power: for a study that is still planned. Groups as they are assumed to be, sizes or a power to reach.
+import { noteFor } from '../streams/write-out.js';
 import { usageProblem } from '../../problem/problem.js';
 import { statisticNamed, statisticNames } from '../../statistic/registry.js';
 import { powerOrders, twoGroupTests } from '../../power/design.js';
@@ -143,7 +144,9 @@ export const powerCommand = command({
     const draw =
       values.plot === undefined
         ? undefined
-        : await (await import('../plots/plot-files.js')).plotFiles(values.plot, null, values.output);
+        : await (
+            await import('../plots/plot-files.js')
+          ).plotFiles(values.plot, null, values.output, noteFor(values, shell));
     const { sizes, total, number, format, ...rest } = values;
     const groups = readGroups(operands, total !== undefined);
     const wishes = {

@@ -7,7 +7,7 @@ import type { Result } from '../../result/result.js';
 import type { Values } from '../arguments/option.js';
 import type { Shell } from '../shell.js';
 import { withProgress } from '../streams/progress.js';
-import { remark } from '../streams/write-out.js';
+import { noteFor, remark } from '../streams/write-out.js';
 import { chooseSource } from './choose-source.js';
 import { command } from './command-file.js';
 import { checkDocument, documentOf } from './document.js';
@@ -41,7 +41,7 @@ export const testCommand = command({
     const source = chooseSource(operands, values, shell.stdinIsTerminal);
     if (source === undefined) return nothingNamed(shell);
     const destination = await destinationFor(values.output, shell, source.form === 'inline' ? null : source.path);
-    const pictures = await plotFilesFor(values, source.form === 'inline' ? null : source.path);
+    const pictures = await plotFilesFor(values, source.form === 'inline' ? null : source.path, shell);
     const table = await readSource(source, values, shell);
     const wishes = await withOwnStatistic(planOptions(values));
     const result = await withProgress(values, shell, (surroundings) => analyse(table, wishes, surroundings));
@@ -66,11 +66,14 @@ function planOptions(values: TestValues): PlanOptions {
 
 /** Tries the files of --plot; what it gives draws into them. */
 async function plotFilesFor(
-  { plot, output }: TestValues,
+  { plot, output, quiet }: TestValues,
   inputPath: string | null,
+  shell: Shell,
 ): Promise<((result: Result) => Promise<void>) | undefined> {
   if (plot === undefined) return undefined;
-  const write = await (await import('../plots/plot-files.js')).plotFiles(plot, inputPath, output);
+  const write = await (
+    await import('../plots/plot-files.js')
+  ).plotFiles(plot, inputPath, output, noteFor({ quiet }, shell));
   return async (result) => {
     const { drawPicture, lackOf } = await import('../../report/pictures/pictures.js');
     await write((picture) => {

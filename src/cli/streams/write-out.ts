@@ -29,3 +29,10 @@ export async function writeOut(stream: Writable, text: string, name: string): Pr
 export async function remark(stream: Writable, text: string): Promise<void> {
   await writeOut(stream, text, 'standard error').catch(() => undefined);
 }
+
+/** Says what a reader should know, unless nothing is to be said. */
+export const noteFor =
+  ({ quiet }: { readonly quiet?: true | undefined }, { stderr }: { readonly stderr: Writable }) =>
+  async (words: string): Promise<void> => {
+    if (!quiet) await remark(stderr, `note: ${words}\n`);
+  };

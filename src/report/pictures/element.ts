@@ -1,6 +1,7 @@
 // SVG as text: elements with escaped attributes and words, so that no label can become markup.
 import { shown } from '../../result/label-words.js';
 import { cutTo, displayWidth } from '../display-width.js';
+import { fold } from '../fold.js';
 
 /** Markup that is already escaped. */
 export type Markup = string;
@@ -41,6 +42,25 @@ export const textWidth = (words: string, size: number = fontSize): number =>
 /** Words cut with an ellipsis to a width in units. */
 export const cutToWidth = (words: string, width: number, size: number = fontSize): string =>
   cutTo(shown(words), Math.max(1, Math.floor(width / (characterWidth * size))));
+
+/** The same over several lines, of which the last is cut where there are more than `most`. */
+export function foldToWidth(words: string, width: number, most: number): string[] {
+  const columns = Math.max(1, Math.floor(width / (characterWidth * fontSize)));
+  const lines = fold(shown(words), columns);
+  if (lines.length <= most) return lines;
+  return [...lines.slice(0, most - 1), cutTo(lines.slice(most - 1).join(' '), columns)];
+}
+
+export const lineHeight = 12;
+
+/** Lines of words around a middle. */
+export const labelAround = (
+  x: number,
+  middle: number,
+  lines: readonly string[],
+  attributes: Readonly<Record<string, AttributeValue>> = {},
+): Markup[] =>
+  lines.map((words, k) => label(x, middle + 3.5 + (k - (lines.length - 1) / 2) * lineHeight, words, attributes));
 
 /** Words at a point, on one line. */
 export const label = (

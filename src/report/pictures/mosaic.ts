@@ -7,8 +7,11 @@ import {
   cutToWidth,
   element,
   escapedText,
+  foldToWidth,
   ink,
   label,
+  labelAround,
+  lineHeight,
   orange,
   paper,
   quiet,
@@ -18,12 +21,18 @@ import {
 } from './element.js';
 import { line, pictureWidth, type Picture } from './frame.js';
 import { residualHatching } from './hatching.js';
-import { bandsOf, type Tile } from './mosaic-tiles.js';
+import { spreadLabels } from './spread-labels.js';
+import { bandsOf, type Band, type Tile } from './mosaic-tiles.js';
 import { caption, keyFor, type KeyEntry } from './words.js';
 
 /** The sign itself: a hyphen is too short to be seen on hatching. */
 const minus = '\u2212';
-const height = 170;
+const leastHeight = 170;
+/** Of one row, where there are many. */
+const heightOfRow = 15;
+/** More make no picture that anybody could read. */
+export const mostRows = 60;
+export const mostColumns = 30;
 /** Widest row label, in units. */
 const widestLabel = 90;
 /** Labels wider than their place stand on their side, unless it is as wide as this. */
@@ -38,8 +47,9 @@ export function mosaic(result: Result, id: string): Picture {
   const head = caption(title);
   const ring = input.counts.some((row) => row.includes(0)) ? [ringEntry] : [];
   const key = keyFor([...(hasResiduals ? keyEntries(id) : [plainEntry]), ...ring], head.bottom);
-  const left = 14 + Math.min(widestLabel, Math.max(...input.rowLabels.map((words) => textWidth(words || '(blank)'))));
+  const left = 18 + Math.min(widestLabel, Math.max(...input.rowLabels.map((words) => textWidth(words || '(blank)'))));
   const columns = columnLabels(result, left, key.bottom);
+  const height = Math.max(leastHeight, heightOfRow * input.rowLabels.length);
   const bands = bandsOf(result, { left, right, top: columns.bottom, bottom: columns.bottom + height });
   return {
     title: 'Mosaic of the table',
@@ -50,13 +60,33 @@ export function mosaic(result: Result, id: string): Picture {
       ...head.marks,
       ...key.marks,
       ...columns.marks(bands.find(({ tiles }) => tiles.length > 0)!.tiles),
-      ...bands.flatMap(({ label: words, middle, tiles }) => [
-        label(left - 6, middle + 3.5, cutToWidth(words, left - 10), { 'text-anchor': 'end' }),
-        ...tiles.map((tile) => tileMark(tile, id)),
-      ]),
+      ...bandLabels(bands, left, columns.bottom, columns.bottom + height),
+      ...bands.flatMap(({ tiles }) => tiles.map((tile) => tileMark(tile, id))),
     ],
   };
 }
+
+/** Beside their bands, moved apart where bands are thin, each then with a line to its own. */
+function bandLabels(bands: readonly Band[], left: number, top: number, bottom: number): Markup[] {
+  const folded = bands.map(({ label: words, tiles }) => foldToWidth(words, left - 14, linesIn(tiles[0]!.height)));
+  const places = spreadLabels(
+    bands.map(({ middle }) => middle),
+    folded.map((lines) => lines.length * lineHeight),
+    top,
+    bottom,
+  );
+  return bands.flatMap(({ middle }, k) => {
+    const y = places[k]!;
+    const leader = line(left - 8, y, left - 1, middle, { stroke: quietEdge, 'stroke-width': 0.6 });
+    return [
+      ...labelAround(left - 10, y, folded[k]!, { 'text-anchor': 'end' }),
+      ...(Math.abs(y - middle) > 2 ? [leader] : []),
+    ];
+  });
+}
+
+/** Of the label of a band: as many as it is high, up to three. */
+const linesIn = (high: number): number => Math.max(1, Math.min(3, Math.floor(high / lineHeight)));
 
 const ringEntry: KeyEntry = { words: 'no counts', sample: (x, y) => ring(x + 7, y + 4.5) };
 
@@ -102,7 +132,10 @@ function columnLabels({ input }: Result, left: number, top: number): ColumnLabel
   const place = (right - left) / labels.length;
   const widest = Math.max(...labels.map((words) => textWidth(words)));
   const isUpright = widest <= place - 4 || place >= uprightLabel;
-  const room = isUpright ? 14 : Math.min(70, widest + 4);
+  const upright = labels.map((words) => foldToWidth(words, place - 4, 2));
+  const room = isUpright
+    ? 2 + lineHeight * Math.max(...upright.map((lines) => lines.length))
+    : Math.min(70, widest + 4);
   const leader = 12;
   return {
     bottom: top + room + leader,
@@ -110,12 +143,15 @@ function columnLabels({ input }: Result, left: number, top: number): ColumnLabel
       labels.flatMap((words, j) => {
         const x = left + (j + 0.5) * place;
         const tile = tiles[j]!;
+        const middle = top + room - 1 - (upright[j]!.length * lineHeight) / 2;
         return [
-          isUpright
-            ? label(x, top + 10, cutToWidth(words, place - 4), { 'text-anchor': 'middle' })
-            : label(x + 3.5, top + room, cutToWidth(words, room), {
-                transform: `rotate(-90 ${(x + 3.5).toFixed(2)} ${(top + room).toFixed(2)})`,
-              }),
+          ...(isUpright
+            ? labelAround(x, middle, upright[j]!, { 'text-anchor': 'middle' })
+            : [
+                label(x + 3.5, top + room, cutToWidth(words, room), {
+                  transform: `rotate(-90 ${(x + 3.5).toFixed(2)} ${(top + room).toFixed(2)})`,
+                }),
+              ]),
           line(x, top + room + 1, tile.x + tile.width / 2, top + room + leader - 2, {
             stroke: quietEdge,
             'stroke-width': 0.6,

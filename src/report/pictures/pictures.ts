@@ -2,7 +2,7 @@
 import type { Result } from '../../result/result.js';
 import { svgDocument, type Picture } from './frame.js';
 import { forest, mostStrata } from './forest.js';
-import { mosaic } from './mosaic.js';
+import { mosaic, mostColumns, mostRows } from './mosaic.js';
 import { nullDistribution } from './null-distribution.js';
 import type { PictureName } from './names.js';
 
@@ -33,8 +33,15 @@ const entries: Readonly<Record<PictureName, Entry>> = {
     draw: (result, id) => nullDistribution(result, result.nullSummary!, id),
   },
   mosaic: {
-    lacks: ({ input }) =>
-      input.total > 0 ? undefined : { because: 'the table holds no counts', hint: 'leave the picture out' },
+    lacks: ({ input: { total, rowLabels, columnLabels } }) =>
+      total === 0
+        ? { because: 'the table holds no counts', hint: 'leave the picture out' }
+        : rowLabels.length > mostRows || columnLabels.length > mostColumns
+          ? {
+              because: `more than ${mostRows} rows or ${mostColumns} columns make none that can be read`,
+              hint: 'leave the picture out, or put levels together with --merge',
+            }
+          : undefined,
     draw: mosaic,
   },
   strata: {

@@ -71,6 +71,21 @@ describe('the null distribution', () => {
 });
 
 describe('the mosaic', () => {
+  it('of many rows stays legible, and of too many is none', async () => {
+    const tableOf = (rows: number) => ({
+      counts: Array.from({ length: rows }, (_, i) => [1 + (i % 3), i === 0 ? 900 : 1]),
+    });
+    const cheap = { method: 'sample' as const, draws: 100, seed: 'a' };
+    const svg = drawPicture(await analyse(tableOf(60), cheap), 'mosaic');
+    expectSoundSvg(svg);
+    const heights = [...svg.matchAll(/<text x="[\d.]+" y="([\d.]+)"[^>]*text-anchor="end"/g)].map(([, y]) => Number(y));
+    expect(heights).toHaveLength(60);
+    heights.forEach((y, k) => {
+      if (k > 0) expect(y - heights[k - 1]!).toBeGreaterThanOrEqual(11.9);
+    });
+    expect(lackOf(await analyse(tableOf(61), cheap), 'mosaic')).toBeDefined();
+  });
+
   it('has a tile for each cell, marked by sign and hatching as its adjusted residual says', async () => {
     const result = await analyse(orchids);
     const svg = drawPicture(result, 'mosaic');
