@@ -10,7 +10,8 @@ import { remark, writeOut } from './streams/write-out.js';
 
 /**
  * Runs one command line (the words after the program's name) and returns the exit status.
- * Nothing listens for Ctrl-C: the system then ends a computation at once, shells call that 130, and there is nothing to tidy.
+ * Nothing listens for Ctrl-C: the signal itself ends the process at once, exact work included, which no listener could; a shell calls
+ * that status 130 and, unlike after an exit with 130, ends the loop or script around it too. There is nothing to tidy.
  */
 export async function main(words: readonly string[], shell: Shell = processShell()): Promise<number> {
   // Without a listener, a stream whose reader has gone ends the process with a stack trace.

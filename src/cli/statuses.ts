@@ -6,5 +6,5 @@ export const statuses: readonly (readonly [string, string])[] = [
   ['2', 'the command line is wrong'],
   ['3', 'exact work would exceed the stated bound'],
   ['4', 'a replay differs from what was saved'],
-  ['130', 'interrupted'],
+  ['130', 'interrupted (ended by the signal)'],
 ];

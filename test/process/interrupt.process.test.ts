@@ -16,4 +16,14 @@ describe('an interrupted run', () => {
     expect(out).toBe('130\n');
     expect(err).not.toMatch(/error|at /);
   });
+
+  it('is ended by the signal itself, so that the loop around it ends too', async () => {
+    const line = 'keepsum test 800,200,30 100,900,40 5,7,900 --method sample --draws 1e11 --quiet';
+    const loop = `for i in 1 2; do ${line}; echo "went on"; done`;
+    // The signal goes to the whole group, as a terminal sends it.
+    const { out } = await inShell(
+      `set -m; export -f keepsum; bash -c '${loop}' & sleep 1.5; kill -INT -$!; wait $!; echo "$?"`,
+    );
+    expect(out).toBe('130\n');
+  });
 });
