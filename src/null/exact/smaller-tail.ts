@@ -6,6 +6,7 @@ import { liveTable, type LiveTable } from '../../table/live-table.js';
 import { makeTable } from '../../table/table.js';
 import type { Mass, Ordering } from '../contract.js';
 import { exactTwoByTwo } from './two-by-two.js';
+import { countWithTailLike } from './tail-of-like-size.js';
 import { cornerLaw, type CornerLaw } from './two-by-two-law.js';
 
 /** Place of a table by its corner count, given the index of that corner. The search is made when first asked for. */
@@ -23,14 +24,14 @@ function placesOf(live: LiveTable, corner: number): (k: number) => Place {
   const law = cornerLaw(row, column, live.total);
   const a = live.counts[corner]!;
   const { lower, upper } = tailsAt(law, a);
-  if (lower.log10 <= upper.log10) return onLowerSide(law, a);
+  if (lower.log10 <= upper.log10) return onLowerSide(law, a, lower);
   // The columns exchanged bring the observed count to the lower side.
-  const exchanged = onLowerSide(cornerLaw(row, live.total - column, live.total), row - a);
+  const exchanged = onLowerSide(cornerLaw(row, live.total - column, live.total), row - a, upper);
   return (k) => exchanged(row - k);
 }
 
-function onLowerSide(law: CornerLaw, a: number): (k: number) => Place {
-  const tail = tailsAt(law, a).lower;
+/** @param tail P(K <= a), the smaller of the two tails. */
+function onLowerSide(law: CornerLaw, a: number, tail: Mass): (k: number) => Place {
   const compared = new Map<number, Place>();
   /** 1 where P(K >= k) is the smaller one, 0 where it equals P(K <= a). */
   const placeOfTail = (k: number): Place => {
@@ -40,15 +41,13 @@ function onLowerSide(law: CornerLaw, a: number): (k: number) => Place {
   };
   const m = firstWhere(
     (k) => k > a && (k > law.highest || placeOfTail(k) >= 0),
-    mirrorOf(law, a),
+    countWithTailLike(law, a),
     a + 1,
     law.highest + 1,
   );
-  return (k) => (k < a ? 1 : k === a ? 0 : k < m ? -1 : placeOfTail(k) === 0 ? 0 : 1);
+  // Tails fall strictly from count to count: only the first of those counts can tie.
+  return (k) => (k < a ? 1 : k === a ? 0 : k < m ? -1 : k === m && placeOfTail(k) === 0 ? 0 : 1);
 }
-
-/** The count about as far above the mean as a lies below it. */
-const mirrorOf = ({ row, column, total }: CornerLaw, a: number): number => Math.round(2 * (row / total) * column - a);
 
 /** The first whole number in [least, most] from which a claim holds (it holds at `most`); looked for around a guess. */
 function firstWhere(holds: (k: number) => boolean, guess: number, least: number, most: number): number {

@@ -1,8 +1,8 @@
 // The law of one cell of a 2x2 table with both margins held: the hypergeometric distribution (Fisher 1935), walked
 // outward from its middle by the ratio of neighbouring probabilities in double-double.
-import { DoubleDouble } from '../../numeric/double-double.js';
 import { beyondEntropy, devianceTerm } from '../../numeric/saddle-point.js';
 import type { WideSum } from '../../numeric/wide-number.js';
+import { CornerTerms } from './corner-terms.js';
 
 export interface CornerLaw {
   /** Total of the corner's row, of its column, and of the table. */
@@ -30,8 +30,6 @@ export interface Stretch {
   readonly mass: WideSum;
 }
 
-const small = 2 ** -500;
-const large = 2 ** 500;
 const checkEvery = 64;
 /** Below this share of the middle, a mass is no double any more and only its logarithm is reported. */
 const beyondDoubles = -1100;
@@ -39,7 +37,7 @@ const beyondDoubles = -1100;
 /**
  * Walks one side of the law from the middle outward, adding P(k)/P(middle) to each stretch.
  * `settled(stretch, log2Rest)` is asked now and then, with log2 of a bound on all that is still to come; true ends the
- * walk. Each step multiplies by one ratio of four whole numbers: relative error of the k-th term below k 2^-100.
+ * walk. Each step multiplies by one ratio of whole numbers: relative error of the k-th term below k 2^-100.
  * Where the terms have left the range of doubles and the rest of a stretch cannot change it, the walk leaps to the next
  * stretch by logarithms: at most about 39 standard deviations are walked, whatever the total.
  */
@@ -49,61 +47,30 @@ export function walk(
   stretches: readonly Stretch[],
   settled: (stretch: number, log2Rest: number) => boolean,
 ): void {
-  const { row, column, total } = law;
-  const rest = total - row - column; // may be negative; rest + k is not
-  const weight = new DoubleDouble(1);
-  let exponent = 0;
-  let at = law.middle;
-  const sum = new DoubleDouble();
+  const terms = new CornerTerms(law, direction);
   for (let s = 0; s < stretches.length; s++) {
     const { from, to, mass } = stretches[s]!;
-    const flush = (): void => {
-      mass.add(sum.high, exponent, sum.low);
-      sum.set(0);
-    };
-    if (Math.abs(from - at) > 1) {
-      const log2 = (logLaw(law, from) - logLaw(law, law.middle)) / Math.LN2;
-      exponent = Math.floor(log2);
-      weight.set(2 ** (log2 - exponent));
-      at = from;
+    if (Math.abs(from - terms.at) > 1) terms.leapTo(from, (logLaw(law, from) - logLaw(law, law.middle)) / Math.LN2);
+    let k = from;
+    while (direction > 0 ? k <= to : k >= to) {
+      const pause = direction > 0 ? Math.min(to, nextCheck(k)) : Math.max(to, lastCheck(k));
+      k = terms.addThrough(k, pause, mass) + direction;
+      if (terms.at !== pause || pause % checkEvery !== 0) continue;
+      const ratio = direction > 0 ? upRatio(law, pause) : downRatio(law, pause);
+      if (ratio >= 1) continue;
+      const log2Rest = terms.log2 + Math.log2(ratio / (1 - ratio));
+      if (settled(s, log2Rest)) return;
+      if (log2Rest < beyondDoubles && log2Rest < mass.log2 - 70) break;
     }
-    for (let k = from; direction > 0 ? k <= to : k >= to; k += direction) {
-      if (k !== at) {
-        if (direction > 0)
-          weight
-            .multiply(row - at)
-            .multiply(column - at)
-            .divide(k)
-            .divide(rest + k);
-        else
-          weight
-            .multiply(at)
-            .multiply(rest + at)
-            .divide(row - k)
-            .divide(column - k);
-        at = k;
-      }
-      if (weight.high < small) {
-        flush();
-        weight.set(weight.high * large, weight.low * large);
-        exponent -= 500;
-      }
-      sum.addPair(weight.high, weight.low);
-      if (k % checkEvery === 0) {
-        const ratio = direction > 0 ? upRatio(law, k) : downRatio(law, k);
-        if (ratio >= 1) continue;
-        flush();
-        const log2Rest = Math.log2((weight.high * ratio) / (1 - ratio)) + exponent;
-        if (settled(s, log2Rest)) return;
-        if (log2Rest < beyondDoubles && log2Rest < mass.log2 - 70) break;
-      }
-    }
-    flush();
   }
 }
 
+/** The first multiple of `checkEvery` from k upward, and downward. */
+const nextCheck = (k: number): number => Math.ceil(k / checkEvery) * checkEvery;
+const lastCheck = (k: number): number => Math.floor(k / checkEvery) * checkEvery;
+
 /** ln P(k) up to a constant of the law, by the saddle-point expansion (Loader 2000). */
-function logLaw({ row, column, total }: CornerLaw, k: number): number {
+export function logLaw({ row, column, total }: CornerLaw, k: number): number {
   const share = row / total;
   const others = total - column;
   return -(
@@ -119,9 +86,9 @@ function logLaw({ row, column, total }: CornerLaw, k: number): number {
 }
 
 /** P(k + 1) / P(k), falling in k. */
-const upRatio = ({ row, column, total }: CornerLaw, k: number): number =>
+export const upRatio = ({ row, column, total }: CornerLaw, k: number): number =>
   (((row - k) / (k + 1)) * (column - k)) / (total - row - column + k + 1);
 
 /** P(k - 1) / P(k), falling as k falls. */
-const downRatio = ({ row, column, total }: CornerLaw, k: number): number =>
+export const downRatio = ({ row, column, total }: CornerLaw, k: number): number =>
   ((k / (row - k + 1)) * (total - row - column + k)) / (column - k + 1);
