@@ -9,6 +9,7 @@ import { Meter } from '../meter.js';
 import { encode, type Encoding } from './encoding.js';
 import { GridList, type Rounding } from './grid-list.js';
 import { buildHalf } from './half.js';
+import { leastRest } from './least-rest.js';
 import type { SummedSide } from './level.js';
 import { meetAlike } from './meet-alike.js';
 import { meet } from './meet.js';
@@ -78,6 +79,7 @@ export function sumMasses(
     values: encoding.values[j]!,
     keys: encoding.keys?.[j] ?? null,
     weights: weights.cells[j]!,
+    leastRest: leastRest(encoding.values[j]!, total),
   }));
   const list = rounding === null ? new SortedList(encoding.form === 'keyed') : new GridList(rounding);
   let entries = 0;

@@ -10,6 +10,8 @@ export interface ColumnTerms {
   readonly values: readonly Float64Array[];
   readonly keys: readonly Float64Array[] | null;
   readonly weights: readonly Float64Array[];
+  /** [row][amount]: what the rows from this one on add at least. */
+  readonly leastRest: readonly Float64Array[];
 }
 
 /** What is asked of the level that transitions come from. */
@@ -64,6 +66,9 @@ export class Transitions {
   collect(from: Sources, column: ColumnTerms, sums: ArrayLike<number>, mostValue: number): void {
     const { counts, amounts, partValues, partWeights, partKeys, partNumbers, partPlaces, roomAfter, most } = this;
     const { rows, codes, blockOf } = this.space;
+    // The bounds on the rest are right to a unit or two a row.
+    const mostAdded = mostValue - from.least + 4 * rows;
+    const { leastRest } = column;
     for (let i = rows - 1; i >= 0; i--) roomAfter[i] = roomAfter[i + 1]! + sums[i]!;
     this.length = 0;
     this.mostValue = mostValue;
@@ -82,7 +87,9 @@ export class Transitions {
         row--;
         continue;
       }
-      partValues[row + 1] = partValues[row]! + column.values[row]![n]!;
+      const value = partValues[row]! + column.values[row]![n]!;
+      if (value + leastRest[row + 1]![amounts[row]! - n]! > mostAdded) continue;
+      partValues[row + 1] = value;
       if (column.keys !== null) partKeys[row + 1] = partKeys[row]! + column.keys[row]![n]!;
       partNumbers[row + 1] = partNumbers[row]! + codes[row]![sums[row]! - n]!;
       let ways = 1;
@@ -164,12 +171,18 @@ export class Transitions {
     const mostAdded = mostValue - from.least;
     const joins = row > 0 && blockOf[row] !== row && sum === sums[row - 1];
     const lastJoins = blockOf[row + 1] !== row + 1 && lastSum === sum;
+    let lastAdded = Infinity;
     let at = this.length;
     for (let n = least; n <= most; n++) {
       const rest = amount - n;
       if (lastJoins && rest < n) break;
       const added = value + columnValues[n]! + lastValues[rest]!;
-      if (added > mostAdded) continue;
+      if (added > mostAdded) {
+        // Convex in the count but for rounding: past the least it only rises.
+        if (added > lastAdded && added > mostAdded + 2) break;
+        lastAdded = added;
+        continue;
+      }
       const node = number + code[sum - n]! + lastCode[lastSum - rest]!;
       const source = plain !== null ? plain[node]! : index.get(node);
       if (source < 0 || added + lows[source]! > mostValue) continue;
