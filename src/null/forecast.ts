@@ -4,6 +4,7 @@ import type { BoundStatistic } from '../statistic/contract.js';
 import { countTables } from './exact/count-tables.js';
 import { forecastWithinLimits } from './exact/within-limits.js';
 import { forecastLinear } from './exact/linear/linear-forecast.js';
+import { networkStart } from './exact/network/costs.js';
 import { forecastNetwork } from './exact/network/forecast.js';
 
 export type ExactEngine = 'two-by-two' | 'enumeration' | 'linear' | 'network' | 'bracket' | 'within-limits';
@@ -41,10 +42,6 @@ export const mostOverrun = 3;
 
 /** Memory that an exact engine may take; what would take more is out of reach. */
 export const mostMemoryBytes = 1.5e9;
-
-/** The network's units of 12 ns, and its start of about 40 ms, in ours of 30 ns. */
-const perNetworkUnit = 0.4;
-const networkStart = 1.3e6;
 
 /**
  * The cheapest engine that answers, and what it would take.
@@ -98,7 +95,7 @@ function cheapest(
   if (takesNetwork(bound) && statistic !== undefined) {
     const { workUnits, memoryBytes } = forecastNetwork(live, statistic);
     const fits = memoryBytes <= mostMemoryBytes;
-    choices.push({ engine: 'network', workUnits: fits ? networkStart + perNetworkUnit * workUnits : Infinity });
+    choices.push({ engine: 'network', workUnits: fits ? networkStart + workUnits : Infinity });
   }
   return choices.reduce((best, choice) => (choice.workUnits < best.workUnits ? choice : best));
 }

@@ -3,6 +3,7 @@
 import { spawnSync } from 'node:child_process';
 import { resolve } from 'node:path';
 import { drawTables } from '../../src/draw-tables.js';
+import { cornerTable, spreadTotals } from '../helpers/margins.js';
 import { makeTable } from '../../src/table/table.js';
 
 const bin = resolve(import.meta.dirname, '../../bin/keepsum.js');
@@ -22,29 +23,6 @@ const shapes: [number, number, number[]][] = [
   [6, 8, [40, 60, 80]],
   [8, 8, [30, 50, 70]],
 ];
-
-/** Totals split as evenly as whole numbers allow, tilted a little so that not all margins are equal. */
-function tilted(total: number, parts: number): number[] {
-  const shares = Array.from({ length: parts }, (_, k) => 1 + 0.4 * (k / Math.max(1, parts - 1)));
-  const sum = shares.reduce((a, b) => a + b);
-  const counts = shares.map((share) => Math.floor((share / sum) * total));
-  counts[parts - 1]! += total - counts.reduce((a, b) => a + b);
-  return counts;
-}
-
-/** A table with those margins, by the north-west corner rule; the draws start from its margins only. */
-function cornerTable(rowTotals: number[], columnTotals: number[]): number[][] {
-  const left = [...columnTotals];
-  return rowTotals.map((total) => {
-    let rest = total;
-    return left.map((room, j) => {
-      const n = Math.min(rest, room);
-      rest -= n;
-      left[j] = room - n;
-      return n;
-    });
-  });
-}
 
 function secondsFor(counts: number[][], statistic: string): string {
   const words = [
@@ -70,7 +48,9 @@ export function benchReach(print: (line: string) => void): void {
   print('| rows x columns | total | `probability`, s | `pearson`, s |\n|---|---|---|---|');
   for (const [rows, columns, totals] of shapes) {
     for (const total of totals) {
-      const table = makeTable({ counts: cornerTable(tilted(total, rows), tilted(total, columns)) });
+      const table = makeTable({
+        counts: cornerTable(spreadTotals(total, rows, 0.4), spreadTotals(total, columns, 0.4)),
+      });
       const [counts] = [...drawTables(table, { number: 1, seed: 'reach' })];
       const [probability, pearson] = ['probability', 'pearson'].map((statistic) => secondsFor(counts!, statistic));
       print(`| ${rows} x ${columns} | ${total} | ${probability} | ${pearson} |`);

@@ -3,9 +3,11 @@ import { hasOneTableOnly, type LiveTable } from '../../table/live-table.js';
 import type { BracketCut, ExactCut, Ordering, OrderingName } from '../contract.js';
 import { exactByEnumeration } from './enumerate.js';
 import type { ExactAnswer } from './exact-answer.js';
+import { linearStart } from './linear/costs.js';
 import { exactLinear } from './linear/exact-linear.js';
 import type { ExactEngine } from '../forecast.js';
 import { Meter } from './meter.js';
+import { networkStart } from './network/costs.js';
 import { bracketCut } from './network/bracket-cut.js';
 import { exactCut } from './network/exact-cut.js';
 import { pointMass } from './point-mass.js';
@@ -27,8 +29,10 @@ export function exactCuts(
     case 'two-by-two':
       return exactTwoByTwo(live, orderings);
     case 'linear':
+      meter.spend(linearStart);
       return { cuts: exactLinear(live, orderings, meter), point: pointMass(live) };
     case 'network':
+      meter.spend(networkStart);
       return {
         cuts: orderings.map((ordering) => exactCut(live, ordering, statistic, { meter })),
         point: pointMass(live),

@@ -2,7 +2,7 @@
 // law of every partial sum: in the counted units of forecast.ts.
 import type { LinearForm } from '../../../statistic/contract.js';
 import type { LiveTable } from '../../../table/live-table.js';
-import { perDenseValue, perMove, perSparseValue } from './costs.js';
+import { linearStart, perDenseValue, perMove, perSparseValue } from './costs.js';
 import { codesOf, mostCodes } from './deal.js';
 import { moments, side } from './moments.js';
 import { scoredSides, type ScoredLine, type ScoredSides } from './scored-sides.js';
@@ -13,8 +13,6 @@ export interface LinearForecast {
   readonly sparse: boolean;
 }
 
-/** What the first steps of a program cost before it is warm: some 10 ms. */
-const start = 3e5;
 /** Values of two stages are held at once: 2^24 of them a stage take 256 MB. */
 const mostValues = 2 ** 24;
 const mostUnits = 2 ** 20;
@@ -22,11 +20,11 @@ const mostUnits = 2 ** 20;
 export function forecastLinear(live: LiveTable, form: LinearForm): LinearForecast {
   const sides = scoredSides(live, form);
   const { mean, deviation } = moments(live, form);
-  if (sides.rows.length === 1) return { workUnits: start, sparse: false };
+  if (sides.rows.length === 1) return { workUnits: linearStart, sparse: false };
   const z = Math.abs(form.observed - mean) / deviation;
   // Two scores a side: a hypergeometric law is walked, some ten deviations to each side and as far as the observed value.
   if (sides.columns.length === 2)
-    return { workUnits: Math.round(start + deviation * (Math.min(39, z + 10) + 12)), sparse: false };
+    return { workUnits: Math.round(linearStart + deviation * (Math.min(39, z + 10) + 12)), sparse: false };
   if (sides.total > mostUnits || codesOf(sides.rows) > mostCodes) return { workUnits: Infinity, sparse: false };
   // Values are kept down to e^-50 of the foreseen p, whose logarithm is about -z^2 / 2.
   const reach = Math.sqrt(z ** 2 + 2 * 53);
@@ -45,7 +43,9 @@ export function forecastLinear(live: LiveTable, form: LinearForm): LinearForecas
     }
   }
   const work = (values: { values: number; peak: number }, each: number): number =>
-    values.peak > mostValues ? Infinity : Math.round(moves * perMove + values.values * each + sides.total + start);
+    values.peak > mostValues
+      ? Infinity
+      : Math.round(moves * perMove + values.values * each + sides.total + linearStart);
   const [denseWork, sparseWork] = [work(dense, perDenseValue), work(sparse, perSparseValue)];
   return { workUnits: Math.min(denseWork, sparseWork), sparse: sparseWork < denseWork };
 }

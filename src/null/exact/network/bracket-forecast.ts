@@ -21,8 +21,8 @@ export function expectsBracket(live: LiveTable, statistic: string, effort: numbe
   const table = orient(live);
   if (table.columns < fewestColumns) return false;
   const { first, second } = splitColumns(table);
-  const count = new EntryCount(table, statistic);
-  const pairs = count.pairs(first) + count.pairs(second);
+  const count = new EntryCount(table, statistic, false);
+  const pairs = count.half(first).pairs + count.half(second).pairs;
   const steps = (effort * lastShare) / passes / pairs / perGridEntry;
   if (!(steps >= 32) || pairs * passes * perTransition > effort / 2) return false;
   const observed = chiSquare(table);

@@ -3,46 +3,52 @@
 // whole-number points in it is its volume by the normal law of the margins (as Gail & Mantel 1977 count tables), widened for
 // the grid, and never more than there are tables. Deterministic; seconds are for display.
 import type { LiveTable } from '../../../table/live-table.js';
+import { perBoundedCell, perEntry, perLookup, perTransition } from './costs.js';
 import { orient, type OrientedTable } from './oriented-table.js';
 import { sharesLists } from './shared-lists.js';
+import { nodesToAList } from './shared-nodes.js';
 import { splitColumns } from './split-columns.js';
 
 export interface NetworkForecast {
-  /** List entries made, looked up or stepped over: one takes about ten nanoseconds. */
+  /** In the units of forecast.ts, without the start. */
   readonly workUnits: number;
   readonly memoryBytes: number;
-  readonly seconds: number;
 }
 
-const secondsPerUnit = 1.2e-8;
-const secondsToStart = 0.04;
 const bytesPerEntry = 32;
-/** Making and sorting an entry of the list that is looked up, against one look-up. */
-const costOfSorting = 4;
+/** Nodes bounded for one that is opened: the rims of the lines of nodes. */
+const boundedPerOpen = 1.7;
 
 export function forecastNetwork(live: LiveTable, statistic: string): NetworkForecast {
   const table = orient(live);
-  const count = new EntryCount(table, statistic);
+  const shared = isProduct(statistic) && sharesLists(table);
+  const count = new EntryCount(table, statistic, shared);
   const { first, second } = splitColumns(table);
-  const alike = isProduct(statistic) && sharesLists(table) ? count.arrangements() : 1;
   const a = count.half(first);
   const b = count.half(second);
-  const meetings = alike === 1 ? a.last + costOfSorting * b.last : (a.last + b.last) / alike + a.merged + b.merged;
-  const workUnits = Math.ceil((a.before + b.before) / alike + meetings);
-  return {
-    workUnits,
-    memoryBytes: Math.ceil((bytesPerEntry * 2 * (a.held + b.held)) / alike),
-    seconds: secondsToStart + secondsPerUnit * workUnits,
-  };
+  // Shared lists are completed in both halves and passed along for every arrangement; else the first half is looked up as it is made.
+  const entries = a.before + b.before + b.last + (shared ? a.last : 0);
+  const lookups = shared ? (a.merged + b.merged) / 4 : a.last;
+  const cells = table.rows * table.columns;
+  const workUnits = Math.ceil(
+    (a.nodes + b.nodes) * cells * boundedPerOpen * perBoundedCell +
+      (a.pairs + b.pairs) * perTransition +
+      entries * perEntry +
+      lookups * perLookup,
+  );
+  return { workUnits, memoryBytes: Math.ceil(bytesPerEntry * 2 * (a.held + b.held)) };
 }
 
 const isProduct = (statistic: string): boolean => statistic === 'probability' || statistic === 'likelihood-ratio';
 
 interface HalfCount {
+  /** Nodes with a list, and ways from a node to a node. */
+  readonly nodes: number;
+  readonly pairs: number;
   /** Entries made for the levels before the last, and for the last. */
   readonly before: number;
   readonly last: number;
-  /** Entries of the last level after merging; most entries held at once before it. */
+  /** Entries of the last level after merging, for every arrangement of a node; most entries held at once before it. */
   readonly merged: number;
   readonly held: number;
 }
@@ -51,9 +57,11 @@ export class EntryCount {
   private readonly radiusSquared: number;
   private readonly products: boolean;
 
+  /** @param shared whether every arrangement of a node's row sums shares one list. */
   constructor(
     private readonly table: OrientedTable,
     statistic: string,
+    private readonly shared: boolean,
   ) {
     this.products = isProduct(statistic);
     const degrees = (table.rows - 1) * (table.columns - 1);
@@ -62,43 +70,29 @@ export class EntryCount {
   }
 
   half(columns: readonly number[]): HalfCount {
-    let before = 0;
-    let last = 0;
-    let held = 0;
+    let [nodes, pairs, before, last, held] = [0, 0, 0, 0, 0];
     let merged = 1;
+    let stored = 1;
+    let here = 1;
+    let sharing = 1;
     let previous = 0;
     columns.forEach((_, at) => {
       const done = columns.slice(0, at + 1);
       const log = this.logEntries(done);
+      const size = this.sizeOf(done);
+      sharing = this.shared ? nodesToAList(this.table, size, this.radiusSquared) : 1;
       before += last;
-      last = Math.min(merged * Math.exp(log - previous), Number.MAX_VALUE);
-      held = Math.max(held, merged);
-      merged = this.products ? Math.min(last, Math.exp(this.logNodes(done)) * this.differentValues(done)) : last;
+      pairs += (here * Math.exp(log - previous)) / sharing;
+      last = Math.min((merged * Math.exp(log - previous)) / sharing, Number.MAX_VALUE);
+      held = Math.max(held, stored);
+      here = Math.exp(this.logNodes(done));
+      nodes += here / sharing;
+      stored = this.products ? Math.min(last, (here / sharing) * this.differentValues(done)) : last;
+      // The next level's ways start from every arrangement of a node.
+      merged = stored * sharing;
       previous = log;
     });
-    return { before, last, merged, held };
-  }
-
-  /** Ways from a node to a node, over all the half's columns. */
-  pairs(columns: readonly number[]): number {
-    let pairs = 0;
-    let nodes = 1;
-    let previous = 0;
-    columns.forEach((_, at) => {
-      const done = columns.slice(0, at + 1);
-      const log = this.logEntries(done);
-      pairs += nodes * Math.exp(log - previous);
-      nodes = Math.exp(this.logNodes(done));
-      previous = log;
-    });
-    return pairs;
-  }
-
-  /** Rows in any order share a list: how many arrangements a node has on average. */
-  arrangements(): number {
-    let ways = 1;
-    for (let i = 2; i <= this.table.rows; i++) ways *= i;
-    return Math.max(1, ways / 6);
+    return { nodes, pairs, before, last, merged, held };
   }
 
   /** Products of n! or n^n over a few cells take few values: about the square of the counts spent, over six. */

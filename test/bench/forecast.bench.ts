@@ -1,0 +1,50 @@
+// Forecast seconds of exact work against the processor seconds that it took, each table in a fresh process of the command, less
+// what the command takes on a table of a handful of counts. Needs a build. Target: within a factor of 5 for nine tables in ten.
+import { spawnSync } from 'node:child_process';
+import { resolve } from 'node:path';
+import { forecastTables } from '../helpers/forecast-tables.js';
+
+const bin = resolve(import.meta.dirname, '../../bin/keepsum.js');
+const statistics = ['pearson', 'probability'] as const;
+/** Below this a difference of two runs is noise. */
+const least = 0.01;
+
+interface Run {
+  readonly seconds: number;
+  readonly foreseen: number;
+}
+
+function run(words: readonly string[]): Run {
+  const timed = spawnSync('/usr/bin/env', ['time', '-f', '%U', process.execPath, bin, 'test', ...words], {
+    encoding: 'utf8',
+  });
+  if (timed.status !== 0) throw new Error(timed.stderr);
+  const { plan } = JSON.parse(timed.stdout) as { plan: { forecast: { seconds: number } } };
+  return { seconds: Number(timed.stderr.trim().split('\n').at(-1)), foreseen: plan.forecast.seconds };
+}
+
+const median = (values: readonly number[]): number => [...values].sort((a, b) => a - b)[values.length >> 1]!;
+const options = ['--method', 'exact', '--effort', '1e9', '--no-cells', '--format', 'json'];
+const ratios: number[] = [];
+for (const { name, counts } of forecastTables) {
+  const rows = counts.map((row) => row.join());
+  for (const statistic of statistics) {
+    const words = [...options, '--statistic', statistic];
+    const runs = [1, 2, 3].map(() => run([...rows, ...words]));
+    const starts = [1, 2, 3].map(() => run(['3,1,2', '1,2,4', ...words]).seconds);
+    const taken = Math.max(least, median(runs.map(({ seconds }) => seconds)) - median(starts));
+    const foreseen = Math.max(least, runs[0]!.foreseen);
+    ratios.push(foreseen / taken);
+    console.log(
+      `${name}, ${statistic}: foreseen ${foreseen.toFixed(2)} s, taken ${taken.toFixed(2)} s, ratio ${(foreseen / taken).toFixed(2)}`,
+    );
+  }
+}
+ratios.sort((a, b) => a - b);
+const at = (share: number): string => ratios[Math.floor(share * (ratios.length - 1))]!.toFixed(2);
+const within = ratios.filter((ratio) => ratio <= 5 && ratio >= 0.2).length;
+console.log(
+  `${ratios.length} tables: foreseen / taken ${at(0.1)} (a tenth below), ${at(0.5)} (median), ${at(0.9)} (a tenth above); ` +
+    `${((100 * within) / ratios.length).toFixed(0)}% within a factor of 5`,
+);
+if (within < 0.9 * ratios.length) process.exitCode = 1;
