@@ -3,15 +3,17 @@ import { displayWidth, padLeft, padRight } from './display-width.js';
 import { fold } from './fold.js';
 import type { Grid } from './page.js';
 
-const gap = 3;
+/** Spaces between columns: the first that fits is taken. */
+const gaps = [3, 2];
 
 /** Lines of at most `width` columns; words that are wider than a line are broken. */
 export function gridLines({ headings, rows }: Grid, width: number): string[] {
   const widths = headings.map((heading, j) =>
     Math.max(displayWidth(heading), ...rows.map((row) => displayWidth(row[j]!))),
   );
-  const whole = widths.reduce((sum, each) => sum + each, gap * (widths.length - 1));
-  if (whole > width) return rows.flatMap((row) => listLines(headings, row, width));
+  const whole = widths.reduce((sum, each) => sum + each, 0);
+  const gap = gaps.find((spaces) => whole + spaces * (widths.length - 1) <= width);
+  if (gap === undefined) return rows.flatMap((row) => listLines(headings, row, width));
   const laid = (cells: readonly string[]): string =>
     cells
       .map((cell, j) => (j === 0 ? padRight(cell, widths[j]!) : padLeft(cell, widths[j]! + gap)))

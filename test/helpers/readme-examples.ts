@@ -1,5 +1,7 @@
 // The examples of the README: fenced `console` blocks, each `$ ` line a command, what follows it the output.
 import { readFileSync, writeFileSync } from 'node:fs';
+import { mkdtemp, rm } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
 import { resolve } from 'node:path';
 import { inShell, root } from '../process/run-command.js';
 
@@ -31,6 +33,27 @@ export const readmeExamples = (): Example[] =>
     .flatMap(([, block]) => examplesIn(block!))
     .filter(({ command }) => !installs(command));
 
+/** The picture that the README shows, and the example that draws it somewhere else. */
+const pictureFile = resolve(root, 'fixtures/demo/seed-lots.svg');
+const drawsPicture = ({ command }: Example): boolean => command.includes('--plot /tmp/seed-lots.svg');
+
+/** The picture as it is shown, and as the example's command draws it now. */
+export async function pictureShownAndDrawn(): Promise<{ shown: string; drawn: string; text: string }> {
+  const folder = await mkdtemp(resolve(tmpdir(), 'keepsum-picture-'));
+  try {
+    const file = resolve(folder, 'seed-lots.svg');
+    const { command } = readmeExamples().find(drawsPicture)!;
+    await inShell(command.replace('/tmp/seed-lots.svg', file));
+    return {
+      shown: readFileSync(pictureFile, 'utf8'),
+      drawn: readFileSync(file, 'utf8'),
+      text: readFileSync(readme, 'utf8'),
+    };
+  } finally {
+    await rm(folder, { recursive: true });
+  }
+}
+
 /** Runs one example as written, in the project's folder, and gives what it printed on both streams. */
 export async function outputOf(command: string): Promise<string> {
   const { out, err } = await inShell(command);
@@ -46,4 +69,5 @@ export async function refreshReadme(): Promise<void> {
     text = text.replace(shown, () => `$ ${command}\n${real}\n`);
   }
   writeFileSync(readme, text);
+  writeFileSync(pictureFile, (await pictureShownAndDrawn()).drawn);
 }

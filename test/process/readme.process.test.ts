@@ -1,6 +1,6 @@
 // Every example in the README prints what the README shows.
 import { describe, expect, it } from 'vitest';
-import { outputOf, readmeExamples } from '../helpers/readme-examples.js';
+import { outputOf, pictureShownAndDrawn, readmeExamples } from '../helpers/readme-examples.js';
 
 const examples = readmeExamples();
 
@@ -11,5 +11,16 @@ describe('the README', () => {
 
   it.each(examples)('$ $command', async ({ command, output }) => {
     expect(await outputOf(command)).toBe(output);
+  });
+
+  it('shows the picture that its example draws', async () => {
+    const { shown, drawn, text } = await pictureShownAndDrawn();
+    expect(drawn).toBe(shown);
+    expect(text).toContain('](fixtures/demo/seed-lots.svg)');
+  });
+
+  it('is short enough to be read', async () => {
+    const { text } = await pictureShownAndDrawn();
+    expect(text.split('\n').length).toBeLessThanOrEqual(700);
   });
 });

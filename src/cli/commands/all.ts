@@ -49,7 +49,7 @@ export const commands: readonly CommandEntry[] = [
   {
     name: 'report',
     operands: 'RESULTS | -',
-    summary: 'saved results as one document, nothing worked out again',
+    summary: 'saved results as one document',
     load: async () => (await import('./report.js')).reportCommand,
   },
   {
