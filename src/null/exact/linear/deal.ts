@@ -4,6 +4,7 @@
 import { Meter } from '../meter.js';
 import { perDenseValue, perMove, perSparseValue } from './costs.js';
 import { factorialsUpTo, HypergeometricWeights, type Scaled } from './factorials.js';
+import { addMoves, moveWidth } from './add-moves.js';
 import { NodeNumbers, Records } from './moves.js';
 import { DenseLaw, powerOfTwo, SparseLaw, type SumLaw } from './node.js';
 import type { ScoredLine, ScoredSides } from './scored-sides.js';
@@ -23,9 +24,6 @@ interface Nodes {
   readonly left: Records;
   readonly laws: SumLaw[];
 }
-
-/** A move as a record: from, to, shift, mantissa, exponent. */
-const moveWidth = 5;
 
 /** Most codes a network may have, so that each is a whole number. */
 export const mostCodes = Number.MAX_SAFE_INTEGER;
@@ -110,18 +108,13 @@ export function dealColumns(sides: ScoredSides, least: number, sparse: boolean, 
     });
     numbers.clear(codes);
     const laws: SumLaw[] = kind.many(lowest.data.subarray(0, codes.length), highest.data);
-    const { data } = moves;
-    for (let at = 0; at < moves.length * moveWidth; at += moveWidth) {
-      laws[data[at + 1]!]!.addShifted(nodes.laws[data[at]!]!, data[at + 2]!, data[at + 3]!, data[at + 4]!);
-    }
-    let mostWays = 0;
-    laws.forEach((law, to) => {
+    const additions = addMoves(kind, nodes.laws, laws, moves, ways.data);
+    for (const law of laws) {
       meter.spend(3 * law.size * perValue);
       leftOut += law.trim(least);
-      mostWays = Math.max(mostWays, ways.data[to]!);
-    });
-    // A value takes the error of its weight, a product or two, and one addition for each way into its node.
-    roundings += HypergeometricWeights.error(column.total) + 2 + mostWays;
+    }
+    // A value takes the error of its weight, a product or two, and the additions.
+    roundings += HypergeometricWeights.error(column.total) + 2 + additions;
     return { codes, left, laws };
   };
 

@@ -24,7 +24,7 @@ const deepestLog2 = -1850;
 
 /**
  * Cuts for orderings of one linear form. Time: as forecast by linear-forecast.ts. Memory: two stages of the network, 8
- * bytes a value. Relative error of every mass as stated in the cut, 1e-12 up to totals of about 8,000.
+ * bytes a value. Relative error of every mass as stated in the cut, below 1e-12.
  * @throws Problem (effort) `beyond-doubles` for masses below 1e-550, which this engine does not hold.
  */
 export function exactLinear(live: LiveTable, orderings: readonly Ordering[], meter?: Meter): ExactCut[] {

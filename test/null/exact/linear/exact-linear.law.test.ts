@@ -170,6 +170,28 @@ describe('the law of a linear statistic', () => {
     expect(cut!.above.value).toBe(0);
   });
 
+  it('adds many moves to a node in blocks, and states an error far below 1e-12 for it', () => {
+    const wide = liveFrom([
+      [150, 210, 160],
+      [220, 190, 130],
+    ]);
+    const statistic = trend.bind(wide, rowsFirst);
+    const [cut] = exactLinear(wide, [orderingFor(wide, statistic, 'upper')]);
+    let [atLeast, whole] = [0n, 0n];
+    for (const [sum, ways] of wholeCounts(scoredSides(wide, statistic.linear!))) {
+      whole += ways;
+      if (sum >= statistic.linear!.observed) atLeast += ways;
+    }
+    const difference = relativeDifference(cut!.atLeast.value, toNumber(atLeast, whole));
+    expect(difference).toBeLessThan(cut!.relativeError);
+    const large = liveFrom([
+      [3600, 4100, 3900],
+      [4150, 3950, 4200],
+    ]);
+    const [far] = exactLinear(large, [orderingFor(large, trend.bind(large, rowsFirst), 'upper')]);
+    expect(far!.relativeError).toBeLessThan(1e-13);
+  });
+
   it('is forecast as cheap where it is: two rows, ten doses and a total of 1,000', () => {
     const live = liveFrom([
       [40, 45, 50, 50, 55, 45, 55, 50, 50, 60],
