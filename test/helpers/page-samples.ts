@@ -2,6 +2,8 @@
 import { readFileSync } from 'node:fs';
 import { analyse } from '../../src/analyse.js';
 import { readCrossTable } from '../../src/input/cross-table.js';
+import { linesPage } from '../../src/batch/lines-page.js';
+import type { CompactLine } from '../../src/batch/lines.js';
 import { planPower } from '../../src/plan-power.js';
 import { powerHtml } from '../../src/report/html/power.js';
 import { htmlReport } from '../../src/report/html/report.js';
@@ -52,6 +54,22 @@ const makers = {
   'a wide table': async () => htmlReport([wideTable]),
   'labels that act, run on, or come from the right': async () => htmlReport([hostileLabels, await letters()]),
   'many results': async () => htmlReport(await Promise.all([twoByTwo(), withCells(), strata(), pairs()])),
+  'lines of a batch': async () => {
+    const texts = readFileSync('fixtures/demo/shift-results.ndjson', 'utf8').trim().split('\n');
+    const error = {
+      code: 'c',
+      message: 'a row of 3 counts after rows of 2',
+      place: 'tables.ndjson:7',
+      hint: 'write 0',
+    };
+    return linesPage(
+      [
+        ...texts.map((text) => ({ kind: 'compact' as const, line: JSON.parse(text) as CompactLine })),
+        { kind: 'error', line: { key: 'e', error } },
+      ],
+      '0.0.0',
+    );
+  },
   'a planned study': async () => {
     const groups = [
       { label: 'treated', probabilities: [0.7] },

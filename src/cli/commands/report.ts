@@ -1,6 +1,9 @@
 // keepsum report: saved results, one or many, in one document; nothing is worked out again.
 import { dataProblem, usageProblem } from '../../problem/problem.js';
+import type { SavedLine } from '../../batch/lines-page.js';
 import type { Result } from '../../result/result.js';
+import { version } from '../../result/version.js';
+import { savedLine, wholeOf } from './report/saved-line.js';
 import { oneOf } from '../arguments/check-value.js';
 import { valued } from '../arguments/option.js';
 import type { Shell } from '../shell.js';
@@ -19,11 +22,14 @@ const formats = ['html', 'text', 'markdown'] as const;
 
 export const reportCommand = command({
   name: 'report',
-  usage: [{ line: 'keepsum report RESULTS', words: 'JSON results, one alone or one a line (keepsum batch --full)' }],
+  usage: [
+    { line: 'keepsum report RESULTS', words: 'JSON results, one alone or one a line, as keepsum batch writes them' },
+  ],
   purpose:
     'Writes saved results as one document, without working them out again: html with pictures and record, unless told.',
   examples: [
     { line: 'keepsum report fixtures/golden/orchid-forms.json', words: 'a page to send' },
+    { line: 'keepsum report fixtures/demo/shift-results.ndjson', words: 'a table of many answers' },
     {
       line: 'keepsum report fixtures/golden/orchid-forms.json --citations bibtex',
       words: 'the sources of what it used',
@@ -54,9 +60,9 @@ export const reportCommand = command({
     const { recordsIn } = await import('../../record/records-in.js');
     const sourceName = file ?? 'standard input';
     const bytes = file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file);
-    const results: Result[] = [];
+    const lines: (SavedLine & { readonly place: string })[] = [];
     for await (const { record, place } of recordsIn(textLines(bytes), sourceName)) {
-      if (results.length === mostResults) {
+      if (lines.length === mostResults) {
         throw dataProblem({
           code: 'too-many-results',
           message: `more than ${mostResults} results make no page`,
@@ -64,16 +70,24 @@ export const reportCommand = command({
           hint: 'split the file, or select the results that the report is about',
         });
       }
-      results.push(await wholeResult(record, place));
+      const line = await savedLine(record, place);
+      if (line !== undefined) lines.push({ ...line, place });
     }
-    if (results.length === 0) {
+    if (lines.length === 0) {
       throw dataProblem({
         code: 'no-results',
         message: 'the file holds no results',
         place: sourceName,
-        hint: 'give what --format json or keepsum batch --full wrote',
+        hint: 'give what --format json or keepsum batch wrote',
       });
     }
+    const isPage = values.citations === undefined && (values.format ?? 'html') === 'html';
+    if (isPage && lines.some(({ kind }) => kind !== 'whole')) {
+      const { linesPage } = await import('../../batch/lines-page.js');
+      await destination.write(linesPage(lines, version));
+      return 0;
+    }
+    const results = lines.map((line) => wholeOf(line, line.place));
     await destination.write((await citationsIn(results, values)) ?? (await pageOf(results, values, shell)));
     return 0;
   },
@@ -88,21 +102,4 @@ async function pageOf(
   const { render } = await import('../../report/formats.js');
   const settings = await lookFor(look, shell);
   return results.map((result) => render(result, format, settings)).join('\n');
-}
-
-/** Only what keeps the published shape is put on a page. */
-async function wholeResult(record: unknown, place: string): Promise<Result> {
-  const { resultDeclaration } = await import('../../result/declaration.js');
-  const read = resultDeclaration.safeParse(record);
-  if (read.success) return read.data;
-  const [issue] = read.error.issues;
-  const isCompact = typeof record === 'object' && record !== null && 'key' in record && !('schema' in record);
-  throw dataProblem({
-    code: 'no-whole-result',
-    message: isCompact
-      ? 'this is a compact line of a batch, which lacks what a report says'
-      : `this is no result: ${issue!.path.join('.') || 'the whole'}: ${issue!.message}`,
-    place,
-    hint: isCompact ? 'run keepsum batch --full' : 'give what --format json or keepsum batch --full wrote, unchanged',
-  });
 }

@@ -21,19 +21,23 @@ import { countsTable } from './tables.js';
 export function htmlReport(results: readonly Result[]): string {
   const alone = results.length === 1;
   const title = alone ? pageFor(results[0]!).title : `${results.length} tests of association`;
-  const articles = results.map((result, k) => articleFor(result, k, alone));
   return htmlDocument({
     title,
-    main: alone ? articles : [worded('h1', title), contents(results), ...articles],
+    main: [...(alone ? [] : [worded('h1', title), contents(results)]), ...articles(results, alone)],
     version: results[0]!.tool.version,
     record: recordOf(results),
   });
 }
 
+/** @param alone its title is that of the page */
+export const articles = (results: readonly Result[], alone: boolean): Markup[] =>
+  results.map((result, k) => articleFor(result, k, alone));
+
 /** The names of what stands in a table of the report tell it from those of other results. */
 const nameOf = (result: Result, k: number): string => `${k + 1}. ${pageFor(result).title}`;
 
-const contents = (results: readonly Result[]): Markup =>
+/** Links to all, each with its sentence. */
+export const contents = (results: readonly Result[]): Markup =>
   element(
     'nav',
     { 'aria-label': 'Tests' },

@@ -20,10 +20,10 @@ tbody th, tfoot th { min-width: 5.5rem; max-width: 18rem; }
 thead th { max-width: 11rem; vertical-align: bottom; }
 th { overflow-wrap: break-word; }
 td.number { white-space: nowrap; }
-td.words { white-space: normal; }
+td.words { min-width: 7rem; max-width: 22rem; }
 thead th, thead td { border-bottom: 1px solid var(--rule); }
 tfoot th, tfoot td { border-top: 1px solid var(--rule); }
-.number, thead th:not(:first-child) { text-align: right; }
+.number, thead th:not(:first-child, .words) { text-align: right; }
 .more::after { content: ' +'; }
 .fewer::after { content: ' \\2212'; }
 .endings { padding-left: 1.25rem; }
@@ -62,7 +62,8 @@ footer { margin-top: 2.5rem; border-top: 1px solid var(--rule); padding-top: .5r
   table { max-width: 100%; font-size: clamp(4.5pt, calc(140mm / var(--columns, 1) / 4), 9pt); }
   th, td { padding-right: .5em; }
   tbody th, tfoot th { min-width: 6em; }
-  thead th { overflow-wrap: anywhere; }
+  thead th { overflow-wrap: anywhere; min-width: 3.5em; }
+  td.words { min-width: 6em; overflow-wrap: anywhere; }
   .keepsum-picture { width: 85mm; }
   footer { margin-top: 1rem; break-before: avoid; }
   article + article { break-before: page; border: 0; margin: 0; }

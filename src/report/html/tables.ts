@@ -12,7 +12,8 @@ const scrolling = (name: string, table: Markup): Markup =>
   element('div', { class: 'wide', role: 'region', tabindex: '0', 'aria-label': name }, table);
 
 /** An empty heading would head nothing. */
-const columnHeading = (words: string): Markup => (words === '' ? '<td></td>' : worded('th', words, { scope: 'col' }));
+const columnHeading = (words: string, kind = 'number'): Markup =>
+  words === '' ? '<td></td>' : worded('th', words, { scope: 'col', ...(kind === 'words' ? { class: kind } : {}) });
 
 /** The sign of a marked count comes from its class, so that a spreadsheet takes over the digits alone. */
 const number = (count: number, mark: Mark = ''): Markup =>
@@ -35,7 +36,7 @@ export function countsTable(input: InputEcho, place: string, marks?: Marks): Mar
       ...counts.map((count, j) => (signs[j] === 'impossible' ? impossible : number(count, signs[j]))),
       number(total),
     );
-  const headings = ['', ...input.columnLabels.map(labelWords), 'all'].map(columnHeading);
+  const headings = ['', ...input.columnLabels.map(labelWords), 'all'].map((words) => columnHeading(words));
   return scrolling(
     `Counts${place}`,
     element(
@@ -60,22 +61,25 @@ export function countsTable(input: InputEcho, place: string, marks?: Marks): Mar
   );
 }
 
+/** Numbers, with their limits, are short; whatever is longer may break. */
+const isNumber = (words: string): boolean => words === '' || (/\d/.test(words) && words.length <= 24);
+
 /** The first column holds names. @param name of the section that the grid stands in. */
 export function gridTable({ headings, rows }: Grid, name: string): Markup {
-  const isNumber = (words: string): boolean => words === '' || /\d/.test(words);
+  const kinds = headings.map((_, j) => (rows.every((row) => isNumber(row[j]!)) ? 'number' : 'words'));
   const cells = ([first, ...others]: readonly string[]): Markup =>
     element(
       'tr',
       {},
       worded('th', first!, { scope: 'row' }),
-      ...others.map((words) => worded('td', words, { class: isNumber(words) ? 'number' : 'number words' })),
+      ...others.map((words, j) => worded('td', words, { class: kinds[j + 1]! })),
     );
   return scrolling(
     name,
     element(
       'table',
       { style: `--columns:${headings.length}` },
-      element('thead', {}, element('tr', {}, ...headings.map(columnHeading))),
+      element('thead', {}, element('tr', {}, ...headings.map((words, j) => columnHeading(words, kinds[j])))),
       element('tbody', {}, ...rows.map(cells)),
     ),
   );
