@@ -1,5 +1,14 @@
 // What a user of the packed tarball gets: a command, a library and its types, with nothing else to install for running.
-import { existsSync, mkdirSync, mkdtempSync, readdirSync, rmSync, symlinkSync, writeFileSync } from 'node:fs';
+import {
+  existsSync,
+  mkdirSync,
+  mkdtempSync,
+  readFileSync,
+  readdirSync,
+  rmSync,
+  symlinkSync,
+  writeFileSync,
+} from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
@@ -71,6 +80,23 @@ describe('the package', () => {
       'json',
     ];
     expect(byLibrary).toBe(await expectDone(process.execPath, words, project));
+  });
+
+  it('runs the programs of the README as they stand there', async () => {
+    const readme = readFileSync(join(root, 'README.md'), 'utf8');
+    const programs = [...readme.matchAll(/```ts\n(import [\s\S]*?)```/g)].map(([, text]) => text!);
+    const printed: string[] = [];
+    for (const program of programs) {
+      writeFileSync(join(project, 'example.js'), program);
+      printed.push(await expectDone(process.execPath, ['example.js'], project));
+    }
+    expect(programs.filter((text) => text.includes('analyseMany('))).toHaveLength(1);
+    const many = printed[programs.findIndex((text) => text.includes('analyseMany('))]!;
+    const words = ['node_modules/keepsum/bin/keepsum.js', 'batch', '-', '--seed', 'march'];
+    const input = ['{"key":"press","counts":[[3,57],[12,48]]}', '{"key":"glaze","counts":[[1,44],[5,50]]}'].join('\n');
+    const { out } = await run(process.execPath, words, { folder: project, input });
+    const lines = out.trimEnd().split('\n').map((line) => JSON.parse(line) as { key: string; pValues: { p: number }[] }); // prettier-ignore
+    expect(many).toBe(lines.map(({ key, pValues }) => `${key} ${pValues[0]!.p}\n`).join(''));
   });
 
   it('has types that resolve and refuse a slip', async () => {
