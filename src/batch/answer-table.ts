@@ -63,9 +63,11 @@ export function answerLine(
   const place = `${settings.sourceName}:${number}`;
   try {
     value = JSON.parse(text);
-  } catch {
-    return Promise.resolve(refused(String(number), text.includes('\ufffd') ? notUtf8(place) : notJson(), place));
+  } catch (thrown) {
+    const problem = text.includes('\ufffd') ? notUtf8(place) : notJson(place, text, (thrown as SyntaxError).message);
+    return Promise.resolve(refused(keyInText(text) ?? String(number), problem, place));
   }
+  if (text.includes('\ufffd')) return Promise.resolve(refused(keyIn(value) ?? String(number), notUtf8(place), place));
   return answerObject(value, number, place, settings, surroundings);
 }
 
@@ -141,7 +143,18 @@ export const refused = (key: string, problem: Problem, place: string): Outcome =
 
 /** @param place of the table; where in it the problem lies follows. */
 export function errorOf({ code, message, hint, place: inside }: Problem, place: string): Required<ProblemParts> {
-  return { code, message, place: inside === undefined || inside === place ? place : `${place}, ${inside}`, hint };
+  if (inside === undefined || inside === place) return { code, message, place, hint };
+  return { code, message, place: inside.startsWith(`${place}:`) ? inside : `${place}, ${inside}`, hint };
+}
+
+/** Of a line that is no JSON, where it begins with one that is. */
+function keyInText(text: string): string | undefined {
+  const [, key] = /^\s*\{\s*"key"\s*:\s*("(?:[^"\\]|\\.)*"|\d{1,15})\s*[,}]/.exec(text) ?? [];
+  try {
+    return key === undefined ? undefined : String(JSON.parse(key));
+  } catch {
+    return undefined;
+  }
 }
 
 function keyIn(value: unknown): string | undefined {

@@ -8,12 +8,17 @@ const fields = Object.keys(lineDeclaration.shape);
 const wishes = Object.keys(lineDeclaration.shape.plan.unwrap().shape);
 const example = '{"key":"a","counts":[[8,2],[1,9]]}';
 
-export const notJson = (): Problem =>
-  dataProblem({
+/** @param because what the parser says, with the position where it knows it. */
+export function notJson(place: string, text: string, because: string): Problem {
+  const [, position] = /at position (\d+)/.exec(because) ?? [];
+  const isShort = /end of JSON|Unterminated/.test(because) || Number(position) >= text.trimEnd().length;
+  return dataProblem({
     code: 'not-json',
-    message: 'this line is not JSON',
+    message: `this line is not JSON${isShort ? ' (it ends too early)' : ''}`,
+    place: position === undefined || isShort ? place : `${place}:${Number(position) + 1}`,
     hint: `write one object a line, such as ${example}`,
   });
+}
 
 /** Neither, or both. */
 export const notOneTable = (line: { readonly counts?: unknown }): Problem =>
@@ -74,6 +79,6 @@ export function misfit(value: unknown, [issue]: readonly z.core.$ZodIssue[]): Pr
 }
 
 const short = (value: unknown): string => {
-  const text = JSON.stringify(value) ?? String(value);
+  const text = value === Infinity || value === -Infinity ? String(value) : (JSON.stringify(value) ?? String(value));
   return text.length > 60 ? `${text.slice(0, 57)}...` : text;
 };

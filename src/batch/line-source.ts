@@ -18,6 +18,8 @@ export class LineSource implements UnitSource {
   /** What stands behind the last line feed. */
   private rest = '';
   private ended = false;
+  /** What is wrong behind the lines that are still to be handed on. */
+  private failure: Problem | undefined;
   /** Lines handed on. */
   private number = 0;
 
@@ -33,6 +35,7 @@ export class LineSource implements UnitSource {
   /** @throws Problem (data): that the source cannot be read, `empty-input`, `utf-16-text`, `workbook-file`, `binary-input`, `long-line` */
   async next(most: number): Promise<Chunk | null> {
     while (this.at === this.lines.length) {
+      this.refuse(this.failure);
       if (this.ended) return null;
       await this.readOn();
     }
@@ -45,9 +48,11 @@ export class LineSource implements UnitSource {
 
   private async readOn(): Promise<void> {
     const { done, value } = await this.pieces.next();
-    const bytes = done ? new Uint8Array() : value;
+    let bytes = done ? new Uint8Array() : value;
     if (this.bytesRead === 0 && !(done && this.mayBeEmpty)) this.refuse(headProblem(bytes, this.sourceName));
-    this.refuse(binaryProblem(bytes, this.bytesRead, this.sourceName));
+    this.failure = binaryProblem(bytes, this.bytesRead, this.sourceName);
+    // The lines before it are whole, and are answered first.
+    if (this.failure !== undefined) bytes = bytes.subarray(0, bytes.lastIndexOf(0x0a, bytes.indexOf(0)) + 1);
     const text = done
       ? this.decoder.end()
       : this.decoder.write(Buffer.from(bytes.buffer, bytes.byteOffset, bytes.length));

@@ -110,6 +110,30 @@ describe('a table that cannot be used', () => {
   });
 });
 
+describe('a line that is no JSON', () => {
+  it.each([
+    ['{"key":"a","counts":[[8,2],[1,9]]', { key: 'a', error: { message: 'this line is not JSON (it ends too early)', place: 'standard input:2' } }], // prettier-ignore
+    ['{"key":"a","counts":[[8,2],[1 9]]}', { key: 'a', error: { code: 'not-json', place: 'standard input:2:31' } }],
+    ['{counts:[[8,2],[1,9]]}', { key: '2', error: { code: 'not-json', place: 'standard input:2:2' } }],
+    ['{"key":"a","counts":[[8,2e999],[1,9]]}', { key: 'a', error: { message: 'counts[0][1] is Infinity' } }],
+  ])('is named by its key where that can be read, with its place: %s', async (line, expected) => {
+    const { out } = await keepsum(['batch', '-'], { input: `{"counts":[[8,2],[1,9]]}\n${line}` });
+    expect(checkedLines(out)[1]).toMatchObject(expected);
+  });
+
+  it('and not even text ends the run, after those before it', async () => {
+    const input = '{"counts":[[8,2],[1,9]]}\n{"counts":[[8,\0],[1,9]]}\n';
+    const { out, err, status } = await keepsum(['batch', '-'], { input });
+    expect(checkedLines(out).map(({ key }) => key)).toEqual(['1']);
+    expect([status, err.split('\n')[0]]).toEqual([1, 'error: standard input: this is not text: byte 40 is NUL']);
+  });
+
+  it('or holds bytes that are not UTF-8 in a label is refused rather than read with another label', async () => {
+    const input = Buffer.from('{"key":"a","counts":[[8,2],[1,9]],"rowLabels":["\xff","b"]}', 'latin1');
+    expect(checkedLines((await keepsum(['batch', '-'], { input })).out)[0]).toMatchObject({ key: 'a', error: { code: 'not-utf-8' } }); // prettier-ignore
+  });
+});
+
 describe('streams', () => {
   const endless = `yes '{"counts":[[8,2],[1,9]]}' | keepsum batch -`;
 
