@@ -1,11 +1,16 @@
 // The shipped answers: made from the reference data and nothing else, all in agreement, and able to disagree.
-import { readFileSync } from 'node:fs';
-import { describe, expect, it } from 'vitest';
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterAll, describe, expect, it } from 'vitest';
 import { Ajv2020 } from 'ajv/dist/2020.js';
 import { selfCheckText } from '../fixtures/reference/generator/write-self-check.js';
+import { main } from '../src/cli/main.js';
 import { renderSelfCheck, selfCheckFormats } from '../src/report/self-check.js';
 import { defaultSettings } from '../src/report/format.js';
 import { selfCheckJsonSchema } from '../src/result/self-check-declaration.js';
+import { referenceAnswersJsonSchema } from '../src/self-check/read-answers.js';
+import { fakeShell } from './cli/fake-shell.js';
 import { selfCheck, shippedCases } from '../src/self-check.js';
 import { pairedNames } from '../src/statistic/paired.js';
 import { statisticNames } from '../src/statistic/registry.js';
@@ -80,6 +85,45 @@ describe('a report', () => {
     for (const width of [40, 80]) {
       const lines = renderSelfCheck(report, 'text', { ...defaultSettings, width }).split('\n');
       expect(Math.max(...lines.map((line) => line.length))).toBeLessThanOrEqual(width);
+    }
+  });
+});
+
+describe('keepsum selfcheck --answers', () => {
+  const [first] = cases;
+  const folder = mkdtempSync(join(tmpdir(), 'keepsum-answers-'));
+  afterAll(() => rmSync(folder, { recursive: true }));
+  async function checked(answers: unknown, ...words: string[]) {
+    const path = join(folder, 'answers.json');
+    writeFileSync(path, JSON.stringify(answers));
+    const shell = fakeShell({});
+    return { status: await main(['selfcheck', '--answers', path, '--quiet', ...words], shell), ...shell.written };
+  }
+
+  it('ends with 0 where all agree, and with 1 where one was tampered with', async () => {
+    expect(await checked([first])).toMatchObject({ status: 0, err: '' });
+    const [answer, ...others] = first!.answers;
+    const tampered = { ...first!, answers: [{ ...answer!, expected: answer!.expected * 1.001 }, ...others] };
+    for (const format of selfCheckFormats) {
+      const { status, out } = await checked([tampered], '--format', format);
+      expect(status, format).toBe(1);
+      expect(out, format).toMatch(/differs/i);
+    }
+  });
+
+  it('keeps a published schema, as do the answers that ship', async () => {
+    const shape = new Ajv2020({ strict: false }).compile(referenceAnswersJsonSchema());
+    expect(shape(JSON.parse(selfCheckText())), JSON.stringify(shape.errors)).toBe(true);
+    for (const wrong of [
+      [],
+      {},
+      [{ ...first!, answers: [] }],
+      [{ ...first!, id: 3 }],
+      [{ ...first!, counts: undefined }],
+    ]) {
+      const { status, out, err } = await checked(wrong);
+      expect({ status, out }).toEqual({ status: 1, out: '' });
+      expect(err).toContain('keepsum schema reference-answers');
     }
   });
 });

@@ -55,6 +55,8 @@ export async function replay(record: unknown, place: string, settings: ReplaySet
     if (result.success) return replayResult(rest as Result, typeof key === 'string' ? key : null, settings);
     throw notARecord(place, result.error.issues[0]!);
   }
+  if (rest['schema'] === 'keepsum/power/1' || rest['schema'] === 'keepsum/selfcheck/1')
+    throw madeElsewhere(rest['schema'], place);
   const line = compactDeclaration.safeParse({
     ...(key === undefined ? {} : { key }),
     ...(family === undefined ? {} : { family }),
@@ -129,6 +131,20 @@ function ownStatisticOf(name: string, digest: string | undefined, { own }: Repla
     hint: 'name the very module with --statistic ./FILE.mjs',
   });
 }
+
+const madeElsewhere = (schema: string, place: string): Problem =>
+  dataProblem({
+    code: 'not-a-record',
+    message:
+      schema === 'keepsum/power/1'
+        ? 'this is the record of a planned study, which holds no counts to replay'
+        : 'this is the record of a self check, not of a table',
+    place,
+    hint:
+      schema === 'keepsum/power/1'
+        ? 'run keepsum power with the groups, sizes and seed in it and compare'
+        : 'run keepsum selfcheck again and compare',
+  });
 
 const notARecord = (place: string, { path, message }: { path: PropertyKey[]; message: string }): Problem =>
   dataProblem({

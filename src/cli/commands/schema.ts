@@ -8,6 +8,7 @@ const schemas: Readonly<Record<string, () => Promise<object>>> = {
   result: async () => (await import('../../result/schema.js')).resultJsonSchema(),
   power: async () => (await import('../../result/power-declaration.js')).powerJsonSchema(),
   selfcheck: async () => (await import('../../result/self-check-declaration.js')).selfCheckJsonSchema(),
+  'reference-answers': async () => (await import('../../self-check/read-answers.js')).referenceAnswersJsonSchema(),
   together: async () => (await import('../../result/together-declaration.js')).togetherJsonSchema(),
   'adjusted-line': async () => (await import('../../result/adjusted-declaration.js')).adjustedJsonSchema(),
   replay: async () => (await import('../../result/replay-declaration.js')).replayJsonSchema(),

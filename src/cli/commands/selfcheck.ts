@@ -1,7 +1,8 @@
 // keepsum selfcheck: the shipped reference answers, worked out on the user's own machine.
+import type { ReferenceCase } from '../../self-check/reference-case.js';
 import { usageProblem } from '../../problem/problem.js';
 import { renderSelfCheck, selfCheckFormats } from '../../report/self-check.js';
-import { oneOf } from '../arguments/check-value.js';
+import { anyText, oneOf } from '../arguments/check-value.js';
 import { valued } from '../arguments/option.js';
 import { command } from './command-file.js';
 import { lookFor } from './look.js';
@@ -11,13 +12,22 @@ import { destinationFor, sharedOptions } from './shared-options.js';
 
 export const selfCheckCommand = command({
   name: 'selfcheck',
-  usage: [{ line: 'keepsum selfcheck', words: 'run every case; ends with 1 where an answer differs' }],
+  usage: [
+    { line: 'keepsum selfcheck', words: 'run every case; ends with 1 where an answer differs' },
+    { line: 'keepsum selfcheck --answers FILE', words: 'the same with cases of your own' },
+  ],
   purpose: 'Works out the shipped reference answers on this machine and reports whether each agrees.',
   examples: [
     { line: 'keepsum selfcheck', words: 'the validation report on the screen' },
     { line: 'keepsum selfcheck --format json', words: 'the same for a record (keepsum schema selfcheck)' },
   ],
   options: {
+    answers: valued(
+      'Reading the tables',
+      'FILE',
+      anyText,
+      'cases of your own with known answers, in place of those that ship (keepsum schema reference-answers)',
+    ),
     format: valued('The report', 'NAME', oneOf(selfCheckFormats), `${either(selfCheckFormats)} (text)`),
     width: reporting.width,
     color: reporting.color,
@@ -35,9 +45,9 @@ export const selfCheckCommand = command({
       });
     }
     const destination = await destinationFor(values.output, shell);
-    const { selfCheck, shippedCases } = await import('../../self-check.js');
+    const { selfCheck } = await import('../../self-check.js');
     const { withSteps } = await import('../streams/steps.js');
-    const cases = await shippedCases();
+    const cases = await casesFrom(values.answers);
     const report = await withSteps(values, shell, (onProgress) => selfCheck(cases, thisMachine(), onProgress));
     const { format } = values;
     await destination.write(
@@ -48,6 +58,13 @@ export const selfCheckCommand = command({
     return report.verdict === 'agrees' ? 0 : 1;
   },
 });
+
+async function casesFrom(path: string | undefined): Promise<readonly ReferenceCase[]> {
+  if (path === undefined) return (await import('../../self-check.js')).shippedCases();
+  const { fileBytes, whole } = await import('../streams/input-file.js');
+  const { readAnswers } = await import('../../self-check/read-answers.js');
+  return readAnswers(new TextDecoder().decode(await whole(fileBytes(path), path)), path);
+}
 
 const thisMachine = () => ({
   runtime: `Node.js ${process.version}`,
