@@ -20,6 +20,9 @@ const totalWords = new RegExp(
     ].join('|') +
     ')$',
 );
+/** Words that speak of a total among others ("Total cases", "All wards"): enough where the line holds sums too. */
+const totalWord =
+  /(^|[^\p{L}])(totals?|sums?|all|overall|altogether|both|gesamt|summen?|alle|insgesamt|totale|totaux|tous|total|suma|todos|totaal|alles)($|[^\p{L}])/u;
 const subtotal = /^(sub|zwischen)/;
 
 const plain = (label: string): string => label.trim().toLowerCase().replace(/\s*:$/, '');
@@ -42,17 +45,24 @@ export interface TotalsView {
 }
 
 /**
- * Lines whose label says total. Also, in a table of 3x3 or more, the last row and the last column when both hold the sums of
- * the others, corner included (one of them alone may be chance, and so may sums that are all 0); where a label names totals on
- * one side, the last line of the other side needs only its own sums.
+ * Lines whose label says total, and a last line whose label speaks of one and that holds the sums of the others ("All wards"). Also,
+ * in a table of 3x3 or more, the last row and the last column when both hold the sums of the others, corner included (one of them
+ * alone may be chance, and so may sums that are all 0); where totals are named on one side, the last line of the other side needs only
+ * its own sums.
  */
 export function findTotals(view: TotalsView): TotalLines {
   const rows = labelled(view.rowLabels);
   const columns = labelled(view.columnLabels);
   const lastRow = view.rowLabels.length - 1;
   const lastColumn = view.columnLabels.length - 1;
-  const across = holdsSums(view.values, lastColumn, rows);
-  const down = holdsSums(transposed(view.values), lastRow, columns);
+  const goesDown = (): boolean => holdsSums(transposed(view.values), lastRow, columns);
+  const goesAcross = (): boolean => holdsSums(view.values, lastColumn, rows);
+  const isNamed = (labels: readonly string[], last: number, found: readonly number[]): boolean =>
+    !found.includes(last) && totalWord.test(plain(labels[last] ?? ''));
+  if (isNamed(view.rowLabels, lastRow, rows) && goesDown()) rows.push(lastRow);
+  if (isNamed(view.columnLabels, lastColumn, columns) && goesAcross()) columns.push(lastColumn);
+  const across = goesAcross();
+  const down = goesDown();
   const nothingNamed = rows.length + columns.length === 0;
   if (nothingNamed) {
     return across && down ? { rows: [lastRow], columns: [lastColumn], by: 'sums' } : { rows, columns, by: 'label' };

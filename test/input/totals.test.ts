@@ -23,6 +23,24 @@ describe('a line of totals is never counted in silence', () => {
       'counts.csv:4:1',
       'row "Total" and column "n" are totals, by label or because they hold the sums of the others',
     ],
+    [
+      'its label speaks of a total and its cells hold the sums',
+      'g,a,b\nx,1,2\ny,3,5\nAll wards,4,7\n',
+      'counts.csv:4:1',
+      'row "All wards" is a total by its label',
+    ],
+    [
+      'a column likewise',
+      'g,a,b,Total cases (n)\nx,1,2,3\ny,3,5,8\n',
+      'counts.csv:1:7',
+      'column "Total cases (n)" is a total by its label',
+    ],
+    [
+      'both likewise',
+      'g,a,b,All\nx,1,2,3\ny,3,5,8\nBoth sexes,4,7,11\n',
+      'counts.csv:4:1',
+      'row "Both sexes" and column "All" are totals by their labels',
+    ],
   ])('%s', (_, text, place, message) => {
     const problem = problemOf(() => read(text));
     expect(problem).toMatchObject({
@@ -36,6 +54,12 @@ describe('a line of totals is never counted in silence', () => {
   it('one line beside a labelled total is too little to call another line its sums', () => {
     const { message } = problemOf(() => read('g,a,b,n\nx,1,2,3\nTotal,1,2,3\n'));
     expect(message).toBe('row "Total" is a total by its label');
+  });
+
+  it('a label that speaks of a total, over counts that are no sums, is a label', () => {
+    expect(read('g,a,b\nsome teeth,1,2\nmost teeth,3,5\nall teeth,4,8\n').table.rowLabels).toHaveLength(3);
+    expect(read('g,a,b\nx,1,2\nall teeth,1,2\n').table.rowLabels).toHaveLength(2);
+    expect(read('g,a,b\nx,1,2\ny,3,5\noverallergic,4,7\n').table.rowLabels).toHaveLength(3);
   });
 
   it('sums that are all 0 are no sign of totals', () => {
