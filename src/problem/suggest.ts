@@ -41,9 +41,17 @@ export function nearest(typed: string, allowed: readonly string[]): string | und
   return best;
 }
 
-/** A hint sentence: the suggestion when there is one, and the whole list when it is short. */
+const mostListed = 12;
+
+/** A hint sentence: the suggestion when there is one, and the list; of a long one, where nothing is near, its beginning. */
 export function nameHint(typed: string, allowed: readonly string[]): string {
   const close = nearest(typed, allowed);
-  const list = allowed.length <= 12 ? `allowed: ${allowed.join(', ')}` : '';
+  const rest = allowed.length - mostListed;
+  const list =
+    rest <= 0
+      ? `allowed: ${allowed.join(', ')}`
+      : close === undefined
+        ? `allowed: ${allowed.slice(0, mostListed).join(', ')} and ${rest} more`
+        : '';
   return [close === undefined ? '' : `did you mean ${close}?`, list].filter((part) => part !== '').join(' ');
 }

@@ -40,6 +40,7 @@ it('--version prints the version and nothing else', async () => {
 describe('wrong usage ends with 2, two lines on standard error and nothing on standard output', () => {
   it.each([
     ['an unknown command', ['tets', '8,2'], 'there is no command "tets"', 'did you mean test?'],
+    ['a command like no other', ['nonsense'], 'there is no command "nonsense"', 'allowed: test, batch, draw,'],
     ['a table where a command is wanted', ['8,2', '1,9'], 'there is no command "8,2"', 'keepsum test 8,2'],
     ['an option where a command is wanted', ['--draws', '5'], '--draws stands where', 'options come after'],
     ['an unknown option', ['test', '--tial', 'both'], 'there is no option --tial', 'did you mean --tail?'],
