@@ -1,4 +1,4 @@
-// A small table of words and numbers for a given width; where it does not fit side by side, each row becomes a short list.
+// A small table of words and numbers for a given width; where it does not fit side by side, each row becomes a sentence under its name.
 import { displayWidth, padLeft, padRight } from './display-width.js';
 import { fold } from './fold.js';
 import type { Grid } from './page.js';
@@ -22,13 +22,10 @@ export function gridLines({ headings, rows }: Grid, width: number): string[] {
   return [laid(headings), ...rows.map(laid)];
 }
 
+/** The name, and below it the cells with their headings, one after the other. */
 function listLines(headings: readonly string[], [name, ...cells]: readonly string[], width: number): string[] {
-  return [
-    ...fold(name!, width),
-    ...cells.flatMap((cell, j) =>
-      cell === ''
-        ? []
-        : fold(`${headings[j + 1] === '' ? '' : `${headings[j + 1]!}: `}${cell}`, width, { first: 2, rest: 4 }),
-    ),
-  ];
+  const said = cells.flatMap((cell, j) =>
+    cell === '' ? [] : [`${headings[j + 1] === '' ? '' : `${headings[j + 1]!}: `}${cell}`],
+  );
+  return [...fold(name!, width), ...(said.length === 0 ? [] : fold(said.join('; '), width, { first: 2, rest: 2 }))];
 }
