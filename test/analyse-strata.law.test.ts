@@ -35,7 +35,7 @@ describe('one stratum', () => {
     await fc.assert(
       fc.asyncProperty(smallTable, async (counts) => {
         const n = counts.flat().reduce((sum, x) => sum + x, 0);
-        const ours = await run([counts], { statistic: 'general-association' });
+        const ours = await run([counts], { statistic: 'any-association' });
         const alone = await analyse({ counts }, { statistic: 'pearson', method: 'exact' });
         expectSame([ours.pValues[0]!.p!], [alone.pValues[0]!.p!]);
         const scaled = ((alone.statistic.value as number) * (n - 1)) / n;
@@ -50,7 +50,7 @@ describe('one stratum', () => {
     await fc.assert(
       fc.asyncProperty(tableOf({ rows: [2, 3], columns: [2, 4], largest: 3 }), async (counts) => {
         const scores = { rowScores: counts.map((_, i) => i * i), columnScores: counts[0]!.map((_, j) => 2 * j + 1) };
-        const ours = await run([counts], { statistic: 'correlation', ...scores });
+        const ours = await run([counts], { statistic: 'score-correlation', ...scores });
         const alone = await analyse({ counts }, { statistic: 'trend', method: 'exact', ...scores });
         expectSame(exactOf(ours), exactOf(alone));
         expectSame(asymptoticOf(ours), asymptoticOf(alone).slice(0, 1), 1e-9);
@@ -66,7 +66,7 @@ const emptied = (table: number[][]): number[][] => table.map((row) => row.map(()
 const oneRowOnly = (table: number[][]): number[][] => table.map((row, i) => row.map((_, j) => (i === 0 ? j + 1 : 0)));
 
 describe('strata that say nothing', () => {
-  it.each(['common-odds-ratio', 'general-association', 'row-means', 'correlation'])(
+  it.each(['common-odds-ratio', 'any-association', 'mean-scores', 'score-correlation'])(
     'change no p of %s: an empty one, and one with a single row',
     async (statistic) => {
       const table =
@@ -122,10 +122,10 @@ describe('symmetries', () => {
   it('order reversed exchanges the tails of the correlation', async () => {
     await fc.assert(
       fc.asyncProperty(strataOf(tableOf({ rows: [2, 2], columns: [3, 3], largest: 2 })), async (strata) => {
-        const [both, upper, lower] = exactOf(await run(strata, { statistic: 'correlation' }));
+        const [both, upper, lower] = exactOf(await run(strata, { statistic: 'score-correlation' }));
         const turned = await run(
           strata.map((table) => table.map((row) => [...row].reverse())),
-          { statistic: 'correlation' },
+          { statistic: 'score-correlation' },
         );
         expectSame(exactOf(turned), [both!, lower!, upper!]);
       }),
@@ -157,7 +157,7 @@ describe('sampled within strata', () => {
     ],
   ];
 
-  it.each(['general-association', 'row-means', 'correlation'])(
+  it.each(['any-association', 'mean-scores', 'score-correlation'])(
     '%s: the exact p lies in the interval',
     async (statistic) => {
       const exact = (await run(strata, { statistic, effort: 1e9 })).pValues[0]!;

@@ -138,13 +138,13 @@ describe('figures that were published or quoted with the tables', () => {
   const scores = { rowScores: [3, 10, 20, 35], columnScores: [1, 3, 4, 5] };
 
   it.each([
-    ['general-association', {}, 10.2000888, 9],
-    ['row-means', { columnScores: scores.columnScores }, 9.0342221, 3],
-    ['correlation', scores, 6.1563015, 1],
+    ['any-association', {}, 10.2000888, 9],
+    ['mean-scores', { columnScores: scores.columnScores }, 9.0342221, 3],
+    ['score-correlation', scores, 6.1563015, 1],
   ] as const)('income by satisfaction by sex (Agresti 2002): %s', async (statistic, options, value, degrees) => {
     const result = await run(satisfaction, { statistic, method: 'asymptotic', ...options });
     const [p] = result.pValues;
-    const chiSquare = statistic === 'correlation' ? p!.value! : result.statistic.value;
+    const chiSquare = statistic === 'score-correlation' ? p!.value! : result.statistic.value;
     expect(Math.abs((chiSquare as number) - value)).toBeLessThan(6e-8);
     expect(p!.degreesOfFreedom).toBe(degrees);
   });

@@ -38,7 +38,7 @@ const needsStrata = (name: string): Error =>
     code: 'statistic-needs-strata',
     message: `${name} is for strata, and this is one table`,
     place: '--statistic',
-    hint: `use ${name === 'common-odds-ratio' ? 'score' : name === 'general-association' ? 'pearson' : 'trend'}, or name the strata with --strata`,
+    hint: `use ${name === 'common-odds-ratio' ? 'score' : name === 'any-association' ? 'pearson' : 'trend'}, or name the strata with --strata`,
   });
 
 const readBy = {

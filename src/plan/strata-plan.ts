@@ -26,7 +26,7 @@ export interface StrataWork {
 /** @throws Problem (usage) for a statistic that is not for strata, or not for tables of this shape. */
 export function stratifiedStatisticOf(options: PlanOptions, isTwoByTwo: boolean): StratifiedStatistic {
   const { statistic } = options;
-  if (statistic === undefined) return named(isTwoByTwo ? 'common-odds-ratio' : 'general-association');
+  if (statistic === undefined) return named(isTwoByTwo ? 'common-odds-ratio' : 'any-association');
   if (typeof statistic !== 'string' || !stratifiedNames.includes(statistic)) {
     const name = typeof statistic === 'string' ? statistic : statistic.name;
     throw usageProblem({
@@ -41,7 +41,7 @@ export function stratifiedStatisticOf(options: PlanOptions, isTwoByTwo: boolean)
       code: 'not-two-by-two',
       message: 'common-odds-ratio compares two groups with two outcomes; these tables are larger',
       place: '--statistic',
-      hint: 'use general-association, row-means or correlation',
+      hint: 'use any-association, mean-scores or correlation',
     });
   }
   return named(statistic);
@@ -50,11 +50,11 @@ export function stratifiedStatisticOf(options: PlanOptions, isTwoByTwo: boolean)
 const named = (name: string): StratifiedStatistic => stratifiedStatistics.find((one) => one.name === name)!;
 
 const readBy: Readonly<Record<string, readonly string[]>> = {
-  groups: ['common-odds-ratio', 'row-means'],
+  groups: ['common-odds-ratio', 'mean-scores'],
   event: ['common-odds-ratio'],
   reference: ['common-odds-ratio'],
-  rowScores: ['row-means', 'correlation'],
-  columnScores: ['row-means', 'correlation'],
+  rowScores: ['mean-scores', 'score-correlation'],
+  columnScores: ['mean-scores', 'score-correlation'],
   lambda: [],
   ordered: [],
   paired: [],
@@ -79,7 +79,7 @@ export function refuseUnreadByStrata({ name }: StratifiedStatistic, options: Pla
       readers.length === 0 ? 'leave it out' : `leave it out, or use ${readers.join(' or ')}`,
     );
   }
-  if (name !== 'row-means') return;
+  if (name !== 'mean-scores') return;
   const [unread, flag] =
     options.groups === 'columns'
       ? (['columnScores', '--column-scores'] as const)
@@ -158,11 +158,13 @@ export function planStrata(
     methodAsked: asked,
     methodReason: reason,
     forecast: forecastOf(work),
-    groups: roles?.groups ?? (name === 'row-means' ? (options.groups ?? 'rows') : null),
+    groups: roles?.groups ?? (name === 'mean-scores' ? (options.groups ?? 'rows') : null),
     event: roles?.eventLabel ?? null,
     reference: roles?.referenceLabel ?? null,
-    ...(shown !== null && (name === 'correlation' || options.groups === 'columns') ? rowEcho(shown.rows) : {}),
-    ...(shown !== null && (name === 'correlation' || options.groups !== 'columns') ? columnEcho(shown.columns) : {}),
+    ...(shown !== null && (name === 'score-correlation' || options.groups === 'columns') ? rowEcho(shown.rows) : {}),
+    ...(shown !== null && (name === 'score-correlation' || options.groups !== 'columns')
+      ? columnEcho(shown.columns)
+      : {}),
     fixed: 'strata' as const,
     ...(sampled ? drawing : { draws: null }),
     seed: sampled ? (options.seed ?? freshSeed()) : null,

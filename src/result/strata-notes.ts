@@ -65,7 +65,7 @@ function pooledNotes(plan: Plan, strata: Strata, asymptotic: PValueEntry, value:
       ];
     }
   }
-  if (plan.statistic === 'correlation' && strata.pooled.value * value < 0) {
+  if (plan.statistic === 'score-correlation' && strata.pooled.value * value < 0) {
     return [
       {
         code: 'pooled-differs-in-sign',

@@ -43,7 +43,7 @@ export function chooseFamily(
   }
   const rows = strataScoresOf(options.rowScores, table.rowTotals, '--row-scores');
   const columns = strataScoresOf(options.columnScores, table.columnTotals, '--column-scores');
-  const turned = name === 'row-means' && options.groups === 'columns';
+  const turned = name === 'mean-scores' && options.groups === 'columns';
   const family = (tables: readonly Counts[]): StrataFamily => {
     const sides = { rowTotals: table.rowTotals, columnTotals: table.columnTotals };
     const layers = turned
@@ -55,7 +55,7 @@ export function chooseFamily(
     const [height, width] = turned ? [live.columns, live.rows] : [live.rows, live.columns];
     return generalFamily(name as GeneralName, layers, height, width);
   };
-  const scored = name === 'row-means' || name === 'correlation';
+  const scored = name === 'mean-scores' || name === 'score-correlation';
   return {
     family: family(strata),
     pooled: family([table.counts]),

@@ -21,8 +21,8 @@ export function generalFamily(
   const root = rank === 0 ? 0 : (judged.observed[0]! - mean[0]!) / Math.sqrt(covariance[0]!);
   return {
     work: rank === 0 ? { workUnits: 0, tables: 1 } : forecastVector(problem, judged),
-    value: name === 'correlation' ? root : judged.value,
-    degreesOfFreedom: name === 'correlation' ? undefined : rank,
+    value: name === 'score-correlation' ? root : judged.value,
+    degreesOfFreedom: name === 'score-correlation' ? undefined : rank,
     layers: rank === 0 ? [] : layers,
     expectations: summedExpectations(layers),
     exact: (names) => exactVector(problem, judged, names),
@@ -33,7 +33,7 @@ export function generalFamily(
   };
 
   function approximation(question: Question): PValueEntry {
-    if (name !== 'correlation') return chiSquarePValue(question, judged.value, rank);
+    if (name !== 'score-correlation') return chiSquarePValue(question, judged.value, rank);
     if (question.tail !== 'both') return { ...normalPValue(question, root), value: root };
     return { ...chiSquarePValue(question, root * root, 1), value: root * root };
   }

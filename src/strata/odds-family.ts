@@ -35,7 +35,7 @@ export function oddsFamily(strata: readonly Stratum[], layers: readonly Layer[])
     expectations: mantelFleiss(layers, speaking),
     exact: (names: readonly OrderingName[]) => commonCuts(law, observed, names),
     sampler(names) {
-      const problem = problemFor('correlation', layers, 2, 2);
+      const problem = problemFor('score-correlation', layers, 2, 2);
       return layerSampler(problem, judgeFor(problem), names);
     },
     approximations: (question) => approximations(question, speaking),

@@ -34,7 +34,7 @@ describe('a line with strata', () => {
   it.each<[string, PlanOptions]>([
     ['exact', {}],
     ['sampled', sampled],
-    ['of another statistic', { statistic: 'general-association' }],
+    ['of another statistic', { statistic: 'any-association' }],
     ['asymptotic', { method: 'asymptotic' }],
   ])('has the p-values and notes that analyse gives, and replays: %s', async (_, plan) => {
     const line = { key: 'seals', strata, ...labels, plan } as BatchLine;

@@ -68,7 +68,7 @@ export const kinds: readonly Kind[] = [
     effect: /kappa is .* \(95% interval/,
   },
   { name: 'strata', table: sites, options: {}, effect: /common odds ratio .* \(95% limits/ },
-  { name: 'strata drawn', table: sites, options: { statistic: 'general-association', method: 'sample', seed: 'a' } },
+  { name: 'strata drawn', table: sites, options: { statistic: 'any-association', method: 'sample', seed: 'a' } },
   { name: 'clusters', table: litters, options: {} },
   {
     name: 'impossible cells',

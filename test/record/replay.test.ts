@@ -27,7 +27,7 @@ const cases: readonly [string, Parameters<typeof analyse>[0], PlanOptions][] = [
   ['cells from draws of their own', { counts: [[9, 4, 6, 3], [5, 8, 7, 9], [3, 9, 4, 8], [7, 6, 9, 5]] }, { cells: true, method: 'asymptotic' }], // prettier-ignore
   ['one margin fixed', two, { fixed: 'rows' }],
   ['strata', strata, {}],
-  ['strata, sampled', strata, { method: 'sample', draws: 1000, statistic: 'general-association' }],
+  ['strata, sampled', strata, { method: 'sample', draws: 1000, statistic: 'any-association' }],
   ['pairs', square, { paired: true }],
   ['agreement', square, { paired: true, statistic: 'kappa' }],
   ['impossible cells', { counts: [[0, 8, 3], [6, 0, 9], [4, 7, 0]], impossible: [[true, false, false], [false, true, false], [false, false, true]] }, {}], // prettier-ignore

@@ -50,7 +50,7 @@ describe('every source that a methods paragraph names', () => {
 
   it.each([
     {},
-    { statistic: 'row-means' },
+    { statistic: 'mean-scores' },
     { method: 'sample', draws: 1000, seed: 'c' },
     { method: 'sample', seed: 'c', mostDraws: 1000 },
   ] as const)('over strata, with %j', async (options) => {

@@ -16,9 +16,6 @@ Aoki & Takemura 2005 | Aoki, S. and Takemura, A. | Markov chain Monte Carlo exac
 Deming & Stephan 1940 | Deming, W. E. and Stephan, F. F. | On a least squares adjustment of a sampled frequency table when the expected marginal totals are known | Annals of Mathematical Statistics | 11 | 4 | 427-444
 Efron 1979 | Efron, B. | Bootstrap methods: another look at the jackknife | Annals of Statistics | 7 | 1 | 1-26
 Davison & Hinkley 1997 | Davison, A. C. and Hinkley, D. V. | Bootstrap Methods and their Application | book: Cambridge University Press, Cambridge | | |
-Dunn 1961 | Dunn, O. J. | Multiple comparisons among means | Journal of the American Statistical Association | 56 | 293 | 52-64
-Hochberg 1988 | Hochberg, Y. | A sharper Bonferroni procedure for multiple tests of significance | Biometrika | 75 | 4 | 800-802
-Gilbert 2005 | Gilbert, P. B. | A modified false discovery rate multiple-comparisons procedure for discrete data, applied to human immunodeficiency virus genetics | Applied Statistics | 54 | 1 | 143-158
 Holm 1979 | Holm, S. | A simple sequentially rejective multiple test procedure | Scandinavian Journal of Statistics | 6 | 2 | 65-70
 Dunn 1961 | Dunn, O. J. | Multiple comparisons among means | Journal of the American Statistical Association | 56 | 293 | 52-64
 Hochberg 1988 | Hochberg, Y. | A sharper Bonferroni procedure for multiple tests of significance | Biometrika | 75 | 4 | 800-802

@@ -77,7 +77,8 @@ export function judgeFor(problem: Problem): Judged {
     exactSum,
     placeBy(name) {
       if (form.rank === 0) return () => 0;
-      if (problem.name !== 'correlation' || name === 'distance') return name === 'lower' ? reversed(byForm) : byForm;
+      if (problem.name !== 'score-correlation' || name === 'distance')
+        return name === 'lower' ? reversed(byForm) : byForm;
       return byValue(name === 'lower' ? -1 : 1);
     },
   };

@@ -5,14 +5,14 @@ import type { Rational } from '../../numeric/rational.js';
 import { lowest, toDouble } from '../../numeric/rational.js';
 import type { LiveTable } from '../../table/live-table.js';
 
-export type GeneralName = 'general-association' | 'row-means' | 'correlation';
+export type GeneralName = 'any-association' | 'mean-scores' | 'score-correlation';
 
 /** One stratum: its live part, and for each live line the line of the pooled live table. */
 export interface Layer {
   readonly live: LiveTable;
   readonly rows: readonly number[];
   readonly columns: readonly number[];
-  /** Scores of the live lines; read by row-means (columns) and correlation (both). */
+  /** Scores of the live lines; read by mean-scores (columns) and correlation (both). */
   readonly rowScores: readonly Rational[];
   readonly columnScores: readonly Rational[];
 }
@@ -29,7 +29,7 @@ export interface Problem {
 export function problemFor(name: GeneralName, layers: readonly Layer[], rows: number, columns: number): Problem {
   const one: Rational = { numerator: 1n, denominator: 1n };
   switch (name) {
-    case 'general-association':
+    case 'any-association':
       return {
         name,
         layers,
@@ -39,7 +39,7 @@ export function problemFor(name: GeneralName, layers: readonly Layer[], rows: nu
           return i < rows - 1 && j < columns - 1 ? [i * (columns - 1) + j, one] : undefined;
         },
       };
-    case 'row-means':
+    case 'mean-scores':
       return {
         name,
         layers,
@@ -49,7 +49,7 @@ export function problemFor(name: GeneralName, layers: readonly Layer[], rows: nu
           return i < rows - 1 ? [i, layers[layer]!.columnScores[column]!] : undefined;
         },
       };
-    case 'correlation':
+    case 'score-correlation':
       return {
         name,
         layers,

@@ -24,11 +24,11 @@ export interface ScalarLaw {
 
 /** undefined where T has more components, where its scores have too many digits, and where nothing varies. */
 export function scalarLaw(problem: Problem, layer: number, scale: bigint): ScalarLaw | undefined {
-  if (problem.dimension !== 1 || problem.name === 'general-association') return undefined;
+  if (problem.dimension !== 1 || problem.name === 'any-association') return undefined;
   const { live, rows, rowScores, columnScores } = problem.layers[layer]!;
   const whole = (x: bigint): Rational => ({ numerator: x, denominator: 1n });
   // Row means of two rows: T is the sum of the scores in the first.
-  const ofRows = problem.name === 'correlation' ? rowScores : rows.map((row) => whole(row === 0 ? 1n : 0n));
+  const ofRows = problem.name === 'score-correlation' ? rowScores : rows.map((row) => whole(row === 0 ? 1n : 0n));
   const form = trend.bind(live, { groups: 'rows', event: 0, first: 0 }, { rowScores: ofRows, columnScores }).linear;
   if (form === undefined || form.rowScores.every((x) => x === 0) || form.columnScores.every((x) => x === 0))
     return undefined;

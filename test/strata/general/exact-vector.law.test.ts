@@ -9,7 +9,7 @@ import { relativeDifference } from '../../helpers/tables.js';
 import { minus, order, over, plus, ratio, solved, times, whole, type Fraction } from './fractions.js';
 
 type Counts = readonly (readonly number[])[];
-type Name = 'general-association' | 'row-means' | 'correlation';
+type Name = 'any-association' | 'mean-scores' | 'score-correlation';
 
 const rowsOf = (table: Counts): number[] => table.map((row) => row.reduce((x, y) => x + y, 0));
 const columnsOf = (table: Counts): number[] => table[0]!.map((_, j) => table.reduce((sum, row) => sum + row[j]!, 0));
@@ -25,9 +25,9 @@ function midranks(totals: readonly number[]): Fraction[] {
 
 /** The vector of one table: all cells, or sums of column scores by row, or one sum of products. */
 function vectorOf(name: Name, table: Counts, u: readonly Fraction[], v: readonly Fraction[]): Fraction[] {
-  if (name === 'general-association') return table.flat().map(whole);
+  if (name === 'any-association') return table.flat().map(whole);
   const byRow = table.map((row) => row.reduce((sum: Fraction, n, j) => plus(sum, times(whole(n), v[j]!)), whole(0)));
-  if (name === 'row-means') return byRow;
+  if (name === 'mean-scores') return byRow;
   return [byRow.reduce((sum: Fraction, x, i) => plus(sum, times(u[i]!, x)), whole(0))];
 }
 
@@ -140,7 +140,7 @@ const strata = fc.oneof(tablesOf(2, 3), tablesOf(3, 2), tablesOf(3, 3), tablesOf
 const run = async (tables: number[][][], statistic: Name): Promise<Result> =>
   checked(await analyse({ strata: tables }, { statistic, method: 'exact' }));
 
-describe.each(['general-association', 'row-means', 'correlation'] as const)('%s', (statistic) => {
+describe.each(['any-association', 'mean-scores', 'score-correlation'] as const)('%s', (statistic) => {
   it('has the value and the p of the fractions, ties decided exactly', async () => {
     await fc.assert(
       fc.asyncProperty(strata, async (tables) => {
@@ -148,7 +148,7 @@ describe.each(['general-association', 'row-means', 'correlation'] as const)('%s'
         const { chiSquare, tails } = oracle(statistic, tables);
         const [headline, upper, lower] = result.pValues;
         expect(relativeDifference(headline!.p!, tails.both)).toBeLessThan(1e-12);
-        if (statistic === 'correlation') {
+        if (statistic === 'score-correlation') {
           const root = result.statistic.value as number;
           expect(Math.abs(root * root - chiSquare)).toBeLessThan(1e-10 * Math.max(1, chiSquare));
           expect(relativeDifference(upper!.p!, tails.upper)).toBeLessThan(1e-12);
