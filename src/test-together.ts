@@ -5,9 +5,10 @@ import type { TogetherResult } from './result/together-declaration.js';
 import type { JointCounts } from './input/joint-counts.js';
 import type { JointRead } from './input/joint-records.js';
 import { blockSize } from './null/sampled/limits.js';
+import { refuseEmptySeed } from './plan/footing.js';
 import { freshSeed } from './plan/fresh-seed.js';
 import { share, wholeNumber } from './plan/settings.js';
-import { dataProblem, usageProblem } from './problem/problem.js';
+import { dataProblem } from './problem/problem.js';
 import { clopperPearson } from './pvalue/clopper-pearson.js';
 import { generatorName } from './random/stream.js';
 import { quoted } from './result/label-words.js';
@@ -38,14 +39,7 @@ export async function testTogether(
 ): Promise<TogetherResult> {
   const { joint } = read;
   refuseOneGroup(joint);
-  if (options.seed === '') {
-    throw usageProblem({
-      code: 'empty-seed',
-      message: 'the seed is empty',
-      place: '--seed',
-      hint: 'give any text, such as --seed 2026',
-    });
-  }
+  refuseEmptySeed(options);
   const draws = wholeNumber(options.draws ?? standardDraws, 1, 1e9, '--draws');
   const samplingConfidence = share(options.samplingConfidence, 0.99, '--sampling-confidence');
   const seed = options.seed ?? freshSeed();

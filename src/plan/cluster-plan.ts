@@ -1,13 +1,11 @@
 // The plan of a test that permutes clusters: the same wishes, the method settled by the table of groups by kinds of cluster.
 import { forecastExact, standardEffort } from '../null/forecast.js';
-import { blockSize } from '../null/sampled/limits.js';
 import { usageProblem } from '../problem/problem.js';
 import { nameHint } from '../problem/suggest.js';
-import { generatorName } from '../random/stream.js';
 import type { BoundStatistic, Statistic } from '../statistic/contract.js';
 import type { LiveTable } from '../table/live-table.js';
 import { drawsOf } from './draws.js';
-import { freshSeed } from './fresh-seed.js';
+import { chanceOf, levelsOf, refuseEmptySeed } from './footing.js';
 import { methods, tails, twoSidedRules, type Plan, type PlanOptions } from './plan.js';
 import type { NamedRoles } from './roles.js';
 import { oneOf, positive, share, unused } from './settings.js';
@@ -77,14 +75,7 @@ export function planClusters(
       hint: 'use --method auto, exact or sample',
     });
   }
-  if (options.seed === '') {
-    throw usageProblem({
-      code: 'empty-seed',
-      message: 'the seed is empty',
-      place: '--seed',
-      hint: 'give any text, or leave the option out and one is made and printed',
-    });
-  }
+  refuseEmptySeed(options);
   const effort = positive(options.effort, standardEffort, '--effort');
   const forecast = forecastExact(kinds, bound, statistic.name);
   const { method, reason } = settleMethod({ asked, statistic, bound, rule, forecast, effort });
@@ -105,13 +96,7 @@ export function planClusters(
     ...echo,
     fixed: 'clusters' as const,
     ...(sampled ? drawing : { draws: null }),
-    seed: sampled ? (options.seed ?? freshSeed()) : null,
-    tableKey: '',
-    generator: sampled ? generatorName : null,
-    blockSize: sampled ? blockSize : null,
-    effort,
-    alpha,
-    confidence: share(options.confidence, 0.95, '--confidence'),
-    samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
+    ...chanceOf(options, sampled),
+    ...levelsOf(options, effort),
   });
 }

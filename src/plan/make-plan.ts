@@ -1,16 +1,14 @@
 // Raw wishes in, one checked and frozen plan out: every default filled, the method settled, the reason said.
 import { expectsBracket } from '../null/exact/network/bracket-forecast.js';
 import { forecastExact, standardEffort, takesNetwork, type Forecast } from '../null/forecast.js';
-import { blockSize } from '../null/sampled/limits.js';
 import { usageProblem } from '../problem/problem.js';
-import { generatorName } from '../random/stream.js';
 import type { BoundStatistic, Choices, Statistic } from '../statistic/contract.js';
 import { hasOneTableOnly, type LiveTable } from '../table/live-table.js';
 import type { Table } from '../table/table.js';
 import { chooseStatistic, choicesOf, refuseUnread } from './choices.js';
+import { chanceOf, levelsOf, refuseEmptySeed } from './footing.js';
 import { orderEcho } from './order-echo.js';
 import { designOf, withDesign, type DesignKind } from './design.js';
-import { freshSeed } from './fresh-seed.js';
 import {
   methods,
   tails,
@@ -66,14 +64,7 @@ export function makePlan(table: Table, live: LiveTable, wishes: PlanOptions): Pr
   const settled = Object.freeze({ ...forecast, engine: conditional.engine ?? forecast.engine });
   const alpha = share(options.alpha, 0.05, '--alpha');
   const drawing = design.kind === 'bootstrap' ? null : drawsOf(options, asked, alpha);
-  if (options.seed === '') {
-    throw usageProblem({
-      code: 'empty-seed',
-      message: 'the seed is empty',
-      place: '--seed',
-      hint: 'give any text, such as --seed 2026-ward-3, or leave the option out and one is made and printed',
-    });
-  }
+  refuseEmptySeed(options);
   // A sum of scores has a value whatever the margins allow.
   const valueOfOnlyTable =
     statistic.takes?.includes('scores') || options.paired
@@ -105,15 +96,9 @@ export function makePlan(table: Table, live: LiveTable, wishes: PlanOptions): Pr
     ...(sampled && drawing !== null ? drawing : { draws: null }),
     ...(bootstrap === undefined ? {} : { bootstrap }),
     ...design.echo,
-    seed: drawsAnything ? (options.seed ?? freshSeed()) : null,
-    tableKey: options.tableKey ?? '',
-    generator: drawsAnything ? generatorName : null,
     ...shardOf(options, method, sampled && drawing !== null ? drawing.draws : null),
-    blockSize: sampled ? blockSize : null,
-    effort,
-    alpha,
-    confidence: share(options.confidence, 0.95, '--confidence'),
-    samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
+    ...chanceOf(options, drawsAnything, sampled),
+    ...levelsOf(options, effort),
   });
   return {
     plan,

@@ -1,12 +1,10 @@
 // The plan of a test of change in pairs: the same wishes, checked for what such a test can read, and the method settled.
 import { standardEffort, type Forecast, type PairsEngine } from '../null/forecast.js';
-import { blockSize } from '../null/sampled/limits.js';
 import { groupedDigits } from '../numeric/digit-groups.js';
 import { effortProblem, usageProblem } from '../problem/problem.js';
-import { generatorName } from '../random/stream.js';
 import { pairedNamed, type PairedStatistic } from '../statistic/paired.js';
 import { drawsOf } from './draws.js';
-import { freshSeed } from './fresh-seed.js';
+import { chanceOf, levelsOf, refuseEmptySeed } from './footing.js';
 import { methods, tails, twoSidedRules, type ChosenMethod, type Plan, type PlanOptions } from './plan.js';
 import { oneOf, positive, share, unused } from './settings.js';
 
@@ -72,14 +70,7 @@ export function refuseUnreadByPairs(options: PlanOptions): void {
 
 /** @throws Problem: usage for wishes that make no sense together, effort for exact work over the bound. */
 export function planPairs(options: PlanOptions, statistic: PairedStatistic, work: PairsWork): Plan {
-  if (options.seed === '') {
-    throw usageProblem({
-      code: 'empty-seed',
-      message: 'the seed is empty',
-      place: '--seed',
-      hint: 'give any text, or leave the option out and one is made and printed',
-    });
-  }
+  refuseEmptySeed(options);
   const asked = oneOf(options.method, 'auto', methods, '--method');
   const effort = positive(options.effort, standardEffort, '--effort');
   const alpha = share(options.alpha, 0.05, '--alpha');
@@ -99,14 +90,8 @@ export function planPairs(options: PlanOptions, statistic: PairedStatistic, work
     reference: null,
     fixed: 'pairs',
     ...(sampled ? drawing : { draws: null }),
-    seed: sampled ? (options.seed ?? freshSeed()) : null,
-    tableKey: '',
-    generator: sampled ? generatorName : null,
-    blockSize: sampled ? blockSize : null,
-    effort,
-    alpha,
-    confidence: share(options.confidence, 0.95, '--confidence'),
-    samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
+    ...chanceOf(options, sampled),
+    ...levelsOf(options, effort),
   });
 }
 

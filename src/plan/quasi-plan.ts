@@ -2,11 +2,10 @@
 import { standardEffort } from '../null/forecast.js';
 import { groupedDigits } from '../numeric/digit-groups.js';
 import { dataProblem, effortProblem, usageProblem } from '../problem/problem.js';
-import { generatorName } from '../random/stream.js';
 import { quasiStatistics, type QuasiStatistic } from '../statistic/quasi.js';
-import { freshSeed } from './fresh-seed.js';
+import { chanceOf, levelsOf, refuseEmptySeed } from './footing.js';
 import { methods, type ChosenMethod, type Method, type Plan, type PlanOptions } from './plan.js';
-import { oneOf, positive, share, wholeNumber } from './settings.js';
+import { oneOf, positive, wholeNumber } from './settings.js';
 
 /** Tables that a chain compares, unless told. */
 export const standardChainTables = 100_000;
@@ -91,14 +90,7 @@ export function planQuasi(
       hint: `for example --draws ${standardChainTables}`,
     });
   }
-  if (options.seed === '') {
-    throw usageProblem({
-      code: 'empty-seed',
-      message: 'the seed is empty',
-      place: '--seed',
-      hint: 'give any text, or leave the option out and one is made and printed',
-    });
-  }
+  refuseEmptySeed(options);
   const sampled = method === 'sample';
   const reason = listed
     ? `${groupedDigits(tables)} ${tables === 1 ? 'table has' : 'tables have'} these margins`
@@ -124,13 +116,7 @@ export function planQuasi(
     draws: sampled
       ? wholeNumber((options.draws as number | undefined) ?? standardChainTables, 1, 1e9, '--draws')
       : null,
-    seed: sampled ? (options.seed ?? freshSeed()) : null,
-    tableKey: '',
-    generator: sampled ? generatorName : null,
-    blockSize: null,
-    effort,
-    alpha: share(options.alpha, 0.05, '--alpha'),
-    confidence: share(options.confidence, 0.95, '--confidence'),
-    samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
+    ...chanceOf(options, sampled, false),
+    ...levelsOf(options, effort),
   });
 }

@@ -2,15 +2,13 @@
 // strata stage forecasts.
 import type { Forecast, StrataEngine } from '../null/forecast.js';
 import { standardEffort } from '../null/forecast.js';
-import { blockSize } from '../null/sampled/limits.js';
 import { groupedDigits } from '../numeric/digit-groups.js';
 import type { Rational } from '../numeric/rational.js';
 import { effortProblem, usageProblem } from '../problem/problem.js';
 import { nameHint } from '../problem/suggest.js';
-import { generatorName } from '../random/stream.js';
 import { stratifiedNames, stratifiedStatistics, type StratifiedStatistic } from '../statistic/stratified.js';
 import { drawsOf } from './draws.js';
-import { freshSeed } from './fresh-seed.js';
+import { chanceOf, levelsOf, refuseEmptySeed } from './footing.js';
 import { methods, tails, twoSidedRules, type ChosenMethod, type Plan, type PlanOptions } from './plan.js';
 import type { NamedRoles } from './roles.js';
 import { scoresOf, type ScoreWish } from './scores.js';
@@ -124,14 +122,7 @@ export function planStrata(
   if (tail !== 'both' && options.twoSidedRule !== undefined)
     throw unused('--two-sided-rule', `with --tail ${tail}`, 'leave it out');
   const rule = tail === 'both' ? oneOf(options.twoSidedRule, 'distance', twoSidedRules, '--two-sided-rule') : null;
-  if (options.seed === '') {
-    throw usageProblem({
-      code: 'empty-seed',
-      message: 'the seed is empty',
-      place: '--seed',
-      hint: 'give any text, or leave the option out and one is made and printed',
-    });
-  }
+  refuseEmptySeed(options);
   const asked = oneOf(options.method, 'auto', methods, '--method');
   const effort = positive(options.effort, standardEffort, '--effort');
   const alpha = share(options.alpha, 0.05, '--alpha');
@@ -167,14 +158,8 @@ export function planStrata(
       : {}),
     fixed: 'strata' as const,
     ...(sampled ? drawing : { draws: null }),
-    seed: sampled ? (options.seed ?? freshSeed()) : null,
-    tableKey: '',
-    generator: sampled ? generatorName : null,
-    blockSize: sampled ? blockSize : null,
-    effort,
-    alpha,
-    confidence: share(options.confidence, 0.95, '--confidence'),
-    samplingConfidence: share(options.samplingConfidence, 0.99, '--sampling-confidence'),
+    ...chanceOf(options, sampled),
+    ...levelsOf(options, effort),
   });
 }
 

@@ -13,6 +13,7 @@ import { checkDocument, citationsIn } from './document.js';
 import { lookFor } from './look.js';
 import { documents } from './options/documents.js';
 import { reporting } from './options/reporting.js';
+import { oneFile } from './one-file.js';
 import { either } from './options/words.js';
 import { destinationFor, sharedOptions } from './shared-options.js';
 
@@ -57,21 +58,14 @@ export const adjustCommand = command({
   },
   async run(operands, values, shell) {
     checkDocument(values);
-    const [path, ...more] = operands;
-    if (more.length > 0 || (path === undefined && shell.stdinIsTerminal())) {
-      throw usageProblem({
-        code: more.length > 0 ? 'two-files' : 'nothing-named',
-        message: more.length > 0 ? `one file at a time, not ${operands.length}` : 'no results are named',
-        hint: 'write keepsum adjust results.ndjson, or pipe them in',
-      });
-    }
-    const file = path === undefined || path === '-' ? null : path;
-    const destination = await destinationFor(values.output, shell, file);
-    const { fileBytes, pieces } = await import('../streams/input-file.js');
+    const file = oneFile(operands, shell, {
+      message: 'no results are named',
+      hint: 'write keepsum adjust results.ndjson, or pipe them in',
+    });
+    const destination = await destinationFor(values.output, shell, file.path);
     const { resultsIn } = await import('../streams/result-lines.js');
     const { adjustResults } = await import('../../adjust-results.js');
-    const sourceName = file ?? 'standard input';
-    const read = await resultsIn(file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file), sourceName);
+    const read = await resultsIn(file.bytes(), file.name);
     const methods = values.by ?? standardAdjustments;
     const results = methods.some((method) => discreteAdjustments.includes(method)) ? await withReach(read) : read;
     const alpha = values.alpha ?? 0.05;

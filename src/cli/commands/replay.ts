@@ -1,8 +1,8 @@
 // keepsum replay: a saved result made again from its own record and compared digit by digit.
-import { usageProblem } from '../../problem/problem.js';
 import { anyText, oneOf, wholeNumber } from '../arguments/check-value.js';
 import { toggle, valued } from '../arguments/option.js';
 import { command } from './command-file.js';
+import { oneFile } from './one-file.js';
 import { either } from './options/words.js';
 import { reporting } from './options/reporting.js';
 import { destinationFor, sharedOptions } from './shared-options.js';
@@ -50,27 +50,20 @@ export const replayCommand = command({
     ...sharedOptions,
   },
   async run(operands, values, shell) {
-    const [path, ...more] = operands;
-    if (more.length > 0 || (path === undefined && shell.stdinIsTerminal())) {
-      throw usageProblem({
-        code: more.length > 0 ? 'two-files' : 'nothing-named',
-        message: more.length > 0 ? `one file at a time, not ${operands.length}` : 'no result is named',
-        hint: 'write keepsum replay result.json, or pipe it in',
-      });
-    }
-    const file = path === undefined || path === '-' ? null : path;
-    const destination = await destinationFor(values.output, shell, file);
-    const { fileBytes, pieces } = await import('../streams/input-file.js');
+    const file = oneFile(operands, shell, {
+      message: 'no result is named',
+      hint: 'write keepsum replay result.json, or pipe it in',
+    });
+    const destination = await destinationFor(values.output, shell, file.path);
+    const { fileBytes } = await import('../streams/input-file.js');
     const { textLines } = await import('../streams/text-lines.js');
     const { recordsIn } = await import('../../record/records-in.js');
     const { differs, replayRecords } = await import('../../replay-records.js');
-    const sourceName = file ?? 'standard input';
-    const bytes = file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file);
     const own =
       values.statistic === undefined
         ? undefined
         : await (await import('./load-statistic.js')).loadStatistic(values.statistic);
-    const report = await replayRecords(recordsIn(textLines(bytes), sourceName), {
+    const report = await replayRecords(recordsIn(textLines(file.bytes()), file.name), {
       ...(own === undefined ? {} : { own }),
       ...(values.threads === undefined ? {} : { surroundings: { threads: values.threads } }),
       ...(values.against === undefined ? {} : { against: fileBytes(values.against) }),

@@ -1,5 +1,5 @@
 // keepsum report: saved results, one or many, in one document; nothing is worked out again.
-import { dataProblem, usageProblem } from '../../problem/problem.js';
+import { dataProblem } from '../../problem/problem.js';
 import type { SavedLine } from '../../batch/lines-page.js';
 import type { Result } from '../../result/result.js';
 import { version } from '../../result/version.js';
@@ -12,6 +12,7 @@ import { checkDocument, citationsIn } from './document.js';
 import { lookFor, type LookValues } from './look.js';
 import { documents } from './options/documents.js';
 import { reporting } from './options/reporting.js';
+import { oneFile } from './one-file.js';
 import { either } from './options/words.js';
 import { destinationFor, sharedOptions } from './shared-options.js';
 
@@ -45,23 +46,15 @@ export const reportCommand = command({
   },
   async run(operands, values, shell) {
     checkDocument(values);
-    const [path, ...more] = operands;
-    if (more.length > 0 || (path === undefined && shell.stdinIsTerminal())) {
-      throw usageProblem({
-        code: more.length > 0 ? 'two-files' : 'nothing-named',
-        message: more.length > 0 ? `one file at a time, not ${operands.length}` : 'no results are named',
-        hint: 'write keepsum report results.ndjson, or pipe them in',
-      });
-    }
-    const file = path === undefined || path === '-' ? null : path;
-    const destination = await destinationFor(values.output, shell, file);
-    const { fileBytes, pieces } = await import('../streams/input-file.js');
+    const file = oneFile(operands, shell, {
+      message: 'no results are named',
+      hint: 'write keepsum report results.ndjson, or pipe them in',
+    });
+    const destination = await destinationFor(values.output, shell, file.path);
     const { textLines } = await import('../streams/text-lines.js');
     const { recordsIn } = await import('../../record/records-in.js');
-    const sourceName = file ?? 'standard input';
-    const bytes = file === null ? pieces(shell.stdin(), sourceName) : fileBytes(file);
     const lines: (SavedLine & { readonly place: string })[] = [];
-    for await (const { record, place } of recordsIn(textLines(bytes), sourceName)) {
+    for await (const { record, place } of recordsIn(textLines(file.bytes()), file.name)) {
       if (lines.length === mostResults) {
         throw dataProblem({
           code: 'too-many-results',
@@ -77,7 +70,7 @@ export const reportCommand = command({
       throw dataProblem({
         code: 'no-results',
         message: 'the file holds no results',
-        place: sourceName,
+        place: file.name,
         hint: 'give what --format json or keepsum batch wrote',
       });
     }

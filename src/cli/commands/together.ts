@@ -10,6 +10,7 @@ import { documents } from './options/documents.js';
 import { lookFor } from './look.js';
 import { reading } from './options/reading.js';
 import { reporting } from './options/reporting.js';
+import { oneFile } from './one-file.js';
 import { either } from './options/words.js';
 import { destinationFor, sharedOptions } from './shared-options.js';
 
@@ -49,7 +50,10 @@ export const togetherCommand = command({
   },
   async run(operands, values, shell) {
     checkDocument(values);
-    const path = onePath(operands, shell.stdinIsTerminal);
+    const file = oneFile(operands, shell, {
+      message: 'no file is named',
+      hint: 'write keepsum together FILE --groups COLUMN --outcomes COLUMNS',
+    });
     const { groups, outcomes } = values;
     if (groups === undefined || outcomes === undefined) {
       throw usageProblem({
@@ -58,20 +62,17 @@ export const togetherCommand = command({
         hint: 'name the columns: keepsum together FILE --groups arm --outcomes nausea,rash,fever',
       });
     }
-    const destination = await destinationFor(values.output, shell, path);
+    const destination = await destinationFor(values.output, shell, file.path);
     const { readJointRecords } = await import('../../input/joint-records.js');
-    const { fileBytes, isPlainFile, pieces } = await import('../streams/input-file.js');
-    const sourceName = path ?? 'standard input';
-    const bytes = (): AsyncIterable<Uint8Array> =>
-      path === null ? pieces(shell.stdin(), sourceName) : fileBytes(path);
-    const read = await readJointRecords(bytes(), {
+    const { isPlainFile } = await import('../streams/input-file.js');
+    const read = await readJointRecords(file.bytes(), {
       groups,
       outcomes: parseLabelList(outcomes, '--outcomes'),
       count: values.count,
       missing: values.missing,
       delimiter: values.delimiter,
-      sourceName,
-      reread: path !== null && (await isPlainFile(path)) ? bytes : undefined,
+      sourceName: file.name,
+      reread: file.path !== null && (await isPlainFile(file.path)) ? file.bytes : undefined,
     });
     const { testTogether } = await import('../../test-together.js');
     const { renderTogether } = await import('../../report/together.js');
@@ -90,16 +91,3 @@ export const togetherCommand = command({
     return 0;
   },
 });
-
-/** null: standard input. */
-function onePath(operands: readonly string[], stdinIsTerminal: () => boolean): string | null {
-  const [path, ...more] = operands;
-  if (more.length > 0 || (path === undefined && stdinIsTerminal())) {
-    throw usageProblem({
-      code: more.length > 0 ? 'two-files' : 'nothing-named',
-      message: more.length > 0 ? `one file at a time, not ${operands.length}` : 'no file is named',
-      hint: 'write keepsum together FILE --groups COLUMN --outcomes COLUMNS',
-    });
-  }
-  return path === undefined || path === '-' ? null : path;
-}
