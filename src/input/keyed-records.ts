@@ -43,7 +43,7 @@ export async function readKeyedRecords(chunks: AsyncIterable<Uint8Array>, option
   const { used, rows, columns, records } = tally;
   if (used === undefined) throw noData(sourceName);
   if (records === 0) throw noRecords(sourceName);
-  if (tally.tables.size === 0) throw noRecordsLeft(records, sourceName);
+  if (tally.number === 0) throw noRecordsLeft(records, sourceName);
   const labelled = (cells: readonly (readonly number[])[]) => ({
     counts: rows.labels.map((_, row) => columns.labels.map((__, column) => cells[row]?.[column] ?? 0)),
     rowLabels: rows.labels,
@@ -74,7 +74,7 @@ export async function readKeyedRecords(chunks: AsyncIterable<Uint8Array>, option
   const lines = { rowLabels: rows.labels, columnLabels: columns.labels };
   /** Strata and clusters that a table has records of. */
   function groupsOf({ layers, clusters }: KeyedCells, table: Table): Partial<ReadTable> {
-    const labels = tally.strata.labels.filter((_, s) => layers?.[s] !== undefined);
+    const labels = tally.strata.labels.filter((_, s) => layers?.[s]);
     const members = [...(clusters ?? [])].map(([label, { row, counts }]) => ({ label, row, counts }));
     return {
       ...(layers && { strata: strataOver(labels, layers.filter(Boolean), lines, table) }),
@@ -82,7 +82,7 @@ export async function readKeyedRecords(chunks: AsyncIterable<Uint8Array>, option
     };
   }
   function* made(): Generator<Named & ({ read: ReadTable } | { problem: Problem })> {
-    for (const [key, { family, cells, ...groups }] of tally.tables) {
+    for (const [key, { family, cells, ...groups }] of tally.tables()) {
       const counts = keptRows.map((row) => keptColumns.map((column) => cells[row]?.[column] ?? 0));
       try {
         const table = placed(orderLevels({ ...settled.counts, counts }, options), undefined);
@@ -105,7 +105,7 @@ export async function readKeyedRecords(chunks: AsyncIterable<Uint8Array>, option
   return {
     rowLabels,
     columnLabels,
-    number: tally.tables.size,
+    number: tally.number,
     tables: made(),
     notes: [...notes, ...settled.notes, ...leftOut(tally)],
   };

@@ -1,5 +1,5 @@
 // Counts raw records into many tables at once, told apart by the values of further columns. Keys may be scattered: every table is held
-// until the end, some hundred bytes and a number for each cell that was met; memory does not depend on the number of records.
+// until the end, as text of a few characters for each cell; memory does not depend on the number of records.
 import { isMissingText } from './count-text.js';
 import { notUtf8 } from './file-text.js';
 import { parseLabelList } from './label-list.js';
@@ -17,8 +17,10 @@ export interface KeyedCells {
 }
 
 export class KeyedTally extends RecordTally {
-  /** By key, in the order in which keys appear; rows, columns and strata are those of all tables. */
-  readonly tables = new Map<string, KeyedCells>();
+  /** By key, in the order in which keys appear: tables that were put away; rows, columns and strata are those of all tables. */
+  private readonly away = new Map<string, string>();
+  /** Those that records came for of late. */
+  private readonly open = new Map<string, KeyedCells>();
   /** Records left out because a key's value was missing. */
   withoutKey = 0;
   private by: readonly number[] = [];
@@ -58,11 +60,13 @@ export class KeyedTally extends RecordTally {
     const key = this.keyOf(record);
     if (key === undefined) return;
     const { row, column, stratum } = found;
-    let table = this.tables.get(key);
+    let table = this.tableOf(key);
     if (table === undefined) {
       const family = this.familyAt < 0 ? undefined : this.familyIn(record);
       if (this.fault !== undefined) return;
-      this.tables.set(key, (table = { cells: [], family }));
+      table = { cells: [], family };
+      this.away.set(key, '');
+      this.hold(key, table);
     } else if (this.familyAt >= 0 && this.familyIn(record) !== table.family) {
       const families = [table.family!, record[this.familyAt]!.trim()] as const;
       return this.fail(this.familyAt, (place) => twoFamilies(key, ...families, place));
@@ -72,6 +76,36 @@ export class KeyedTally extends RecordTally {
     add(table.cells, row, column, count);
     if (strata >= 0) add(((table.layers ??= [])[stratum] ??= []), row, column, count);
     if (cluster >= 0) this.addMember((table.clusters ??= new Map()), record[cluster]!.trim(), found, count);
+  }
+
+  /** How many tables there are. */
+  get number(): number {
+    return this.away.size;
+  }
+
+  /** All tables, once: each is let go of when the next one is asked for. */
+  *tables(): Generator<[key: string, table: KeyedCells]> {
+    for (const [key, text] of this.away) {
+      yield [key, this.open.get(key) ?? fromText(text)];
+      this.away.delete(key);
+      this.open.delete(key);
+    }
+  }
+
+  private tableOf(key: string): KeyedCells | undefined {
+    const table = this.open.get(key);
+    if (table !== undefined) return table;
+    const text = this.away.get(key);
+    return text === undefined ? undefined : this.hold(key, fromText(text));
+  }
+
+  private hold(key: string, table: KeyedCells): KeyedCells {
+    if (this.open.size >= mostOpen) {
+      for (const [other, one] of this.open) this.away.set(other, toText(one));
+      this.open.clear();
+    }
+    this.open.set(key, table);
+    return table;
   }
 
   /** A cluster belongs to its table: another table may have one of the same name. */
@@ -115,6 +149,28 @@ export class KeyedTally extends RecordTally {
     }
     return keyOf(values);
   }
+}
+
+/** Tables beyond these are put away as text, a tenth of the memory, until another record of theirs comes. */
+const mostOpen = 4096;
+
+const toText = ({ cells, layers, clusters, family }: KeyedCells): string =>
+  JSON.stringify([cells, family ?? null, layers ?? null, clusters === undefined ? null : [...clusters]]);
+
+/** Holes come back as null. */
+function fromText(text: string): KeyedCells {
+  const [cells, family, layers, clusters] = JSON.parse(text) as [
+    number[][],
+    string | null,
+    number[][][] | null,
+    [string, { row: number; counts: number[] }][] | null,
+  ];
+  return {
+    cells,
+    family: family ?? undefined,
+    ...(layers === null ? {} : { layers }),
+    ...(clusters === null ? {} : { clusters: new Map(clusters) }),
+  };
 }
 
 /** One CSV record (RFC 4180), so that no two lists of values have the same key; a single value is its own. */

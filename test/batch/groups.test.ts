@@ -140,6 +140,41 @@ describe('records by key', () => {
     });
   });
 
+  it.each(['strata', 'cluster'] as const)(
+    'of thousands of scattered keys are counted as those of a few, with --%s',
+    async (side) => {
+      const column = side === 'strata' ? { strata: 'sex' } : { cluster: 'litter' };
+      const many = [0, 1, 2].flatMap((round) =>
+      Array.from({ length: 4500 }, (_, k) => [`site ${k}`, ['none', 'high'][round % 2]!, ['ill', 'well'][(k + round) % 2]!, ['f', 'm'][round % 2]!, `l${round}`, 'a']),
+    ); // prettier-ignore
+      const read = await readKeyedRecords(piecesOf(bytes(many)), { ...options, ...column, family: 'kind' });
+      const tables = [...read.tables] as {
+        key: string;
+        family: string;
+        read: Awaited<ReturnType<typeof readRecords>>;
+      }[];
+      expect(tables).toHaveLength(4500);
+      for (const k of [0, 1, 4499]) {
+        const { key, family, read: found } = tables[k]!;
+        const alone = await readRecords(piecesOf(bytes(many.filter(([site]) => site === key))), {
+          ...options,
+          ...column,
+          columnOrder: k % 2 ? 'well,ill' : 'ill,well',
+        });
+        expect([key, family]).toEqual([`site ${k}`, 'a']);
+        const order = (labels: readonly string[]): string => labels.join();
+        expect(order(found.table.columnLabels)).toBe('ill,well');
+        expect(found.table.total).toBe(alone.table.total);
+        expect(found.strata?.map(({ label }) => label)).toEqual(alone.strata?.map(({ label }) => label));
+        expect(found.clusters?.map(({ label, row }) => [label, row])).toEqual(
+          alone.clusters?.map(({ label, row }) => [label, row]),
+        );
+        expect(found.table.rowTotals).toEqual(alone.table.rowTotals);
+        expect([...found.table.columnTotals].sort()).toEqual([...alone.table.columnTotals].sort());
+      }
+    },
+  );
+
   it('refuse a table with two families', async () => {
     const two = [['north', 'none', 'ill', 'f', '1', 'a'], ['north', 'none', 'ill', 'f', '1', 'b']]; // prettier-ignore
     const read = readKeyedRecords(piecesOf(bytes(two)), { ...options, family: 'kind' });
