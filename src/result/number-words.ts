@@ -1,8 +1,10 @@
 // Numbers as a report prints them: a p never shows more digits than its own error allows, a tiny one keeps its size, and
 // none is printed as 0 when it is not. All digits stay in the json format.
 
+import { groupedDigits } from '../numeric/digit-groups.js';
+
 /** A whole number with its thousands set apart, e.g. 100,000. */
-export const countWords = (count: number): string => String(count).replace(/\B(?=(?:\d{3})+$)/g, ',');
+export const countWords = groupedDigits;
 
 /** A number to some significant digits, plain from 0.0001 to a million, else like 3.1e-12. */
 export function digits(value: number, significant: number): string {

@@ -9,15 +9,17 @@ export interface TableCount {
 }
 
 const transitionLimit = 8_000;
+/** Estimates beyond this are not worth an attempt to count: nobody lists so many, and the attempt would fail. */
+const mostToCount = 1e10;
 
 /** Deterministic, from the margins alone. */
 export function countTables(live: LiveTable): TableCount {
   const [few, many] =
     live.rows <= live.columns ? [live.rowTotals, live.columnTotals] : [live.columnTotals, live.rowTotals];
-  const counted = few.length === 2 ? countTwoLines(few[0]!, many) : countByLines(few, many);
-  return counted === undefined
-    ? { tables: approximateCount(few, many), counted: false }
-    : { tables: counted, counted: true };
+  const estimate = approximateCount(few, many);
+  const counted =
+    few.length === 2 ? countTwoLines(few[0]!, many) : estimate > mostToCount ? undefined : countByLines(few, many);
+  return counted === undefined ? { tables: estimate, counted: false } : { tables: counted, counted: true };
 }
 
 /** Ways to split one line's total over cells that hold at most `capacities`: one running sum a cell. */
