@@ -44,6 +44,9 @@ describe('the package', () => {
     );
     expect(readdirSync(join(installed, 'fixtures'))).toEqual(['demo']);
     expect(existsSync(join(installed, 'dist/third-party-licenses.md'))).toBe(true);
+    expect(existsSync(join(installed, 'dist/keepsum.1'))).toBe(true);
+    // Types that the library does not lead to are left out.
+    expect(existsSync(join(installed, 'dist/types/cli'))).toBe(false);
   });
 
   it('works as a command where nothing else is installed', async () => {
@@ -114,7 +117,21 @@ describe('the package', () => {
        export const missing = result.pvalues;`,
     );
     const tsc = join(root, 'node_modules/typescript/bin/tsc');
-    const words = ['--noEmit', '--strict', '--target', 'es2022', '--module', 'nodenext', 'use.ts'];
-    await expectDone(process.execPath, [tsc, ...words], project);
+    for (const [module, resolution] of [
+      ['nodenext', 'nodenext'],
+      ['esnext', 'bundler'],
+    ] as const) {
+      const words = [
+        '--noEmit',
+        '--strict',
+        '--target',
+        'es2022',
+        '--module',
+        module,
+        '--moduleResolution',
+        resolution,
+      ];
+      await expectDone(process.execPath, [tsc, ...words, 'use.ts'], project);
+    }
   });
 });
