@@ -27,6 +27,7 @@ export const schemaCommand = command({
     { line: 'keepsum schema compact-line', words: 'a line that it writes' },
     { line: 'keepsum schema error-line', words: 'a line that it writes for a table that cannot be used' },
     { line: 'keepsum schema part-end', words: 'the last line of a part that --shard made' },
+    { line: 'keepsum schema reference-answers', words: 'cases for keepsum selfcheck --answers' },
   ],
   purpose: 'Prints the JSON Schema (draft 2020-12) that every such document satisfies.',
   examples: [{ line: 'keepsum schema result', words: 'on the screen, or on to another program' }],
