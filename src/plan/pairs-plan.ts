@@ -6,6 +6,7 @@ import { pairedNamed, type PairedStatistic } from '../statistic/paired.js';
 import { drawsOf } from './draws.js';
 import { chanceOf, levelsOf, refuseEmptySeed } from './footing.js';
 import { methods, tails, twoSidedRules, type ChosenMethod, type Plan, type PlanOptions } from './plan.js';
+import { raisedBound } from './settle-method.js';
 import { oneOf, positive, share, unused } from './settings.js';
 
 /** What exact work would take, as counted by the engine. */
@@ -135,9 +136,7 @@ function settle(asked: Plan['methodAsked'], work: PairsWork, effort: number): { 
       code: 'exact-over-bound',
       message: possible ? cost : beyond,
       place: '--method exact',
-      hint: possible
-        ? `use --method sample, or raise the bound with --effort ${(workUnits * 1.1).toPrecision(2)}`
-        : 'use --method sample',
+      hint: possible ? `use --method sample${raisedBound(workUnits)}` : 'use --method sample',
     });
   }
   if (asked === 'sample' && !canBeDrawn) {

@@ -32,7 +32,8 @@ function allScores(wish: ScoreWish | undefined, totals: readonly number[], optio
   if (wish === undefined) return standardScores(totals.map((_, line) => line));
   if (wish === 'midranks') return midranks(totals);
   const texts = typeof wish === 'string' ? wish.split(',') : wish.map(String);
-  if (texts.length !== totals.length) {
+  const scores = texts.map((text) => oneScore(text, option));
+  if (scores.length !== totals.length) {
     const lines = option === '--row-scores' ? 'rows' : 'columns';
     throw usageProblem({
       code: 'score-count',
@@ -41,7 +42,7 @@ function allScores(wish: ScoreWish | undefined, totals: readonly number[], optio
       hint: `give one for each of the ${lines}, empty ones too, in their order: ${option} ${totals.map((_, k) => k + 1).join()}`,
     });
   }
-  return texts.map((text) => oneScore(text, option));
+  return scores;
 }
 
 function oneScore(text: string, option: string): Rational {
@@ -51,7 +52,9 @@ function oneScore(text: string, option: string): Rational {
       code: 'not-a-score',
       message: `"${text.trim()}" is not a number`,
       place: option,
-      hint: `scores are decimals separated by commas, such as ${option} 0,1,2.5, or the word midranks`,
+      hint: /^mid/i.test(text.trim())
+        ? `did you mean ${option} midranks?`
+        : `scores are decimals separated by commas, such as ${option} 0,1,2.5, or the word midranks`,
     });
   }
   // The plan holds scores as numbers; a run again must read the same ones.

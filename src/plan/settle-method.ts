@@ -29,8 +29,9 @@ export function settleMethod(question: MethodQuestion): SettledMethod {
   const { asked, statistic, forecast, effort } = question;
   const { tables, work } = sizeWords(forecast, effort);
   const fits = forecast.workUnits <= effort;
-  const more = `raise the bound with --effort ${(forecast.workUnits * 1.1).toPrecision(2)}`;
+  const more = raisedBound(forecast.workUnits);
   if (asked === 'asymptotic' && statistic.limit === 'none') throw noAsymptoticForm(statistic);
+  if (asked === 'asymptotic' && question.rule === 'blaker') throw ruleNeedsLaw(statistic);
   if (needsWholeLaw(question)) {
     const rule = question.rule!;
     const { bound } = question;
@@ -41,7 +42,7 @@ export function settleMethod(question: MethodQuestion): SettledMethod {
         code: 'exact-over-bound',
         message: `the rule ${rule} needs exact work, and that is over the bound: ${tables}; ${work}`,
         place: `--two-sided-rule ${rule}`,
-        hint: `use --two-sided-rule distance or doubled, or ${more}`,
+        hint: `use --two-sided-rule distance or doubled${more}`,
       });
     }
   }
@@ -57,7 +58,7 @@ export function settleMethod(question: MethodQuestion): SettledMethod {
       code: 'exact-over-bound',
       message: `exact work is over the bound: ${tables}; ${work}`,
       place: '--method exact',
-      hint: `use --method sample, or ${more}`,
+      hint: `use --method sample${more}`,
     });
   }
   if (asked === 'asymptotic' || asked === 'sample') return { method: asked, reason: `asked for; ${tables}` };
@@ -75,6 +76,14 @@ export function sizeWords(forecast: Forecast<string>, effort: number): { tables:
     work: `exact work is forecast at ${inWords(workUnits)} units (${timeInWords(seconds)}), the bound is ${inWords(effort)}`,
   };
 }
+
+/** More units than this, about a day's work, are no advice to anybody. */
+const mostAdvised = 3e12;
+
+export const raisedBound = (workUnits: number): string =>
+  workUnits > mostAdvised
+    ? ''
+    : `, or raise the bound with --effort ${(workUnits * 1.1).toPrecision(2).replace('e+', 'e')}`;
 
 /** Values compared by how probable they are, or by their tails: random tables do not tell, unless a value is one table (2x2)
  *  and its probability is asked for. */
@@ -98,6 +107,15 @@ function ruleNeedsExact({ name }: Statistic, rule: TwoSidedRule): Problem {
     message: `the rule ${rule} needs the probability of every value of ${name}, which random tables do not give`,
     place: `--two-sided-rule ${rule}`,
     hint: 'use --two-sided-rule distance or doubled, or --method exact',
+  });
+}
+
+function ruleNeedsLaw({ name }: Statistic): Problem {
+  return usageProblem({
+    code: 'rule-needs-exact',
+    message: `the rule blaker needs the exact law of ${name}: its limiting law has two tails alike, where it is twice the smaller one`,
+    place: '--two-sided-rule blaker',
+    hint: 'use --two-sided-rule doubled, or --method exact',
   });
 }
 

@@ -12,6 +12,7 @@ import { chanceOf, levelsOf, refuseEmptySeed } from './footing.js';
 import { methods, tails, twoSidedRules, type ChosenMethod, type Plan, type PlanOptions } from './plan.js';
 import type { NamedRoles } from './roles.js';
 import { scoresOf, type ScoreWish } from './scores.js';
+import { raisedBound } from './settle-method.js';
 import { oneOf, positive, share, unused } from './settings.js';
 
 export interface StrataWork {
@@ -189,7 +190,7 @@ function settle(
   const cost = `exact work over all strata is forecast at ${inWords(workUnits)} units, the bound is ${inWords(effort)}`;
   const beyond = 'the law over all strata would take more memory than is allowed for';
   const fits = possible && workUnits <= effort;
-  const more = possible ? `, or raise the bound with --effort ${(workUnits * 1.1).toPrecision(2)}` : '';
+  const more = possible ? raisedBound(workUnits) : '';
   if (rule !== null && (asked === 'sample' || (asked === 'auto' && !fits))) {
     throw usageProblem({
       code: 'rule-needs-exact',

@@ -176,7 +176,17 @@ describe('a plan', () => {
   it('refuses exact work over the bound with the forecast and what works instead', () => {
     const found = refusal(enormous, { method: 'exact' });
     expect(found).toMatchObject({ code: 'exact-over-bound', status: 3 });
-    expect(found.hint).toMatch(/--method sample, or raise the bound with --effort/);
+    // More than a day's work is no advice.
+    expect(found.hint).toBe('use --method sample');
+    const large = [
+      [31, 22, 9, 14],
+      [18, 34, 27, 12],
+      [7, 19, 41, 22],
+      [12, 15, 18, 33],
+    ];
+    expect(refusal(large, { method: 'exact' }).hint).toMatch(
+      /^use --method sample, or raise the bound with --effort \d\.\de\d$/,
+    );
   });
 });
 

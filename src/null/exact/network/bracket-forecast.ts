@@ -10,6 +10,8 @@ import { splitColumns } from './split-columns.js';
 
 /** Fewer columns have nothing to merge before the halves meet. */
 const fewestColumns = 5;
+/** More have so many ways that no grid holds them, and the bounds alone would take longer than draws. */
+const mostColumns = 40;
 /** Rounded down once and up once. */
 const passes = 2;
 /** Share of the effort that the last and finest grid gets. */
@@ -19,7 +21,7 @@ const leniency = 3;
 
 export function expectsBracket(live: LiveTable, statistic: string, effort: number): boolean {
   const table = orient(live);
-  if (table.columns < fewestColumns) return false;
+  if (table.columns < fewestColumns || table.columns > mostColumns) return false;
   const { first, second } = splitColumns(table);
   const count = new EntryCount(table, statistic, false);
   const pairs = count.half(first).pairs + count.half(second).pairs;
