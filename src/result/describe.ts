@@ -119,7 +119,12 @@ export function foundWords(
   }
   if (p.method === 'sample') {
     const draws = drawingErrorOf(p)?.draws;
-    const many = draws === undefined ? drawn : `${countWords(draws)} ${drawn}`;
+    const many =
+      draws === undefined
+        ? drawn
+        : draws === 1
+          ? `1 ${drawn.replace('tables', 'table')}`
+          : `${countWords(draws)} ${drawn}`;
     return `sampled from ${many}${seed === null ? '' : ` (seed ${quoted(seed)})`}`;
   }
   return `by the ${approximationName(p)} approximation`;
