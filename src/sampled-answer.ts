@@ -152,7 +152,10 @@ function sourcesFor(
     {
       begin: first,
       end: blocks,
-      open: async () => (await threadedSource(whole, live, threads)) ?? localSource(live, orderings, sampling, ranks),
+      open: async () => {
+        const own = localSource(live, orderings, sampling, ranks);
+        return (await threadedSource(whole, live, threads, own)) ?? own;
+      },
     },
   ];
 }
