@@ -107,7 +107,7 @@ export async function analyseClusters(
       if (plan.method === 'asymptotic') return asymptoticAlone(questions, approximations);
       const orderings = names.map((each) => orderingFor(live, bound, each));
       if (plan.method === 'sample') return sampledPValues(questions, live, orderings, plan, null, surroundings);
-      const { cuts, point } = exactCuts(live, orderings, plan.forecast.engine as ExactEngine, plan.statistic);
+      const { cuts, point } = await exactCuts(live, orderings, plan.forecast.engine as ExactEngine, plan.statistic);
       return conditionalPValues(questions, cuts, point, plan.samplingConfidence);
     }
   }

@@ -176,7 +176,7 @@ async function carryOut(
       await surroundings.beforeExact?.(conditional.forecast);
       const { forecast } = conditional;
       const meter = meterFor(plan.effort, forecast, surroundings);
-      return fromAnswer(asked, exactCuts(live, orderings, forecast.engine, plan.statistic, meter));
+      return fromAnswer(asked, await exactCuts(live, orderings, forecast.engine, plan.statistic, meter));
     }
     const recipe = statistic.own ? null : { parts: partsOf(read), options };
     return { found: await sampledPValues(asked, live, orderings, plan, recipe, surroundings, cells?.listener) };

@@ -133,7 +133,7 @@ async function exactHeadline(table: Table, options: PlanOptions): Promise<PValue
     const { cuts, point } =
       bound === null
         ? onlyTable(live, names)
-        : exactCuts(
+        : await exactCuts(
             live,
             names.map((name) => orderingFor(live, bound, name)),
             plan.forecast.engine as ExactEngine,

@@ -109,11 +109,11 @@ for (const { name: statistic, shape, sided, takes } of statistics) {
         sided === 'upper'
           ? ['upper', 'lower']
           : ['upper', 'lower', 'distance', ...(scoresGroups ? [] : (['probability'] as const))];
-      fc.assert(
-        fc.property(table, (counts) => {
+      await fc.assert(
+        fc.asyncProperty(table, async (counts) => {
           const live = liveFrom(counts);
           const { engine } = forecastExact(live, boundTo(live, statistic), statistic);
-          const { cuts, point } = exactCuts(
+          const { cuts, point } = await exactCuts(
             live,
             names.map((name) => orderingOf(live, statistic, name)),
             engine,

@@ -29,7 +29,7 @@ export async function pByRule(
   if (workUnits > plan.effort) return [];
   const questions = twoSidedRules.map((rule) => ({ tail: 'both' as const, rule, statistic: statistic.name }));
   const orderings = orderingsNeeded(questions).map((name) => orderingFor(live, signed, name));
-  const { cuts, point } = exactCuts(live, orderings, engine, statistic.name);
+  const { cuts, point } = await exactCuts(live, orderings, engine, statistic.name);
   const entries = await conditionalPValues(questions, cuts, point, plan.samplingConfidence);
   return entries.map(({ p }, k) => ({ rule: twoSidedRules[k]!, p: p ?? 0 }));
 }

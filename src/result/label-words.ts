@@ -6,6 +6,9 @@
 const actsUnseen =
   /(?![\u200c\u200d\ufe00-\ufe0f])[\p{Cc}\p{Cs}\p{Zl}\p{Zp}\p{Bidi_Control}\p{Default_Ignorable_Code_Point}\ufff9-\ufffb]/gu;
 
+/** Plain ASCII acts on nothing, and never wakes the expression above, which takes some 5 ms to build. */
+const plain = /^[\n\x20-\x7e]*$/;
+
 const shortNames: Readonly<Record<string, string>> = { '\n': '\\n', '\r': '\\r', '\t': '\\t' };
 
 function spelledOut(character: string): string {
@@ -16,14 +19,17 @@ function spelledOut(character: string): string {
 }
 
 /** Any text from outside, fit to be printed: what would act on the screen instead of being seen is spelled out. */
-export const shown = (text: string): string => text.replace(actsUnseen, spelledOut);
+export const shown = (text: string): string =>
+  plain.test(text) && !text.includes('\n') ? text : text.replace(actsUnseen, spelledOut);
 
 /** A label inside a sentence: shown, and in double quotes so that it is never read as part of the sentence. */
 export const quoted = (label: string): string => `"${shown(label)}"`;
 
 /** The same characters as JSON escapes: a JSON text keeps its meaning and stops acting on a terminal. Its own line feeds stay. */
 export const shownJson = (json: string): string =>
-  json.replace(actsUnseen, (character) => (character === '\n' ? character : utf16Escapes(character)));
+  plain.test(json)
+    ? json
+    : json.replace(actsUnseen, (character) => (character === '\n' ? character : utf16Escapes(character)));
 
 const utf16Escapes = (character: string): string =>
   character

@@ -21,18 +21,19 @@ interface Case {
   readonly start: number;
 }
 
-const cases: Case[] = forecastTables.flatMap(({ name, counts }) =>
-  ['pearson', 'probability', 'trend'].flatMap((statistic) => {
+const cases: Case[] = [];
+for (const { name, counts } of forecastTables) {
+  for (const statistic of ['pearson', 'probability', 'trend']) {
     const live = liveTable(makeTable({ counts }));
     const bound = statisticNamed(statistic).bind(live, roles);
     const { engine, workUnits } = forecastExact(live, bound, statistic);
-    if (workUnits > mostUnits) return [];
+    if (workUnits > mostUnits) continue;
     const meter = new Meter();
-    exactCuts(live, [orderingFor(live, bound, 'upper')], engine, statistic, meter);
+    await exactCuts(live, [orderingFor(live, bound, 'upper')], engine, statistic, meter);
     const start = engine === 'network' ? networkStart : engine === 'linear' ? linearStart : 0;
-    return [{ name: `${statistic}, ${name}`, foreseen: workUnits, spent: meter.spent, start }];
-  }),
-);
+    cases.push({ name: `${statistic}, ${name}`, foreseen: workUnits, spent: meter.spent, start });
+  }
+}
 
 const shareWithin = (ratios: readonly number[], factor: number): number =>
   ratios.filter((ratio) => ratio <= factor && ratio >= 1 / factor).length / ratios.length;

@@ -4,44 +4,48 @@ import type { BracketCut, ExactCut, Ordering, OrderingName } from '../contract.j
 import { exactByEnumeration } from './enumerate.js';
 import type { ExactAnswer } from './exact-answer.js';
 import { linearStart } from './linear/costs.js';
-import { exactLinear } from './linear/exact-linear.js';
 import type { ExactEngine } from '../forecast.js';
 import { Meter } from './meter.js';
 import { networkStart } from './network/costs.js';
-import { bracketCut } from './network/bracket-cut.js';
-import { exactCut } from './network/exact-cut.js';
 import { pointMass } from './point-mass.js';
 import { exactWithinLimits } from './within-limits.js';
 import { exactTwoByTwo } from './two-by-two.js';
 
 /**
+ * The larger engines are loaded when they are asked for: a 2x2 table waits for none of them.
  * At least two live rows and columns. `statistic` is the name of the one that the orderings came from.
  * @throws OutOfReach where the work outgrows memory or the meter's bound, or a bracket would tell less than draws.
  */
-export function exactCuts(
+export async function exactCuts(
   live: LiveTable,
   orderings: readonly Ordering[],
   engine: ExactEngine,
   statistic: string,
   meter: Meter = new Meter(),
-): ExactAnswer<ExactCut | BracketCut> {
+): Promise<ExactAnswer<ExactCut | BracketCut>> {
   switch (engine) {
     case 'two-by-two':
       return exactTwoByTwo(live, orderings);
-    case 'linear':
+    case 'linear': {
+      const { exactLinear } = await import('./linear/exact-linear.js');
       meter.spend(linearStart);
       return { cuts: exactLinear(live, orderings, meter), point: pointMass(live) };
-    case 'network':
+    }
+    case 'network': {
+      const { exactCut } = await import('./network/exact-cut.js');
       meter.spend(networkStart);
       return {
         cuts: orderings.map((ordering) => exactCut(live, ordering, statistic, { meter })),
         point: pointMass(live),
       };
-    case 'bracket':
+    }
+    case 'bracket': {
+      const { bracketCut } = await import('./network/bracket-cut.js');
       return {
         cuts: orderings.map((ordering) => bracketCut(live, ordering, statistic, { meter })),
         point: pointMass(live),
       };
+    }
     case 'within-limits':
       return { cuts: exactWithinLimits(live, orderings, meter), point: pointMass(live) };
     case 'enumeration':
