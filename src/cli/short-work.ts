@@ -4,7 +4,7 @@
 import type { ForeseenWork } from '../sampled-answer.js';
 
 const leastUnits = 2e5;
-const mostUnits = 3e7;
+const mostUnits = 1e8;
 /** V8 counts bytecodes, by size, up to this before it looks whether a function is hot; left alone, to 67,584. */
 const patience = 1_000_000;
 

@@ -4,9 +4,9 @@
 import { blockStream, type UniformSource } from '../../../random/stream.js';
 import type { OrientedTable } from './oriented-table.js';
 
-const points = 24;
-/** All arrangements of up to six rows; of more, so many picked at random. */
-const arrangements = 720;
+const points = 12;
+/** All arrangements of up to five rows; of more, so many picked at random. */
+const arrangements = 240;
 
 /**
  * @param size units in the columns so far
@@ -24,10 +24,9 @@ export function nodesToAList({ rows, rowTotals, total }: OrientedTable, size: nu
   let shares = 0;
   for (let point = 0; point < points; point++) {
     const sums = nodeInBall(expected, spread, radiusSquared, random);
-    const own = distance(sums, expected, spread, null);
-    const bound = Math.max(radiusSquared, own);
+    const bound = Math.max(radiusSquared, distance(sums, expected, spread, null, Infinity));
     let near = 0;
-    for (const order of orders) if (distance(sums, expected, spread, order) <= bound) near++;
+    for (const order of orders) if (distance(sums, expected, spread, order, bound) <= bound) near++;
     const different = (ways * near) / orders.length / repeats(sums);
     shares += 1 / Math.max(1, different);
   }
@@ -57,9 +56,10 @@ function distance(
   expected: readonly number[],
   spread: readonly number[],
   order: readonly number[] | null,
+  enough: number,
 ): number {
   let total = 0;
-  for (let i = 0; i < sums.length; i++) {
+  for (let i = 0; i < sums.length && total <= enough; i++) {
     const difference = sums[order === null ? i : order[i]!]! - expected[i]!;
     total += (difference * difference) / spread[i]!;
   }
@@ -81,7 +81,7 @@ function repeats(sums: readonly number[]): number {
 function ordersOf(rows: number, random: UniformSource): number[][] {
   const first = Array.from({ length: rows }, (_, i) => i);
   let orders: number[][] = [[]];
-  if (rows <= 6) {
+  if (rows <= 5) {
     for (let i = 0; i < rows; i++)
       orders = orders.flatMap((order) => first.filter((j) => !order.includes(j)).map((j) => [...order, j]));
     return orders;
