@@ -10,7 +10,8 @@ export function briefLine({ statistic, pValues, plan, input }: Result): string {
   const by = headline.method === 'asymptotic' ? ' ' : ', ';
   const answer = `${pName(headline)} ${pNumber(headline)}${errorAside(headline)}${by}${foundWords(headline, plan.seed)}`;
   const measured = headline.nullValue === undefined ? `${shortStatisticWords(statistic.name)} ${value}; ` : '';
-  return `${shown(`${measured}${answer}${roundingWords(headline)}; n ${countWords(input.total)}`)}\n`;
+  const line = `${measured}${answer}${roundingWords(headline)}; n ${countWords(input.total)}`;
+  return `${shown(line.charAt(0).toUpperCase() + line.slice(1))}\n`;
 }
 
 function roundingWords({ errors, method }: PValue): string {
