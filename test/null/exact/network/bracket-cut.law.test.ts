@@ -102,7 +102,7 @@ describe('where the whole lists are too many', () => {
         expectHolds('small memory', onGrid(live, ordering, statistic, { entryLimit }, 64 * step, 64).cut, truth);
         const bracket = (effort: number): BracketCut =>
           bracketCut(live, ordering, statistic, { meter: new Meter(effort) });
-        const [little, much] = [bracket(1.2e6), bracket(2e6)];
+        const [little, much] = [bracket(1.6e6), bracket(2.6e6)];
         expectHolds('little effort', little, truth);
         expectHolds('much effort', much, truth);
         expect(widthOf(much)).toBeLessThan(widthOf(little) * 0.7);
