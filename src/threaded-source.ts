@@ -30,6 +30,11 @@ export async function threadedSource(
     // One more waits at the worker while this thread counts and hands out nothing.
     concurrentTasksPerWorker: 2,
   });
+  let closed = false;
+  // Answers still on their way when the pool is closed are strangers to it.
+  pool.on('error', (thrown) => {
+    if (!closed) throw thrown;
+  });
   const each = strideFor(live);
   return {
     stride: each * threads,
@@ -45,6 +50,9 @@ export async function threadedSource(
       const here = await own.tallies(first, Math.min(end, first + each));
       return [here, ...(await elsewhere)].flat();
     },
-    close: () => pool.destroy(),
+    close() {
+      closed = true;
+      return pool.destroy();
+    },
   };
 }
