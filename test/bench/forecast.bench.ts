@@ -6,20 +6,23 @@ import { forecastTables } from '../helpers/forecast-tables.js';
 
 const bin = resolve(import.meta.dirname, '../../bin/keepsum.js');
 const statistics = ['pearson', 'probability'] as const;
-/** Below this a difference of two runs is noise. */
-const least = 0.01;
+/** Below this a difference of two runs is noise, and what an exact p brings along (fragility, cells). */
+const least = 0.1;
 
 interface Run {
   readonly seconds: number;
   readonly foreseen: number;
 }
 
-function run(words: readonly string[]): Run {
+/** Undefined where exact work is refused, or a bracket stands in for it: nothing to compare. */
+function run(words: readonly string[]): Run | undefined {
   const timed = spawnSync('/usr/bin/env', ['time', '-f', '%U', process.execPath, bin, 'test', ...words], {
     encoding: 'utf8',
   });
+  if (timed.status === 3) return undefined;
   if (timed.status !== 0) throw new Error(timed.stderr);
-  const { plan } = JSON.parse(timed.stdout) as { plan: { forecast?: { seconds: number } } };
+  const { plan } = JSON.parse(timed.stdout) as { plan: { forecast?: { seconds: number; engine: string } } };
+  if (plan.forecast?.engine === 'bracket') return undefined;
   return { seconds: Number(timed.stderr.trim().split('\n').at(-1)), foreseen: plan.forecast?.seconds ?? 0 };
 }
 
@@ -29,11 +32,14 @@ const ratios: number[] = [];
 for (const { name, counts } of forecastTables) {
   const rows = counts.map((row) => row.join());
   for (const statistic of statistics) {
-    const words = [...rows, ...options, '--statistic', statistic, '--method'];
-    const runs = [1, 2, 3].map(() => run([...words, 'exact']));
-    const starts = [1, 2, 3].map(() => run([...words, 'asymptotic']).seconds);
+    const words = [...rows, ...options, '--method'];
+    const exact = [...words, 'exact', '--statistic', statistic];
+    const first = run(exact);
+    if (first === undefined) continue;
+    const runs = [first, run(exact)!, run(exact)!];
+    const starts = [1, 2, 3].map(() => run([...words, 'asymptotic'])!.seconds);
     const taken = Math.max(least, median(runs.map(({ seconds }) => seconds)) - median(starts));
-    const foreseen = Math.max(least, runs[0]!.foreseen);
+    const foreseen = Math.max(least, first.foreseen);
     ratios.push(foreseen / taken);
     console.log(
       `${name}, ${statistic}: foreseen ${foreseen.toFixed(2)} s, taken ${taken.toFixed(2)} s, ratio ${(foreseen / taken).toFixed(2)}`,
