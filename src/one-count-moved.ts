@@ -2,7 +2,7 @@
 // its row or column (Dupont 1986): the same question asked of tables next to the one at hand.
 import { exactByEnumeration } from './null/exact/enumerate.js';
 import { exactCuts, onlyTable } from './null/exact/exact-cuts.js';
-import { forecastExact, type ExactEngine } from './null/forecast.js';
+import type { ExactEngine } from './null/forecast.js';
 import { orderingFor } from './null/ordering.js';
 import type { OrderingName } from './null/contract.js';
 import { makePlan, type Prepared } from './plan/make-plan.js';
@@ -53,11 +53,11 @@ export async function fragilityOf(
   prepared: Prepared,
   options: PlanOptions,
 ): Promise<Fragile> {
-  const { plan, statistic, bound } = prepared;
+  const { plan, statistic, bound, conditional } = prepared;
   if (bound === null || statistic.own || plan.method === 'asymptotic') return {};
   const ask = askerFor(table, options);
   const moves = neighbours(table, live);
-  const { workUnits } = forecastExact(live, bound, statistic.name);
+  const { workUnits } = conditional.forecast;
   const cheap = Math.min(plan.effort, isTwoByTwo(live) ? cheapTwoByTwoWork : cheapWork);
   // Only tables that are listed anyway, and the two ends of a 2x2 law, are looked at for the least p.
   const isNear = !isTwoByTwo(live) || workUnits * 2 * furthestToNearest <= cheap;

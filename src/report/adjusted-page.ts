@@ -3,6 +3,7 @@ import { adjustMethods, adjustSentence, type Adjustment } from '../result/adjust
 import type { AdjustedLine } from '../result/adjusted-declaration.js';
 import { shown } from '../result/label-words.js';
 import { countWords, probabilityWords } from '../result/number-words.js';
+import { capital } from './capital.js';
 import type { Grid, Page, Sentence } from './page.js';
 
 const sentence = (text: string, tone: Sentence['tone'] = 'plain'): Sentence => ({
@@ -23,7 +24,7 @@ export const adjustedPage = (
       heading: 'What was adjusted',
       blocks: [
         sentence(`${countWords(lines.length)} p-values in ${familiesWords(lines)}.`),
-        ...remarks.map((text) => sentence(`${text.replace(/^[a-z]/, (letter) => letter.toUpperCase())}.`)),
+        ...remarks.map((text) => sentence(`${capital(text)}.`)),
       ],
     },
     {

@@ -3,6 +3,7 @@ import { errorAside, foundWords, pName, pNumber, shortStatisticWords } from '../
 import { shown } from '../result/label-words.js';
 import { countWords, statisticValueWords } from '../result/number-words.js';
 import type { PValue, Result } from '../result/result.js';
+import { capital } from './capital.js';
 
 export function briefLine({ statistic, pValues, plan, input }: Result): string {
   const headline = pValues[0]!;
@@ -11,7 +12,7 @@ export function briefLine({ statistic, pValues, plan, input }: Result): string {
   const answer = `${pName(headline)} ${pNumber(headline)}${errorAside(headline)}${by}${foundWords(headline, plan.seed)}`;
   const measured = headline.nullValue === undefined ? `${shortStatisticWords(statistic.name)} ${value}; ` : '';
   const line = `${measured}${answer}${roundingWords(headline)}; n ${countWords(input.total)}`;
-  return `${shown(line.charAt(0).toUpperCase() + line.slice(1))}\n`;
+  return `${shown(capital(line))}\n`;
 }
 
 function roundingWords({ errors, method }: PValue): string {

@@ -4,6 +4,7 @@ import { isOneTableOnly } from '../result/describe.js';
 import { shown } from '../result/label-words.js';
 import { digits, percentWords } from '../result/number-words.js';
 import type { Result } from '../result/result.js';
+import { capital } from './capital.js';
 import type { Sentence } from './page.js';
 
 const unitsIndependent =
@@ -42,5 +43,4 @@ const plain = (text: string): Sentence => sentence(text, 'plain');
 const warning = (text: string): Sentence => sentence(text, 'warning');
 
 /** Notes are written as clauses or as sentences; here they all become sentences. */
-const asSentence = (text: string): string =>
-  text.replace(/^[a-z]/, (letter) => letter.toUpperCase()) + (/[.!?]$/.test(text) ? '' : '.');
+const asSentence = (text: string): string => capital(text) + (/[.!?]$/.test(text) ? '' : '.');

@@ -7,6 +7,7 @@ import { curveNatural, line as lineOf } from 'd3-shape';
 import { pName, pNumber, shortStatisticWords } from '../../result/describe.js';
 import { countWords, statisticValueWords } from '../../result/number-words.js';
 import type { NullSummary, Result } from '../../result/result.js';
+import { capital } from '../capital.js';
 import { blue, element, ink, label, orange, paper, quiet, quietEdge, textWidth, type Markup } from './element.js';
 import { bottomAxis, leftAxis, line, pictureWidth, ticksOf, leftOf, type Picture, type Room } from './frame.js';
 import { finiteBins, type DrawnBin } from './finite-bins.js';
@@ -56,8 +57,6 @@ const captionWords = ({ statistic, method, tables }: NullSummary): string =>
   `${capital(shortStatisticWords(statistic))} by chance alone, ${
     method === 'exact' ? `all ${countWords(tables)} tables` : `${countWords(tables)} random tables`
   } with these margins`;
-
-const capital = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
 
 const describe = (result: Result, summary: NullSummary): string => {
   const tail = summary.bins.reduce((sum, { inTail }) => sum + inTail, 0);

@@ -4,9 +4,10 @@ import { afterAll, describe, expect, it } from 'vitest';
 import { planDraws, type DrawPlan, type Sampler } from '../../../src/null/sampled/draw-plan.js';
 import { prepareSampler } from '../../../src/null/sampled/sample-cuts.js';
 import { blockStream, type UniformSource } from '../../../src/random/stream.js';
+import { cornerTable } from '../../helpers/margins.js';
 import { liveFrom } from '../../helpers/tables.js';
 import { countCases, fitOfCounts } from './proof/count-cases.js';
-import { exactLaw, tableWith } from './proof/exact-law.js';
+import { exactLaw } from './proof/exact-law.js';
 import { fit, rejectedByHolm, type Verdict } from './proof/fit.js';
 import { squares, fitOfSquare } from './proof/square-cases.js';
 import { tableCases, type TableCase } from './proof/table-cases.js';
@@ -25,7 +26,7 @@ function fitOfTables({ rows, columns, forced }: TableCase, source: UniformSource
   const key = keyOver(rows, columns);
   const places = new Map(tables.map((table, k) => [key(table), k]));
   const observed = new Float64Array(tables.length);
-  const sampler = prepareSampler(liveFrom(tableWith(rows, columns)), [], forced);
+  const sampler = prepareSampler(liveFrom(cornerTable(rows, columns)), [], forced);
   const table = new Float64Array(rows.length * columns.length);
   for (let draw = 0; draw < draws; draw++) {
     sampler.drawTable(source, table);
@@ -50,7 +51,7 @@ function keyOver(rows: readonly number[], columns: readonly number[]): (table: A
 describe('drawn tables follow the exact law', () => {
   it.each(tableCases.map((tableCase) => [tableCase.claim, tableCase] as const))('%s', (claim, tableCase) => {
     const { rows, columns, forced, uses } = tableCase;
-    expect(samplersIn(planDraws(liveFrom(tableWith(rows, columns)), forced))).toEqual(
+    expect(samplersIn(planDraws(liveFrom(cornerTable(rows, columns)), forced))).toEqual(
       expect.arrayContaining([...uses]),
     );
     const p = fitOfTables(tableCase, blockStream('goodness of fit', claim, 0));

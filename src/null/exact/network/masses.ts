@@ -7,6 +7,7 @@ import type { LiveTable } from '../../../table/live-table.js';
 import type { Masses } from '../exact-answer.js';
 import { Meter } from '../meter.js';
 import { encode, type Encoding } from './encoding.js';
+import { chiSquare } from './forecast.js';
 import { GridList, type Rounding } from './grid-list.js';
 import { buildHalf } from './half.js';
 import { leastRest } from './least-rest.js';
@@ -163,16 +164,9 @@ function expectedTable(table: OrientedTable, flat: boolean): number[][] {
 
 /** P(chi-square >= observed) by the cube-root normal law (Wilson & Hilferty 1931): only settles which side is summed. */
 function upperTailGuess(table: OrientedTable): number {
-  let chiSquare = 0;
-  table.observed.forEach((column, j) =>
-    column.forEach((count, i) => {
-      const expected = (table.rowTotals[i]! * table.columnTotals[j]!) / table.total;
-      chiSquare += (count - expected) ** 2 / expected;
-    }),
-  );
   const degrees = (table.rows - 1) * (table.columns - 1);
   const spread = 2 / (9 * degrees);
-  const z = (Math.cbrt(chiSquare / degrees) - 1 + spread) / Math.sqrt(spread);
+  const z = (Math.cbrt(chiSquare(table) / degrees) - 1 + spread) / Math.sqrt(spread);
   return 1 / (1 + Math.exp(1.702 * z));
 }
 

@@ -62,17 +62,3 @@ function binomial(n: number, k: number): bigint {
 }
 
 const quotient = (a: bigint, b: bigint): number => Number((a << 80n) / b) / 2 ** 80;
-
-/** Some table with these margins (north-west corner rule). */
-export function tableWith(rowTotals: readonly number[], columnTotals: readonly number[]): number[][] {
-  const left = [...columnTotals];
-  return rowTotals.map((units) => {
-    let rest = units;
-    return left.map((inColumn, j) => {
-      const count = Math.min(rest, inColumn);
-      left[j]! -= count;
-      rest -= count;
-      return count;
-    });
-  });
-}

@@ -5,7 +5,7 @@ import { prepareSampler } from '../../../../src/null/sampled/sample-cuts.js';
 import { logFactorial } from '../../../../src/numeric/log-factorial.js';
 import type { UniformSource } from '../../../../src/random/stream.js';
 import { liveFrom } from '../../../helpers/tables.js';
-import { tableWith } from './exact-law.js';
+import { cornerTable } from '../../../helpers/margins.js';
 import { fit } from './fit.js';
 
 export interface SquareCase {
@@ -43,7 +43,7 @@ export function fitOfSquare(
   source: UniformSource,
   draws: number,
 ): number {
-  const live = liveFrom(tableWith(rows, columns));
+  const live = liveFrom(cornerTable(rows, columns));
   const chosen = planDraws(live, forced).cells[1]?.[1]?.sampler;
   if (chosen !== inner) throw new Error(`the inner cell is drawn by ${String(chosen)}`);
   const side = Math.ceil((Math.max(...rows) + 1) / cut);
